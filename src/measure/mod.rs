@@ -1,0 +1,14 @@
+//! Angles, vectors, time scales, civil time and searches. Knows no astronomy.
+
+mod angle;
+mod chebyshev;
+pub mod civil;
+pub mod delta_t;
+mod instant;
+pub mod search;
+mod vector;
+
+pub use angle::Angle;
+pub use chebyshev::Chebyshev;
+pub use instant::{DateOutOfRange, Moment, TimeScales, Tt, Ut1};
+pub use vector::{Matrix, Vector};

@@ -1,0 +1,1 @@
+//! Time zones: the IANA list and a suggestion from coordinates.

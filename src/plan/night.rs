@@ -1,0 +1,235 @@
+//! One night at one spot: from the Sun's highest point on a date to its next.
+
+use crate::light::Eye;
+use crate::measure::{Angle, DateOutOfRange, Moment, TimeScales};
+use crate::place::Skyline;
+use crate::sky::{Body, Ephemeris, Observer};
+use chrono::NaiveDate;
+use chrono_tz::Tz;
+use std::fmt;
+
+/// The two halves of a night.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, serde::Serialize, serde::Deserialize)]
+#[serde(rename_all = "lowercase")]
+pub enum Half {
+    /// From the Sun's highest point to its lowest.
+    Dusk,
+    /// From its lowest to its next highest.
+    Dawn,
+}
+
+/// What a night is asked for.
+#[derive(Clone, Copy, Debug)]
+pub struct NightRequest<'a> {
+    /// Where from.
+    pub observer: &'a Observer,
+    /// What blocks the view there.
+    pub skyline: &'a Skyline,
+    /// Civil zone that the date is counted in.
+    pub zone: Tz,
+    /// The evening's date.
+    pub date: NaiveDate,
+    /// How civil time leads to TT.
+    pub scales: TimeScales,
+    /// Whose eye.
+    pub eye: Eye,
+    /// Which bodies; the Sun and the Moon are always planned.
+    pub bodies: &'a [Body],
+}
+
+/// A night: every moment of it that matters.
+#[derive(Clone, Debug)]
+pub struct Night {
+    /// The evening's date.
+    pub date: NaiveDate,
+    /// The Sun's highest point that begins it.
+    pub start: Moment,
+    /// The Sun's lowest point, where dusk ends and dawn begins.
+    pub middle: Moment,
+    /// The next highest point.
+    pub end: Moment,
+    /// The Sun's times.
+    pub sun: SunTimes,
+    /// The bodies asked for and the Moon, in the order of [`Body::ALL`].
+    pub bodies: Vec<BodyNight>,
+    /// When optics may be uncapped.
+    pub optics: OpticsTimes,
+}
+
+/// The Sun's times; `None` where one does not occur between start and end.
+#[derive(Clone, Copy, Debug, Default, PartialEq)]
+#[allow(missing_docs)]
+pub struct SunTimes {
+    pub set: Option<Moment>,
+    pub civil_dusk: Option<Moment>,
+    pub nautical_dusk: Option<Moment>,
+    pub astronomical_dusk: Option<Moment>,
+    pub astronomical_dawn: Option<Moment>,
+    pub nautical_dawn: Option<Moment>,
+    pub civil_dawn: Option<Moment>,
+    pub rise: Option<Moment>,
+    /// Airless altitude of the Sun's centre at its highest (start) and lowest (middle) point.
+    pub highest: Angle,
+    pub lowest: Angle,
+}
+
+/// One body through a night.
+#[derive(Clone, Debug)]
+pub struct BodyNight {
+    /// Which.
+    pub body: Body,
+    /// Risings over a level horizon by convention (airless -34', the Moon's upper limb).
+    pub rise: Vec<Moment>,
+    /// Settings, by the same convention.
+    pub set: Vec<Moment>,
+    /// Whether it is above that horizon when the night begins; with no rising and no setting
+    /// it then never sets, or else never rises.
+    pub is_up_at_start: bool,
+    /// Where it clears or goes behind the skyline, in order.
+    pub skyline_events: Vec<SkylineEvent>,
+    /// When it is plain for the eye, in order.
+    pub windows: Vec<Window>,
+}
+
+/// A body clearing the skyline or going behind it.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct SkylineEvent {
+    /// When.
+    pub moment: Moment,
+    /// Whether it comes into view there, or else goes out of it.
+    pub clears: bool,
+    /// Azimuth of its centre.
+    pub azimuth: Angle,
+    /// Refracted altitude of the point that counts (planet's centre, Moon's upper limb).
+    pub altitude: Angle,
+}
+
+/// Why a window starts or ends.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Cause {
+    /// The sky's brightness.
+    Twilight,
+    /// Something on the skyline.
+    Skyline,
+    /// The horizon, where nothing stands above it.
+    Horizon,
+    /// The boundary between dusk and dawn, where one half is asked for.
+    Half,
+    /// The Sun's highest point: the night's edge.
+    Noon,
+}
+
+impl Cause {
+    /// The name used in files and on the command line.
+    pub const fn name(self) -> &'static str {
+        match self {
+            Self::Twilight => "twilight",
+            Self::Skyline => "skyline",
+            Self::Horizon => "horizon",
+            Self::Half => "half",
+            Self::Noon => "noon",
+        }
+    }
+}
+
+/// One end of a window.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Edge {
+    /// When.
+    pub moment: Moment,
+    /// Why.
+    pub cause: Cause,
+}
+
+/// An unbroken interval in which a body is plain for an eye.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Window {
+    /// Whose eye.
+    pub eye: Eye,
+    /// Its start.
+    pub start: Edge,
+    /// Its end.
+    pub end: Edge,
+    /// The moment to show it at.
+    pub best: Best,
+}
+
+/// The moment to show a body at: the highest clearance within the window once the Sun is well
+/// below the rule's limit.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Best {
+    /// When.
+    pub moment: Moment,
+    /// Refracted altitude.
+    pub altitude: Angle,
+    /// Clearance.
+    pub clearance: Angle,
+}
+
+/// When optics may be uncapped: rounded to whole minutes against the user. `None`: no optics
+/// time in that half.
+#[derive(Clone, Copy, Debug, Default, PartialEq)]
+pub struct OpticsTimes {
+    /// From, at dusk.
+    pub from: Option<Moment>,
+    /// Until, at dawn.
+    pub until: Option<Moment>,
+}
+
+/// Why a night cannot be planned.
+#[derive(Clone, Debug, PartialEq)]
+pub enum NightError {
+    /// The date lies outside the supported years.
+    OutOfRange(DateOutOfRange),
+    /// The date does not exist in that zone (skipped at the date line).
+    NoSuchDate {
+        /// The date.
+        date: NaiveDate,
+        /// The zone.
+        zone: Tz,
+    },
+}
+
+impl fmt::Display for NightError {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        match self {
+            Self::OutOfRange(error) => error.fmt(f),
+            Self::NoSuchDate { date, zone } => {
+                write!(
+                    f,
+                    "the date {date} does not exist in the zone {zone}: it was skipped there"
+                )
+            }
+        }
+    }
+}
+
+impl std::error::Error for NightError {}
+
+impl Night {
+    /// Plans a night.
+    ///
+    /// # Errors
+    /// The date does not exist in the zone, or lies outside the supported years.
+    pub fn plan(_ephemeris: &Ephemeris, _request: &NightRequest<'_>) -> Result<Self, NightError> {
+        todo!()
+    }
+    /// What a body does in it.
+    pub fn body(&self, body: Body) -> Option<&BodyNight> {
+        self.bodies.iter().find(|night| night.body == body)
+    }
+    /// Start and end of one half.
+    pub fn half(&self, half: Half) -> (Moment, Moment) {
+        match half {
+            Half::Dusk => (self.start, self.middle),
+            Half::Dawn => (self.middle, self.end),
+        }
+    }
+}
+
+impl BodyNight {
+    /// Its windows within one half, cut at the half's ends with [`Cause::Half`].
+    pub fn windows_in(&self, _night: &Night, _half: Half) -> Vec<Window> {
+        todo!()
+    }
+}

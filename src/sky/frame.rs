@@ -1,0 +1,1 @@
+//! Precession, nutation and sidereal time.

@@ -1,0 +1,23 @@
+//! Ephemerides, frames, apparent places, refraction, phase, magnitude and stars.
+//!
+//! The way from theory to the sky: [`Ephemeris`] evaluates the series and keeps them as
+//! Chebyshev spans; [`Ephemeris::cover`] hands out a [`Span`] of shared, immutable pieces;
+//! [`Span::at`] fixes an instant and gives an [`Epoch`] with the Earth's place, its
+//! orientation and sidereal time; from there [`Epoch::geocentric`] and [`Epoch::appearance`]
+//! for the centre of the Earth, and [`Epoch::seen_by`] for an observer.
+
+mod body;
+pub mod ephemeris;
+mod epoch;
+mod frame;
+pub mod magnitude;
+mod observer;
+mod phase;
+pub mod refraction;
+pub mod stars;
+
+pub use body::{Body, UnknownBody};
+pub use ephemeris::{Ephemeris, OutsideEphemeris, Span};
+pub use epoch::{Apparent, Epoch, Horizontal, View};
+pub use observer::{Air, Observer};
+pub use phase::Appearance;

@@ -1,0 +1,1 @@
+//! Everything a person reads: wording, numbers and times.
