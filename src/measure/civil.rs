@@ -44,7 +44,7 @@ pub struct NotOnce {
 
 impl LocalTime {
     /// Looks a local time up.
-    pub fn find(zone: Tz, local: NaiveDateTime) -> Self {
+    pub fn find(local: NaiveDateTime, zone: Tz) -> Self {
         let found = zone.from_local_datetime(&local);
         match (found.earliest(), found.latest()) {
             (Some(earlier), Some(later)) if earlier != later => Self::Twice {
@@ -82,8 +82,8 @@ impl LocalTime {
 /// # Errors
 /// It is shown twice or never; the error says which and names the offsets to choose from. Use
 /// [`LocalTime::find`] and [`LocalTime::first`] where the earlier one will do.
-pub fn utc_from_local(zone: Tz, local: NaiveDateTime) -> Result<DateTime<Utc>, NotOnce> {
-    match LocalTime::find(zone, local) {
+pub fn utc_from_local(local: NaiveDateTime, zone: Tz) -> Result<DateTime<Utc>, NotOnce> {
+    match LocalTime::find(local, zone) {
         LocalTime::Once(instant) => Ok(instant),
         outcome => Err(NotOnce {
             local,
@@ -94,15 +94,15 @@ pub fn utc_from_local(zone: Tz, local: NaiveDateTime) -> Result<DateTime<Utc>, N
 }
 
 /// Whether a date occurs in the zone at all; a date can be skipped at the date line.
-pub fn date_exists(zone: Tz, date: NaiveDate) -> bool {
-    start_of_date(zone, date).is_some()
+pub fn date_exists(date: NaiveDate, zone: Tz) -> bool {
+    start_of_date(date, zone).is_some()
 }
 
 /// The first instant of a local date: midnight, or the instant at which the clock jumps over
 /// midnight into it. `None` where the zone skipped the date.
-pub fn start_of_date(zone: Tz, date: NaiveDate) -> Option<DateTime<Utc>> {
-    let start = LocalTime::find(zone, date.and_time(NaiveTime::MIN)).first();
-    (local_date(zone, start) == date).then_some(start)
+pub fn start_of_date(date: NaiveDate, zone: Tz) -> Option<DateTime<Utc>> {
+    let start = LocalTime::find(date.and_time(NaiveTime::MIN), zone).first();
+    (local_date(start, zone) == date).then_some(start)
 }
 
 /// The instant at which a local date is over for good, itself no longer within it. `None` where
@@ -110,38 +110,45 @@ pub fn start_of_date(zone: Tz, date: NaiveDate) -> Option<DateTime<Utc>> {
 ///
 /// Where a clock is turned back over midnight the date occurs in two pieces, and the next date's
 /// [`start_of_date`] comes before this end.
-pub fn end_of_date(zone: Tz, date: NaiveDate) -> Option<DateTime<Utc>> {
-    start_of_date(zone, date)?;
+pub fn end_of_date(date: NaiveDate, zone: Tz) -> Option<DateTime<Utc>> {
+    start_of_date(date, zone)?;
     let next = date.checked_add_days(Days::new(1))?;
-    Some(LocalTime::find(zone, next.and_time(NaiveTime::MIN)).last())
+    Some(LocalTime::find(next.and_time(NaiveTime::MIN), zone).last())
+}
+
+/// The middle between the start and the end of a local date, noon on most days. `None` where
+/// the zone skipped the date.
+pub fn middle_of(date: NaiveDate, zone: Tz) -> Option<DateTime<Utc>> {
+    let (start, end) = (start_of_date(date, zone)?, end_of_date(date, zone)?);
+    Some(start + (end - start) / 2)
 }
 
 /// What the zone's clock and calendar show at an instant.
-pub fn local(zone: Tz, instant: DateTime<Utc>) -> DateTime<FixedOffset> {
-    instant.with_timezone(&offset(zone, instant))
+pub fn local(instant: DateTime<Utc>, zone: Tz) -> DateTime<FixedOffset> {
+    instant.with_timezone(&offset(instant, zone))
 }
 
 /// The civil date at an instant.
-pub fn local_date(zone: Tz, instant: DateTime<Utc>) -> NaiveDate {
-    local(zone, instant).date_naive()
+pub fn local_date(instant: DateTime<Utc>, zone: Tz) -> NaiveDate {
+    local(instant, zone).date_naive()
 }
 
 /// The weekday of an instant's own civil date.
-pub fn weekday(zone: Tz, instant: DateTime<Utc>) -> Weekday {
-    local(zone, instant).weekday()
+pub fn weekday(instant: DateTime<Utc>, zone: Tz) -> Weekday {
+    local(instant, zone).weekday()
 }
 
 /// Local time minus civil time at offset zero, at an instant; east of Greenwich positive.
-pub fn offset(zone: Tz, instant: DateTime<Utc>) -> FixedOffset {
+pub fn offset(instant: DateTime<Utc>, zone: Tz) -> FixedOffset {
     zone.offset_from_utc_datetime(&instant.naive_utc()).fix()
 }
 
 /// The first instant, to the second, at which the clock shows `local` or more. Only asked where
 /// a clock was turned forward over `local`, so the clock grows through the search.
-fn first_reaching(zone: Tz, local: NaiveDateTime) -> DateTime<Utc> {
+fn first_reaching(local: NaiveDateTime, zone: Tz) -> DateTime<Utc> {
     // No zone was ever more than 16 hours from Greenwich.
     const REACH_S: i64 = 16 * 3600;
-    let reached = |instant: DateTime<Utc>| self::local(zone, instant).naive_local() >= local;
+    let reached = |instant: DateTime<Utc>| self::local(instant, zone).naive_local() >= local;
     let (mut before_s, mut after_s) = (-REACH_S, REACH_S);
     while after_s - before_s > 1 {
         let middle_s = before_s.midpoint(after_s);
@@ -166,14 +173,14 @@ impl fmt::Display for NotOnce {
                 f,
                 "the local time {time} occurs twice in {zone}, at offset {} and again at {}: \
                  give the time with its offset",
-                offset(zone, earlier),
-                offset(zone, later)
+                offset(earlier, zone),
+                offset(later, zone)
             ),
             LocalTime::Never { turned_at } => write!(
                 f,
                 "the local time {time} does not occur in {zone}: the clock was turned forward \
                  over it, to {}",
-                local(zone, turned_at).format("%Y-%m-%d %H:%M:%S")
+                local(turned_at, zone).format("%Y-%m-%d %H:%M:%S")
             ),
             LocalTime::Once(_) => write!(f, "the local time {time} occurs once in {zone}"),
         }

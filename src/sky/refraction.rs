@@ -19,3 +19,8 @@ pub fn refraction(airless_altitude: Angle, air: &Air) -> Angle {
 pub fn refracted(airless_altitude: Angle, air: &Air) -> Angle {
     airless_altitude + refraction(airless_altitude, air)
 }
+
+/// How far a sea horizon lies below the level one, seen from a height above the sea.
+pub fn dip(_height_m: f64) -> Angle {
+    todo!()
+}
