@@ -60,6 +60,10 @@ impl Span {
     pub fn earth(&self, _tt: Tt) -> (Vector, Vector) {
         todo!()
     }
+    /// The three components of [`super::frame::nutation`].
+    pub fn nutation(&self, tt: Tt) -> Vector {
+        super::frame::nutation(tt)
+    }
     /// Geocentric geometric place of the Moon, au, on the axes of the ICRS.
     pub fn moon(&self, _tt: Tt) -> Vector {
         todo!()

@@ -1,0 +1,11 @@
+//! The layer `sky` against published values and against JPL DE440.
+
+#![allow(clippy::unwrap_used)]
+
+#[path = "../common/mod.rs"]
+mod common;
+
+mod frames;
+mod magnitudes;
+mod refraction;
+mod stars;
