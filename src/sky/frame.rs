@@ -12,7 +12,7 @@ use sofars::{erst, pnp};
 /// of the series (the shortest large terms run through in five days).
 pub const NUTATION_PIECE_DAYS: f64 = 16.0;
 /// Chebyshev nodes of one piece.
-pub const NUTATION_PIECE_NODES: usize = 16;
+pub const NUTATION_PIECE_NODES: usize = 14;
 
 /// Nutation in longitude, nutation in obliquity and the equation of the equinoxes, radians, as
 /// the three components: the function that the pieces are fitted to. Slow.

@@ -7,5 +7,6 @@ mod common;
 
 mod frames;
 mod magnitudes;
+mod places;
 mod refraction;
 mod stars;
