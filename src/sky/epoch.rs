@@ -2,6 +2,7 @@
 
 use super::frame::{self, Frame};
 use super::magnitude;
+use super::orbit;
 use super::phase::Seen;
 use super::stars::Star;
 use super::vantage::Vantage;
@@ -102,6 +103,21 @@ impl<'a> Epoch<'a> {
             Some(planet) => span.heliocentric(planet, tt),
         };
         frame::ecliptic_j2000_from_icrs() * place
+    }
+    /// Points of the orbit that a planet or the Earth (`None`) is running round at this instant,
+    /// au, in the mean ecliptic of J2000, evenly in eccentric anomaly from perihelion on. Empty
+    /// for the Sun and the Moon.
+    pub fn orbit(&self, body: Option<Body>, points: usize) -> Vec<Vector> {
+        let (place, velocity) = match body {
+            None => (self.centre.place, self.centre.velocity),
+            Some(Body::Sun | Body::Moon) => return Vec::new(),
+            Some(planet) => self
+                .centre
+                .span
+                .heliocentric_with_velocity(planet, self.centre.tt),
+        };
+        let turn = frame::ecliptic_j2000_from_icrs();
+        orbit::ellipse(turn * place, turn * velocity, points)
     }
 
     pub(super) fn centre(&self) -> &Vantage<'a> {

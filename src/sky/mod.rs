@@ -12,6 +12,7 @@ mod epoch;
 pub mod frame;
 pub mod magnitude;
 mod observer;
+mod orbit;
 mod phase;
 pub mod refraction;
 pub mod stars;

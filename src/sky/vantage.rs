@@ -136,8 +136,8 @@ fn sun_velocity(tt: Tt) -> Vector {
 
 #[cfg(test)]
 mod tests {
-    use super::{aberrated, deflected};
-    use crate::measure::Vector;
+    use super::{aberrated, deflected, sun_velocity};
+    use crate::measure::{Angle, Tt, Vector};
 
     fn assert_close(actual: Vector, expected: Vector, tolerance: f64, what: &str) {
         let difference = (actual - expected).length();
@@ -185,5 +185,45 @@ mod tests {
             1e-12,
             "t_ldsun",
         );
+    }
+
+    // Einstein 1916: 1.75 arcsec at the limb (959.6 arcsec from the centre) at 1 au; behind the
+    // disc it must stay bounded.
+    #[test]
+    fn deflection_at_the_limb_is_einsteins() {
+        let observer = Vector::new(-1.0, 0.0, 0.0);
+        let bent_arcsec = |from_centre_arcsec: f64| {
+            let from_centre = Angle::from_arcsec(from_centre_arcsec);
+            let star = Vector::from_spherical(from_centre, Angle::ZERO);
+            let bent = deflected(star, star, observer);
+            bent.longitude().signed().arcsec() - from_centre_arcsec
+        };
+        assert!((bent_arcsec(959.6) - 1.75).abs() < 0.005, "at the limb");
+        for behind_arcsec in [0.0, 1.0, 100.0, 500.0] {
+            assert!(
+                (0.0..6.0).contains(&bent_arcsec(behind_arcsec)),
+                "behind the disc"
+            );
+        }
+    }
+
+    // IAU SOFA's epv00, the Earth about the barycentre less the Earth about the Sun: the Sun's
+    // velocity to millimetres a second. 2 m/s is what the doc comment states.
+    #[test]
+    fn the_suns_velocity_matches_sofa() {
+        const METRE_PER_SECOND: f64 = 86_400.0 / 149_597_870_700.0;
+        for year in (1900..2100).step_by(7) {
+            let days = (f64::from(year) - 2000.0) * 365.25;
+            let (about_sun, about_barycentre) =
+                sofars::eph::epv00(sofars::consts::DJ00, days).expect("1900 to 2100");
+            let part = |k: usize| about_barycentre[1][k] - about_sun[1][k];
+            let expected = Vector::new(part(0), part(1), part(2));
+            let off = sun_velocity(Tt::from_days_since_j2000(days)) - expected;
+            assert!(off.length() < 2.0 * METRE_PER_SECOND, "{year}: {off:?}");
+            assert!(
+                expected.length() > 8.0 * METRE_PER_SECOND,
+                "{year}: not nothing"
+            );
+        }
     }
 }

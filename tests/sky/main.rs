@@ -6,7 +6,9 @@
 mod common;
 
 mod frames;
+mod handbook;
 mod magnitudes;
 mod places;
 mod refraction;
 mod stars;
+mod views;
