@@ -35,11 +35,22 @@ pub fn grid(from: f64, to: f64, step: f64) -> Vec<f64> {
 /// within one step are found. A jump counts as a crossing at the jump. A zero counts as positive.
 pub fn crossings(function: impl Fn(f64) -> f64, samples: &[f64], tolerance: f64) -> Vec<Crossing> {
     let values: Vec<f64> = samples.iter().map(|at| function(*at)).collect();
+    crossings_of_sampled(function, samples, &values, tolerance)
+}
+
+/// [`crossings`] where the function's values at the samples are already known.
+pub fn crossings_of_sampled(
+    function: impl Fn(f64) -> f64,
+    samples: &[f64],
+    values: &[f64],
+    tolerance: f64,
+) -> Vec<Crossing> {
     let mut found = Vec::new();
     let mut between = |a: f64, fa: f64, b: f64, fb: f64| {
         if (fa < 0.0) != (fb < 0.0) {
+            let at = root(&function, (a, fa), (b, fb), tolerance);
             found.push(Crossing {
-                at: root(&function, (a, fa), (b, fb), tolerance),
+                at,
                 rising: fa < 0.0,
             });
         }
@@ -47,7 +58,7 @@ pub fn crossings(function: impl Fn(f64) -> f64, samples: &[f64], tolerance: f64)
     for k in 1..samples.len() {
         let (a, b) = (samples[k - 1], samples[k]);
         let (fa, fb) = (values[k - 1], values[k]);
-        let turn = turns_towards_zero(samples, &values, k)
+        let turn = turns_towards_zero(values, k)
             .then(|| extremum_between(&function, a, b, fa < 0.0, tolerance))
             .filter(|turn| (turn.value < 0.0) != (fa < 0.0));
         match turn {
@@ -63,14 +74,14 @@ pub fn crossings(function: impl Fn(f64) -> f64, samples: &[f64], tolerance: f64)
 
 /// Whether the step that ends at sample `k` can hide a turn across zero: both ends on one side,
 /// and the neighbouring steps (where there are any) lead towards zero from outside.
-fn turns_towards_zero(samples: &[f64], values: &[f64], k: usize) -> bool {
+fn turns_towards_zero(values: &[f64], k: usize) -> bool {
     let (fa, fb) = (values[k - 1], values[k]);
     if (fa < 0.0) != (fb < 0.0) {
         return false;
     }
     let side = if fa < 0.0 { -1.0 } else { 1.0 };
     let before = k >= 2 && side * values[k - 2] < side * fa;
-    let after = k + 1 < samples.len() && side * values[k + 1] < side * fb;
+    let after = k + 1 < values.len() && side * values[k + 1] < side * fb;
     !before && !after
 }
 

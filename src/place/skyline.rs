@@ -11,6 +11,10 @@ impl Skyline {
     pub fn altitude(&self, _azimuth: Angle) -> Angle {
         todo!()
     }
+    /// The highest altitude that it reaches anywhere.
+    pub fn highest(&self) -> Angle {
+        todo!()
+    }
     /// What blocks there, by its label: an obstacle, or `None` for the measured skyline.
     pub fn label(&self, _azimuth: Angle) -> Option<&str> {
         todo!()

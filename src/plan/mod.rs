@@ -1,7 +1,14 @@
 //! What a night holds: from engine results to a host's questions.
 
+mod coming;
+mod interval;
 mod night;
+mod optics;
+mod survey;
+mod track;
+mod windows;
 
+pub use coming::{Coming, coming};
 pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,
     SunTimes, Window,

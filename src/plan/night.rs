@@ -42,11 +42,11 @@ pub struct NightRequest<'a> {
 pub struct Night {
     /// The evening's date.
     pub date: NaiveDate,
-    /// The Sun's highest point that begins it.
+    /// The Sun's upper culmination that begins it.
     pub start: Moment,
-    /// The Sun's lowest point, where dusk ends and dawn begins.
+    /// The Sun's lower culmination, where dusk ends and dawn begins.
     pub middle: Moment,
-    /// The next highest point.
+    /// The next upper culmination.
     pub end: Moment,
     /// The Sun's times.
     pub sun: SunTimes,
@@ -87,8 +87,11 @@ pub struct BodyNight {
     pub is_up_at_start: bool,
     /// Where it clears or goes behind the skyline, in order.
     pub skyline_events: Vec<SkylineEvent>,
-    /// When it is plain for the eye, in order.
+    /// When it is plain for the eye, in order, through the whole night.
     pub windows: Vec<Window>,
+    /// The same within dusk and within dawn: read them with [`BodyNight::windows_in`].
+    pub(super) dusk_windows: Vec<Window>,
+    pub(super) dawn_windows: Vec<Window>,
 }
 
 /// A body clearing the skyline or going behind it.
@@ -154,8 +157,10 @@ pub struct Window {
     pub best: Best,
 }
 
-/// The moment to show a body at: the highest clearance within the window once the Sun is well
-/// below the rule's limit.
+/// The moment to show a body at: where the lesser of two merits is greatest, the clearance
+/// counted in fists (10°) and the Sun's depth below the body's limit counted in steps of 5°. So
+/// a body that sinks into a darkening sky is shown while it still stands clear, in a sky that
+/// has begun to deepen.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Best {
     /// When.
@@ -164,10 +169,20 @@ pub struct Best {
     pub altitude: Angle,
     /// Clearance.
     pub clearance: Angle,
+    /// The lesser of the two merits.
+    pub merit: f64,
 }
 
-/// When optics may be uncapped: rounded to whole minutes against the user. `None`: no optics
-/// time in that half.
+/// When optics may be uncapped, erring against the user.
+///
+/// The horizon is the lowest one that the Sun could be seen over: the sea's dip from the site's
+/// elevation, never helped by trees or roofs. The upper limb is wholly below it; then follows
+/// the longer of 5 minutes and 1° of depression at dusk, and 10 minutes and 2° before the limb's
+/// return at dawn; rounded to whole minutes of the local clock, later at dusk and earlier at
+/// dawn. Source: common practice of public observing; local rules come first.
+///
+/// `None`: no optics time in that half. Where the Sun is that low already when the night begins
+/// (polar night), `from` is the night's start; `until` its end likewise.
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
 pub struct OpticsTimes {
     /// From, at dusk.
@@ -211,8 +226,8 @@ impl Night {
     ///
     /// # Errors
     /// The date does not exist in the zone, or lies outside the supported years.
-    pub fn plan(_ephemeris: &Ephemeris, _request: &NightRequest<'_>) -> Result<Self, NightError> {
-        todo!()
+    pub fn plan(ephemeris: &Ephemeris, request: &NightRequest<'_>) -> Result<Self, NightError> {
+        super::survey::survey(ephemeris, request)
     }
     /// What a body does in it.
     pub fn body(&self, body: Body) -> Option<&BodyNight> {
@@ -228,8 +243,12 @@ impl Night {
 }
 
 impl BodyNight {
-    /// Its windows within one half, cut at the half's ends with [`Cause::Half`].
-    pub fn windows_in(&self, _night: &Night, _half: Half) -> Vec<Window> {
-        todo!()
+    /// Its windows within one half, cut at the half's ends with [`Cause::Half`], each with the
+    /// best moment of that half.
+    pub fn windows_in(&self, half: Half) -> &[Window] {
+        match half {
+            Half::Dusk => &self.dusk_windows,
+            Half::Dawn => &self.dawn_windows,
+        }
     }
 }

@@ -1,0 +1,6 @@
+//! The night's plan against reference tables and against what must hold by itself.
+
+mod edges;
+mod reference;
+mod rise_set;
+mod windows;
