@@ -67,8 +67,9 @@ fn tolerance_s(year: f64) -> f64 {
     } else if year < SKYFIELD_OBSERVED_TO {
         0.1
     } else {
-        // Measured: MEAS
-        delta_t_uncertainty_s(tt_of_year(year)).mul_add(0.25, 0.2)
+        // Measured: 0.3 s in 2027 (Skyfield's curve starts from its old prediction), 1.4 s in 2050,
+        // 3.2 s in 2100, 6.6 s in 2400: far below the stated uncertainty.
+        delta_t_uncertainty_s(tt_of_year(year)).mul_add(0.1, 0.9)
     }
 }
 
@@ -148,8 +149,8 @@ fn there_is_no_step() {
 #[test]
 fn the_near_future_is_nearly_flat_and_the_far_future_grows() {
     let in_year = |year: f64| delta_t_s(tt_of_year(year));
-    assert_within(in_year(2035.0), 70.5, 1.5, "nearly flat: today's 69.2 s plus a slow rise");
-    assert_within(in_year(2050.0), 73.0, 3.0, "nearly flat: today's 69.2 s plus a slow rise");
+    assert_within(in_year(2035.0), 70.0, 1.0, "nearly flat: today's 69.2 s plus a slow rise");
+    assert_within(in_year(2050.0), 72.5, 2.5, "nearly flat: today's 69.2 s plus a slow rise");
     assert!(in_year(2400.0) > 400.0, "tidal slowing adds minutes by 2400: {}", in_year(2400.0));
 }
 
@@ -162,11 +163,4 @@ fn the_uncertainty_is_least_where_there_are_observations() {
     let future: Vec<f64> = (2030..=2400).step_by(10).map(|year| in_year(f64::from(year))).collect();
     assert!(future.is_sorted_by(|a, b| a < b), "grows with time: {future:?}");
     assert!((3.0..10.0).contains(&future[2]), "2050: {}", future[2]);
-}
-
-#[test]
-fn zz() {
-    for y in [1955.0,1960.0,1965.0,1970.0,2028.0,2030.0,2035.0,2050.0,2075.0,2100.0,2150.0,2200.0,2300.0,2400.0] {
-        println!("{y} {:.3} +- {:.2}", delta_t_s(tt_of_year(y)), delta_t_uncertainty_s(tt_of_year(y)));
-    }
 }
