@@ -5,15 +5,26 @@ use std::fs;
 use std::path::Path;
 
 fn read_refusal(path: &Path) -> String {
-    let sentence = Site::read(path).expect_err("the file must be refused").to_string();
-    assert!(sentence.contains(&path.display().to_string()), "{sentence} must name the file");
+    let sentence = Site::read(path)
+        .expect_err("the file must be refused")
+        .to_string();
+    assert!(
+        sentence.contains(&path.display().to_string()),
+        "{sentence} must name the file"
+    );
     assert!(!sentence.contains('\n'), "{sentence} must be one sentence");
     sentence
 }
 
 fn save_refusal(site: &Site, path: &Path) -> String {
-    let sentence = site.save(path).expect_err("it cannot be written").to_string();
-    assert!(sentence.contains(&path.display().to_string()), "{sentence} must name the file");
+    let sentence = site
+        .save(path)
+        .expect_err("it cannot be written")
+        .to_string();
+    assert!(
+        sentence.contains(&path.display().to_string()),
+        "{sentence} must name the file"
+    );
     sentence
 }
 
@@ -97,7 +108,7 @@ fn what_is_wrong_in_a_file_is_named_with_the_file() {
     assert_eq!(
         read_refusal(&path),
         format!(
-            "{}: line 3, column 21: latitude_deg is 91, but must lie between -90 and 90 degrees",
+            "{}: line 3, column 17: latitude_deg is 91, but must lie between -90 and 90 degrees",
             path.display()
         )
     );

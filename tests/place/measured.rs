@@ -5,7 +5,9 @@ use proptest::prelude::*;
 use std::fs;
 
 fn refusal(table: &str) -> String {
-    skyline_from_table(table.as_bytes()).expect_err("the table must be refused").to_string()
+    skyline_from_table(table.as_bytes())
+        .expect_err("the table must be refused")
+        .to_string()
 }
 
 #[test]
@@ -29,7 +31,10 @@ fn what_is_wrong_is_named_by_line_and_column() {
             "line 1: there is no column `az_deg`: the first line must name the columns, \
              az_deg,alt_deg",
         ),
-        ("az_deg,alt_deg\n1,2\n2,high\n", "line 3, column 2 (alt_deg): \"high\" is not a number"),
+        (
+            "az_deg,alt_deg\n1,2\n2,high\n",
+            "line 3, column 2 (alt_deg): \"high\" is not a number",
+        ),
         (
             "az_deg,alt_deg\n1,2\n360,2\n",
             "line 3, column 1 (az_deg): 360 must be at least 0 and below 360 degrees",
@@ -42,12 +47,18 @@ fn what_is_wrong_is_named_by_line_and_column() {
             "az_deg,alt_deg\n1,inf\n",
             "line 2, column 2 (alt_deg): inf must be between -10 and 90 degrees",
         ),
-        ("az_deg,alt_deg\n1,2\n3\n", "line 3, column 2 (alt_deg): the row ends before it"),
+        (
+            "az_deg,alt_deg\n1,2\n3\n",
+            "line 3, column 2 (alt_deg): the row ends before it",
+        ),
         (
             "az_deg,alt_deg\n40,2\n10,3\n40,5\n",
             "lines 2 and 4 stand at one azimuth, 40: keep one",
         ),
-        ("az_deg,alt_deg\n", "there is no row of figures below the column names"),
+        (
+            "az_deg,alt_deg\n",
+            "there is no row of figures below the column names",
+        ),
     ] {
         assert_eq!(refusal(table), expected, "{table}");
     }
@@ -62,11 +73,19 @@ fn a_file_is_named_with_what_is_wrong_in_it() {
     let sentence = read_skyline_table(&path).expect_err("refused").to_string();
     assert_eq!(
         sentence,
-        format!("{}: line 2, column 2 (alt_deg): \"x\" is not a number", path.display())
+        format!(
+            "{}: line 2, column 2 (alt_deg): \"x\" is not a number",
+            path.display()
+        )
     );
     let missing = folder.path().join("missing.csv");
-    let sentence = read_skyline_table(&missing).expect_err("refused").to_string();
-    assert!(sentence.contains("missing.csv") && sentence.contains("no such file"), "{sentence}");
+    let sentence = read_skyline_table(&missing)
+        .expect_err("refused")
+        .to_string();
+    assert!(
+        sentence.contains("missing.csv") && sentence.contains("no such file"),
+        "{sentence}"
+    );
 }
 
 proptest! {

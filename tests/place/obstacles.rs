@@ -14,7 +14,12 @@ fn at(east_m: f64, north_m: f64) -> PlanPoint {
     PlanPoint { east_m, north_m }
 }
 fn spot(east_m: f64, north_m: f64) -> Spot {
-    Spot { name: "here".into(), east_m, north_m, eye_height_m: EYE_M }
+    Spot {
+        name: "here".into(),
+        east_m,
+        north_m,
+        eye_height_m: EYE_M,
+    }
 }
 fn skyline(obstacles: &[Obstacle], spot: &Spot) -> Skyline {
     let mut site = Site::new("Test", 50.0, 0.0, chrono_tz::Tz::UTC).expect("a valid site");
@@ -22,10 +27,22 @@ fn skyline(obstacles: &[Obstacle], spot: &Spot) -> Skyline {
     site.skyline(spot)
 }
 fn tree(east_m: f64, north_m: f64, height_m: f64, width_m: f64) -> Obstacle {
-    Obstacle::Tree { label: "tree".into(), east_m, north_m, base_m: 0.0, height_m, width_m }
+    Obstacle::Tree {
+        label: "tree".into(),
+        east_m,
+        north_m,
+        base_m: 0.0,
+        height_m,
+        width_m,
+    }
 }
 fn wall(line_m: &[PlanPoint], height_m: f64) -> Obstacle {
-    Obstacle::Wall { label: "wall".into(), line_m: line_m.to_vec(), base_m: 0.0, height_m }
+    Obstacle::Wall {
+        label: "wall".into(),
+        line_m: line_m.to_vec(),
+        base_m: 0.0,
+        height_m,
+    }
 }
 fn altitude_deg(skyline: &Skyline, azimuth_deg: f64) -> f64 {
     skyline.altitude(degrees(azimuth_deg)).degrees()
@@ -38,11 +55,24 @@ fn elevation_deg(up_m: f64, distance_m: f64) -> f64 {
 #[test]
 fn a_long_wall_falls_away_on_both_sides() {
     // 2.2 m high, 30 m due west: 0.6 m over the eye at 30 m, and at 30 m / cos 45° further on.
-    let seen = skyline(&[wall(&[at(-30.0, -60.0), at(-30.0, 60.0)], 2.2)], &spot(0.0, 0.0));
-    assert_within(altitude_deg(&seen, 270.0), elevation_deg(0.6, 30.0), 1e-9, "hand trigonometry");
+    let seen = skyline(
+        &[wall(&[at(-30.0, -60.0), at(-30.0, 60.0)], 2.2)],
+        &spot(0.0, 0.0),
+    );
+    assert_within(
+        altitude_deg(&seen, 270.0),
+        elevation_deg(0.6, 30.0),
+        1e-9,
+        "hand trigonometry",
+    );
     let aside = 30.0 / 45f64.to_radians().cos();
     for azimuth in [225.0, 315.0] {
-        assert_within(altitude_deg(&seen, azimuth), elevation_deg(0.6, aside), 1e-9, "hand");
+        assert_within(
+            altitude_deg(&seen, azimuth),
+            elevation_deg(0.6, aside),
+            1e-9,
+            "hand",
+        );
     }
     // Its ends stand at atan(60 / 30) on either side of west.
     let reach = 60f64.atan2(30.0).to_degrees();
@@ -50,7 +80,12 @@ fn a_long_wall_falls_away_on_both_sides() {
     assert!(altitude_deg(&seen, 270.0 + reach - 1e-6) > 0.4);
     assert_eq!(seen.label(degrees(270.0)), Some("wall"));
     assert_eq!(seen.label(degrees(90.0)), None);
-    assert_within(seen.highest().degrees(), elevation_deg(0.6, 30.0), 1e-9, "its nearest point");
+    assert_within(
+        seen.highest().degrees(),
+        elevation_deg(0.6, 30.0),
+        1e-9,
+        "its nearest point",
+    );
 }
 
 #[test]
@@ -58,29 +93,56 @@ fn a_crown_has_a_flat_top_and_straight_shoulders() {
     let seen = skyline(&[tree(-42.0, 8.0, 17.0, 12.0)], &spot(0.0, 0.0));
     let distance = 42f64.hypot(8.0);
     let axis = (-42f64).atan2(8.0).to_degrees() + 360.0;
-    assert_within(altitude_deg(&seen, axis), elevation_deg(15.4, distance), 1e-9, "its top");
+    assert_within(
+        altitude_deg(&seen, axis),
+        elevation_deg(15.4, distance),
+        1e-9,
+        "its top",
+    );
     // The corner of the top, 3 m aside; the shoulder, 6 m aside and 10.2 m up.
     let top_corner = axis + 3f64.atan2(distance).to_degrees();
     let expected = elevation_deg(15.4, distance.hypot(3.0));
-    assert_within(altitude_deg(&seen, top_corner), expected, 1e-9, "its top's corner");
+    assert_within(
+        altitude_deg(&seen, top_corner),
+        expected,
+        1e-9,
+        "its top's corner",
+    );
     let edge = axis - 6f64.atan2(distance).to_degrees();
     let expected = elevation_deg(0.6 * 17.0 - 1.6, distance.hypot(6.0));
-    assert_within(altitude_deg(&seen, edge + 1e-9), expected, 1e-6, "its shoulder");
+    assert_within(
+        altitude_deg(&seen, edge + 1e-9),
+        expected,
+        1e-6,
+        "its shoulder",
+    );
     assert_eq!(altitude_deg(&seen, edge - 1e-9), 0.0, "beside it");
     // Half-way down the shoulder, 4.5 m aside, the height is half-way too.
     let half = axis + 4.5f64.atan2(distance).to_degrees();
     let expected = elevation_deg(0.8 * 17.0 - 1.6, distance.hypot(4.5));
-    assert_within(altitude_deg(&seen, half), expected, 1e-9, "half-way down its shoulder");
+    assert_within(
+        altitude_deg(&seen, half),
+        expected,
+        1e-9,
+        "half-way down its shoulder",
+    );
     assert_eq!(seen.breaks().len(), 4, "two edges and two corners");
 }
 
 #[test]
 fn a_gabled_hall_shows_its_ridge_its_gable_and_its_eaves() {
     // 20 m by 12 m, ridge along the longer axis at 26 m south of the mark.
-    let corners = [(-60.0, -20.0), (-40.0, -20.0), (-40.0, -32.0), (-60.0, -32.0)];
+    let corners = [
+        (-60.0, -20.0),
+        (-40.0, -20.0),
+        (-40.0, -32.0),
+        (-60.0, -32.0),
+    ];
     let hall = |turn: usize| Obstacle::Building {
         label: "hall".into(),
-        corners_m: (0..4).map(|k| at(corners[(k + turn) % 4].0, corners[(k + turn) % 4].1)).collect(),
+        corners_m: (0..4)
+            .map(|k| at(corners[(k + turn) % 4].0, corners[(k + turn) % 4].1))
+            .collect(),
         base_m: 0.0,
         eaves_m: 5.5,
         ridge_m: Some(8.0),
@@ -89,16 +151,41 @@ fn a_gabled_hall_shows_its_ridge_its_gable_and_its_eaves() {
         let seen = skyline(&[hall(turn)], &spot(0.0, 0.0));
         let azimuth = |east: f64, north: f64| f64::atan2(east, north).to_degrees() + 360.0;
         let ridge_end = altitude_deg(&seen, azimuth(-40.0, -26.0));
-        assert_within(ridge_end, elevation_deg(6.4, 40f64.hypot(26.0)), 1e-6, "near ridge end");
+        assert_within(
+            ridge_end,
+            elevation_deg(6.4, 40f64.hypot(26.0)),
+            1e-6,
+            "near ridge end",
+        );
         let ridge_middle = altitude_deg(&seen, azimuth(-50.0, -26.0));
-        assert_within(ridge_middle, elevation_deg(6.4, 50f64.hypot(26.0)), 1e-9, "ridge");
+        assert_within(
+            ridge_middle,
+            elevation_deg(6.4, 50f64.hypot(26.0)),
+            1e-9,
+            "ridge",
+        );
         // The near gable's far corner: eaves, 3.9 m over the eye.
         let corner = altitude_deg(&seen, azimuth(-40.0, -32.0) + 1e-9);
-        assert_within(corner, elevation_deg(3.9, 40f64.hypot(32.0)), 1e-6, "eaves at the corner");
+        assert_within(
+            corner,
+            elevation_deg(3.9, 40f64.hypot(32.0)),
+            1e-6,
+            "eaves at the corner",
+        );
         // Half-way up that gable's verge.
         let verge = altitude_deg(&seen, azimuth(-40.0, -29.0));
-        assert_within(verge, elevation_deg(5.15, 40f64.hypot(29.0)), 1e-9, "middle of the verge");
-        assert_within(seen.highest().degrees(), ridge_end, 1e-6, "nothing is higher");
+        assert_within(
+            verge,
+            elevation_deg(5.15, 40f64.hypot(29.0)),
+            1e-9,
+            "middle of the verge",
+        );
+        assert_within(
+            seen.highest().degrees(),
+            ridge_end,
+            1e-6,
+            "nothing is higher",
+        );
     }
 }
 
@@ -112,12 +199,25 @@ fn a_flat_roof_is_its_eaves_and_ground_and_eye_heights_count() {
         ridge_m: None,
     };
     let seen = |base_m: f64, eye_height_m: f64| {
-        let spot = Spot { eye_height_m, ..spot(0.0, 0.0) };
+        let spot = Spot {
+            eye_height_m,
+            ..spot(0.0, 0.0)
+        };
         altitude_deg(&skyline(&[block(base_m)], &spot), 0.0)
     };
     assert_within(seen(0.0, 1.6), elevation_deg(4.4, 20.0), 1e-9, "near eaves");
-    assert_within(seen(2.0, 1.6), elevation_deg(6.4, 20.0), 1e-9, "on higher ground");
-    assert_within(seen(0.0, 3.0), elevation_deg(3.0, 20.0), 1e-9, "from a higher eye");
+    assert_within(
+        seen(2.0, 1.6),
+        elevation_deg(6.4, 20.0),
+        1e-9,
+        "on higher ground",
+    );
+    assert_within(
+        seen(0.0, 3.0),
+        elevation_deg(3.0, 20.0),
+        1e-9,
+        "from a higher eye",
+    );
     assert_eq!(seen(-5.0, 1.6), 0.0, "below the eye it hides no sky");
 }
 
@@ -130,7 +230,12 @@ fn a_narrow_post_is_in_the_breaks() {
     };
     assert_within((*fourth - *first).degrees(), 0.0955, 1e-4, "its width");
     let middle = (*second + *third) * 0.5;
-    assert_within(seen.altitude(middle).degrees(), elevation_deg(6.4, 60.0), 1e-9, "its top");
+    assert_within(
+        seen.altitude(middle).degrees(),
+        elevation_deg(6.4, 60.0),
+        1e-9,
+        "its top",
+    );
     let features = seen.features();
     assert_eq!((features.len(), &*features[0].label), (1, "tree"));
     assert_within(features[0].azimuth.degrees(), 90.0, 1e-9, "due east");
@@ -139,13 +244,28 @@ fn a_narrow_post_is_in_the_breaks() {
 #[test]
 fn what_stands_across_north_is_one_thing() {
     let seen = skyline(&[tree(0.0, 50.0, 12.0, 8.0)], &spot(0.0, 0.0));
-    assert_within(altitude_deg(&seen, 359.9), altitude_deg(&seen, 0.1), 1e-9, "both sides");
+    assert_within(
+        altitude_deg(&seen, 359.9),
+        altitude_deg(&seen, 0.1),
+        1e-9,
+        "both sides",
+    );
     let features = seen.features();
     assert_eq!(features.len(), 1, "{features:?}");
     let from_north = features[0].azimuth.signed().degrees();
     assert_within(from_north, 0.0, 1e-9, "due north");
-    assert_within(features[0].top.degrees(), elevation_deg(10.4, 50.0), 1e-9, "its top");
-    assert_eq!(seen.breaks().len(), 4, "north itself is no break: {:?}", seen.breaks());
+    assert_within(
+        features[0].top.degrees(),
+        elevation_deg(10.4, 50.0),
+        1e-9,
+        "its top",
+    );
+    assert_eq!(
+        seen.breaks().len(),
+        4,
+        "north itself is no break: {:?}",
+        seen.breaks()
+    );
 }
 
 #[test]
@@ -180,20 +300,39 @@ fn shot_deg(obstacle: &Obstacle, from: &Spot, azimuth_deg: f64) -> f64 {
         })
     };
     let edges: Vec<f64> = match obstacle {
-        Obstacle::Wall { line_m, height_m, .. } => {
-            line_m.array_windows().map(|[a, b]| edge((*a, *height_m), (*b, *height_m))).collect()
-        }
-        Obstacle::Tree { east_m, north_m, height_m, width_m, .. } => {
+        Obstacle::Wall {
+            line_m, height_m, ..
+        } => line_m
+            .array_windows()
+            .map(|[a, b]| edge((*a, *height_m), (*b, *height_m)))
+            .collect(),
+        Obstacle::Tree {
+            east_m,
+            north_m,
+            height_m,
+            width_m,
+            ..
+        } => {
             let (de, dn) = (east_m - from.east_m, north_m - from.north_m);
             let distance = de.hypot(dn);
             let point = |share: f64, height: f64| {
                 let aside = share * width_m / distance;
-                (at(east_m + aside * dn, north_m - aside * de), height * height_m)
+                (
+                    at(east_m + aside * dn, north_m - aside * de),
+                    height * height_m,
+                )
             };
-            let outline = [point(-0.5, 0.6), point(-0.25, 1.0), point(0.25, 1.0), point(0.5, 0.6)];
+            let outline = [
+                point(-0.5, 0.6),
+                point(-0.25, 1.0),
+                point(0.25, 1.0),
+                point(0.5, 0.6),
+            ];
             outline.array_windows().map(|[a, b]| edge(*a, *b)).collect()
         }
-        Obstacle::Building { corners_m, eaves_m, .. } => (0..corners_m.len())
+        Obstacle::Building {
+            corners_m, eaves_m, ..
+        } => (0..corners_m.len())
             .map(|k| {
                 let next = corners_m[(k + 1) % corners_m.len()];
                 edge((corners_m[k], *eaves_m), (next, *eaves_m))

@@ -9,7 +9,10 @@ fn degrees(value: f64) -> Angle {
     Angle::from_degrees(value)
 }
 fn measured(points: &[(f64, f64)]) -> Skyline {
-    let points: Vec<_> = points.iter().map(|(a, h)| (degrees(*a), degrees(*h))).collect();
+    let points: Vec<_> = points
+        .iter()
+        .map(|(a, h)| (degrees(*a), degrees(*h)))
+        .collect();
     Skyline::measured(&points)
 }
 fn altitude_deg(skyline: &Skyline, azimuth_deg: f64) -> f64 {
@@ -19,12 +22,30 @@ fn altitude_deg(skyline: &Skyline, azimuth_deg: f64) -> f64 {
 #[test]
 fn it_is_straight_between_points_and_wraps_at_north() {
     let skyline = measured(&[(20.0, 2.0), (180.0, 4.0), (340.0, 6.0)]);
-    for (azimuth, expected) in
-        [(20.0, 2.0), (100.0, 3.0), (180.0, 4.0), (260.0, 5.0), (340.0, 6.0), (350.0, 5.0), (0.0, 4.0), (10.0, 3.0), (-10.0, 5.0), (370.0, 3.0)]
-    {
-        assert_within(altitude_deg(&skyline, azimuth), expected, 1e-9, "straight line by hand");
+    for (azimuth, expected) in [
+        (20.0, 2.0),
+        (100.0, 3.0),
+        (180.0, 4.0),
+        (260.0, 5.0),
+        (340.0, 6.0),
+        (350.0, 5.0),
+        (0.0, 4.0),
+        (10.0, 3.0),
+        (-10.0, 5.0),
+        (370.0, 3.0),
+    ] {
+        assert_within(
+            altitude_deg(&skyline, azimuth),
+            expected,
+            1e-9,
+            "straight line by hand",
+        );
     }
-    let breaks: Vec<f64> = skyline.breaks().iter().map(|b| b.degrees().round()).collect();
+    let breaks: Vec<f64> = skyline
+        .breaks()
+        .iter()
+        .map(|b| b.degrees().round())
+        .collect();
     assert_eq!(breaks, [20.0, 180.0, 340.0], "north is no bend");
     assert_within(skyline.highest().degrees(), 6.0, 1e-9, "its highest point");
 }
@@ -32,7 +53,12 @@ fn it_is_straight_between_points_and_wraps_at_north() {
 #[test]
 fn a_point_at_north_is_a_bend() {
     let skyline = measured(&[(0.0, 5.0), (90.0, 1.0), (270.0, 1.0)]);
-    assert_within(altitude_deg(&skyline, 315.0), 3.0, 1e-9, "straight line by hand");
+    assert_within(
+        altitude_deg(&skyline, 315.0),
+        3.0,
+        1e-9,
+        "straight line by hand",
+    );
     assert_eq!(skyline.breaks().first(), Some(&Angle::ZERO));
     assert_eq!(skyline.breaks().len(), 3);
 }
@@ -50,10 +76,21 @@ fn one_point_is_level_none_is_open_and_below_zero_counts_as_zero() {
     let dipping = measured(&[(0.0, -2.0), (90.0, 2.0), (180.0, 2.0), (270.0, -2.0)]);
     assert_eq!(altitude_deg(&dipping, 30.0), 0.0);
     assert_within(altitude_deg(&dipping, 67.5), 1.0, 1e-9, "half-way up");
-    assert!(dipping.breaks().iter().any(|b| (b.degrees() - 45.0).abs() < 1e-9));
+    assert!(
+        dipping
+            .breaks()
+            .iter()
+            .any(|b| (b.degrees() - 45.0).abs() < 1e-9)
+    );
     // Odd input is put in order rather than trusted.
-    assert_eq!(measured(&[(340.0, 6.0), (20.0, 2.0)]), measured(&[(20.0, 2.0), (340.0, 6.0)]));
-    assert_eq!(measured(&[(f64::NAN, 6.0), (20.0, f64::INFINITY)]), Skyline::open());
+    assert_eq!(
+        measured(&[(340.0, 6.0), (20.0, 2.0)]),
+        measured(&[(20.0, 2.0), (340.0, 6.0)])
+    );
+    assert_eq!(
+        measured(&[(f64::NAN, 6.0), (20.0, f64::INFINITY)]),
+        Skyline::open()
+    );
 }
 
 #[test]
@@ -66,11 +103,17 @@ fn the_outline_goes_once_round_with_both_sides_of_each_jump() {
             assert!(azimuths.is_sorted(), "ascending");
             assert_within(azimuths[0], 0.0, 1e-12, "from north");
             assert_within(azimuths[azimuths.len() - 1], 360.0, 1e-9, "to north");
-            let widest = azimuths.array_windows().map(|[a, b]| b - a).fold(0.0, f64::max);
+            let widest = azimuths
+                .array_windows()
+                .map(|[a, b]| b - a)
+                .fold(0.0, f64::max);
             assert!(widest <= 0.5 + 1e-9, "{widest}");
             for edge in skyline.breaks() {
                 let within = degrees(1e-7);
-                for side in [skyline.altitude(*edge - within), skyline.altitude(*edge + within)] {
+                for side in [
+                    skyline.altitude(*edge - within),
+                    skyline.altitude(*edge + within),
+                ] {
                     let is_drawn = outline.iter().any(|(a, h)| {
                         (*a - *edge).signed().abs() < within && (*h - side).abs().degrees() < 1e-4
                     });
@@ -92,10 +135,17 @@ fn between_neighbouring_breaks_it_is_smooth() {
                 let step = (*to - *from) / parts;
                 let value = |k: f64| skyline.altitude(*from + step * k).radians();
                 let points: Vec<f64> = (1..parts as usize - 1).map(|k| value(k as f64)).collect();
-                points.array_windows().map(|[a, b, c]| (a - 2.0 * b + c).abs()).fold(0.0, f64::max)
+                points
+                    .array_windows()
+                    .map(|[a, b, c]| (a - 2.0 * b + c).abs())
+                    .fold(0.0, f64::max)
             };
             let (coarse, fine) = (second_difference(20.0), second_difference(200.0));
-            assert!(fine < 0.03 * coarse + 1e-13, "{}: {coarse:e} {fine:e}", from.degrees());
+            assert!(
+                fine < 0.03 * coarse + 1e-13,
+                "{}: {coarse:e} {fine:e}",
+                from.degrees()
+            );
         }
     }
 }

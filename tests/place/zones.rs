@@ -5,7 +5,10 @@ use dimmet::measure::Angle;
 use dimmet::place::zone;
 
 fn suggested(latitude_deg: f64, longitude_deg: f64) -> Option<Tz> {
-    zone::suggestion(Angle::from_degrees(latitude_deg), Angle::from_degrees(longitude_deg))
+    zone::suggestion(
+        Angle::from_degrees(latitude_deg),
+        Angle::from_degrees(longitude_deg),
+    )
 }
 
 #[test]
@@ -38,7 +41,10 @@ fn a_misspelled_zone_is_answered_with_the_nearest_names() {
         refusal("qqqqqqqqqqqq"),
         "there is no time zone \"qqqqqqqqqqqq\"; give an IANA name such as Europe/London"
     );
-    assert!(refusal(&"x".repeat(100_000)).len() < 300, "a long name is not repeated whole");
+    assert!(
+        refusal(&"x".repeat(100_000)).len() < 300,
+        "a long name is not repeated whole"
+    );
 }
 
 #[test]
@@ -52,13 +58,20 @@ fn places_get_their_zone() {
         (-13.83, -171.76, Tz::Pacific__Apia),
     ] {
         assert_eq!(suggested(latitude_deg, longitude_deg), Some(expected));
-        assert_eq!(suggested(latitude_deg, longitude_deg + 360.0), Some(expected), "a turn on");
+        assert_eq!(
+            suggested(latitude_deg, longitude_deg + 360.0),
+            Some(expected),
+            "a turn on"
+        );
     }
     assert_eq!(suggested(0.0, -30.0), Some(Tz::Etc__GMTPlus2), "at sea");
     assert_eq!(suggested(f64::NAN, 0.0), None);
     assert_eq!(suggested(0.0, f64::INFINITY), None);
     assert_eq!(suggested(91.0, 0.0), None);
     for latitude_deg in [-90.0, 90.0] {
-        assert!(suggested(latitude_deg, 180.0).is_some(), "the poles have a zone");
+        assert!(
+            suggested(latitude_deg, 180.0).is_some(),
+            "the poles have a zone"
+        );
     }
 }
