@@ -101,7 +101,9 @@ mod tests {
             let path = entry.expect("a folder entry").path();
             if path.is_dir() {
                 sources(&path, text);
-            } else if path.extension().is_some_and(|extension| extension == "rs") {
+            } else if path.extension().is_some_and(|extension| extension == "rs")
+                && !path.ends_with("words/mod.rs")
+            {
                 text.push_str(&std::fs::read_to_string(path).expect("a source file"));
             }
         }
@@ -116,7 +118,7 @@ mod tests {
             &mut text,
         );
         let mut named = 0;
-        for call in ["words.text(", "words.text_with(", ".text_with::<&str>("] {
+        for call in [".text(", ".text_with(", ".text_with::<&str>("] {
             for rest in text.split(call).skip(1) {
                 let Some(id) = rest
                     .trim_start()
