@@ -97,4 +97,5 @@ def main():
         print("| " + " | ".join(figures) + " |")
 
 
-main()
+if __name__ == "__main__":
+    main()

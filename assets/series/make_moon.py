@@ -21,6 +21,9 @@ MEAN_DISTANCE_KM = 385000.0
 VARIABLES = {"L": "longitude", "B": "latitude", "R": "distance"}
 T_MAX = max(-FIRST_DAY, LAST_DAY) / 36525.0
 
+# W1 of the fit to DE405, rad, by powers of a century (the package gives the same).
+MEAN_LONGITUDE = (3.8103440908308803, 8399.68473007193, -3.318952042550094e-05,
+                  3.1102494491060616e-08, -2.0328237648922845e-10)
 # Laskar's precession of the ecliptic, as in the notes to ELP/MPP02 (Chapront and Francou 2002).
 P = (0.10180391e-4, 0.47020439e-6, -0.5417367e-9, -0.2507948e-11, 0.463486e-14)
 Q = (-0.113469002e-3, 0.12372674e-6, 0.12654170e-8, -0.1371808e-11, -0.320334e-14)
@@ -41,7 +44,9 @@ def read_package(path):
         for power, rows in data[variable].items():
             if rows:
                 series[(variable, int(power))] = numpy.array(rows)
-    return numpy.array(data["W1"]), series
+    if not numpy.allclose(data["W1"], MEAN_LONGITUDE, rtol=1e-15):
+        raise SystemExit("the package holds another fit")
+    return series
 
 
 def read_asset():
@@ -65,11 +70,11 @@ def sums(series, centuries):
     return found
 
 
-def geocentric_km(mean, series, centuries):
+def geocentric_km(series, centuries):
     """Places on the axes of the ICRS."""
     t = centuries
     found = sums(series, t)
-    longitude = sum(c * t**k for k, c in enumerate(mean)) + found["L"] * ARCSEC
+    longitude = sum(c * t**k for k, c in enumerate(MEAN_LONGITUDE)) + found["L"] * ARCSEC
     latitude = found["B"] * ARCSEC
     x, y, z = found["R"] * numpy.array([
         numpy.cos(longitude) * numpy.cos(latitude),
@@ -125,20 +130,20 @@ def compare(place, days, name):
 
 
 def main(path):
-    mean, full = read_package(path)
+    full = read_package(path)
     days = numpy.sort(numpy.random.default_rng(2002).uniform(FIRST_DAY, LAST_DAY, 1500))
     centuries = days / 36525
-    whole = geocentric_km(mean, full, centuries)
+    whole = geocentric_km(full, centuries)
     low, high = 1e-4, ALLOWED_ARCSEC
     while high / low > 1.1:
         middle = (low * high) ** 0.5
-        if apart_arcsec(geocentric_km(mean, trimmed(full, middle), centuries), whole).max() <= ALLOWED_ARCSEC:
+        if apart_arcsec(geocentric_km(trimmed(full, middle), centuries), whole).max() <= ALLOWED_ARCSEC:
             low = middle
         else:
             high = middle
     write(trimmed(full, low))
     kept = read_asset()
-    place = geocentric_km(mean, kept, centuries)
+    place = geocentric_km(kept, centuries)
     print(f"{sum(map(len, kept.values()))} of {sum(map(len, full.values()))} terms, threshold {low:.4f} arcsec, "
           f"loss {apart_arcsec(place, whole).max():.3f} arcsec")
     compare(whole, days, "full")

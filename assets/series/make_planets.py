@@ -13,7 +13,8 @@ import sys
 
 import numpy
 
-from vsop87 import ARCSEC, DAYS_PER_MILLENNIUM, FIRST_DAY, HERE, LAST_DAY, PLANETS, evaluate, read_crate
+from vsop87 import (ARCSEC, DAYS_PER_MILLENNIUM, FIRST_DAY, HERE, LAST_DAY, PLANETS, evaluate,
+                    read_asset, read_crate)
 
 ALLOWED = 0.005 * ARCSEC
 # Least distance from the Earth, au, rounded down.
@@ -50,7 +51,6 @@ def main(source_folder):
             else:
                 high = middle
         kept, _ = split(full, low)
-        lost = loss(full, low, days)
         count = sum(map(len, kept.values()))
         of = sum(map(len, full.values()))
         with open(HERE / f"{planet}.txt", "w") as out:
@@ -61,7 +61,11 @@ def main(source_folder):
                     phase = f"{b:.{digits}f}"  # good to the last digit of A
                     out.write(f"{axis} {power} {a * 1e11:.0f} {phase} {c:.11f}".rstrip("0"))
                     out.write("\n")
+        # Of the file as written, with its rounded amplitudes and phases.
+        difference = evaluate(read_asset(planet), days) - evaluate(full, days)
+        lost = numpy.linalg.norm(difference, axis=0).max()
         print(f"| {planet} | {of} | {count} | {lost:.1e} | {lost / LEAST_DISTANCE_AU[planet] / ARCSEC:.4f} |")
 
 
-main(sys.argv[1])
+if __name__ == "__main__":
+    main(sys.argv[1])

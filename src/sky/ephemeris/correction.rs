@@ -64,7 +64,11 @@ pub fn of(planet: &str) -> Option<Correction> {
 fn numbers(columns: &[&str]) -> Vec<f64> {
     columns
         .iter()
-        .map(|column| column.parse().expect("a number of the compiled-in corrections"))
+        .map(|column| {
+            column
+                .parse()
+                .expect("a number of the compiled-in corrections")
+        })
         .collect()
 }
 

@@ -102,3 +102,40 @@ fn polynomial(coefficients: &[f64], time: f64) -> f64 {
         .rev()
         .fold(0.0, |sum, coefficient| sum * time + coefficient)
 }
+
+#[cfg(test)]
+mod tests {
+    use super::{Tt, Vector, j2000_from_date, of_date};
+
+    /// Places in the ecliptic of J2000, km, printed with the theory's own program for its fit to
+    /// DE405 (from memory; the package's untrimmed coefficients give every digit of them).
+    const CHECK_VALUES: [(f64, Vector); 3] = [
+        (
+            2_500_000.5,
+            Vector::new(274_034.591_03, 252_067.536_89, -18_998.755_19),
+        ),
+        (
+            2_300_000.5,
+            Vector::new(353_104.313_59, -195_254.118_08, 34_943.545_92),
+        ),
+        (
+            2_100_000.5,
+            Vector::new(-19_851.276_74, -385_646.177_17, -27_597.661_34),
+        ),
+    ];
+
+    #[test]
+    fn the_trimmed_series_match_the_published_check_values() {
+        // 0.1 arcsec, the measured loss, at the greatest distance of the three.
+        const TOLERANCE_KM: f64 = 0.2;
+        for (julian_date, expected) in CHECK_VALUES {
+            let centuries = Tt::from_julian_date(julian_date).centuries_since_j2000();
+            let actual = j2000_from_date(centuries) * of_date(centuries);
+            let missed = (actual - expected).length();
+            assert!(
+                missed < TOLERANCE_KM,
+                "{missed} km off at JD {julian_date}: {actual:?}"
+            );
+        }
+    }
+}

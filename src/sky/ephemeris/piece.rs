@@ -115,7 +115,6 @@ mod tests {
             (Quantity::Moon, 0.0023),
         ] {
             let miss = greatest_miss(quantity, least_distance_au).arcsec();
-            println!("{quantity:?} {miss:.5}");
             assert!(miss < 0.005, "{quantity:?} misses by {miss} arcsec");
         }
     }
@@ -123,7 +122,6 @@ mod tests {
     #[test]
     fn pieces_of_the_nutation_keep_within_a_tenth_of_a_milliarcsecond() {
         let miss = greatest_miss(Quantity::Nutation, 1.0).arcsec();
-        println!("nutation {miss:.6}");
         assert!(miss < 1e-4, "the nutation misses by {miss} arcsec");
     }
 }

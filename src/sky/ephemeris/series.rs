@@ -81,7 +81,11 @@ impl PoissonSeries {
     pub fn value(&self, time: f64) -> Vector {
         let mut sums = [0.0; 3 * POWERS];
         let mut terms = self.terms.as_slice();
-        for Argument { rates, terms: count } in &self.arguments {
+        for Argument {
+            rates,
+            terms: count,
+        } in &self.arguments
+        {
             let [linear, square, cube, fourth] = rates;
             let angle = time * (linear + time * (square + time * (cube + time * fourth)));
             let (sine, cosine) = angle.sin_cos();
@@ -142,14 +146,26 @@ mod tests {
         let argument_z = 0.2 + 3.5 + 0.3 * 0.49 - 0.7f64.powi(4);
         let value = PoissonSeries::parse(text, READING).value(0.7);
         assert!((value.x - expected_x).abs() < 1e-14, "x {}", value.x);
-        assert!((value.y - 0.49 * 4.0 * 1f64.cos()).abs() < 1e-14, "y {}", value.y);
-        assert!((value.z - 2.0 * argument_z.cos()).abs() < 1e-14, "z {}", value.z);
+        assert!(
+            (value.y - 0.49 * 4.0 * 1f64.cos()).abs() < 1e-14,
+            "y {}",
+            value.y
+        );
+        assert!(
+            (value.z - 2.0 * argument_z.cos()).abs() < 1e-14,
+            "z {}",
+            value.z
+        );
         let sines = Reading {
             sines: true,
             ..READING
         };
         let value = PoissonSeries::parse(text, sines).value(0.7);
-        assert!((value.z - 2.0 * argument_z.sin()).abs() < 1e-14, "z {}", value.z);
+        assert!(
+            (value.z - 2.0 * argument_z.sin()).abs() < 1e-14,
+            "z {}",
+            value.z
+        );
     }
 
     #[test]
