@@ -1,5 +1,6 @@
 //! What a night holds: from engine results to a host's questions.
 
+mod absence;
 mod coming;
 mod interval;
 mod night;
@@ -8,6 +9,7 @@ mod survey;
 mod track;
 mod windows;
 
+pub use absence::Absence;
 pub use coming::{Coming, coming};
 pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,
