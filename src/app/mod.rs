@@ -1,1 +1,6 @@
 //! The desktop window.
+
+pub mod command;
+pub mod lookout;
+pub mod palette;
+pub mod scene;
