@@ -2,9 +2,8 @@
 
 use super::night::{NightRequest, OpticsTimes};
 use super::track::Track;
-use crate::measure::{Angle, Moment, search};
+use crate::measure::{Angle, Moment, civil, search};
 use crate::sky::{Observer, refraction};
-use chrono::{Offset, TimeZone};
 
 /// The wait and the depression that follow the limb's vanishing, or go before its return.
 struct Reserve {
@@ -100,12 +99,9 @@ fn limb_vanishes_at(observer: &Observer) -> Angle {
 /// The moment moved to a whole minute of the local clock.
 fn whole_local_minute(moment: Moment, request: &NightRequest<'_>, round: fn(f64) -> f64) -> Moment {
     const MICROSECONDS_PER_MINUTE: f64 = 60e6;
-    let (civil, _) = request.scales.civil(moment);
-    let offset = request
-        .zone
-        .offset_from_utc_datetime(&civil.naive_utc())
-        .fix();
-    let local_us = civil.timestamp_micros() + i64::from(offset.local_minus_utc()) * 1_000_000;
+    let (now, _) = request.scales.civil(moment);
+    let offset_s = i64::from(civil::offset(now, request.zone).local_minus_utc());
+    let local_us = now.timestamp_micros() + offset_s * 1_000_000;
     let whole_us = round(local_us as f64 / MICROSECONDS_PER_MINUTE) * MICROSECONDS_PER_MINUTE;
     moment.plus_seconds((whole_us - local_us as f64) * 1e-6)
 }
