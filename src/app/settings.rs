@@ -16,7 +16,7 @@ const LONGEST_BYTES: u64 = 64 * 1024;
 #[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
 #[serde(default, deny_unknown_fields)]
 pub struct Settings {
-    version: u32,
+    pub(super) version: u32,
     /// Name of the chosen site.
     pub site: Option<String>,
     /// Its file, where it has one.

@@ -1,6 +1,6 @@
 //! The sites that can be chosen: the demo sites and those in the sites folder.
 
-use crate::place::{Site, SiteError, demo_sites};
+use crate::place::{Site, SiteError, demo_sites, slug};
 use std::path::{Path, PathBuf};
 
 /// Ends the name of every site file.
@@ -81,7 +81,10 @@ impl Sites {
     }
     /// Takes a site in, in place of what came from the same file before; returns its place.
     pub fn add(&mut self, site: Site, file: PathBuf) -> usize {
-        let same = self.known.iter().position(|k| k.file.as_ref() == Some(&file));
+        let same = self
+            .known
+            .iter()
+            .position(|k| k.file.as_ref() == Some(&file));
         let known = KnownSite {
             site,
             file: Some(file),
@@ -118,18 +121,10 @@ pub fn is_site_file(path: &Path) -> bool {
         .is_some_and(|name| name.to_string_lossy().ends_with(SUFFIX))
 }
 
-/// A file name for a site: its letters and figures in lower case, everything else a hyphen.
+/// The file name that a site of this name gets.
 pub fn file_name(site_name: &str) -> String {
-    let mut stem = String::new();
-    for letter in site_name.to_lowercase().chars() {
-        if letter.is_alphanumeric() {
-            stem.push(letter);
-        } else if !stem.is_empty() && !stem.ends_with('-') {
-            stem.push('-');
-        }
-    }
-    let stem = stem.trim_end_matches('-');
-    let stem = if stem.is_empty() { "site" } else { stem };
+    let stem = slug(site_name);
+    let stem = if stem.is_empty() { "site" } else { &stem };
     format!("{stem}{SUFFIX}")
 }
 
@@ -138,9 +133,9 @@ mod tests {
     use super::file_name;
 
     #[test]
-    fn file_names_keep_letters_and_figures() {
+    fn a_name_never_leads_out_of_the_folder() {
         assert_eq!(file_name("Fennick Common"), "fennick-common.site.ron");
-        assert_eq!(file_name("  Hof 3 / Süd "), "hof-3-süd.site.ron");
         assert_eq!(file_name("../.."), "site.site.ron");
+        assert_eq!(file_name("/a/b"), "a-b.site.ron");
     }
 }

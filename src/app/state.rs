@@ -123,7 +123,9 @@ impl State {
     }
     /// The spot on it.
     pub fn spot(&self) -> &Spot {
-        self.site().spot_or_first(self.spot)
+        let spots = &self.site().spots;
+        // A site has at least one spot, and a choice never goes past the last.
+        &spots[self.spot.min(spots.len() - 1)]
     }
     /// Its place in the site's list.
     pub fn spot_index(&self) -> usize {
@@ -386,7 +388,11 @@ impl State {
     fn go_to_night_of(&mut self, moment: Moment) {
         let (instant, _) = self.scales.civil(moment);
         let date = civil::local_date(instant, self.site().zone());
-        let near = [Some(date), date.pred_opt(), date.checked_add_days(Days::new(1))];
+        let near = [
+            Some(date),
+            date.pred_opt(),
+            date.checked_add_days(Days::new(1)),
+        ];
         for date in near.into_iter().flatten() {
             self.plan_count += 1;
             let standpoint = Standpoint::new(self.site(), self.spot());

@@ -13,8 +13,14 @@ use std::sync::atomic::{AtomicBool, Ordering};
 pub fn install_fonts(ctx: &Context) {
     let mut fonts = FontDefinitions::default();
     let faces: [(&str, &'static [u8]); 2] = [
-        ("regular", include_bytes!("../../assets/fonts/DejaVuSans.ttf")),
-        (BOLD, include_bytes!("../../assets/fonts/DejaVuSans-Bold.ttf")),
+        (
+            "regular",
+            include_bytes!("../../assets/fonts/DejaVuSans.ttf"),
+        ),
+        (
+            BOLD,
+            include_bytes!("../../assets/fonts/DejaVuSans-Bold.ttf"),
+        ),
     ];
     for (name, bytes) in faces {
         let face = Arc::new(FontData::from_static(bytes));
@@ -22,7 +28,11 @@ pub fn install_fonts(ctx: &Context) {
     }
     let fallback = fonts.families.get(&FontFamily::Proportional).cloned();
     for family in [FontFamily::Proportional, FontFamily::Monospace] {
-        fonts.families.entry(family).or_default().insert(0, "regular".to_owned());
+        fonts
+            .families
+            .entry(family)
+            .or_default()
+            .insert(0, "regular".to_owned());
     }
     let mut bold = vec![BOLD.to_owned(), "regular".to_owned()];
     bold.extend(fallback.unwrap_or_default());
@@ -91,7 +101,12 @@ fn visuals(look: &Look, theme: egui::Theme) -> Visuals {
     visuals.text_cursor.stroke = Stroke::new(2.0, colours.chosen);
     let widgets = &mut visuals.widgets;
     for (widget, fill, stroke, text) in [
-        (&mut widgets.noninteractive, colours.card, line, colours.text),
+        (
+            &mut widgets.noninteractive,
+            colours.card,
+            line,
+            colours.text,
+        ),
         (&mut widgets.inactive, colours.card, line, colours.text),
         (
             &mut widgets.hovered,

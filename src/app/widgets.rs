@@ -43,8 +43,7 @@ pub fn choice(ui: &mut Ui, look: &Look, is_chosen: bool, text: &str) -> Response
     }
     let response = ui.add(button);
     let enabled = ui.is_enabled();
-    response
-        .widget_info(|| WidgetInfo::selected(Role::RadioButton, enabled, is_chosen, text));
+    response.widget_info(|| WidgetInfo::selected(Role::RadioButton, enabled, is_chosen, text));
     response
 }
 
@@ -55,7 +54,11 @@ pub fn name_it(response: &Response, role: Role, name: &str) {
 
 /// A line of text to write in, under its label; an error stands below in one sentence.
 pub fn field(ui: &mut Ui, look: &Look, label: &str, text: &mut String, error: Option<&str>) {
-    let name = ui.label(RichText::new(label).font(look.font(look.sizes.label)).color(look.colours.lesser));
+    let name = ui.label(
+        RichText::new(label)
+            .font(look.font(look.sizes.label))
+            .color(look.colours.lesser),
+    );
     ui.add(TextEdit::singleline(text).desired_width(f32::INFINITY))
         .labelled_by(name.id);
     error_line(ui, look, error);
@@ -94,7 +97,12 @@ pub fn card_frame(look: &Look) -> Frame {
 
 /// A card as wide as there is room, and at least so high, so that it keeps its size while what
 /// it says changes.
-pub fn card<R>(ui: &mut Ui, look: &Look, least_height: f32, contents: impl FnOnce(&mut Ui) -> R) -> R {
+pub fn card<R>(
+    ui: &mut Ui,
+    look: &Look,
+    least_height: f32,
+    contents: impl FnOnce(&mut Ui) -> R,
+) -> R {
     card_frame(look)
         .show(ui, |ui| {
             ui.set_width(ui.available_width());

@@ -147,7 +147,7 @@ impl DesktopWindow {
             return;
         };
         match command {
-            Command::NewSite => self.dialog = Some(Dialog::new_site(&self.words)),
+            Command::NewSite => self.dialog = Some(Dialog::new_site()),
             Command::FindSiteFile => {
                 self.dialog = Some(Dialog::find_file(self.state.sites().folder()));
             }

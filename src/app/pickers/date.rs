@@ -33,7 +33,7 @@ pub fn date_picker(
     let shown = words.weekday_date(date);
     let config = MenuConfig::new().close_behavior(PopupCloseBehavior::CloseOnClickOutside);
     let (button, _) = MenuButton::new(&shown).config(config).ui(ui, |ui| {
-        let id = Id::new("date draft");
+        let id = Id::unique("date draft");
         let mut draft: DateDraft = ui.data(|data| data.get_temp(id)).unwrap_or_default();
         if draft.shown != Some(date) {
             draft = DateDraft {
@@ -49,7 +49,11 @@ pub fn date_picker(
         }
         ui.data_mut(|data| data.insert_temp(id, draft));
     });
-    name_it(&button, Role::Button, &words.text_with("date-picker", &[("date", &shown)]));
+    name_it(
+        &button,
+        Role::Button,
+        &words.text_with("date-picker", &[("date", &shown)]),
+    );
     sign_button(ui, words, "▸", Command::StepDays(1), commands);
 }
 
@@ -79,7 +83,13 @@ fn draft_ui(ui: &mut Ui, look: &Look, words: &Words, draft: &mut DateDraft) -> O
         if on.clicked() {
             draft.month = draft.month + Months::new(1);
         }
-        text(ui, look, look.sizes.control, look.colours.text, &words.month_year(draft.month));
+        text(
+            ui,
+            look,
+            look.sizes.control,
+            look.colours.text,
+            &words.month_year(draft.month),
+        );
     });
     month_ui(ui, look, words, draft).or(chosen)
 }

@@ -2,8 +2,6 @@
 
 mod date;
 
-pub use date::DateDraft;
-
 use super::command::{Command, Commands};
 use super::palette::Look;
 use super::state::State;
@@ -15,13 +13,7 @@ use eframe::egui::containers::menu::MenuButton;
 use eframe::egui::{Role, ScrollArea, Ui};
 
 /// The whole row; it wraps where there is no room.
-pub fn picker_row(
-    ui: &mut Ui,
-    look: &Look,
-    words: &Words,
-    state: &State,
-    commands: &mut Commands,
-) {
+pub fn picker_row(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
     ui.horizontal_wrapped(|ui| {
         site_picker(ui, look, words, state, commands);
         date::date_picker(ui, look, words, state, commands);
@@ -47,13 +39,7 @@ pub fn picker_row(
     });
 }
 
-fn site_picker(
-    ui: &mut Ui,
-    look: &Look,
-    words: &Words,
-    state: &State,
-    commands: &mut Commands,
-) {
+fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
     let site = &state.site().name;
     let spot = &state.spot().name;
     let shown = words.text_with("site-and-spot", &[("site", site), ("spot", spot)]);
@@ -69,7 +55,13 @@ fn site_picker(
             }
             if state.site().spots.len() > 1 {
                 ui.separator();
-                text(ui, look, look.sizes.label, look.colours.lesser, &words.text("spots"));
+                text(
+                    ui,
+                    look,
+                    look.sizes.label,
+                    look.colours.lesser,
+                    &words.text("spots"),
+                );
                 for (index, spot) in state.site().spots.iter().enumerate() {
                     let is_chosen = index == state.spot_index();
                     if ui.selectable_label(is_chosen, &spot.name).clicked() {
@@ -83,5 +75,9 @@ fn site_picker(
         command_button(ui, words, Command::NewSite, commands);
         command_button(ui, words, Command::FindSiteFile, commands);
     });
-    name_it(&button, Role::Button, &words.text_with("site-picker", &[("shown", &shown)]));
+    name_it(
+        &button,
+        Role::Button,
+        &words.text_with("site-picker", &[("shown", &shown)]),
+    );
 }
