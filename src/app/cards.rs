@@ -4,7 +4,7 @@ use super::caution::{Caution, OpticsState};
 use super::palette::Look;
 use super::scene::Scene;
 use super::state::Motion;
-use super::widgets::{bold, card, card_frame, text};
+use super::widgets::{bold, card, card_frame, figure, text};
 use super::wording::Words;
 use crate::measure::Angle;
 use crate::sky::{Body, refraction};
@@ -176,9 +176,10 @@ pub fn facts_card(ui: &mut Ui, scene: &Scene<'_>, words: &Words) {
                         Layout::left_to_right(Align::Center),
                         |ui| {
                             let name = words.text(name);
-                            text(ui, look, look.sizes.label, look.colours.lesser, &name);
+                            let font = look.font(look.sizes.label);
+                            figure(ui, font, look.colours.lesser, &name);
                             ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-                                bold(ui, look, look.sizes.control, look.colours.text, value);
+                                figure(ui, look.bold(look.sizes.control), look.colours.text, value);
                             });
                         },
                     );

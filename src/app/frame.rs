@@ -11,12 +11,12 @@ use super::pickers::picker_row;
 use super::transport::transport_ui;
 use super::widgets::{bold, choice, command_button, text};
 use super::window::DesktopWindow;
-use eframe::egui::{
-    Align, Frame, Layout, Margin, Rect, ScrollArea, Stroke, Ui, UiBuilder, pos2, vec2,
-};
+use eframe::egui::{Align, Layout, Rect, ScrollArea, Sense, Stroke, Ui, UiBuilder, pos2, vec2};
 
 /// From this width on, points, the right column stands beside the view.
 const WIDE: f32 = 1200.0;
+/// From this width on, points, the pickers leave the right column its whole height.
+const ROW_BESIDE: f32 = 1500.0;
 /// The caution card's height where it has the column's width.
 const CAUTION_HEIGHT: f32 = 132.0;
 
@@ -104,13 +104,19 @@ impl DesktopWindow {
     }
 
     fn wide(&mut self, ui: &mut Ui, look: &Look, commands: &mut Commands) {
+        let is_row_above = ui.available_width() < ROW_BESIDE;
+        if is_row_above {
+            picker_row(ui, look, &self.words, &self.state, commands);
+        }
         let whole = ui.available_rect_before_wrap();
         let column = (0.245 * whole.width()).clamp(330.0, 420.0);
         let divide = whole.right() - column;
         let left = whole.with_max_x(divide - look.room.between);
         let right = whole.with_min_x(divide);
         ui.scope_builder(UiBuilder::new().max_rect(left), |ui| {
-            picker_row(ui, look, &self.words, &self.state, commands);
+            if !is_row_above {
+                picker_row(ui, look, &self.words, &self.state, commands);
+            }
             let transport_height = ui.spacing().interact_size.y + 4.0;
             let gap = look.room.inside;
             let heights = Heights::new(ui.available_height() - transport_height - gap, gap);
@@ -206,9 +212,8 @@ impl DesktopWindow {
 /// Gives a drawing a rectangle of the whole width and a fixed height.
 fn place(ui: &mut Ui, height: f32, draw: impl FnOnce(&mut Ui)) {
     let size = vec2(ui.available_width(), height);
-    let (rect, _) = ui.allocate_exact_size(size, eframe::egui::Sense::hover());
-    ui.scope_builder(UiBuilder::new().max_rect(rect), |ui| {
-        ui.set_clip_rect(rect.intersect(ui.clip_rect()));
-        Frame::NONE.inner_margin(Margin::ZERO).show(ui, draw);
-    });
+    let (rect, _) = ui.allocate_exact_size(size, Sense::hover());
+    let mut child = ui.new_child(UiBuilder::new().max_rect(rect));
+    child.shrink_clip_rect(rect);
+    draw(&mut child);
 }

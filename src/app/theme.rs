@@ -60,7 +60,7 @@ pub fn apply(ctx: &Context, look: &Look) {
             style.text_styles.insert(text_style, look.font(size));
         }
         style.spacing.item_spacing = vec2(8.0, 8.0);
-        style.spacing.button_padding = vec2(10.0, 6.0);
+        style.spacing.button_padding = vec2(9.0, 6.0);
         style.spacing.interact_size.y = 30.0;
         style.spacing.menu_margin = Margin::same(look.room.inside as i8);
         style.spacing.scroll = egui::style::ScrollStyle::solid();

@@ -4,7 +4,7 @@ use super::command::{Command, Commands};
 use super::palette::Look;
 use super::wording::Words;
 use eframe::egui::{
-    Button, Color32, Frame, Label, Margin, Response, RichText, Role, Stroke, TextEdit, Ui,
+    Button, Color32, FontId, Frame, Label, Margin, Response, RichText, Role, Stroke, TextEdit, Ui,
     WidgetInfo,
 };
 
@@ -74,16 +74,25 @@ pub fn error_line(ui: &mut Ui, look: &Look, error: Option<&str>) {
     }
 }
 
+/// Lines of running text stand so far apart, in heights of the type.
+const LINE: f32 = 1.3;
+
 /// Text of a size and colour, wrapped.
 pub fn text(ui: &mut Ui, look: &Look, size: f32, colour: Color32, words: &str) -> Response {
     let rich = RichText::new(words).font(look.font(size)).color(colour);
-    ui.add(Label::new(rich).wrap())
+    ui.add(Label::new(rich.line_height(Some(LINE * size))).wrap())
 }
 
 /// The same in the bold face.
 pub fn bold(ui: &mut Ui, look: &Look, size: f32, colour: Color32, words: &str) -> Response {
     let rich = RichText::new(words).font(look.bold(size)).color(colour);
     ui.add(Label::new(rich).wrap())
+}
+
+/// A figure or its name: on one line whatever the room.
+pub fn figure(ui: &mut Ui, font: FontId, colour: Color32, words: &str) {
+    let rich = RichText::new(words).font(font).color(colour);
+    ui.add(Label::new(rich).extend());
 }
 
 /// A card's ground.

@@ -47,6 +47,9 @@ impl Words {
     pub fn weekday_date_time(&self, d: NaiveDateTime) -> String {
         d.format("%a %-d %b %Y  %-H:%M").to_string()
     }
+    pub fn clock_time(&self, t: chrono::NaiveTime) -> String {
+        t.format("%-H:%M").to_string()
+    }
     pub fn time(&self, scene: &Scene<'_>, m: Moment) -> String {
         crate::measure::civil::local(scene.scales.civil(m).0, scene.zone)
             .format("%-H:%M")

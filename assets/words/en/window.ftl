@@ -43,13 +43,14 @@ go-to-best-hint = Go to the moment at which the chosen body stands best (Home)
 this-minute = This minute
 this-minute-hint = Go to the clock’s time and follow it (T)
 let-it-run = Let it run
-let-it-run-hint = Let the time run (Space)
+let-it-run-hint = Minutes of the night in one second (Space runs and stops)
 stop = Stop
 stop-hint = Hold the time (Space)
 speed = { $minutes ->
-    [1] 1 min/s
-   *[other] { $minutes } min/s
+    [1] Let it run at one minute a second
+   *[other] Let it run at { $minutes } minutes a second
 }
+speed-unit = min/s
 
 # The new site
 site-name = Name
