@@ -6,7 +6,7 @@ use crate::light::Eye;
 use crate::measure::{Moment, TimeScales};
 use crate::place::{Site, Skyline, Spot};
 use crate::plan::{Half, Night};
-use crate::sky::{Body, Observer, Span};
+use crate::sky::{Body, Ephemeris, Observer, Span};
 use chrono_tz::Tz;
 
 /// One half-night at one spot, and the moment in it that is shown. Plain references: a drawing
@@ -35,6 +35,8 @@ pub struct Scene<'a> {
     pub span: &'a Span,
     /// The site's civil zone.
     pub zone: Tz,
+    /// The theories themselves, for what reaches beyond the night (orbits, neighbouring events).
+    pub ephemeris: &'a Ephemeris,
     /// How civil time leads to TT.
     pub scales: TimeScales,
     /// How the chosen optics show the disc.
