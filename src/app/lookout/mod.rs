@@ -4,6 +4,8 @@
 //! `show(ui, &Scene, &mut Commands)`: it takes the width and height that `ui` has and only
 //! records commands.
 
+mod disc;
+pub mod horizon;
 pub mod model;
 
 use eframe::egui;
@@ -15,7 +17,7 @@ where
     K: Clone + PartialEq + Send + Sync + 'static,
     T: Send + Sync + 'static,
 {
-    let id = egui::Id::new(("lookout", name));
+    let id = egui::Id::unique(("lookout", name));
     let known = ctx.data(|data| data.get_temp::<(K, Arc<T>)>(id));
     if let Some((known_key, value)) = known
         && known_key == key

@@ -1,0 +1,4 @@
+//! The horizon view.
+mod camera;
+mod labels;
+pub mod sky;
