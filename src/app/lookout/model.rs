@@ -2,14 +2,12 @@
 //! view, the fade and the plot are all made from.
 
 use crate::app::scene::Scene;
-use crate::light::{self, Eye, Standing};
+use crate::light::{self, Standing};
 use crate::measure::{Angle, Moment, TimeScales, civil, search};
 use crate::plan::Half;
 use crate::sky::{Body, Epoch, Observer, refraction};
 use chrono::Timelike;
 use chrono_tz::Tz;
-use eframe::egui;
-use std::sync::Arc;
 
 /// Seconds between samples.
 const STEP_S: f64 = 60.0;
@@ -45,25 +43,7 @@ pub struct Sample {
     pub standing: Standing,
 }
 
-/// What the tracks depend on.
-#[derive(Clone, Copy, PartialEq)]
-struct Key {
-    night_count: u64,
-    half: Half,
-    eye: Eye,
-}
-
 impl Tracks {
-    /// The scene's tracks, made once for a half-night.
-    pub fn of(ctx: &egui::Context, scene: &Scene<'_>) -> Arc<Self> {
-        let key = Key {
-            night_count: scene.night_count,
-            half: scene.half,
-            eye: scene.eye,
-        };
-        super::kept(ctx, "tracks", key, || Self::new(scene))
-    }
-
     /// Samples the half-night.
     pub fn new(scene: &Scene<'_>) -> Self {
         let (start, end) = scene.ends();
