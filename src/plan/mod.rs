@@ -2,6 +2,7 @@
 
 mod coming;
 mod interval;
+mod neighbours;
 mod night;
 mod optics;
 mod survey;
@@ -9,6 +10,7 @@ mod track;
 mod windows;
 
 pub use coming::{Coming, coming};
+pub use neighbours::{Aspect, Neighbour, Neighbours, neighbours};
 pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,
     SunTimes, Window,
