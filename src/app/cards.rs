@@ -11,10 +11,9 @@ use crate::sky::{Body, refraction};
 use eframe::egui::{Align, Color32, Layout, Response, Stroke, Ui, vec2};
 
 /// The sentence, at the size to be read aloud from.
-pub fn sentence_card(ui: &mut Ui, scene: &Scene<'_>, words: &Words) {
-    const LEAST_HEIGHT: f32 = 116.0;
+pub fn sentence_card(ui: &mut Ui, scene: &Scene<'_>, words: &Words, least_height: f32) {
     let look = &scene.look;
-    card(ui, look, LEAST_HEIGHT, |ui| {
+    card(ui, look, least_height, |ui| {
         let sentence = words.half_night_sentence(scene);
         text(ui, look, look.sizes.sentence, look.colours.text, &sentence);
     });

@@ -17,6 +17,8 @@ use eframe::egui::{Align, Layout, Rect, ScrollArea, Sense, Stroke, Ui, UiBuilder
 const WIDE: f32 = 1200.0;
 /// From this width on, points, the pickers leave the right column its whole height.
 const ROW_BESIDE: f32 = 1500.0;
+/// The sentence card's height in the right column: four lines.
+const SENTENCE_HEIGHT: f32 = 118.0;
 /// The caution card's height where it has the column's width.
 const CAUTION_HEIGHT: f32 = 132.0;
 
@@ -129,7 +131,7 @@ impl DesktopWindow {
         });
         ui.scope_builder(UiBuilder::new().max_rect(right), |ui| {
             if let Some(scene) = self.scene() {
-                sentence_card(ui, &scene, &self.words);
+                sentence_card(ui, &scene, &self.words, SENTENCE_HEIGHT);
                 let motion = self.state.motion();
                 caution_card(ui, &scene, &self.words, motion, CAUTION_HEIGHT);
             }
@@ -152,7 +154,7 @@ impl DesktopWindow {
             .show(ui, |ui| {
                 picker_row(ui, look, &self.words, &self.state, commands);
                 if let Some(scene) = self.scene() {
-                    sentence_card(ui, &scene, &self.words);
+                    sentence_card(ui, &scene, &self.words, 0.0);
                 }
                 let heights = Heights {
                     view: (0.5 * ui.available_width()).clamp(240.0, 420.0),
@@ -176,8 +178,12 @@ impl DesktopWindow {
                 drawings.horizon(ui, &scene, commands);
             });
             transport_ui(ui, look, &self.words, &self.state, commands);
-            place(ui, heights.fade, |ui| ui.label("fade"));
-            place(ui, heights.plot, |ui| ui.label("plot"));
+            place(ui, heights.fade, |ui| {
+                ui.label("fade");
+            });
+            place(ui, heights.plot, |ui| {
+                ui.label("plot");
+            });
         }
         self.drawings = drawings;
     }
@@ -194,7 +200,9 @@ impl DesktopWindow {
             } else {
                 300.0
             };
-            place(ui, inset, |ui| ui.label("inset"));
+            place(ui, inset, |ui| {
+                ui.label("inset");
+            });
         }
         self.drawings = drawings;
     }
