@@ -2,7 +2,7 @@
 
 use crate::app::command::keys;
 use crate::app::palette::Look;
-use crate::app::widgets::{bold, text};
+use crate::app::widgets::{bold, figure, text};
 use crate::app::wording::Words;
 use eframe::egui::{Grid, ModifierNames, Ui, vec2};
 
@@ -18,6 +18,7 @@ const CAUTIONS: [&str; 5] = [
 /// Draws it.
 pub fn show(ui: &mut Ui, look: &Look, words: &Words) {
     let colours = &look.colours;
+    let size = look.sizes.control;
     bold(
         ui,
         look,
@@ -30,25 +31,13 @@ pub fn show(ui: &mut Ui, look: &Look, words: &Words) {
         .show(ui, |ui| {
             for (shortcut, command) in keys() {
                 let name = shortcut.format(&ModifierNames::NAMES, false);
-                bold(ui, look, look.sizes.control, colours.text, &name);
+                figure(ui, look.bold(size), colours.text, &name);
                 let what = words.text(command.wording().unwrap_or_default());
-                text(ui, look, look.sizes.control, colours.text, &what);
+                figure(ui, look.font(size), colours.text, &what);
                 ui.end_row();
             }
-            bold(
-                ui,
-                look,
-                look.sizes.control,
-                colours.text,
-                &words.text("zoom-keys"),
-            );
-            text(
-                ui,
-                look,
-                look.sizes.control,
-                colours.text,
-                &words.text("zoom"),
-            );
+            figure(ui, look.bold(size), colours.text, &words.text("zoom-keys"));
+            figure(ui, look.font(size), colours.text, &words.text("zoom"));
             ui.end_row();
         });
     ui.add_space(look.room.inside);
