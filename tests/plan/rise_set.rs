@@ -86,7 +86,9 @@ fn risings_settings_and_twilights_match_de440() {
     let mut wrong = Vec::new();
     for ((name, date), rows) in by_day {
         let site = &sites[&name];
-        let scales = TimeScales::with_delta_t_s(number(&rows[0], "delta_t_s"));
+        // Rows of events that do not occur have none.
+        let dated = rows.iter().find(|row| !row["delta_t_s"].is_empty());
+        let scales = TimeScales::with_delta_t_s(dated.map_or(69.2, |row| number(row, "delta_t_s")));
         let found = events(&ephemeris, site, date, scales);
         let is_polar = site.observer.latitude.degrees().abs() > 60.0;
         let tolerance = if is_polar {

@@ -60,26 +60,47 @@ fn skyline_crossings_match_de440() {
         };
         let body: Body = body.parse().expect("a known body");
         let scales = TimeScales::with_delta_t_s(number(&rows[0], "delta_t_s"));
-        let night = Night::plan(
-            &ephemeris,
-            &NightRequest {
-                observer: &Observer {
-                    air,
-                    ..site.observer
+        let plan = |date| {
+            Night::plan(
+                &ephemeris,
+                &NightRequest {
+                    observer: &Observer {
+                        air,
+                        ..site.observer
+                    },
+                    skyline: &skyline(&obstruction, &profiles),
+                    zone: site.zone,
+                    date,
+                    scales,
+                    eye: Eye::Visitor,
+                    bodies: &[body],
                 },
-                skyline: &skyline(&obstruction, &profiles),
-                zone: site.zone,
-                date: date(&rows[0]),
-                scales,
-                eye: Eye::Visitor,
-                bodies: &[body],
-            },
-        )
-        .expect("the reference dates are supported");
-        let events = &night
+            )
+            .expect("the reference dates are supported")
+        };
+        // The table's nights run from noon to noon of the clock, ours from culmination to
+        // culmination of the Sun: an event between the two stands in the neighbouring night.
+        let evening = date(&rows[0]);
+        let mut events = plan(evening)
             .body(body)
-            .expect("the body was asked for")
-            .skyline_events;
+            .expect("asked for")
+            .skyline_events
+            .clone();
+        let has_edge =
+            |row: &HashMap<String, String>| row["start_by"] == "noon" || row["end_by"] == "noon";
+        if rows.iter().any(has_edge) {
+            for neighbour in [evening.pred_opt(), evening.succ_opt()]
+                .into_iter()
+                .flatten()
+            {
+                events.extend_from_slice(
+                    &plan(neighbour)
+                        .body(body)
+                        .expect("asked for")
+                        .skyline_events,
+                );
+            }
+        }
         let mut check = |clears: bool, expected: DateTime<Utc>, row: &HashMap<String, String>| {
             let off_s = events
                 .iter()
