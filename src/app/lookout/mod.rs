@@ -7,7 +7,11 @@
 mod disc;
 pub mod fade;
 pub mod horizon;
+pub mod inset;
+mod labels;
 pub mod model;
+pub mod phase;
+pub mod plot;
 mod says;
 
 use super::command::Commands;
@@ -26,11 +30,13 @@ pub struct Drawings {
     tracks: Kept<HalfKey, Tracks>,
     horizon: horizon::Horizon,
     fade: fade::Fade,
+    plot: plot::ClearancePlot,
+    inset: inset::Inset,
 }
 
 impl Drawings {
     /// The horizon view.
-    pub fn view(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+    pub fn horizon(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
         let tracks = self.tracks(scene);
         self.horizon.show(ui, scene, &tracks, commands)
     }
@@ -39,6 +45,22 @@ impl Drawings {
     pub fn fade(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
         let tracks = self.tracks(scene);
         self.fade.show(ui, scene, &tracks, commands)
+    }
+
+    /// The clearance of the bright bodies against minutes.
+    pub fn plot(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        let tracks = self.tracks(scene);
+        self.plot.show(ui, scene, &tracks, commands)
+    }
+
+    /// The plan of the orbits.
+    pub fn inset(&mut self, ui: &mut Ui, scene: &Scene<'_>) -> Response {
+        self.inset.show(ui, scene)
+    }
+
+    /// The disc as the eye and the optics show it.
+    pub fn phase(&mut self, ui: &mut Ui, scene: &Scene<'_>) -> Response {
+        phase::show(ui, scene)
     }
 
     fn tracks(&mut self, scene: &Scene<'_>) -> Arc<Tracks> {

@@ -48,7 +48,7 @@ impl Fade {
         let says = Says::new(scene);
         let layout = Layout::new(&model, tracks, says, &scene.look, ui.painter(), whole);
         describe(ui, &response, scene, tracks, &model);
-        follow(ui, &response, &layout, tracks, commands);
+        follow(ui, &response, &layout, scene, tracks, commands);
         if !ui.is_rect_visible(whole) {
             return response;
         }
@@ -57,7 +57,7 @@ impl Fade {
         let at_s = tracks.at_s(scene.moment);
         if let Some(pointer) = response.hover_pos().filter(|_| !response.dragged()) {
             let x = pointer.x.clamp(layout.band.left(), layout.band.right());
-            let time = says.time(whole_minute(tracks, layout.at_s(x)));
+            let time = says.time(tracks.moment(layout.at_s(x)));
             paint::cursor(ui.painter(), &scene.look, &layout, x, &time, false);
         }
         if (model.from_s..=model.to_s).contains(&at_s) {
@@ -124,19 +124,16 @@ fn band_image(scene: &Scene<'_>, tracks: &Tracks, model: &Model) -> ColorImage {
     ColorImage::new(SKY_SIZE, pixels)
 }
 
-/// A time of the half-night to the whole minute of civil time, as people set clocks.
-fn whole_minute(tracks: &Tracks, at_s: f64) -> crate::measure::Moment {
-    tracks.moment(at_s)
-}
-
 /// Dragging and clicking set the moment; so does a screen reader.
 fn follow(
     ui: &Ui,
     response: &Response,
     layout: &Layout,
+    scene: &Scene<'_>,
     tracks: &Tracks,
     commands: &mut Commands,
 ) {
+    let whole_minute = |at_s| tracks.whole_minute(scene.scales, scene.zone, at_s);
     if response.hovered() || response.dragged() {
         ui.ctx().set_cursor_icon(CursorIcon::ResizeHorizontal);
     }
@@ -146,7 +143,7 @@ fn follow(
     if (response.dragged() || response.clicked())
         && let Some(pointer) = response.interact_pointer_pos()
     {
-        commands.push(Command::SetMoment(whole_minute(tracks, layout.at_s(pointer.x))));
+        commands.push(Command::SetMoment(whole_minute(layout.at_s(pointer.x))));
     }
     if response.has_focus() {
         // The arrows step through time here rather than to the next control.
@@ -164,7 +161,7 @@ fn follow(
         }
         for request in input.accesskit_action_requests(response.id, Action::SetValue) {
             if let Some(ActionData::NumericValue(minutes)) = request.data {
-                commands.push(Command::SetMoment(tracks.moment(60.0 * minutes)));
+                commands.push(Command::SetMoment(whole_minute(60.0 * minutes)));
             }
         }
     });

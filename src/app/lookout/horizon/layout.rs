@@ -1,9 +1,9 @@
 //! Where everything of the horizon view goes.
 
 use super::camera::Camera;
-use super::labels::{self, Rank, Wanted};
 use super::model::{Mark, Model};
 use super::path::{self, PathTick, Stretch};
+use crate::app::lookout::labels::{self, Rank, Wanted};
 use crate::app::lookout::model::{Tick, Tracks};
 use crate::app::lookout::says::Says;
 use crate::app::palette::Look;
