@@ -5,7 +5,7 @@ use crate::measure::Moment;
 use crate::plan::Half;
 use crate::sky::Body;
 use chrono::NaiveDate;
-use eframe::egui::{InputState, Key, KeyboardShortcut, Modifiers};
+use eframe::egui::{Key, KeyboardShortcut, Modifiers};
 use std::path::PathBuf;
 
 /// One action.
@@ -47,6 +47,8 @@ pub enum Command {
     FindSiteFile,
     /// Reads a site file and chooses it.
     OpenSiteFile(PathBuf),
+    /// Saves the new site being described, and chooses it.
+    SaveNewSite,
     /// Shows keys and cautions.
     ShowHelp,
     /// Closes whatever dialog is open.
@@ -123,14 +125,6 @@ pub fn keys() -> [(KeyboardShortcut, Command); 12] {
     ]
 }
 
-/// Takes this frame's keys out of the input.
-pub fn take_keys(input: &mut InputState, commands: &mut Commands) {
-    for (shortcut, command) in keys() {
-        let presses = input.count_and_consume_key(shortcut.modifiers, shortcut.logical_key);
-        commands.extend(std::iter::repeat_n(command, presses));
-    }
-}
-
 impl Command {
     /// The wording of the control that does it; its hint is the same with `-hint`. `None` for
     /// what has no control of its own to name.
@@ -159,6 +153,7 @@ impl Command {
             Self::NewSite => "new-site",
             Self::FindSiteFile => "find-site-file",
             Self::OpenSiteFile(_) => "open-site-file",
+            Self::SaveNewSite => "save-new-site",
             Self::ShowHelp => "help",
             Self::CloseDialog => "close",
             Self::DismissNotice => "dismiss-notice",

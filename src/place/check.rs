@@ -84,7 +84,10 @@ fn shapes(site: &Site) -> Option<Flaw> {
 
 fn spots_within(site: &Site) -> Option<Flaw> {
     site.spots.iter().find_map(|spot| {
-        let around = site.obstacles.iter().find(|obstacle| obstacle.surrounds(spot))?;
+        let around = site
+            .obstacles
+            .iter()
+            .find(|obstacle| obstacle.surrounds(spot))?;
         Some(Flaw {
             sentence: format!(
                 "the spot {:?} stands inside the obstacle {:?}: move one of them",

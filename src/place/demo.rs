@@ -32,5 +32,8 @@ pub fn demo_site(name: &str) -> Option<&'static Site> {
 pub fn slug(name: &str) -> String {
     let lower = name.to_lowercase();
     let words = lower.split(|c: char| !c.is_alphanumeric());
-    words.filter(|word| !word.is_empty()).collect::<Vec<_>>().join("-")
+    words
+        .filter(|word| !word.is_empty())
+        .collect::<Vec<_>>()
+        .join("-")
 }

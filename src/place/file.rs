@@ -65,7 +65,9 @@ impl Site {
             )));
         }
         write().map_err(|error| {
-            let folder = path.parent().filter(|folder| !folder.as_os_str().is_empty());
+            let folder = path
+                .parent()
+                .filter(|folder| !folder.as_os_str().is_empty());
             let sentence = match folder {
                 Some(folder) if !folder.is_dir() => format!(
                     "cannot write {}: there is no folder {}",
@@ -97,7 +99,7 @@ pub(super) fn reread(site: &Site) -> Result<String, SiteError> {
         Err(SiteError(
             "the site cannot be written so that it reads back the same: it needs at least one \
              spot"
-            .into(),
+                .into(),
         ))
     }
 }
@@ -143,10 +145,14 @@ pub(super) fn read_text(path: &Path) -> Result<String, SiteError> {
         )));
     }
     if !about.is_file() {
-        return Err(SiteError(format!("cannot read {shown}: it is not a plain file")));
+        return Err(SiteError(format!(
+            "cannot read {shown}: it is not a plain file"
+        )));
     }
     let mut bytes = Vec::new();
-    let mut file = File::open(path).map_err(unreadable)?.take(LARGEST_FILE_BYTES + 1);
+    let mut file = File::open(path)
+        .map_err(unreadable)?
+        .take(LARGEST_FILE_BYTES + 1);
     if about.len() <= LARGEST_FILE_BYTES {
         file.read_to_end(&mut bytes).map_err(unreadable)?;
     }

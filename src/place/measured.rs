@@ -152,12 +152,15 @@ pub fn skyline_from_table(table: impl Read) -> Result<Vec<SkylinePoint>, SiteErr
 }
 
 fn column_of(header: &csv::StringRecord, name: &str) -> Result<usize, SiteError> {
-    header.iter().position(|column| column == name).ok_or_else(|| {
-        SiteError(format!(
-            "line 1: there is no column `{name}`: the first line must name the columns, \
+    header
+        .iter()
+        .position(|column| column == name)
+        .ok_or_else(|| {
+            SiteError(format!(
+                "line 1: there is no column `{name}`: the first line must name the columns, \
              az_deg,alt_deg"
-        ))
-    })
+            ))
+        })
 }
 
 fn number(

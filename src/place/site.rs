@@ -182,8 +182,11 @@ impl Site {
             Some(name) => self.spots.iter().find(|spot| spot.name == name),
         };
         found.ok_or_else(|| {
-            let known: Vec<String> =
-                self.spots.iter().map(|spot| format!("{:?}", spot.name)).collect();
+            let known: Vec<String> = self
+                .spots
+                .iter()
+                .map(|spot| format!("{:?}", spot.name))
+                .collect();
             SiteError(format!(
                 "{} has no spot {:?}; its spots are {}",
                 self.name,
@@ -210,7 +213,11 @@ impl Site {
             })
             .collect();
         let mut edges = Vec::new();
-        for obstacle in self.obstacles.iter().filter(|obstacle| !obstacle.surrounds(spot)) {
+        for obstacle in self
+            .obstacles
+            .iter()
+            .filter(|obstacle| !obstacle.surrounds(spot))
+        {
             let label: Arc<str> = obstacle.label().into();
             let outline = silhouette::edges(obstacle, spot);
             edges.extend(outline.into_iter().map(|edge| (edge, label.clone())));

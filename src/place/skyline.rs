@@ -83,18 +83,12 @@ impl Shape {
     fn crossings(&self, other: &Self, from: f64, to: f64) -> Vec<f64> {
         let is_between = |at: &f64| *at > from && *at < to;
         match (*self, *other) {
-            (
-                Self::Line { slope: a, .. },
-                Self::Line { slope: b, .. },
-            ) => {
+            (Self::Line { slope: a, .. }, Self::Line { slope: b, .. }) => {
                 let gap = self.altitude(from) - other.altitude(from);
                 let at = from + gap / (b - a);
                 Some(at).filter(is_between).into_iter().collect()
             }
-            (
-                Self::Edge { east: a, north: b },
-                Self::Edge { east: c, north: d },
-            ) => {
+            (Self::Edge { east: a, north: b }, Self::Edge { east: c, north: d }) => {
                 let at = (d - b).atan2(a - c);
                 (-1..=2)
                     .map(|half_turns| at + PI * f64::from(half_turns))
@@ -107,7 +101,11 @@ impl Shape {
                 let gap = |at: f64| self.altitude(at) - other.altitude(at);
                 let samples = search::grid(from, to, (to - from) / 8.0);
                 let found = search::crossings(gap, &samples, 1e-12);
-                found.iter().map(|crossing| crossing.at).filter(is_between).collect()
+                found
+                    .iter()
+                    .map(|crossing| crossing.at)
+                    .filter(is_between)
+                    .collect()
             }
         }
     }
@@ -119,7 +117,11 @@ impl Shape {
             Self::Edge { east, north } => {
                 let crest = east.atan2(north).rem_euclid(TAU);
                 let is_within = crest > from && crest < to;
-                if is_within { self.altitude(crest) } else { ends }
+                if is_within {
+                    self.altitude(crest)
+                } else {
+                    ends
+                }
             }
             Self::Line { .. } => ends,
         }
@@ -182,7 +184,9 @@ impl Skyline {
             breaks,
             highest: Angle::ZERO,
         };
-        let tops = skyline.stretches().map(|(piece, to)| piece.shape.highest(piece.from, to));
+        let tops = skyline
+            .stretches()
+            .map(|(piece, to)| piece.shape.highest(piece.from, to));
         skyline.highest = Angle::from_radians(tops.fold(0.0, f64::max));
         skyline
     }
@@ -328,7 +332,11 @@ fn measured_pieces(points: &[(Angle, Angle)]) -> Vec<Piece> {
     if first.0 > 0.0 {
         pieces.push(line(0.0, (last.0 - TAU, last.1), first));
     }
-    pieces.extend(points.windows(2).map(|ends| line(ends[0].0, ends[0], ends[1])));
+    pieces.extend(
+        points
+            .windows(2)
+            .map(|ends| line(ends[0].0, ends[0], ends[1])),
+    );
     pieces.push(line(last.0, last, (first.0 + TAU, first.1)));
     pieces
 }
@@ -371,7 +379,8 @@ fn highest_of(one: &[Piece], other: &[Piece]) -> Vec<Piece> {
     let mut highest: Vec<Piece> = Vec::with_capacity(one.len() + other.len());
     let (mut i, mut k) = (0, 0);
     let mut from = 0.0;
-    let start_of = |pieces: &[Piece], index: usize| pieces.get(index).map_or(TAU, |piece| piece.from);
+    let start_of =
+        |pieces: &[Piece], index: usize| pieces.get(index).map_or(TAU, |piece| piece.from);
     while from < TAU {
         let to = start_of(one, i + 1).min(start_of(other, k + 1));
         let (a, b) = (&one[i], &other[k]);
@@ -382,7 +391,11 @@ fn highest_of(one: &[Piece], other: &[Piece]) -> Vec<Piece> {
         cuts.push(to);
         for ends in cuts.windows(2).filter(|ends| ends[1] - ends[0] > SLIVER) {
             let middle = 0.5 * (ends[0] + ends[1]);
-            let higher = if b.shape.altitude(middle) > a.shape.altitude(middle) { b } else { a };
+            let higher = if b.shape.altitude(middle) > a.shape.altitude(middle) {
+                b
+            } else {
+                a
+            };
             let is_same = highest
                 .last()
                 .is_some_and(|last| last.shape == higher.shape && last.label == higher.label);

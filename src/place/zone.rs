@@ -73,7 +73,11 @@ fn nearest(name: &str) -> Vec<&'static str> {
         .filter(|(distance, _)| *distance <= FARTHEST)
         .collect();
     ranked.sort_unstable();
-    ranked.into_iter().take(MOST).map(|(_, known)| known).collect()
+    ranked
+        .into_iter()
+        .take(MOST)
+        .map(|(_, known)| known)
+        .collect()
 }
 
 /// Least number of characters put in, taken out or exchanged (Levenshtein distance).

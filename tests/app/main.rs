@@ -1,0 +1,8 @@
+//! The real window, driven without a display by what its controls are called.
+#![allow(clippy::unwrap_used)]
+
+mod desk;
+mod pictures;
+mod sites;
+mod steps;
+mod themes;
