@@ -1,7 +1,7 @@
 //! A body's disc with its lit part.
 
-use eframe::egui::{Color32, Mesh, Painter, Pos2, Shape, Stroke, Vec2, vec2};
 use crate::measure::Angle;
+use eframe::egui::{Color32, Mesh, Painter, Pos2, Shape, Stroke, Vec2, vec2};
 
 /// Which way the middle of the bright limb lies on the screen, as a unit vector, from its angle
 /// counter-clockwise from straight up.
@@ -92,14 +92,20 @@ mod tests {
         for phase_deg in [0.0_f64, 50.0, 90.0, 120.0, 170.0] {
             let fraction = 0.5 * (1.0 + phase_deg.to_radians().cos());
             let share = f64::from(lit_share(phase_deg));
-            assert!((share - fraction).abs() < 1e-3, "{phase_deg}: {share} {fraction}");
+            assert!(
+                (share - fraction).abs() < 1e-3,
+                "{phase_deg}: {share} {fraction}"
+            );
         }
     }
 
     #[test]
     fn a_limb_a_quarter_turn_counter_clockwise_from_up_lies_on_the_left() {
         let left = towards_limb(Angle::from_degrees(90.0));
-        assert!((left.x + 1.0).abs() < 1e-6 && left.y.abs() < 1e-6, "{left:?}");
+        assert!(
+            (left.x + 1.0).abs() < 1e-6 && left.y.abs() < 1e-6,
+            "{left:?}"
+        );
         let up = towards_limb(Angle::ZERO);
         assert!((up.y + 1.0).abs() < 1e-6, "{up:?}");
     }

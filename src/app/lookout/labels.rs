@@ -40,7 +40,10 @@ pub fn arrange(wanted: &[Wanted], bounds: Rect, taken: &[Rect]) -> Vec<Option<Re
         let label = &wanted[k];
         let free = |rect: &Rect| {
             bounds.contains_rect(*rect)
-                && places.iter().flatten().all(|other| !other.expand(ROOM).intersects(*rect))
+                && places
+                    .iter()
+                    .flatten()
+                    .all(|other| !other.expand(ROOM).intersects(*rect))
         };
         let candidates = || {
             label
@@ -78,7 +81,7 @@ pub fn around(at: eframe::egui::Pos2, size: Vec2, gap: f32) -> Vec<eframe::egui:
 
 #[cfg(test)]
 mod tests {
-    use super::{Rank, Wanted, arrange, around};
+    use super::{Rank, Wanted, around, arrange};
     use eframe::egui::{Rect, pos2, vec2};
 
     fn label(rank: Rank, x: f32, y: f32) -> Wanted {
@@ -96,30 +99,57 @@ mod tests {
 
     #[test]
     fn the_lower_rank_is_shifted() {
-        let wanted = [label(Rank::Star, 100.0, 100.0), label(Rank::Target, 104.0, 100.0)];
+        let wanted = [
+            label(Rank::Star, 100.0, 100.0),
+            label(Rank::Target, 104.0, 100.0),
+        ];
         let placed = arrange(&wanted, bounds(), &[]);
         let (star, target) = (placed[0].expect("star"), placed[1].expect("target"));
-        assert_eq!(target.min, pos2(112.0, 93.0), "the target has its first choice");
+        assert_eq!(
+            target.min,
+            pos2(112.0, 93.0),
+            "the target has its first choice"
+        );
         assert!(!star.intersects(target), "{star:?} {target:?}");
     }
 
     #[test]
     fn of_many_at_one_place_the_last_ranks_are_dropped_and_none_overlap() {
-        let ranks = [Rank::Star, Rank::Obstacle, Rank::Moon, Rank::Planet, Rank::Target];
+        let ranks = [
+            Rank::Star,
+            Rank::Obstacle,
+            Rank::Moon,
+            Rank::Planet,
+            Rank::Target,
+        ];
         let wanted: Vec<_> = (0..20).map(|k| label(ranks[k % 5], 150.0, 100.0)).collect();
         let placed = arrange(&wanted, bounds(), &[]);
         let standing: Vec<Rect> = placed.iter().flatten().copied().collect();
         for (k, a) in standing.iter().enumerate() {
-            assert!(standing[k + 1..].iter().all(|b| !a.intersects(*b)), "{standing:?}");
+            assert!(
+                standing[k + 1..].iter().all(|b| !a.intersects(*b)),
+                "{standing:?}"
+            );
         }
-        let count = |rank| (0..20).filter(|k| wanted[*k].rank == rank && placed[*k].is_some()).count();
-        assert_eq!((count(Rank::Target), count(Rank::Star)), (2, 0), "beside it there is room for two: {placed:?}");
+        let count = |rank| {
+            (0..20)
+                .filter(|k| wanted[*k].rank == rank && placed[*k].is_some())
+                .count()
+        };
+        assert_eq!(
+            (count(Rank::Target), count(Rank::Star)),
+            (2, 0),
+            "beside it there is room for two: {placed:?}"
+        );
     }
 
     #[test]
     fn only_the_target_stands_on_things_drawn() {
         let everywhere = [bounds()];
-        let wanted = [label(Rank::Target, 100.0, 100.0), label(Rank::Moon, 200.0, 50.0)];
+        let wanted = [
+            label(Rank::Target, 100.0, 100.0),
+            label(Rank::Moon, 200.0, 50.0),
+        ];
         let placed = arrange(&wanted, bounds(), &everywhere);
         assert!(placed[0].is_some() && placed[1].is_none(), "{placed:?}");
     }

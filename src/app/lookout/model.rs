@@ -49,8 +49,10 @@ impl Tracks {
         let (start, end) = scene.ends();
         let length_s = end.seconds_since(start);
         let mut sun = Vec::new();
-        let mut bodies: Vec<(Body, Vec<Sample>)> =
-            Body::BRIGHT.iter().map(|body| (*body, Vec::new())).collect();
+        let mut bodies: Vec<(Body, Vec<Sample>)> = Body::BRIGHT
+            .iter()
+            .map(|body| (*body, Vec::new()))
+            .collect();
         for at_s in search::grid(0.0, length_s, STEP_S) {
             let epoch = scene.span.at(start.plus_seconds(at_s));
             let sun_altitude = epoch.seen_by(scene.observer).place(Body::Sun).altitude;
@@ -135,7 +137,10 @@ impl Sample {
 /// A quantity of the samples at a time, straight between them.
 pub fn between(samples: &[Sample], at_s: f64, quantity: impl Fn(&Sample) -> Angle) -> Angle {
     let after = samples.partition_point(|sample| sample.at_s <= at_s);
-    match (after.checked_sub(1).and_then(|k| samples.get(k)), samples.get(after)) {
+    match (
+        after.checked_sub(1).and_then(|k| samples.get(k)),
+        samples.get(after),
+    ) {
         (Some(a), Some(b)) => {
             let share = (at_s - a.at_s) / (b.at_s - a.at_s);
             quantity(a) + (quantity(b) - quantity(a)) * share
@@ -163,10 +168,14 @@ pub fn ticks(tracks: &Tracks, scales: TimeScales, zone: Tz, from_s: f64, to_s: f
     const TEN_MINUTES_S: f64 = 600.0;
     let local = |at_s: f64| civil::local(scales.civil(tracks.moment(at_s)).0, zone);
     let first = local(from_s);
-    let into_s = f64::from(first.minute() % 10 * 60 + first.second())
-        + f64::from(first.nanosecond()) * 1e-9;
+    let into_s =
+        f64::from(first.minute() % 10 * 60 + first.second()) + f64::from(first.nanosecond()) * 1e-9;
     // Civil time is known to the microsecond; one just short of a tick is the tick.
-    let wait_s = if into_s < 1e-3 { 0.0 } else { TEN_MINUTES_S - into_s };
+    let wait_s = if into_s < 1e-3 {
+        0.0
+    } else {
+        TEN_MINUTES_S - into_s
+    };
     let count = ((to_s - from_s - wait_s) / TEN_MINUTES_S).floor();
     // Clocks are turned by whole tens of minutes, so ticks stay ticks.
     (0..=count.max(-1.0) as i64)

@@ -65,7 +65,9 @@ impl<'a> Says<'a> {
     /// A local time, hours and minutes.
     pub fn time(&self, moment: Moment) -> String {
         let utc = self.scene.scales.civil(moment.plus_seconds(30.0)).0;
-        civil::local(utc, self.scene.zone).format("%-H:%M").to_string()
+        civil::local(utc, self.scene.zone)
+            .format("%-H:%M")
+            .to_string()
     }
     /// A whole number of degrees.
     pub fn degrees(&self, degrees: i32) -> String {
@@ -128,7 +130,13 @@ impl<'a> Says<'a> {
         self.text(IDS[point % 8], &[])
     }
     /// Why a window ends (or starts), with the time.
-    pub fn edge(&self, cause: Cause, is_end: bool, obstacle: Option<&str>, time: &str) -> Option<String> {
+    pub fn edge(
+        &self,
+        cause: Cause,
+        is_end: bool,
+        obstacle: Option<&str>,
+        time: &str,
+    ) -> Option<String> {
         let id = match (cause, is_end) {
             (Cause::Twilight, true) => "lane-too-bright-from",
             (Cause::Twilight, false) => "lane-dark-enough-from",
@@ -138,7 +146,10 @@ impl<'a> Says<'a> {
             (Cause::Horizon, false) => "lane-rises",
             (Cause::Half | Cause::Noon, _) => return None,
         };
-        let obstacle = obstacle.map_or_else(|| self.text("the-skyline", &[]), |label| self.text("the-obstacle", &[("label", label)]));
+        let obstacle = obstacle.map_or_else(
+            || self.text("the-skyline", &[]),
+            |label| self.text("the-obstacle", &[("label", label)]),
+        );
         Some(self.text(id, &[("time", time), ("obstacle", &obstacle)]))
     }
     /// An aspect's name.

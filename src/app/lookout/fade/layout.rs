@@ -43,7 +43,13 @@ impl Layout {
         painter: &Painter,
         whole: Rect,
     ) -> Self {
-        let builder = Builder { model, tracks, says, look, painter };
+        let builder = Builder {
+            model,
+            tracks,
+            says,
+            look,
+            painter,
+        };
         let letters = look.sizes.label;
         let names = builder.names();
         let gutter = names.iter().map(|name| name.size().x).fold(0.0, f32::max) + 12.0;
@@ -123,7 +129,12 @@ impl Builder<'_> {
 
     /// Names stand right of their marks, up to the next one; the sunset's name goes first.
     fn marks(&self, layout: &Layout) -> Vec<(f32, Option<Arc<Galley>>)> {
-        let edges: Vec<f32> = self.model.marks.iter().map(|mark| layout.x(mark.at_s)).collect();
+        let edges: Vec<f32> = self
+            .model
+            .marks
+            .iter()
+            .map(|mark| layout.x(mark.at_s))
+            .collect();
         let ends = edges.iter().skip(1).copied().chain([layout.band.right()]);
         edges
             .iter()
@@ -141,7 +152,10 @@ impl Builder<'_> {
     fn ticks(&self, layout: &Layout) -> Vec<(f32, bool, Option<Arc<Galley>>)> {
         let hours = self.model.ticks.iter().filter(|tick| tick.minute % 30 == 0);
         let step = hours.map(|tick| layout.x(tick.at_s)).collect::<Vec<_>>();
-        let room = step.windows(2).map(|pair| pair[1] - pair[0]).fold(f32::INFINITY, f32::min);
+        let room = step
+            .windows(2)
+            .map(|pair| pair[1] - pair[0])
+            .fold(f32::INFINITY, f32::min);
         let text = |tick: &Tick| {
             let time = self.says.time(self.tracks.moment(tick.at_s));
             self.label(time, self.look.colours.lesser)
@@ -154,7 +168,8 @@ impl Builder<'_> {
                 let time = (tick.minute % 30 == 0).then(|| text(tick));
                 let time = time.filter(|time| {
                     let half = 0.5 * time.size().x;
-                    let is_inside = x - half >= layout.band.left() && x + half <= layout.band.right();
+                    let is_inside =
+                        x - half >= layout.band.left() && x + half <= layout.band.right();
                     is_inside && (tick.minute == 0 || room > 2.0 * half + 14.0)
                 });
                 (x, tick.minute == 0, time)
@@ -203,7 +218,10 @@ impl Builder<'_> {
             let text = self.label(words, colours.text);
             let x = layout.x(end.at_s);
             let (left, right) = if end.is_end {
-                let next = lane.ends.get(k + 1).map_or(rect.right(), |next| layout.x(next.at_s));
+                let next = lane
+                    .ends
+                    .get(k + 1)
+                    .map_or(rect.right(), |next| layout.x(next.at_s));
                 (x, next)
             } else {
                 let last = k.checked_sub(1).and_then(|k| lane.ends.get(k));

@@ -62,7 +62,14 @@ impl Fade {
         }
         if (model.from_s..=model.to_s).contains(&at_s) {
             let time = says.time(scene.moment);
-            paint::cursor(ui.painter(), &scene.look, &layout, layout.x(at_s), &time, true);
+            paint::cursor(
+                ui.painter(),
+                &scene.look,
+                &layout,
+                layout.x(at_s),
+                &time,
+                true,
+            );
         }
         if response.has_focus() {
             let stroke = Stroke::new(2.0, scene.look.colours.chosen);
@@ -87,7 +94,9 @@ impl Fade {
                 texture.id()
             }
             None => {
-                let texture = ui.ctx().load_texture("fade", image(), TextureOptions::LINEAR);
+                let texture = ui
+                    .ctx()
+                    .load_texture("fade", image(), TextureOptions::LINEAR);
                 let id = texture.id();
                 self.sky = Some((key, texture));
                 id

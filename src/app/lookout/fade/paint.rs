@@ -97,15 +97,26 @@ pub fn cursor(painter: &Painter, look: &Look, layout: &Layout, x: f32, time: &st
     let (line, ground, ink) = if is_shown {
         (colours.text, colours.text, colours.ground)
     } else {
-        (colours.lesser.gamma_multiply(0.6), colours.card, colours.lesser)
+        (
+            colours.lesser.gamma_multiply(0.6),
+            colours.card,
+            colours.lesser,
+        )
     };
     let width = if is_shown { 2.0 } else { 1.0 };
     let top = layout.band.top();
-    painter.vline(x, top - 3.0..=layout.whole.bottom(), Stroke::new(width, line));
+    painter.vline(
+        x,
+        top - 3.0..=layout.whole.bottom(),
+        Stroke::new(width, line),
+    );
     let text = painter.layout_no_wrap(time.to_owned(), look.bold(look.sizes.control), ink);
     let height = bubble_height(look) - 5.0;
     let half = 0.5 * text.size().x + 14.0;
-    let middle = x.clamp(layout.whole.left() + half, (layout.whole.right() - half).max(layout.whole.left() + half));
+    let middle = x.clamp(
+        layout.whole.left() + half,
+        (layout.whole.right() - half).max(layout.whole.left() + half),
+    );
     let bubble = Rect::from_min_max(
         pos2(middle - half, top - 3.0 - height),
         pos2(middle + half, top - 3.0),

@@ -36,7 +36,9 @@ impl Sector {
         const GLOW_DEG: f64 = -12.0;
         let within = |samples: &[Sample], least_deg: f64| -> Option<(f64, f64, f64)> {
             let used = samples.iter().filter(|sample| {
-                sample.at_s >= from_s && sample.at_s <= to_s && sample.altitude.degrees() > least_deg
+                sample.at_s >= from_s
+                    && sample.at_s <= to_s
+                    && sample.altitude.degrees() > least_deg
             });
             extent(used)
         };
@@ -126,7 +128,10 @@ impl Camera {
         const ABOVE_DEG: f64 = 11.0;
         const LEAST_WIDTH_DEG: f64 = 64.0;
         const LEAST_TOP_DEG: f64 = 30.0;
-        let (width, height) = (f64::from(rect.width().max(1.0)), f64::from(rect.height().max(1.0)));
+        let (width, height) = (
+            f64::from(rect.width().max(1.0)),
+            f64::from(rect.height().max(1.0)),
+        );
         let top_deg = (sector.top_deg + ABOVE_DEG).clamp(LEAST_TOP_DEG, HIGHEST_DEG);
         let path_deg = sector.to_deg - sector.from_deg;
         let wanted_deg = (path_deg + 2.0 * BESIDE_DEG).max(LEAST_WIDTH_DEG);
@@ -141,10 +146,9 @@ impl Camera {
         let widest = (sun_to - sun_from + 2.0 * BESIDE_DEG)
             .max(framed_width)
             .min(width / least_scale);
-        let widening = (turn.widening.max(0.0) * framed_width).clamp(
-            NARROWEST_DEG.min(framed_width),
-            widest,
-        ) / framed_width;
+        let widening = (turn.widening.max(0.0) * framed_width)
+            .clamp(NARROWEST_DEG.min(framed_width), widest)
+            / framed_width;
         let points_per_deg = framed_scale / widening;
 
         let turn_deg = (sector.middle_deg() + turn.turn_deg).clamp(sun_from, sun_to.max(sun_from))
@@ -180,7 +184,9 @@ impl Camera {
 
     /// Signed azimuth from the middle of the view, degrees, in [-180, 180).
     pub fn beside_deg(&self, azimuth: Angle) -> f64 {
-        (azimuth - Angle::from_degrees(self.middle_deg)).signed().degrees()
+        (azimuth - Angle::from_degrees(self.middle_deg))
+            .signed()
+            .degrees()
     }
 
     /// Where a place falls by its degrees beside the middle and its altitude; may be off the
@@ -234,12 +240,19 @@ mod tests {
         let (camera, _) = Camera::new(&sector, Turn::default(), rect());
         let left = camera.pos(Angle::from_degrees(340.0), Angle::ZERO);
         let right = camera.pos(Angle::from_degrees(25.0), Angle::ZERO);
-        assert!(left.x > 0.0 && left.x < right.x && right.x < 1150.0, "{left:?} {right:?}");
+        assert!(
+            left.x > 0.0 && left.x < right.x && right.x < 1150.0,
+            "{left:?} {right:?}"
+        );
     }
 
     #[test]
     fn the_suns_sector_is_taken_on_the_near_side_of_north() {
-        let sector = Sector::new(&path(&[350.0, 370.0], 30.0), &path(&[20.0, 30.0], 1.0), (0.0, 1e4));
+        let sector = Sector::new(
+            &path(&[350.0, 370.0], 30.0),
+            &path(&[20.0, 30.0], 1.0),
+            (0.0, 1e4),
+        );
         assert!((sector.with_sun_deg.0 - 350.0).abs() < 1e-9, "{sector:?}");
         assert!((sector.with_sun_deg.1 - 390.0).abs() < 1e-9, "{sector:?}");
     }
@@ -257,13 +270,20 @@ mod tests {
     fn a_path_near_the_zenith_fits_below_the_upper_edge() {
         let sector = Sector::new(&path(&[100.0, 170.0, 260.0], 86.0), &[], (0.0, 1e4));
         let (camera, _) = Camera::new(&sector, Turn::default(), rect());
-        assert!(camera.top_deg() >= 90.0 && camera.top_deg() < 93.0, "{camera:?}");
+        assert!(
+            camera.top_deg() >= 90.0 && camera.top_deg() < 93.0,
+            "{camera:?}"
+        );
         assert!(camera.width_deg() <= 360.0, "{camera:?}");
     }
 
     #[test]
     fn turning_and_widening_stop_at_what_body_and_sun_use() {
-        let sector = Sector::new(&path(&[200.0, 240.0], 30.0), &path(&[230.0, 250.0], 0.0), (0.0, 1e4));
+        let sector = Sector::new(
+            &path(&[200.0, 240.0], 30.0),
+            &path(&[230.0, 250.0], 0.0),
+            (0.0, 1e4),
+        );
         let far = Turn {
             turn_deg: 500.0,
             widening: 50.0,

@@ -210,7 +210,11 @@ impl Builder<'_> {
                 (self.says.compass(point), font, self.look.colours.text)
             } else {
                 let font = self.look.font(self.look.sizes.label);
-                (self.says.degrees(azimuth_deg as i32), font, self.look.colours.lesser)
+                (
+                    self.says.degrees(azimuth_deg as i32),
+                    font,
+                    self.look.colours.lesser,
+                )
             };
             let beside_deg = 5.0 * fives as f64 - camera.middle_deg;
             let at = camera.pos_beside(beside_deg, 0.0).x;
@@ -225,8 +229,12 @@ impl Builder<'_> {
                 marks.push(RulerMark { at, is_named, text });
             }
         };
-        (from..=to).filter(|fives| fives % 18 == 0).for_each(|fives| put(fives, true));
-        (from..=to).filter(|fives| fives % 9 == 0).for_each(|fives| put(fives, true));
+        (from..=to)
+            .filter(|fives| fives % 18 == 0)
+            .for_each(|fives| put(fives, true));
+        (from..=to)
+            .filter(|fives| fives % 9 == 0)
+            .for_each(|fives| put(fives, true));
         (from..=to)
             .filter(|fives| fives % 2 == 0 && fives % 18 != 0)
             .for_each(|fives| put(fives, false));
@@ -296,7 +304,14 @@ impl Builder<'_> {
             &[
                 ("altitude", &says.tenths(mark.sample.altitude)),
                 ("fists", &says.fists(clearance)),
-                ("count", if clearance.degrees() < 12.5 { "few" } else { "many" }),
+                (
+                    "count",
+                    if clearance.degrees() < 12.5 {
+                        "few"
+                    } else {
+                        "many"
+                    },
+                ),
                 ("obstacle", &self.obstacle(model.obstacle.as_deref())),
             ],
         );
@@ -305,7 +320,8 @@ impl Builder<'_> {
             self.galley(name, look.bold(look.sizes.control), colour),
             self.galley(circumstances, look.font(look.sizes.label), colour),
         ];
-        self.taken.push(Rect::from_center_size(at, Vec2::splat(28.0)));
+        self.taken
+            .push(Rect::from_center_size(at, Vec2::splat(28.0)));
         self.want(Rank::Target, lines, at, |size| {
             let mut places = vec![
                 pos2(at.x - 20.0 - size.x, at.y - 6.0 - size.y),
@@ -326,7 +342,10 @@ impl Builder<'_> {
         }
         let text = self.says.text(
             "horizon-clearance",
-            &[("clearance", &self.says.tenths(model.target.sample.clearance))],
+            &[(
+                "clearance",
+                &self.says.tenths(model.target.sample.clearance),
+            )],
         );
         let font = self.look.font(self.look.sizes.label);
         let line = self.galley(text, font, self.look.colours.sky_text);
@@ -362,7 +381,8 @@ impl Builder<'_> {
             };
             let font = self.look.font(self.look.sizes.label);
             let line = self.galley(text, font, colour);
-            self.taken.push(Rect::from_center_size(*at, Vec2::splat(2.0 * radius)));
+            self.taken
+                .push(Rect::from_center_size(*at, Vec2::splat(2.0 * radius)));
             let gap = radius + 5.0;
             self.want(rank, vec![line], *at, |size| labels::around(*at, size, gap));
         }
@@ -431,7 +451,9 @@ impl Builder<'_> {
             let font = self.look.font(self.look.sizes.least);
             let colour = self.look.colours.sky_text.gamma_multiply(0.72);
             let line = self.galley(name.to_owned(), font, colour);
-            self.want(Rank::Star, vec![line], at, |size| labels::around(at, size, 6.0));
+            self.want(Rank::Star, vec![line], at, |size| {
+                labels::around(at, size, 6.0)
+            });
         }
     }
 

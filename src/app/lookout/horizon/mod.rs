@@ -111,11 +111,12 @@ impl Horizon {
             self.turn.turn_deg -= f64::from(moved.x) / camera.points_per_deg;
             self.turn.tilt_deg += f64::from(moved.y) / camera.points_per_deg;
         }
-        ui.ctx().set_cursor_icon(match (response.dragged(), response.hovered()) {
-            (true, _) => CursorIcon::Grabbing,
-            (_, true) => CursorIcon::Grab,
-            _ => return self.steer_by_keys(ui, response, KEY_DEG, KEY_SHARE),
-        });
+        ui.ctx()
+            .set_cursor_icon(match (response.dragged(), response.hovered()) {
+                (true, _) => CursorIcon::Grabbing,
+                (_, true) => CursorIcon::Grab,
+                _ => return self.steer_by_keys(ui, response, KEY_DEG, KEY_SHARE),
+            });
         let wheel = ui.input(|input| input.smooth_scroll_delta().y);
         if response.hovered() && wheel != 0.0 {
             self.turn.widening *= f64::from(-wheel / 400.0).exp();
@@ -135,12 +136,14 @@ impl Horizon {
         ui.memory_mut(|memory| memory.set_focus_lock_filter(response.id, filter));
         let turn = &mut self.turn;
         ui.input_mut(|input| {
-            let mut pressed = |modifiers, key| f64::from(input.count_and_consume_key(modifiers, key) as u32);
+            let mut pressed =
+                |modifiers, key| f64::from(input.count_and_consume_key(modifiers, key) as u32);
             let command = Modifiers::COMMAND;
-            turn.turn_deg += step_deg
-                * (pressed(command, Key::ArrowRight) - pressed(command, Key::ArrowLeft));
+            turn.turn_deg +=
+                step_deg * (pressed(command, Key::ArrowRight) - pressed(command, Key::ArrowLeft));
             turn.tilt_deg += step_deg
-                * (pressed(Modifiers::NONE, Key::ArrowUp) - pressed(Modifiers::NONE, Key::ArrowDown));
+                * (pressed(Modifiers::NONE, Key::ArrowUp)
+                    - pressed(Modifiers::NONE, Key::ArrowDown));
             let wider = pressed(Modifiers::NONE, Key::Minus);
             let narrower =
                 pressed(Modifiers::NONE, Key::Plus) + pressed(Modifiers::NONE, Key::Equals);
@@ -171,7 +174,9 @@ impl Horizon {
                 texture.id()
             }
             None => {
-                let texture = ui.ctx().load_texture("sky", image(), TextureOptions::LINEAR);
+                let texture = ui
+                    .ctx()
+                    .load_texture("sky", image(), TextureOptions::LINEAR);
                 let id = texture.id();
                 self.sky = Some((key, texture));
                 id

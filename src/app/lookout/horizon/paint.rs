@@ -54,7 +54,10 @@ fn stars(painter: &Painter, look: &Look, model: &Model, layout: &Layout) {
         if layout.camera.rect.contains(at) {
             let spare = (model.faintest - star.magnitude) as f32;
             let radius = 0.7 + 0.28 * (4.6 - star.magnitude as f32).clamp(0.0, 5.0);
-            let colour = look.colours.body.gamma_multiply((0.25 + 0.5 * spare).clamp(0.0, 1.0));
+            let colour = look
+                .colours
+                .body
+                .gamma_multiply((0.25 + 0.5 * spare).clamp(0.0, 1.0));
             painter.circle_filled(at, radius, colour);
         }
     }
@@ -81,7 +84,13 @@ fn bodies(painter: &Painter, look: &Look, model: &Model, layout: &Layout) {
             let (lit, unlit) = (look.colours.disc_lit, look.colours.disc_shade);
             let unlit = unlit.gamma_multiply(0.35 * share);
             let phase = (mark.phase_angle, limb);
-            disc::paint(painter, *at, *radius, phase, (lit.gamma_multiply(0.6 + 0.4 * share), unlit));
+            disc::paint(
+                painter,
+                *at,
+                *radius,
+                phase,
+                (lit.gamma_multiply(0.6 + 0.4 * share), unlit),
+            );
         } else {
             painter.circle_filled(*at, *radius, look.colours.body.gamma_multiply(share));
         }
@@ -201,10 +210,17 @@ fn azimuths(painter: &Painter, look: &Look, layout: &Layout) {
         ..CornerRadius::ZERO
     };
     painter.rect_filled(ruler, below, look.colours.card);
-    painter.hline(ruler.x_range(), ruler.top(), Stroke::new(1.0, look.colours.line));
+    painter.hline(
+        ruler.x_range(),
+        ruler.top(),
+        Stroke::new(1.0, look.colours.line),
+    );
     for mark in &layout.azimuths {
         let reach = if mark.is_named { 7.0 } else { 4.0 };
-        let ends = [pos2(mark.at, ruler.top()), pos2(mark.at, ruler.top() + reach)];
+        let ends = [
+            pos2(mark.at, ruler.top()),
+            pos2(mark.at, ruler.top() + reach),
+        ];
         painter.line_segment(ends, Stroke::new(1.0, look.colours.lesser));
         let at = pos2(mark.at, ruler.center().y + 3.0);
         let place = Align2::CENTER_CENTER.anchor_size(at, mark.text.size());

@@ -86,9 +86,8 @@ pub fn path_ticks(camera: &Camera, samples: &[Sample], ticks: &[Tick]) -> Vec<Pa
                 unit if unit.x >= 0.0 => vec2(unit.y, -unit.x),
                 unit => vec2(-unit.y, unit.x),
             };
-            let shows = a.standing != Standing::Down
-                && altitude > Angle::ZERO
-                && camera.rect.contains(at);
+            let shows =
+                a.standing != Standing::Down && altitude > Angle::ZERO && camera.rect.contains(at);
             shows.then_some(PathTick {
                 tick: *tick,
                 at,
@@ -149,7 +148,12 @@ mod tests {
 
     #[test]
     fn standings_follow_one_another_without_a_gap() {
-        let standings = [Standing::Blocked, Standing::Plain, Standing::WashedOut, Standing::Down];
+        let standings = [
+            Standing::Blocked,
+            Standing::Plain,
+            Standing::WashedOut,
+            Standing::Down,
+        ];
         let samples: Vec<_> = (0..16)
             .map(|k| sample(k, 10.0 - 0.2 * k as f64, standings[k / 4]))
             .collect();
@@ -166,7 +170,10 @@ mod tests {
         let samples: Vec<_> = (0..30)
             .map(|k| sample(k, 10.0 - 0.2 * k as f64, Standing::Plain))
             .collect();
-        let tick = Tick { at_s: 600.0, minute: 0 };
+        let tick = Tick {
+            at_s: 600.0,
+            minute: 0,
+        };
         let found = path_ticks(&camera(), &samples, &[tick]);
         assert_eq!(found.len(), 1);
         assert!((found[0].at.x - 480.0).abs() < 1e-3, "{found:?}");

@@ -24,7 +24,11 @@ struct Gradient {
 
 impl Gradient {
     fn new(sky: &SkyAt) -> Self {
-        let (low, middle, high) = (Rgba::from(sky.low), Rgba::from(sky.middle), Rgba::from(sky.high));
+        let (low, middle, high) = (
+            Rgba::from(sky.low),
+            Rgba::from(sky.middle),
+            Rgba::from(sky.high),
+        );
         Self {
             low,
             low_away: mix(middle, high, 0.1),
@@ -61,7 +65,12 @@ fn sunward(azimuth: Angle, sun_azimuth: Angle) -> f32 {
 }
 
 /// The sky's colour in one place.
-pub fn colour(palette: &Palette, sun: (Angle, Angle), azimuth: Angle, altitude_deg: f32) -> Color32 {
+pub fn colour(
+    palette: &Palette,
+    sun: (Angle, Angle),
+    azimuth: Angle,
+    altitude_deg: f32,
+) -> Color32 {
     let (sun_altitude, sun_azimuth) = sun;
     let gradient = Gradient::new(&palette.sky(sun_altitude.degrees() as f32));
     gradient
@@ -112,7 +121,10 @@ pub fn faintest_star(sun_altitude: Angle) -> f64 {
     ];
     let sun_deg = sun_altitude.degrees();
     let after = STEPS.partition_point(|(step_deg, _)| *step_deg >= sun_deg);
-    match (after.checked_sub(1).and_then(|k| STEPS.get(k)), STEPS.get(after)) {
+    match (
+        after.checked_sub(1).and_then(|k| STEPS.get(k)),
+        STEPS.get(after),
+    ) {
         (Some((high_deg, a)), Some((low_deg, b))) => {
             a + (b - a) * (sun_deg - high_deg) / (low_deg - high_deg)
         }
@@ -131,7 +143,12 @@ mod tests {
     fn light_of(sun_deg: f64, azimuth_deg: f64, altitude_deg: f32) -> f32 {
         let sun = (Angle::from_degrees(sun_deg), Angle::from_degrees(250.0));
         let palette = Palette::shipped().unwrap();
-        let colour = colour(&palette, sun, Angle::from_degrees(azimuth_deg), altitude_deg);
+        let colour = colour(
+            &palette,
+            sun,
+            Angle::from_degrees(azimuth_deg),
+            altitude_deg,
+        );
         eframe::egui::Rgba::from(colour).intensity()
     }
 

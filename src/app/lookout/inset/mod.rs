@@ -21,10 +21,8 @@ pub struct Inset {
 impl Inset {
     /// Draws the inset into the room that `ui` has.
     pub fn show(&mut self, ui: &mut Ui, scene: &Scene<'_>) -> Response {
-        let (rect, response) = ui.allocate_exact_size(
-            ui.available_size_before_wrap(),
-            Sense::hover(),
-        );
+        let (rect, response) =
+            ui.allocate_exact_size(ui.available_size_before_wrap(), Sense::hover());
         let says = Says::new(scene);
         let Some(model) = Model::new(scene) else {
             return response;
@@ -41,7 +39,12 @@ impl Inset {
         });
         // The events around the night's middle: nearer ones than a night are the same either way.
         let neighbours = self.neighbours.get((scene.night_count, scene.body), || {
-            plan::neighbours(scene.ephemeris, scene.scales, scene.body, scene.night.middle)
+            plan::neighbours(
+                scene.ephemeris,
+                scene.scales,
+                scene.body,
+                scene.night.middle,
+            )
         });
         let events = model::around(&neighbours, scene, scene.moment);
         if ui.is_rect_visible(rect) {

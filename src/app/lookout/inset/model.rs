@@ -89,8 +89,9 @@ impl Model {
                     points.into_iter().map(|point| turn.plan(point)).collect()
                 };
                 let context = context(planet).iter().map(|other| orbit(*other));
-                let orbits: Vec<Vec<Plan>> =
-                    std::iter::once(orbit(Some(planet))).chain(context).collect();
+                let orbits: Vec<Vec<Plan>> = std::iter::once(orbit(Some(planet)))
+                    .chain(context)
+                    .collect();
                 let reach_au = orbits.iter().flatten().map(Plan::from_centre_au);
                 Some(Self {
                     body: planet,
@@ -177,13 +178,14 @@ pub fn around(
         neighbours.next_conjunction,
         neighbours.next_height,
     ];
-    let by_time = |a: &Neighbour, b: &Neighbour| {
-        a.moment.seconds_since(b.moment).total_cmp(&0.0)
-    };
+    let by_time = |a: &Neighbour, b: &Neighbour| a.moment.seconds_since(b.moment).total_cmp(&0.0);
     let events = || all.iter().flatten().copied();
     (
         events().filter(is_past).max_by(by_time).map(dated),
-        events().filter(|event| !is_past(event)).min_by(by_time).map(dated),
+        events()
+            .filter(|event| !is_past(event))
+            .min_by(by_time)
+            .map(dated),
     )
 }
 
@@ -197,7 +199,10 @@ mod tests {
         let earth = Vector::new(-0.6, 0.8, 0.0);
         let turn = Turn::new(earth);
         let Plan { right_au, up_au } = turn.plan(earth);
-        assert!(right_au.abs() < 1e-12 && (up_au + 1.0).abs() < 1e-12, "{right_au} {up_au}");
+        assert!(
+            right_au.abs() < 1e-12 && (up_au + 1.0).abs() < 1e-12,
+            "{right_au} {up_au}"
+        );
         // A little further along the orbit, counter-clockwise as seen from the north.
         let later = turn.plan(earth + Vector::new(-0.8, -0.6, 0.0) * 0.1);
         assert!(later.right_au > 0.05, "{later:?}");

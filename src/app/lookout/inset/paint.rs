@@ -5,8 +5,7 @@ use crate::app::lookout::labels::{self, Rank, Wanted};
 use crate::app::lookout::says::Says;
 use crate::app::scene::Scene;
 use eframe::egui::{
-    Color32, FontId, Galley, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, Vec2, pos2,
-    vec2,
+    Color32, FontId, Galley, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, Vec2, pos2, vec2,
 };
 use std::sync::Arc;
 
@@ -42,7 +41,13 @@ pub fn paint(
         pos2(inner.right(), bottom - 4.0),
     );
     let title_rect = Rect::from_min_size(inner.min, title.size());
-    plan(&painter.with_clip_rect(card), scene, model, room, title_rect);
+    plan(
+        &painter.with_clip_rect(card),
+        scene,
+        model,
+        room,
+        title_rect,
+    );
 }
 
 fn words(says: Says<'_>, model: &Model, dated: &Dated) -> String {
@@ -77,7 +82,10 @@ fn plan(painter: &Painter, scene: &Scene<'_>, model: &Model, room: Rect, title: 
         Centre::Earth => centre - vec2(0.0, radius),
     };
     let sight = Stroke::new(1.5, colours.chosen);
-    painter.line_segment([earth, sun], Stroke::new(1.0, colours.chosen.gamma_multiply(0.6)));
+    painter.line_segment(
+        [earth, sun],
+        Stroke::new(1.0, colours.chosen.gamma_multiply(0.6)),
+    );
     painter.line_segment([earth, place], sight);
     let arc = elongation_arc(earth, sun, place);
     painter.add(Shape::line(arc.clone(), Stroke::new(1.2, colours.chosen)));
@@ -94,11 +102,27 @@ fn plan(painter: &Painter, scene: &Scene<'_>, model: &Model, room: Rect, title: 
 
     let small = look.font(look.sizes.label);
     let text = |text: String, colour| painter.layout_no_wrap(text, small.clone(), colour);
-    let sun_name = if is_sun_there { "inset-sun" } else { "inset-to-sun" };
+    let sun_name = if is_sun_there {
+        "inset-sun"
+    } else {
+        "inset-to-sun"
+    };
     let mut texts = vec![
-        (Rank::Target, place, text(says.body(model.body), colours.text)),
-        (Rank::Moon, earth, text(says.text("inset-earth", &[]), colours.keen)),
-        (Rank::Planet, sun, text(says.text(sun_name, &[]), colours.lesser)),
+        (
+            Rank::Target,
+            place,
+            text(says.body(model.body), colours.text),
+        ),
+        (
+            Rank::Moon,
+            earth,
+            text(says.text("inset-earth", &[]), colours.keen),
+        ),
+        (
+            Rank::Planet,
+            sun,
+            text(says.text(sun_name, &[]), colours.lesser),
+        ),
     ];
     let elongation = text(says.tenths(model.elongation), colours.chosen);
     texts.push((Rank::Hour, arc[arc.len() / 2], elongation));

@@ -80,7 +80,11 @@ impl Model {
         let view = epoch.seen_by(scene.observer);
         let appearance = view.appearance(scene.body);
         let limb = disc::towards_limb(view.bright_limb_from_zenith(scene.body));
-        let pole = disc::towards_limb(pole_from_up(&view, epoch.frame().true_from_icrs, scene.body));
+        let pole = disc::towards_limb(pole_from_up(
+            &view,
+            epoch.frame().true_from_icrs,
+            scene.body,
+        ));
         let seen = |through, view| Seen {
             through,
             view,
@@ -128,8 +132,8 @@ fn pole_from_up(view: &View<'_>, true_from_icrs: crate::measure::Matrix, body: B
         return Angle::ZERO;
     }
     let (ra, dec) = SATURN_POLE_DEG;
-    let pole = true_from_icrs
-        * Vector::from_spherical(Angle::from_degrees(ra), Angle::from_degrees(dec));
+    let pole =
+        true_from_icrs * Vector::from_spherical(Angle::from_degrees(ra), Angle::from_degrees(dec));
     let towards = view.topocentric(body).direction;
     // East of north is counter-clockwise on the sky.
     let north = Vector::new(0.0, 0.0, 1.0);
@@ -140,7 +144,8 @@ fn pole_from_up(view: &View<'_>, true_from_icrs: crate::measure::Matrix, body: B
 }
 
 fn binocular(kit: &[Instrument]) -> Through {
-    let is_binocular = |instrument: &&Instrument| matches!(instrument, Instrument::Binocular { .. });
+    let is_binocular =
+        |instrument: &&Instrument| matches!(instrument, Instrument::Binocular { .. });
     let found = kit.iter().find(is_binocular);
     Through::Binocular(found.map(|instrument| instrument.label().to_owned()))
 }
@@ -196,6 +201,9 @@ mod tests {
             telescope(&kit, OpticsView::Mirrored),
             Through::Telescope(Some(("90 mm refractor".into(), 36.0)))
         );
-        assert_eq!(telescope(&kit, OpticsView::Inverted), Through::Telescope(None));
+        assert_eq!(
+            telescope(&kit, OpticsView::Inverted),
+            Through::Telescope(None)
+        );
     }
 }

@@ -46,14 +46,18 @@ pub fn paint(painter: &Painter, scene: &Scene<'_>, model: &Model, card: Rect) {
         body(painter, look, model, seen, centre, radius);
         let (name, note) = captions_of(says, model, seen);
         let top = centre.y + radius + 4.0;
-        for (text, colour, y) in [
-            (name, colours.text, top),
-            (note, colours.lesser, top + row),
-        ] {
+        for (text, colour, y) in [(name, colours.text, top), (note, colours.lesser, top + row)] {
             let text = painter.layout(text, font.clone(), colour, width - 4.0);
             let one_line = Rect::from_min_size(
                 pos2(x - 0.5 * width, y),
-                vec2(width, if colour == colours.text { row } else { inner.bottom() + row - y }),
+                vec2(
+                    width,
+                    if colour == colours.text {
+                        row
+                    } else {
+                        inner.bottom() + row - y
+                    },
+                ),
             );
             let place = Align2::CENTER_TOP.anchor_size(pos2(x, y), text.size());
             painter
@@ -76,12 +80,19 @@ fn captions_of(says: Says<'_>, model: &Model, seen: &Seen) -> (String, String) {
     match &seen.through {
         Through::Eye => {
             let is_disc = matches!(model.body, Body::Moon | Body::Sun);
-            let id = if is_disc { "phase-eye-disc" } else { "phase-eye-point" };
+            let id = if is_disc {
+                "phase-eye-disc"
+            } else {
+                "phase-eye-point"
+            };
             (says.text("phase-eye", &[]), says.text(id, &[]))
         }
         Through::Binocular(label) => {
             let label = label.clone();
-            (label.unwrap_or_else(|| says.text("phase-binocular", &[])), view)
+            (
+                label.unwrap_or_else(|| says.text("phase-binocular", &[])),
+                view,
+            )
         }
         Through::Telescope(None) => (says.text("phase-telescope", &[]), view),
         Through::Telescope(Some((label, power))) => {
@@ -100,11 +111,24 @@ fn body(painter: &Painter, look: &Look, model: &Model, seen: &Seen, centre: Pos2
     let tones = (colours.disc_lit, colours.disc_shade);
     let half = |is_near| {
         if let Some(rings) = model.rings {
-            painter.add(ring_half(rings, centre, radius, seen.towards_pole, is_near, colours.disc_lit));
+            painter.add(ring_half(
+                rings,
+                centre,
+                radius,
+                seen.towards_pole,
+                is_near,
+                colours.disc_lit,
+            ));
         }
     };
     half(false);
-    disc::paint(painter, centre, radius, (model.phase_angle, seen.towards_limb), tones);
+    disc::paint(
+        painter,
+        centre,
+        radius,
+        (model.phase_angle, seen.towards_limb),
+        tones,
+    );
     half(true);
 }
 
@@ -121,13 +145,20 @@ fn ring_half(
     const STEPS: u32 = 48;
     let along = towards_pole.rot90();
     let squeeze = rings.opening_sine.abs() as f32;
-    let side = if is_near == (rings.opening_sine > 0.0) { -1.0 } else { 1.0 };
+    let side = if is_near == (rings.opening_sine > 0.0) {
+        -1.0
+    } else {
+        1.0
+    };
     let mut mesh = Mesh::default();
     for k in 0..=STEPS {
         let (sin, cos) = (std::f32::consts::PI * k as f32 / STEPS as f32).sin_cos();
         let towards = along * cos + towards_pole * (side * squeeze * sin);
         for edge in [rings.outer, rings.inner] {
-            mesh.colored_vertex(centre + towards * (radius * edge as f32), colour.gamma_multiply(0.8));
+            mesh.colored_vertex(
+                centre + towards * (radius * edge as f32),
+                colour.gamma_multiply(0.8),
+            );
         }
         if k > 0 {
             let k = 2 * k;

@@ -35,7 +35,8 @@ impl ClearancePlot {
         let (look, says) = (&scene.look, Says::new(scene));
         let (card, _) = ui.allocate_exact_size(ui.available_size_before_wrap(), Sense::hover());
         let line = Stroke::new(1.0, look.colours.line);
-        ui.painter().rect_filled(card, look.room.corner, look.colours.card);
+        ui.painter()
+            .rect_filled(card, look.room.corner, look.colours.card);
         ui.painter()
             .rect_stroke(card, look.room.corner, line, StrokeKind::Inside);
         let inner = card.shrink2(vec2(look.room.inside, 6.0));
@@ -54,9 +55,8 @@ impl ClearancePlot {
         let screen = |point: PlotPoint| plot.transform.position_from_point(&point);
         self::names(ui, scene, says, &model, *names, screen);
         let response = plot.response;
-        response.widget_info(|| {
-            WidgetInfo::labeled(Role::Canvas, true, says.text("plot-name", &[]))
-        });
+        response
+            .widget_info(|| WidgetInfo::labeled(Role::Canvas, true, says.text("plot-name", &[])));
         if response.hovered() || response.dragged() {
             ui.ctx().set_cursor_icon(CursorIcon::ResizeHorizontal);
         }
@@ -88,7 +88,9 @@ fn frame<'a>(scene: &'a Scene<'a>, says: Says<'a>, model: &'a Model) -> Plot<'a>
         Origin::Start => "plot-minutes-start",
     };
     let hint = |axis: AxisHints<'a>| axis.tick_label_color(colour).tick_label_font(font.clone());
-    let name = RichText::new(says.text(axis_name, &[])).font(font.clone()).color(colour);
+    let name = RichText::new(says.text(axis_name, &[]))
+        .font(font.clone())
+        .color(colour);
     let span_min = model.to_min - model.from_min;
     let x_step = [15.0, 30.0, 60.0, 120.0, 240.0]
         .into_iter()
@@ -133,12 +135,7 @@ fn marks(input: &GridInput, step: f64) -> Vec<GridMark> {
 }
 
 /// The others in grey, the skyline dashed, the chosen body in amber over all.
-fn curves<'a>(
-    plot: &mut egui_plot::PlotUi<'a>,
-    scene: &Scene<'_>,
-    says: Says<'_>,
-    model: &Model,
-) {
+fn curves<'a>(plot: &mut egui_plot::PlotUi<'a>, scene: &Scene<'_>, says: Says<'_>, model: &Model) {
     let colours = &scene.look.colours;
     let skyline = Stroke::new(1.0, colours.lesser);
     plot.hline(
@@ -185,7 +182,11 @@ fn names(
         let Some([minutes, degrees]) = points.copied().max_by(|a, b| a[1].total_cmp(&b[1])) else {
             continue;
         };
-        let colour = if k == 0 { look.colours.chosen } else { look.colours.lesser };
+        let colour = if k == 0 {
+            look.colours.chosen
+        } else {
+            look.colours.lesser
+        };
         let text = painter.layout_no_wrap(says.body(curve.body), font.clone(), colour);
         let top = screen(PlotPoint::new(minutes, degrees));
         let size = text.size();
@@ -198,7 +199,10 @@ fn names(
         .into_iter()
         .map(|corner| Rect::from_min_size(corner, size))
         .find(|rect| {
-            frame.contains_rect(*rect) && taken.iter().all(|other| !other.expand(2.0).intersects(*rect))
+            frame.contains_rect(*rect)
+                && taken
+                    .iter()
+                    .all(|other| !other.expand(2.0).intersects(*rect))
         });
         if let Some(place) = place {
             painter.galley(place.min, text, colour);

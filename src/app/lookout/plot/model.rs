@@ -75,7 +75,10 @@ impl Model {
                     }
                     is_joined = is_up;
                 }
-                Curve { body: *body, pieces }
+                Curve {
+                    body: *body,
+                    pieces,
+                }
             })
             .collect();
         let highest_deg = curves
