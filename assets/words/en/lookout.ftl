@@ -70,9 +70,7 @@ inset-days-on = { $aspect } in { $days ->
     [one] { $days } day
    *[other] { $days } days
 }
-inset-today-ago = { $aspect } today
-inset-today-on = { $aspect } tomorrow
-inset-pair = { $first } · { $second }
+inset-today = { $aspect } today
 aspect-new-moon = new moon
 aspect-full-moon = full moon
 aspect-inferior-conjunction = inferior conjunction
@@ -90,7 +88,7 @@ phase-eye-point = a brilliant point
 phase-eye-disc = as it hangs
 phase-binocular = binocular
 phase-telescope = telescope
-phase-instrument = { $label } { $power }×
+phase-power = { $power }, { $view }
 phase-erect = erect
 phase-inverted = inverted
 phase-mirrored = mirrored

@@ -55,13 +55,12 @@ pub fn paint(
         mesh.add_triangle(2 * k + 1, 2 * k + 3, 2 * k + 2);
     }
     painter.add(Shape::mesh(mesh));
-    // A mesh has hard edges; a hair line along them is drawn softly.
-    let limb = edge.iter().map(|(limb, _)| *limb);
-    let terminator = edge.iter().rev().map(|(_, terminator)| *terminator);
-    painter.add(Shape::closed_line(
-        limb.chain(terminator).collect(),
-        Stroke::new(0.8, lit),
-    ));
+    // A mesh has hard edges; a hair line along each is drawn softly. Two open lines: a corner at
+    // the cusps would be drawn out to a spike.
+    let soft = Stroke::new(0.8, lit);
+    let (limb, terminator): (Vec<Pos2>, Vec<Pos2>) = edge.into_iter().unzip();
+    painter.add(Shape::line(limb, soft));
+    painter.add(Shape::line(terminator, soft));
 }
 
 #[cfg(test)]

@@ -5,16 +5,22 @@
 //! record commands.
 
 mod disc;
+pub mod fade;
 pub mod horizon;
+pub mod inset;
+mod labels;
 pub mod model;
+pub mod phase;
+pub mod plot;
 mod says;
 
 use super::command::Commands;
+use super::palette::Look;
 use super::scene::Scene;
 use crate::light::Eye;
 use crate::plan::Half;
 use crate::sky::Body;
-use eframe::egui::{Response, Ui};
+use eframe::egui::{Galley, Painter, Pos2, Response, Ui, Vec2, vec2};
 use model::Tracks;
 use std::sync::Arc;
 
@@ -23,6 +29,9 @@ use std::sync::Arc;
 pub struct Drawings {
     tracks: Kept<HalfKey, Tracks>,
     horizon: horizon::Horizon,
+    fade: fade::Fade,
+    plot: plot::ClearancePlot,
+    inset: inset::Inset,
 }
 
 impl Drawings {
@@ -32,9 +41,48 @@ impl Drawings {
         self.horizon.show(ui, scene, &tracks, commands)
     }
 
+    /// The time slider with the lanes.
+    pub fn fade(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        let tracks = self.tracks(scene);
+        self.fade.show(ui, scene, &tracks, commands)
+    }
+
+    /// The clearance of the bright bodies against minutes.
+    pub fn plot(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        let tracks = self.tracks(scene);
+        self.plot.show(ui, scene, &tracks, commands)
+    }
+
+    /// The plan of the orbits.
+    pub fn inset(&mut self, ui: &mut Ui, scene: &Scene<'_>) -> Response {
+        self.inset.show(ui, scene)
+    }
+
+    /// The disc as the eye and the optics show it.
+    pub fn phase(&mut self, ui: &mut Ui, scene: &Scene<'_>) -> Response {
+        phase::show(ui, scene)
+    }
+
     fn tracks(&mut self, scene: &Scene<'_>) -> Arc<Tracks> {
         self.tracks.get(HalfKey::of(scene), || Tracks::new(scene))
     }
+}
+
+/// One point to every side: where letters over the sky have their dark shade.
+const AROUND: [Vec2; 4] = [
+    vec2(-1.0, 0.0),
+    vec2(1.0, 0.0),
+    vec2(0.0, -1.0),
+    vec2(0.0, 1.0),
+];
+
+/// Letters over the sky: with a dark shade around them, so that they read in every light.
+fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
+    let shade = look.colours.sky_shade.gamma_multiply(0.55);
+    for aside in AROUND {
+        painter.galley_with_override_text_color(at + aside, text.clone(), shade);
+    }
+    painter.galley(at, text.clone(), look.colours.sky_text);
 }
 
 /// Something made once for a key and shared until the key changes.

@@ -92,6 +92,14 @@ impl Tracks {
         self.start.plus_seconds(at_s)
     }
 
+    /// The moment of the whole local minute nearest to a time, within the half-night.
+    pub fn whole_minute(&self, scales: TimeScales, zone: Tz, at_s: f64) -> Moment {
+        let local = civil::local(scales.civil(self.moment(at_s)).0, zone);
+        let into_s = f64::from(local.second()) + f64::from(local.nanosecond()) * 1e-9;
+        let back_s = if into_s < 30.0 { into_s } else { into_s - 60.0 };
+        self.moment((at_s - back_s).clamp(0.0, self.length_s))
+    }
+
     /// The Sun's airless altitude at a time, straight between samples.
     pub fn sun_altitude(&self, at_s: f64) -> Angle {
         between(&self.sun, at_s, |sample| sample.sun_altitude)

@@ -42,6 +42,22 @@ impl<'a> Says<'a> {
                 .into_owned()
         })
     }
+    /// A message with its arguments and a counted number.
+    pub fn counted(&self, id: &str, args: &[(&str, &str)], (name, count): (&str, f64)) -> String {
+        BUNDLE.with(|bundle| {
+            let mut fluent = FluentArgs::new();
+            for (name, value) in args {
+                fluent.set(*name, *value);
+            }
+            fluent.set(name, count);
+            let Some(pattern) = bundle.get_message(id).and_then(|m| m.value()) else {
+                return format!("«{id}»");
+            };
+            bundle
+                .format_pattern(pattern, Some(&fluent), &mut vec![])
+                .into_owned()
+        })
+    }
     /// A body's name.
     pub fn body(&self, body: Body) -> String {
         self.text(&format!("body-{}", body.name()), &[])
@@ -81,6 +97,23 @@ impl<'a> Says<'a> {
     /// Arcseconds.
     pub fn arcsec(&self, angle: Angle) -> String {
         format!("{:.1}″", angle.arcsec())
+    }
+    /// Arcseconds without a fraction.
+    pub fn whole_arcsec(&self, angle: Angle) -> String {
+        format!("{:.0}″", angle.arcsec())
+    }
+    /// Arcminutes without a fraction.
+    pub fn arcmin(&self, angle: Angle) -> String {
+        format!("{:.0}′", angle.arcsec() / 60.0)
+    }
+    /// A magnification.
+    pub fn power(&self, power: f64) -> String {
+        format!("{power:.0}×")
+    }
+    /// Minutes with their sign.
+    pub fn signed_minutes(&self, minutes: f64) -> String {
+        let sign = if minutes > 0.5 { "+" } else { "" };
+        format!("{sign}{minutes:.0}").replace('-', "−")
     }
     /// The name of one of the eight compass points, clockwise from north.
     pub fn compass(&self, point: usize) -> String {

@@ -1,9 +1,9 @@
 //! Where everything of the horizon view goes.
 
 use super::camera::Camera;
-use super::labels::{self, Rank, Wanted};
 use super::model::{Mark, Model};
 use super::path::{self, PathTick, Stretch};
+use crate::app::lookout::labels::{self, Rank, Wanted};
 use crate::app::lookout::model::{Tick, Tracks};
 use crate::app::lookout::says::Says;
 use crate::app::palette::Look;
@@ -419,21 +419,32 @@ impl Builder<'_> {
             let font = self.look.font(self.look.sizes.label);
             let colour = self.look.colours.skyline_name;
             let line = self.galley(feature.label.to_string(), font, colour);
-            let top = camera.pos(feature.azimuth, feature.top);
+            let crest = self.lowest_crest(feature.azimuth, line.size().x + 8.0);
+            let top = camera.pos(feature.azimuth, crest);
             let width = (feature.width.degrees() * camera.points_per_deg) as f32;
-            let foot_y = camera.pos_beside(0.0, camera.bottom_deg).y;
-            let fits_inside = line.size().x + 4.0 < width && top.y + line.size().y + 6.0 < foot_y;
-            if !fits_inside {
+            let foot_y = camera.rect.bottom();
+            if line.size().x + 4.0 > width {
                 continue;
             }
             self.want(Rank::Obstacle, vec![line], top, |size| {
-                [8.0, 20.0, 32.0]
+                [5.0, 18.0, 32.0]
                     .iter()
                     .map(|below| pos2(top.x - 0.5 * size.x, top.y + below))
-                    .filter(|place| place.y + size.y < foot_y)
+                    .filter(|place| place.y + size.y + 2.0 < foot_y)
                     .collect()
             });
         }
+    }
+
+    /// The lowest that the skyline comes over a label's width.
+    fn lowest_crest(&self, azimuth: Angle, width: f32) -> Angle {
+        let half_deg = 0.5 * f64::from(width) / self.camera.points_per_deg;
+        let across = [-1.0, -0.75, -0.5, -0.25, 0.0, 0.25, 0.5, 0.75, 1.0];
+        let crests = across.map(|share| {
+            let at = azimuth + Angle::from_degrees(share * half_deg);
+            self.scene.skyline.altitude(at).radians()
+        });
+        Angle::from_radians(crests.into_iter().fold(f64::INFINITY, f64::min))
     }
 
     /// The names of the brightest stars that stand clear of the skyline.

@@ -1,7 +1,6 @@
 //! The horizon view: azimuth against altitude, with the chosen body's path over the skyline.
 
 mod camera;
-mod labels;
 mod layout;
 mod model;
 mod paint;

@@ -3,14 +3,13 @@
 use super::layout::{Label, Layout, outline};
 use super::model::Model;
 use super::path::Stretch;
-use crate::app::lookout::disc;
+use crate::app::lookout::{disc, shaded};
 use crate::app::palette::Look;
 use crate::light::Standing;
 use crate::measure::Angle;
 use crate::sky::Body;
 use eframe::egui::{
-    Align2, Color32, CornerRadius, Mesh, Painter, Pos2, Rect, Shape, Stroke, TextureId, Vec2, pos2,
-    vec2,
+    Align2, Color32, CornerRadius, Mesh, Painter, Pos2, Rect, Shape, Stroke, TextureId, pos2,
 };
 
 /// What is painted, in the order in which things lie over one another.
@@ -229,14 +228,8 @@ fn azimuths(painter: &Painter, look: &Look, layout: &Layout) {
     }
 }
 
-/// Letters over the sky have a dark shade, so that they read in every light.
+/// A label's lines.
 fn text(painter: &Painter, look: &Look, label: &Label) {
-    const AROUND: [Vec2; 4] = [
-        vec2(-1.0, 0.0),
-        vec2(1.0, 0.0),
-        vec2(0.0, -1.0),
-        vec2(0.0, 1.0),
-    ];
     let mut y = label.rect.top();
     for line in &label.lines {
         let x = if label.is_right_aligned {
@@ -246,12 +239,10 @@ fn text(painter: &Painter, look: &Look, label: &Label) {
         };
         let at = pos2(x, y);
         if label.is_on_sky {
-            let shade = look.colours.sky_shade.gamma_multiply(0.55);
-            for aside in AROUND {
-                painter.galley_with_override_text_color(at + aside, line.clone(), shade);
-            }
+            shaded(painter, look, at, line);
+        } else {
+            painter.galley(at, line.clone(), look.colours.skyline_name);
         }
-        painter.galley(at, line.clone(), look.colours.sky_text);
         y += line.size().y;
     }
 }

@@ -9,9 +9,10 @@ use eframe::egui::{Color32, ColorImage, Rgba, lerp};
 /// Columns and rows of the sky's texture; it is stretched smoothly over the view.
 const SIZE: [usize; 2] = [256, 96];
 
-/// Altitudes of the palette's three colours, degrees, and how the middle one is reached.
-const MIDDLE_DEG: f32 = 16.0;
-const HIGH_DEG: f32 = 48.0;
+/// How fast the horizon's colour gives way to the middle one, degrees of altitude; and where the
+/// high one is reached.
+const LOW_DEG: f32 = 8.0;
+const HIGH_DEG: f32 = 56.0;
 
 /// How the colour runs with altitude, on the Sun's side and away from it.
 struct Gradient {
@@ -43,13 +44,9 @@ impl Gradient {
         let low = mix(self.low_away, self.low, sunward);
         let middle = mix(self.middle_away, self.middle, sunward);
         let altitude_deg = altitude_deg.max(0.0);
-        if altitude_deg < MIDDLE_DEG {
-            // The glow hugs the horizon.
-            mix(low, middle, (altitude_deg / MIDDLE_DEG).powf(0.75))
-        } else {
-            let share = ((altitude_deg - MIDDLE_DEG) / (HIGH_DEG - MIDDLE_DEG)).clamp(0.0, 1.0);
-            mix(middle, self.high, share * (2.0 - share))
-        }
+        let share = (altitude_deg / HIGH_DEG).min(1.0);
+        let above = mix(middle, self.high, share * share * (3.0 - 2.0 * share));
+        mix(above, low, (-altitude_deg / LOW_DEG).exp())
     }
 }
 
