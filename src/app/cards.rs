@@ -11,11 +11,9 @@ use crate::sky::{Body, refraction};
 use eframe::egui::{Align, Color32, Layout, Response, Stroke, Ui, vec2};
 
 /// The sentence, at the size to be read aloud from.
-pub fn sentence_card(ui: &mut Ui, scene: &Scene<'_>, words: &Words, least_height: f32) {
-    let look = &scene.look;
+pub fn sentence_card(ui: &mut Ui, look: &Look, sentence: &str, least_height: f32) {
     card(ui, look, least_height, |ui| {
-        let sentence = words.half_night_sentence(scene);
-        text(ui, look, look.sizes.sentence, look.colours.text, &sentence);
+        text(ui, look, look.sizes.sentence, look.colours.text, sentence);
     });
 }
 
@@ -113,7 +111,7 @@ fn caution_text(
     parts.push(first);
     if caution.is_near_the_sun {
         let degrees = words.degrees(caution.elongation, 0);
-        let body = words.body(scene.body);
+        let body = words.body_aloud(scene.body);
         parts.push(words.text_with("caution-near-sun", &[("body", &body), ("angle", &degrees)]));
     }
     parts.push(words.text("caution-always"));

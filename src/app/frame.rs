@@ -131,7 +131,7 @@ impl DesktopWindow {
         });
         ui.scope_builder(UiBuilder::new().max_rect(right), |ui| {
             if let Some(scene) = self.scene() {
-                sentence_card(ui, &scene, &self.words, SENTENCE_HEIGHT);
+                sentence_card(ui, look, self.sentence(), SENTENCE_HEIGHT);
                 let motion = self.state.motion();
                 caution_card(ui, &scene, &self.words, motion, CAUTION_HEIGHT);
             }
@@ -153,8 +153,8 @@ impl DesktopWindow {
             .auto_shrink(false)
             .show(ui, |ui| {
                 picker_row(ui, look, &self.words, &self.state, commands);
-                if let Some(scene) = self.scene() {
-                    sentence_card(ui, &scene, &self.words, 0.0);
+                if self.scene().is_some() {
+                    sentence_card(ui, look, self.sentence(), 0.0);
                 }
                 let heights = Heights {
                     view: (0.5 * ui.available_width()).clamp(240.0, 420.0),

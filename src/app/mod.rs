@@ -15,6 +15,7 @@ pub mod palette;
 mod pickers;
 mod planned;
 pub mod scene;
+mod sentence;
 mod settings;
 mod sites;
 mod start;

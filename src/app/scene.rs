@@ -50,23 +50,21 @@ pub struct Scene<'a> {
     pub night_count: u64,
 }
 
-/// What a drawing that does not depend on the moment depends on.
+/// What the half-night's sentence depends on: everything but moment and colours.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub struct SceneKey {
     night_count: u64,
     half: Half,
     body: Body,
-    theme: super::palette::Theme,
 }
 
 impl Scene<'_> {
-    /// The key of everything but the moment.
+    /// The key of everything but moment and colours.
     pub fn key(&self) -> SceneKey {
         SceneKey {
             night_count: self.night_count,
             half: self.half,
             body: self.body,
-            theme: self.look.theme,
         }
     }
 

@@ -54,10 +54,10 @@ fn speeds_ui(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &
     ui.scope(|ui| {
         ui.spacing_mut().item_spacing.x = 3.0;
         for speed in Speed::ALL {
-            let minutes = speed.minutes_per_second().to_string();
+            let minutes = speed.minutes_per_second();
             let is_running = state.motion() == Motion::Running(speed);
-            let response = choice(ui, look, is_running, &minutes);
-            let name = words.text_with("speed", &[("minutes", &minutes)]);
+            let response = choice(ui, look, is_running, &minutes.to_string());
+            let name = words.counted("speed", ("minutes", minutes));
             let enabled = ui.is_enabled();
             response.widget_info(|| WidgetInfo::selected(Role::Button, enabled, is_running, &name));
             if response.on_hover_text(name).clicked() {

@@ -5,7 +5,8 @@ use super::dialogs::Dialog;
 use super::keys::TakeKeys;
 use super::lookout::Drawings;
 use super::palette::{Palette, Theme};
-use super::scene::Scene;
+use super::scene::{Scene, SceneKey};
+use super::sentence::sentence;
 use super::settings::Settings;
 use super::sites::Sites;
 use super::start::Start;
@@ -35,6 +36,8 @@ pub struct DesktopWindow {
     /// What went wrong beside the view, oldest first; one is shown at a time.
     pub(super) notices: Vec<String>,
     pub(super) drawings: Drawings,
+    /// The half-night's sentence, made when it changes.
+    sentence: Option<(SceneKey, String)>,
     applied_theme: Option<Theme>,
     is_red: Arc<AtomicBool>,
     are_keys_blocked: Arc<AtomicBool>,
@@ -55,7 +58,7 @@ impl DesktopWindow {
         start: Start,
     ) -> Result<Self, Box<dyn std::error::Error + Send + Sync>> {
         let palette = Palette::shipped()?;
-        let words = Words::new();
+        let words = Words::shipped()?;
         let mut notices = Vec::new();
         let (settings, set_aside) = match &start.settings_file {
             Some(file) => Settings::load(file),
@@ -97,6 +100,7 @@ impl DesktopWindow {
             dialog: None,
             notices,
             drawings: Drawings::default(),
+            sentence: None,
             applied_theme: None,
             is_red,
             are_keys_blocked,
@@ -142,7 +146,23 @@ impl DesktopWindow {
         })
     }
 
-    fn run(&mut self, command: Command) {
+    /// The half-night in one sentence.
+    pub(super) fn sentence(&self) -> &str {
+        self.sentence.as_ref().map_or("", |(_, sentence)| sentence)
+    }
+
+    fn make_sentence(&mut self) {
+        let made_for = self.sentence.as_ref().map(|(key, _)| *key);
+        let fresh = self.scene().and_then(|scene| {
+            (made_for != Some(scene.key())).then(|| (scene.key(), sentence(&scene, &self.words)))
+        });
+        if fresh.is_some() {
+            self.sentence = fresh;
+        }
+    }
+
+    /// Runs a command, as its control or key would.
+    pub fn run(&mut self, command: Command) {
         let Some(command) = self.state.run(command) else {
             return;
         };
@@ -293,6 +313,7 @@ impl eframe::App for DesktopWindow {
 
     fn ui(&mut self, ui: &mut egui::Ui, _frame: &mut eframe::Frame) {
         let mut commands = Commands::new();
+        self.make_sentence();
         self.frame_ui(ui, &mut commands);
         self.dialog_ui(ui.ctx(), &mut commands);
         for command in commands {

@@ -22,6 +22,8 @@ fn every_size_and_zoom_draws_in_every_theme() {
             for theme in ["Light", "Red light", "Dark"] {
                 click(&mut harness, theme);
             }
+            // A message that the wording lacks shows its name in brackets.
+            assert_eq!(harness.query_all_by_label_contains("[").count(), 0);
             assert!(
                 harness.query_by_label_contains("optics until").is_some(),
                 "the caution is in sight at {width}x{height}, zoom {zoom}"

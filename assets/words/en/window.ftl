@@ -18,6 +18,7 @@ site-and-spot = { $site } · { $spot }
 site-picker = Site and spot: { $shown }
 spots = Spots on this site
 new-site = New site…
+new-site-title = New site
 new-site-hint = Name, coordinates, time zone and three points of the skyline
 find-site-file = Open a site file…
 find-site-file-hint = Choose a file that ends in .site.ron
@@ -123,3 +124,124 @@ keys = Keys
 zoom-keys = Ctrl + / Ctrl − / Ctrl 0
 zoom = Larger, smaller, usual size
 status-keys = ← → one minute · ⇧ ten · Page a day · Home best moment · Space let it run · T this minute · F1 help
+
+# The sentence to read aloud. A window's ends come with their causes.
+the-obstacle = the { $label }
+the-skyline = the skyline
+sentence-window = Visitors see { $body } { $startcause ->
+    [skyline] from { $start }, over { $startwhat },
+    [horizon] from { $start }, when it rises,
+   *[other] from about { $start }
+} { $endcause ->
+    [skyline] until { $end }, when it goes behind { $endwhat }.
+    [horizon] until { $end }, when it sets.
+    [twilight] until about { $end }, when the sky gets too bright.
+   *[other] until { $end } and beyond.
+}
+sentence-also = It shows also from { $start } until { $end }.
+sentence-best = Best near { $time }, { $altitude } up.
+sentence-not-up = Visitors do not see { $body }: it is below the horizon throughout.
+sentence-behind-skyline = Visitors do not see { $body }: it stays behind the skyline of this spot.
+sentence-sky-too-bright = Visitors do not see { $body }: wherever it stands clear, the sky is too bright.
+
+# Names
+body-sun = Sun
+body-moon = Moon
+body-mercury = Mercury
+body-venus = Venus
+body-mars = Mars
+body-jupiter = Jupiter
+body-saturn = Saturn
+body-uranus = Uranus
+body-neptune = Neptune
+aloud-sun = the Sun
+aloud-moon = the Moon
+aloud-mercury = Mercury
+aloud-venus = Venus
+aloud-mars = Mars
+aloud-jupiter = Jupiter
+aloud-saturn = Saturn
+aloud-uranus = Uranus
+aloud-neptune = Neptune
+weekday-1 = Mon
+weekday-2 = Tue
+weekday-3 = Wed
+weekday-4 = Thu
+weekday-5 = Fri
+weekday-6 = Sat
+weekday-7 = Sun
+month-1 = January
+month-2 = February
+month-3 = March
+month-4 = April
+month-5 = May
+month-6 = June
+month-7 = July
+month-8 = August
+month-9 = September
+month-10 = October
+month-11 = November
+month-12 = December
+month-short-1 = Jan
+month-short-2 = Feb
+month-short-3 = Mar
+month-short-4 = Apr
+month-short-5 = May
+month-short-6 = Jun
+month-short-7 = Jul
+month-short-8 = Aug
+month-short-9 = Sep
+month-short-10 = Oct
+month-short-11 = Nov
+month-short-12 = Dec
+compass-0 = north
+compass-1 = north-north-east
+compass-2 = north-east
+compass-3 = east-north-east
+compass-4 = east
+compass-5 = east-south-east
+compass-6 = south-east
+compass-7 = south-south-east
+compass-8 = south
+compass-9 = south-south-west
+compass-10 = south-west
+compass-11 = west-south-west
+compass-12 = west
+compass-13 = west-north-west
+compass-14 = north-west
+compass-15 = north-north-west
+compass-short-0 = N
+compass-short-1 = NNE
+compass-short-2 = NE
+compass-short-3 = ENE
+compass-short-4 = E
+compass-short-5 = ESE
+compass-short-6 = SE
+compass-short-7 = SSE
+compass-short-8 = S
+compass-short-9 = SSW
+compass-short-10 = SW
+compass-short-11 = WSW
+compass-short-12 = W
+compass-short-13 = WNW
+compass-short-14 = NW
+compass-short-15 = NNW
+
+# Numbers and times
+weekday-date = { $weekday } { $day } { $month } { $year }
+month-year = { $month } { $year }
+countdown-hours = In { $hours } h { $minutes } min.
+countdown-minutes = In { $minutes } min.
+countdown-seconds = In { $minutes } min { $seconds } s.
+degrees = { $figures }°
+azimuth = { $degrees } { $point }
+elongation = { $degrees } { $side ->
+    [east] E
+   *[west] W
+}
+percent = { $figures } %
+arcsec = { $figures }″
+arcmin = { $figures }′
+magnitude-extrapolated = ≈ { $figures }
+magnitude-outside = outside the formula’s range
+air = extinction { $extinction } · sky { $sky } mag/arcsec²

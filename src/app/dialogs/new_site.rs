@@ -75,7 +75,7 @@ impl NewSite {
             look,
             look.sizes.sentence,
             look.colours.text,
-            &words.text("new-site"),
+            &words.text("new-site-title"),
         );
         field(
             ui,
