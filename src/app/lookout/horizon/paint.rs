@@ -121,7 +121,8 @@ fn shapes(painter: &Painter, look: &Look, layout: &Layout, skyline: &[(Angle, An
     }
     painter.add(Shape::mesh(mesh));
     // The mesh's edge is hard; a hair line softens it, and tells the shapes from a night sky.
-    painter.add(Shape::line(points, Stroke::new(1.0, look.colours.line)));
+    let rim = look.colours.hidden.gamma_multiply(0.25);
+    painter.add(Shape::line(points, Stroke::new(1.0, rim)));
 }
 
 fn path(painter: &Painter, look: &Look, stretch: &Stretch) {

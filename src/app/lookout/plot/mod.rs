@@ -191,6 +191,7 @@ fn names(
                 .collect()
         })
         .collect();
+    let skyline_y = screen(PlotPoint::new(0.0, 0.0)).y;
     let mut taken = vec![title_at];
     for (k, curve) in model.curves.iter().enumerate() {
         let (colour, font) = match k {
@@ -201,6 +202,7 @@ fn names(
         let size = text.size();
         let is_free = |rect: &Rect| {
             frame.contains_rect(*rect)
+                && !rect.y_range().contains(skyline_y)
                 && taken
                     .iter()
                     .all(|other| !other.expand(2.0).intersects(*rect))
