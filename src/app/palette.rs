@@ -223,10 +223,14 @@ impl Look {
 /// The red theme's rendering of a colour: its brightness, dimmed, in the red channel alone.
 pub fn red_of_same_brightness(colour: Color32) -> Color32 {
     /// Red light spares the eye only while it is dim.
-    const DIMMED: f32 = 0.8;
+    const DIMMED: f32 = 0.85;
+    /// Dark reds are told apart less well than dark blues, so the dark end is spread.
+    const SPREAD: f32 = 0.75;
     let [r, g, b, a] = colour.to_array();
-    let red = f32::from(brightness(r, g, b)) * DIMMED;
-    Color32::from_rgba_premultiplied(red.round() as u8, 0, 0, a)
+    let share = f32::from(brightness(r, g, b)) / 255.0;
+    let red = 255.0 * DIMMED * share.powf(SPREAD);
+    // Colours are premultiplied: red never exceeds the opacity.
+    Color32::from_rgba_premultiplied((red.round() as u8).min(a), 0, 0, a)
 }
 
 /// Luma by the weights of ITU-R BT.709, which are the sRGB primaries'.
@@ -238,4 +242,73 @@ fn hex<'de, D: Deserializer<'de>>(deserializer: D) -> Result<Color32, D::Error> 
     let text = String::deserialize(deserializer)?;
     Color32::from_hex(&text)
         .map_err(|_| serde::de::Error::custom(format!("\"{text}\" is not a colour #rrggbb")))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::{Palette, Theme, red_of_same_brightness};
+    use eframe::egui::Color32;
+
+    fn palette() -> Palette {
+        Palette::shipped().expect("the shipped palette reads")
+    }
+
+    /// Relative luminance and contrast ratio by WCAG 2.1.
+    fn contrast(a: Color32, b: Color32) -> f32 {
+        let luminance = |colour: Color32| {
+            let linear = eframe::egui::Rgba::from(colour);
+            0.2126 * linear.r() + 0.7152 * linear.g() + 0.0722 * linear.b()
+        };
+        let (a, b) = (luminance(a) + 0.05, luminance(b) + 0.05);
+        a.max(b) / a.min(b)
+    }
+
+    #[test]
+    fn text_stands_out_from_its_ground_in_dark_and_light() {
+        for theme in [Theme::Dark, Theme::Light] {
+            let colours = palette().look(theme).colours;
+            for (name, text) in [
+                ("text", colours.text),
+                ("lesser", colours.lesser),
+                ("chosen", colours.chosen),
+                ("caution", colours.caution),
+                ("keen", colours.keen),
+            ] {
+                for ground in [colours.ground, colours.card] {
+                    // 4.5 is WCAG 2.1's level AA for text of any size.
+                    let ratio = contrast(text, ground);
+                    assert!(ratio >= 4.5, "{name} in {theme:?}: {ratio:.1}");
+                }
+            }
+        }
+    }
+
+    #[test]
+    fn no_type_is_smaller_than_eleven_points() {
+        let look = palette().look(Theme::Dark);
+        assert_eq!(look.sizes.least, 11.0);
+        assert_eq!(look.font(3.0).size, 11.0);
+    }
+
+    #[test]
+    fn the_sky_darkens_as_the_sun_sinks() {
+        let palette = palette();
+        let high = |sun_deg| u32::from(palette.sky(sun_deg).high.b());
+        for sun_deg in -25..10 {
+            let (lower, upper) = (high(sun_deg as f32), high(sun_deg as f32 + 1.0));
+            assert!(lower <= upper, "at {sun_deg} degrees");
+        }
+        assert!(high(-20.0) < high(0.0));
+    }
+
+    #[test]
+    fn red_keeps_the_order_of_brightness_and_nothing_else() {
+        let mut last = 0;
+        for grey in 0..=255 {
+            let [r, g, b, a] = red_of_same_brightness(Color32::from_gray(grey)).to_array();
+            assert_eq!((g, b, a), (0, 0, 255));
+            assert!(r >= last, "grey {grey}");
+            last = r;
+        }
+    }
 }

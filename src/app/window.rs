@@ -165,9 +165,7 @@ impl DesktopWindow {
             Command::ShowHelp => self.dialog = Some(Dialog::Help),
             Command::CloseDialog => self.dialog = None,
             Command::DismissNotice => {
-                if !self.notices.is_empty() {
-                    self.notices.remove(0);
-                }
+                self.notices.drain(..self.notices.len().min(1));
             }
             _ => {}
         }

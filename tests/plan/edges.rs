@@ -46,11 +46,7 @@ fn utc(moment: Moment) -> String {
 
 /// Seconds between a moment and a printed UTC.
 fn off_s(moment: Moment, expected: &str) -> f64 {
-<<<<<<< HEAD
-    let expected = expected.parse().expect("a time in RFC 3339");
-=======
     let expected: chrono::DateTime<chrono::Utc> = expected.parse().expect("a time in RFC 3339");
->>>>>>> main
     (TimeScales::new().civil(moment).0 - expected)
         .as_seconds_f64()
         .abs()
@@ -101,11 +97,7 @@ fn polar_day_has_neither_sunset_nor_optics_time() {
 #[test]
 fn polar_night_is_dark_enough_for_optics_from_end_to_end() {
     let night = night(
-<<<<<<< HEAD
-        &observer(75.0, 19.0, 10.0),
-=======
         &observer(80.0, 19.0, 10.0),
->>>>>>> main
         Tz::Europe__Oslo,
         (2026, 12, 20),
     );

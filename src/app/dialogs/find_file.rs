@@ -54,13 +54,12 @@ impl FindFile {
         };
         let mut goal = None;
         ScrollArea::vertical().max_height(260.0).show(ui, |ui| {
-            if let Some(parent) = folder.parent() {
-                if ui
+            if let Some(parent) = folder.parent()
+                && ui
                     .selectable_label(false, words.text("folder-above"))
                     .clicked()
-                {
-                    goal = Some(parent.join(""));
-                }
+            {
+                goal = Some(parent.join(""));
             }
             for path in &self.folders {
                 if ui

@@ -1,10 +1,13 @@
-//! Help: what the keys do, and the cautions in full.
+//! Help: the cautions in full, and what the keys do.
 
 use crate::app::command::keys;
 use crate::app::palette::Look;
 use crate::app::widgets::{bold, figure, text};
 use crate::app::wording::Words;
 use eframe::egui::{Grid, ModifierNames, Ui, vec2};
+
+/// Between the lines of the keys, points.
+const LINE_HEIGHT: f32 = 16.0;
 
 /// The cautions' wordings, in the order of reading.
 const CAUTIONS: [&str; 5] = [
@@ -19,6 +22,24 @@ const CAUTIONS: [&str; 5] = [
 pub fn show(ui: &mut Ui, look: &Look, words: &Words) {
     let colours = &look.colours;
     let size = look.sizes.control;
+    ui.spacing_mut().interact_size.y = LINE_HEIGHT;
+    bold(
+        ui,
+        look,
+        look.sizes.sentence,
+        colours.caution,
+        &words.text("cautions"),
+    );
+    for caution in CAUTIONS {
+        text(
+            ui,
+            look,
+            look.sizes.control,
+            colours.text,
+            &words.text(caution),
+        );
+    }
+    ui.add_space(look.room.inside);
     bold(
         ui,
         look,
@@ -40,23 +61,6 @@ pub fn show(ui: &mut Ui, look: &Look, words: &Words) {
             figure(ui, look.font(size), colours.text, &words.text("zoom"));
             ui.end_row();
         });
-    ui.add_space(look.room.inside);
-    bold(
-        ui,
-        look,
-        look.sizes.sentence,
-        colours.caution,
-        &words.text("cautions"),
-    );
-    for caution in CAUTIONS {
-        text(
-            ui,
-            look,
-            look.sizes.control,
-            colours.text,
-            &words.text(caution),
-        );
-    }
     ui.add_space(look.room.inside);
     let notice = crate::place::zone::BORDERS_NOTICE;
     text(ui, look, look.sizes.label, colours.lesser, notice);

@@ -47,8 +47,11 @@ impl DesktopWindow {
             .frame(card_frame(&look).inner_margin(look.room.between))
             .show(ctx, |ui: &mut Ui| {
                 ui.set_width((screen.width() - 96.0).clamp(280.0, 620.0));
+                let most = (screen.height() - 140.0).max(160.0);
+                // Both, or the dialog would grow towards its size from frame to frame.
                 ScrollArea::vertical()
-                    .max_height((screen.height() - 140.0).max(160.0))
+                    .max_height(most)
+                    .min_scrolled_height(most)
                     .show(ui, |ui| match dialog {
                         Dialog::NewSite(form) => form.show(ui, &look, words),
                         Dialog::FindFile(find) => find.show(ui, &look, words, commands),
