@@ -233,6 +233,8 @@ impl Skyline {
         let mut points = Vec::new();
         for (piece, to) in self.stretches() {
             for at in search::grid(piece.from, to, step) {
+                // The last of a grid may overshoot its end by rounding.
+                let at = at.min(to);
                 let altitude = piece.shape.altitude(at).max(0.0);
                 let point = (Angle::from_radians(at), Angle::from_radians(altitude));
                 if points.last() != Some(&point) {

@@ -1,5 +1,6 @@
 //! What a night holds: from engine results to a host's questions.
 
+mod absence;
 mod coming;
 mod interval;
 mod neighbours;
@@ -9,6 +10,7 @@ mod survey;
 mod track;
 mod windows;
 
+pub use absence::Absence;
 pub use coming::{Coming, coming};
 pub use neighbours::{Aspect, Neighbour, Neighbours, neighbours};
 pub use night::{

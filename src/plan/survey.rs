@@ -212,6 +212,10 @@ fn body_night(
             .samples
             .first()
             .is_some_and(|first| above_horizon(first) >= 0.0),
+        is_clear_at_start: track
+            .samples
+            .first()
+            .is_some_and(|first| first.clearance > Angle::ZERO),
         skyline_events,
         windows: whole,
         dusk_windows: dusk,
