@@ -54,7 +54,10 @@ lane-sets = sets { $time }
 lane-rises = rises { $time }
 lane-not-up = below the horizon
 lane-hidden = hidden by the skyline
-lane-too-bright = the sky stays too bright
+lane-too-bright = sky too bright
+# The bodies that are not seen, in one line: each with why, and what stands between them.
+lane-absent = { $body }: { $why }
+lane-absent-between = {"  ·  "}
 
 # The inset: the plan of the orbits.
 inset-name = Plan of the orbits seen from north of the ecliptic. { $body } stands { $elongation } from the Sun.
@@ -93,6 +96,7 @@ phase-erect = erect
 phase-inverted = inverted
 phase-mirrored = mirrored
 phase-scale = ring { $size }
+phase-change = { $name }, { $note }. Press for the next way round.
 
 # The plot.
 plot-name = Clearance of the bright bodies against minutes from sunset or sunrise. The line marks the moment shown; a click sets it.

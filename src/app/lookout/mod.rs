@@ -15,7 +15,7 @@ pub mod plot;
 mod says;
 
 use super::command::Commands;
-use super::palette::Look;
+use super::palette::{Look, Theme};
 use super::scene::Scene;
 use crate::light::Eye;
 use crate::plan::Half;
@@ -59,8 +59,8 @@ impl Drawings {
     }
 
     /// The disc as the eye and the optics show it.
-    pub fn phase(&mut self, ui: &mut Ui, scene: &Scene<'_>) -> Response {
-        phase::show(ui, scene)
+    pub fn phase(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        phase::show(ui, scene, commands)
     }
 
     fn tracks(&mut self, scene: &Scene<'_>) -> Arc<Tracks> {
@@ -78,7 +78,9 @@ const AROUND: [Vec2; 4] = [
 
 /// Letters over the sky: with a dark shade around them, so that they read in every light.
 fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
-    let shade = look.colours.sky_shade.gamma_multiply(0.55);
+    // In red light letters and sky differ in brightness alone.
+    let depth = if look.theme == Theme::Red { 0.95 } else { 0.55 };
+    let shade = look.colours.sky_shade.gamma_multiply(depth);
     for aside in AROUND {
         painter.galley_with_override_text_color(at + aside, text.clone(), shade);
     }

@@ -4,6 +4,7 @@ use super::model::{Absence, End, Lane, Mark, MarkKind, Model};
 use crate::app::lookout::model::{Tick, Tracks};
 use crate::app::lookout::says::Says;
 use crate::app::palette::Look;
+use eframe::egui::text::{LayoutJob, TextWrapping};
 use eframe::egui::{Color32, FontId, Galley, Painter, Pos2, Rangef, Rect, pos2};
 use std::sync::Arc;
 
@@ -17,8 +18,11 @@ pub struct Layout {
     pub marks: Vec<(f32, Option<Arc<Galley>>)>,
     /// Ticks under the band, with the whole hours' (or half hours') times.
     pub ticks: Vec<(f32, bool, Option<Arc<Galley>>)>,
-    /// The lanes, from top to bottom.
-    pub lanes: Vec<LaneLayout>,
+    /// The lanes, from top to bottom; where there is nothing to see in a lane but the chosen
+    /// body's, it is none but a part of `absent`.
+    pub lanes: Vec<(usize, LaneLayout)>,
+    /// The bodies that are not seen, each with the reason, on one line below the lanes.
+    pub absent: Option<(Pos2, Arc<Galley>)>,
     from_s: f64,
     to_s: f64,
 }
@@ -56,7 +60,7 @@ impl Layout {
         let bubble = bubble_height(look);
         let ruler = letters + 12.0;
         let room = (whole.height() - bubble - ruler).max(40.0);
-        let band_height = (0.24 * room).clamp(letters + 8.0, 46.0);
+        let band_height = (0.22 * room).clamp(letters + 8.0, 46.0);
         let top = whole.top() + bubble;
         let band = Rect::from_min_max(
             pos2(whole.left() + gutter, top),
@@ -68,13 +72,16 @@ impl Layout {
             marks: Vec::new(),
             ticks: Vec::new(),
             lanes: Vec::new(),
+            absent: None,
             from_s: model.from_s,
             to_s: model.to_s,
         };
         layout.marks = builder.marks(&layout);
         layout.ticks = builder.ticks(&layout);
         let below = Rangef::new(band.bottom() + ruler, whole.bottom());
-        layout.lanes = builder.lanes(&layout, names, below);
+        layout.absent = builder.absent(&layout, below.max);
+        let absent_top = layout.absent.as_ref().map_or(below.max, |(at, _)| at.y - 3.0);
+        layout.lanes = builder.lanes(&layout, names, Rangef::new(below.min, absent_top));
         layout
     }
 
@@ -177,28 +184,72 @@ impl Builder<'_> {
             .collect()
     }
 
-    /// The chosen body's lane is taller than the others'.
-    fn lanes(&self, layout: &Layout, names: Vec<Arc<Galley>>, below: Rangef) -> Vec<LaneLayout> {
+    /// The lanes that are drawn, with their places in the model; the chosen body's always.
+    fn shown(&self) -> impl Iterator<Item = (usize, &Lane)> {
+        let lanes = self.model.lanes.iter().enumerate();
+        lanes.filter(|(k, lane)| *k == 0 || lane.absence.is_none())
+    }
+
+    /// The other bodies, each with why it is not seen; one line, shortened where it must be.
+    fn absent(&self, layout: &Layout, bottom: f32) -> Option<(Pos2, Arc<Galley>)> {
+        let others = self.model.lanes.iter().skip(1);
+        let reasons: Vec<String> = others
+            .filter_map(|lane| {
+                let id = absence_name(lane.absence?);
+                let why = self.says.text(id, &[]);
+                let body = self.says.body(lane.body);
+                Some(
+                    self.says
+                        .text("lane-absent", &[("body", &body), ("why", &why)]),
+                )
+            })
+            .collect();
+        if reasons.is_empty() {
+            return None;
+        }
+        let line = reasons.join(&self.says.text("lane-absent-between", &[]));
+        let mut job = LayoutJob::simple_singleline(
+            line,
+            self.look.font(self.look.sizes.least),
+            self.look.colours.lesser,
+        );
+        job.wrap = TextWrapping::truncate_at_width(layout.band.width());
+        let text = self.painter.layout_job(job);
+        Some((pos2(layout.band.left(), bottom - text.size().y), text))
+    }
+
+    /// The chosen body's lane is the tallest.
+    fn lanes(
+        &self,
+        layout: &Layout,
+        names: Vec<Arc<Galley>>,
+        below: Rangef,
+    ) -> Vec<(usize, LaneLayout)> {
         const GAP: f32 = 4.0;
-        let count = names.len() as f32;
-        let share = (below.span() - count * GAP).max(0.0) / (count + 0.9);
+        let weight = |k: usize| if k == 0 { 2.0 } else { 1.0 };
+        let count = self.shown().count() as f32;
+        let weights: f32 = self.shown().map(|(k, _)| weight(k)).sum();
+        let share = (below.span() - count * GAP).max(0.0) / weights;
+        // A lane alone must not become a wall.
+        let share = share.min(3.0 * self.look.sizes.label);
         let mut y = below.min;
-        let mut lanes = Vec::new();
-        for (k, (lane, name)) in self.model.lanes.iter().zip(names).enumerate() {
-            let height = if k == 0 { 1.9 * share } else { share };
+        let mut placed = Vec::new();
+        for (k, lane) in self.shown() {
             let rect = Rect::from_min_max(
                 pos2(layout.band.left(), y + GAP),
-                pos2(layout.band.right(), y + GAP + height),
+                pos2(layout.band.right(), y + GAP + weight(k) * share),
             );
+            let name = names[k].clone();
             let at = pos2(layout.whole.left(), rect.bottom() - name.size().y + 1.0);
-            lanes.push(LaneLayout {
+            let lane = LaneLayout {
                 rect,
                 name: (at, name),
                 notes: self.notes(layout, lane, rect),
-            });
+            };
+            placed.push((k, lane));
             y = rect.bottom();
         }
-        lanes
+        placed
     }
 
     /// Ends of windows: what ends one stands right of it, what starts one left of it; else why
@@ -207,52 +258,54 @@ impl Builder<'_> {
         const GAP: f32 = 7.0;
         let colours = &self.look.colours;
         if let Some(absence) = lane.absence {
-            let text = self.label(absence_name(self.says, absence), colours.lesser);
+            let text = self.label(self.says.text(absence_name(absence), &[]), colours.lesser);
             let at = pos2(rect.left() + GAP, rect.bottom() - text.size().y - 1.0);
             return vec![(at, text)];
         }
         let mut placed: Vec<(Pos2, Arc<Galley>)> = Vec::new();
         // Of two that want one place the last end is the one to keep.
         for (k, end) in lane.ends.iter().enumerate().rev() {
-            let Some(words) = self.end(end) else { continue };
-            let text = self.label(words, colours.text);
             let x = layout.x(end.at_s);
-            let (left, right) = if end.is_end {
-                let next = lane
-                    .ends
-                    .get(k + 1)
-                    .map_or(rect.right(), |next| layout.x(next.at_s));
-                (x, next)
-            } else {
-                let last = k.checked_sub(1).and_then(|k| lane.ends.get(k));
-                (last.map_or(rect.left(), |last| layout.x(last.at_s)), x)
-            };
-            let fits_beside = text.size().x + 2.0 * GAP < right - left;
-            let at_x = match (fits_beside, end.is_end) {
-                (true, true) => x + GAP,
-                (true, false) => x - GAP - text.size().x,
-                // At the rim an end stands inside its own window.
-                (false, true) => x - GAP - text.size().x,
-                (false, false) => continue,
-            };
-            let at = pos2(at_x, rect.bottom() - text.size().y - 1.0);
-            let box_of = |at: Pos2, text: &Galley| Rect::from_min_size(at, text.size()).expand(4.0);
-            let is_free = at.x >= rect.left()
-                && at.x + text.size().x <= rect.right()
-                && placed.iter().all(|(other_at, other)| {
-                    !box_of(*other_at, other).intersects(Rect::from_min_size(at, text.size()))
-                });
-            if is_free {
-                placed.push((at, text));
-            }
+            let before = k.checked_sub(1).and_then(|k| lane.ends.get(k));
+            let before = before.map_or(rect.left(), |end| layout.x(end.at_s));
+            let after = lane
+                .ends
+                .get(k + 1)
+                .map_or(rect.right(), |end| layout.x(end.at_s));
+            let note = self.end(end).into_iter().find_map(|words| {
+                let text = self.label(words, colours.text);
+                let width = text.size().x;
+                let fits = |left: f32, right: f32| width + 2.0 * GAP < right - left;
+                let at_x = match end.is_end {
+                    true if fits(x, after) => x + GAP,
+                    // At the rim an end stands inside its own window.
+                    true if fits(before, x) => x - GAP - width,
+                    false if fits(before, x) => x - GAP - width,
+                    _ => return None,
+                };
+                let at = pos2(at_x, rect.bottom() - text.size().y - 1.0);
+                let place = Rect::from_min_size(at, text.size());
+                let is_free = placed
+                    .iter()
+                    .all(|(other_at, other): &(Pos2, Arc<Galley>)| {
+                        let other = Rect::from_min_size(*other_at, other.size());
+                        !other.expand(4.0).intersects(place)
+                    });
+                is_free.then_some((at, text))
+            });
+            placed.extend(note);
         }
         placed
     }
 
-    fn end(&self, end: &End) -> Option<String> {
+    /// What is said of a window's end: the cause with the time or, where that finds no room, the
+    /// time.
+    fn end(&self, end: &End) -> Vec<String> {
         let time = self.says.time(self.tracks.moment(end.at_s));
-        self.says
-            .edge(end.cause, end.is_end, end.obstacle.as_deref(), &time)
+        let words = self
+            .says
+            .edge(end.cause, end.is_end, end.obstacle.as_deref(), &time);
+        words.map_or_else(Vec::new, |words| vec![words, time])
     }
 }
 
@@ -267,11 +320,10 @@ fn mark_name(says: Says<'_>, mark: Mark) -> String {
     says.text(id, &[])
 }
 
-fn absence_name(says: Says<'_>, absence: Absence) -> String {
-    let id = match absence {
+fn absence_name(absence: Absence) -> &'static str {
+    match absence {
         Absence::Down => "lane-not-up",
         Absence::Hidden => "lane-hidden",
         Absence::WashedOut => "lane-too-bright",
-    };
-    says.text(id, &[])
+    }
 }

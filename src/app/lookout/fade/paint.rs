@@ -32,8 +32,12 @@ pub fn paint(painter: &Painter, look: &Look, model: &Model, layout: &Layout, sky
             painter.galley(rect.min, time.clone(), look.colours.lesser);
         }
     }
-    for (lane, place) in model.lanes.iter().zip(&layout.lanes) {
+    for (k, place) in &layout.lanes {
+        let lane = &model.lanes[*k];
         self::lane(painter, look, layout, model.full_deg, lane, place);
+    }
+    if let Some((at, text)) = &layout.absent {
+        painter.galley(*at, text.clone(), look.colours.lesser);
     }
 }
 
@@ -51,6 +55,7 @@ fn lane(
     let foot = Stroke::new(1.0, colours.line);
     painter.hline(rect.x_range(), rect.bottom(), foot);
     let mut mesh = Mesh::default();
+    let mut crests: Vec<Shape> = Vec::new();
     let top = |clearance_deg: f64| {
         let share = (clearance_deg / full_deg).clamp(0.0, 1.0) as f32;
         rect.bottom() - share * rect.height()
@@ -61,6 +66,8 @@ fn lane(
             Standing::WashedOut => colours.idle,
             Standing::Blocked | Standing::Down => continue,
         };
+        let crest = [0, 1].map(|k| pos2(layout.x(pair[k].at_s), top(pair[k].clearance_deg)));
+        crests.push(Shape::line_segment(crest, Stroke::new(1.0, colour)));
         let first = mesh.vertices.len() as u32;
         for point in pair {
             let x = layout.x(point.at_s);
@@ -71,6 +78,8 @@ fn lane(
         mesh.add_triangle(first + 1, first + 3, first + 2);
     }
     painter.add(Shape::mesh(mesh));
+    // The mesh's edge is hard; a hair line softens it.
+    painter.extend(crests);
     let mut next_dot = f32::NEG_INFINITY;
     for point in &lane.points {
         let x = layout.x(point.at_s);

@@ -390,7 +390,14 @@ impl Builder<'_> {
 
     /// The times along the path: hours before half hours.
     fn hours(&mut self, tracks: &Tracks, ticks: &[PathTick]) {
-        for tick in ticks.iter().filter(|tick| tick.tick.minute % 30 == 0) {
+        /// Half hours are written only where hours stand so far apart.
+        const LEAST_HOUR: f32 = 118.0;
+        let hours = ticks.iter().filter(|tick| tick.tick.minute == 0);
+        let hours: Vec<Pos2> = hours.map(|tick| tick.at).collect();
+        let hour = hours.windows(2).map(|pair| pair[0].distance(pair[1]));
+        let has_halves = hour.fold(0.0, f32::max) > LEAST_HOUR || hours.len() < 3;
+        let step = if has_halves { 30 } else { 60 };
+        for tick in ticks.iter().filter(|tick| tick.tick.minute % step == 0) {
             let rank = match tick.tick.minute {
                 0 => Rank::Hour,
                 _ => Rank::HalfHour,

@@ -8,6 +8,7 @@ use crate::app::palette::Look;
 use crate::light::Standing;
 use crate::measure::Angle;
 use crate::sky::Body;
+use eframe::egui::epaint::RectShape;
 use eframe::egui::{
     Align2, Color32, CornerRadius, Mesh, Painter, Pos2, Rect, Shape, Stroke, TextureId, pos2,
 };
@@ -24,7 +25,13 @@ pub fn paint(
     let rect = layout.camera.rect;
     let inside = painter.with_clip_rect(rect.intersect(painter.clip_rect()));
     let whole = Rect::from_min_max(Pos2::ZERO, pos2(1.0, 1.0));
-    inside.image(sky, rect, whole, Color32::WHITE);
+    let corner = look.room.corner as u8;
+    let above = CornerRadius {
+        nw: corner,
+        ne: corner,
+        ..CornerRadius::ZERO
+    };
+    inside.add(RectShape::filled(rect, above, Color32::WHITE).with_texture(sky, whole));
     stars(&inside, look, model, layout);
     sun(&inside, look, layout);
     bodies(&inside, look, model, layout);
@@ -49,16 +56,16 @@ pub fn paint(
 }
 
 fn stars(painter: &Painter, look: &Look, model: &Model, layout: &Layout) {
+    let ruler = layout.altitudes.iter().map(|mark| mark.text.size().x);
+    let ruler = layout.camera.rect.left() + 24.0 + ruler.fold(0.0, f32::max);
     for star in &model.stars {
         let at = layout.camera.pos(star.azimuth, star.altitude);
-        if layout.camera.rect.contains(at) {
+        // None between the ruler's letters.
+        if layout.camera.rect.contains(at) && at.x > ruler {
             let spare = (model.faintest - star.magnitude) as f32;
             let radius = 0.7 + 0.28 * (4.6 - star.magnitude as f32).clamp(0.0, 5.0);
-            let colour = look
-                .colours
-                .body
-                .gamma_multiply((0.25 + 0.5 * spare).clamp(0.0, 1.0));
-            painter.circle_filled(at, radius, colour);
+            let share = (0.25 + 0.5 * spare).clamp(0.0, 1.0);
+            painter.circle_filled(at, radius, look.colours.body.gamma_multiply(share));
         }
     }
 }
@@ -113,8 +120,9 @@ fn shapes(painter: &Painter, look: &Look, layout: &Layout, skyline: &[(Angle, An
         }
     }
     painter.add(Shape::mesh(mesh));
-    // The mesh's edge is hard; a hair line softens it.
-    painter.add(Shape::line(points, Stroke::new(1.0, colour)));
+    // The mesh's edge is hard; a hair line softens it, and tells the shapes from a night sky.
+    let rim = look.colours.hidden.gamma_multiply(0.25);
+    painter.add(Shape::line(points, Stroke::new(1.0, rim)));
 }
 
 fn path(painter: &Painter, look: &Look, stretch: &Stretch) {
@@ -147,7 +155,8 @@ fn ticks(painter: &Painter, look: &Look, layout: &Layout) {
         let reach = if tick.tick.minute == 0 { 8.0 } else { 5.5 };
         let colour = match tick.standing {
             Standing::Plain => look.colours.sky_shade,
-            _ => look.colours.hidden,
+            Standing::WashedOut => look.colours.too_bright,
+            Standing::Blocked | Standing::Down => look.colours.hidden,
         };
         let half = tick.across * reach;
         painter.line_segment([tick.at - half, tick.at + half], Stroke::new(1.5, colour));

@@ -98,7 +98,7 @@ fn plan(painter: &Painter, scene: &Scene<'_>, model: &Model, room: Rect, title: 
         painter.arrow(sun - up, up, Stroke::new(1.2, colours.sun));
     }
     painter.circle_filled(earth, 4.5, colours.keen);
-    painter.circle_filled(place, 4.5, colours.body);
+    painter.circle_filled(place, 4.5, colours.text);
 
     let small = look.font(look.sizes.label);
     let text = |text: String, colour| painter.layout_no_wrap(text, small.clone(), colour);

@@ -1,104 +1,30 @@
-//! Lays out and draws the phase card.
+//! Draws the phase card.
 
-use super::model::{Model, Rings, Seen, Through};
-use crate::app::command::OpticsView;
+use super::layout::Layout;
+use super::model::{Model, Rings, Seen};
 use crate::app::lookout::disc;
-use crate::app::lookout::says::Says;
 use crate::app::palette::Look;
 use crate::app::scene::Scene;
-use crate::sky::Body;
-use eframe::egui::{
-    Align2, Color32, Mesh, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, Vec2, pos2, vec2,
-};
+use eframe::egui::{Color32, Mesh, Painter, Pos2, Shape, Stroke, StrokeKind, Vec2};
 
-/// The card with the three discs.
-pub fn paint(painter: &Painter, scene: &Scene<'_>, model: &Model, card: Rect) {
-    let (look, says) = (&scene.look, Says::new(scene));
+/// The card with the three discs; `is_lit` where the telescope's is under the pointer.
+pub fn paint(painter: &Painter, scene: &Scene<'_>, model: &Model, layout: &Layout, is_lit: bool) {
+    let look = &scene.look;
     let colours = &look.colours;
-    painter.rect_filled(card, look.room.corner, colours.card);
+    painter.rect_filled(layout.card, look.room.corner, colours.card);
     let line = Stroke::new(1.0, colours.line);
-    painter.rect_stroke(card, look.room.corner, line, StrokeKind::Inside);
-    let inner = card.shrink(look.room.inside);
-    let font = look.font(look.sizes.label);
-    let lesser = |text: String| painter.layout_no_wrap(text, font.clone(), colours.lesser);
-    let title = lesser(says.text("phase-title", &[]));
-    let row = title.size().y;
-    painter.galley(inner.min, title, colours.lesser);
-    let size = match model.body {
-        Body::Moon | Body::Sun => says.arcmin(model.ring),
-        _ => says.whole_arcsec(model.ring),
-    };
-    let scale = lesser(says.text("phase-scale", &[("size", &size)]));
-    painter.galley(
-        pos2(inner.right() - scale.size().x, inner.top()),
-        scale,
-        colours.lesser,
-    );
-
-    let width = inner.width() / 3.0;
-    let captions = 2.0 * row + 4.0;
-    let radius = (0.5 * width - 7.0)
-        .min(0.5 * (inner.height() - row - captions - 10.0))
-        .max(8.0);
-    for (k, seen) in model.views.iter().enumerate() {
-        let x = inner.left() + (k as f32 + 0.5) * width;
-        let centre = pos2(x, inner.top() + row + 6.0 + radius);
-        body(painter, look, model, seen, centre, radius);
-        let (name, note) = captions_of(says, model, seen);
-        let top = centre.y + radius + 4.0;
-        for (text, colour, y) in [(name, colours.text, top), (note, colours.lesser, top + row)] {
-            let text = painter.layout(text, font.clone(), colour, width - 4.0);
-            let one_line = Rect::from_min_size(
-                pos2(x - 0.5 * width, y),
-                vec2(
-                    width,
-                    if colour == colours.text {
-                        row
-                    } else {
-                        inner.bottom() + row - y
-                    },
-                ),
-            );
-            let place = Align2::CENTER_TOP.anchor_size(pos2(x, y), text.size());
-            painter
-                .with_clip_rect(one_line.intersect(painter.clip_rect()))
-                .galley(place.min, text, colour);
-        }
+    painter.rect_stroke(layout.card, look.room.corner, line, StrokeKind::Inside);
+    if is_lit {
+        let place = layout.discs[2].place;
+        painter.rect_filled(place, look.room.corner, colours.chosen_ground);
     }
-}
-
-/// What each disc is called, and what is to be known of it.
-fn captions_of(says: Says<'_>, model: &Model, seen: &Seen) -> (String, String) {
-    let view = says.text(
-        match seen.view {
-            OpticsView::Erect => "phase-erect",
-            OpticsView::Inverted => "phase-inverted",
-            OpticsView::Mirrored => "phase-mirrored",
-        },
-        &[],
-    );
-    match &seen.through {
-        Through::Eye => {
-            let is_disc = matches!(model.body, Body::Moon | Body::Sun);
-            let id = if is_disc {
-                "phase-eye-disc"
-            } else {
-                "phase-eye-point"
-            };
-            (says.text("phase-eye", &[]), says.text(id, &[]))
-        }
-        Through::Binocular(label) => {
-            let label = label.clone();
-            (
-                label.unwrap_or_else(|| says.text("phase-binocular", &[])),
-                view,
-            )
-        }
-        Through::Telescope(None) => (says.text("phase-telescope", &[]), view),
-        Through::Telescope(Some((label, power))) => {
-            let power = says.power(*power);
-            let note = says.text("phase-power", &[("power", &power), ("view", &view)]);
-            (label.clone(), note)
+    for (at, text) in &layout.texts {
+        painter.galley(*at, text.clone(), colours.lesser);
+    }
+    for (seen, disc) in model.views.iter().zip(&layout.discs) {
+        body(painter, look, model, seen, disc.centre, layout.ring);
+        for (at, text) in &disc.texts {
+            painter.galley(*at, text.clone(), colours.text);
         }
     }
 }

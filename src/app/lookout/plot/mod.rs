@@ -39,7 +39,10 @@ impl ClearancePlot {
             .rect_filled(card, look.room.corner, look.colours.card);
         ui.painter()
             .rect_stroke(card, look.room.corner, line, StrokeKind::Inside);
-        let inner = card.shrink2(vec2(look.room.inside, 6.0));
+        // Room on the right for the half of the last number that stands beyond the frame.
+        let inner = card
+            .shrink2(vec2(look.room.inside, 6.0))
+            .with_max_x(card.right() - 22.0);
         let mut child = ui.new_child(UiBuilder::new().max_rect(inner));
         let now_min = (tracks.at_s(scene.moment) - model.origin_s) / 60.0;
         let plot = frame(scene, says, &model).show(&mut child, |plot| {
@@ -156,8 +159,8 @@ fn curves<'a>(plot: &mut egui_plot::PlotUi<'a>, scene: &Scene<'_>, says: Says<'_
     }
 }
 
-/// Each curve's name beside its highest point, the chosen body's first; one that would touch
-/// another is left out.
+/// Each curve's name at the first of its points where it touches neither a curve nor another
+/// name, the chosen body's first; one that finds no place is left out.
 fn names(
     ui: &Ui,
     scene: &Scene<'_>,
@@ -166,6 +169,8 @@ fn names(
     frame: Rect,
     screen: impl Fn(PlotPoint) -> Pos2,
 ) {
+    /// Points of a curve between places that are tried.
+    const APART: usize = 6;
     let look = &scene.look;
     let painter = ui.painter().with_clip_rect(frame);
     let font = look.font(look.sizes.least);
@@ -176,34 +181,46 @@ fn names(
     );
     let title_at = Align2::RIGHT_TOP.anchor_size(frame.right_top() + vec2(-6.0, 0.0), title.size());
     painter.galley(title_at.min, title, look.colours.lesser);
+    let on_screen: Vec<Vec<Pos2>> = model
+        .curves
+        .iter()
+        .map(|curve| {
+            let points = curve.pieces.iter().flatten();
+            points
+                .map(|[minutes, degrees]| screen(PlotPoint::new(*minutes, *degrees)))
+                .collect()
+        })
+        .collect();
+    let skyline_y = screen(PlotPoint::new(0.0, 0.0)).y;
     let mut taken = vec![title_at];
     for (k, curve) in model.curves.iter().enumerate() {
-        let points = curve.pieces.iter().flatten();
-        let Some([minutes, degrees]) = points.copied().max_by(|a, b| a[1].total_cmp(&b[1])) else {
-            continue;
+        let (colour, font) = match k {
+            0 => (look.colours.chosen, look.bold(look.sizes.least)),
+            _ => (look.colours.lesser, font.clone()),
         };
-        let colour = if k == 0 {
-            look.colours.chosen
-        } else {
-            look.colours.lesser
-        };
-        let text = painter.layout_no_wrap(says.body(curve.body), font.clone(), colour);
-        let top = screen(PlotPoint::new(minutes, degrees));
+        let text = painter.layout_no_wrap(says.body(curve.body), font, colour);
         let size = text.size();
-        let place = [
-            pos2(top.x + 5.0, top.y - size.y),
-            pos2(top.x - size.x - 5.0, top.y - size.y),
-            pos2(top.x + 5.0, top.y + 3.0),
-            pos2(top.x - size.x - 5.0, top.y + 3.0),
-        ]
-        .into_iter()
-        .map(|corner| Rect::from_min_size(corner, size))
-        .find(|rect| {
+        let is_free = |rect: &Rect| {
             frame.contains_rect(*rect)
+                && !rect.y_range().contains(skyline_y)
                 && taken
                     .iter()
                     .all(|other| !other.expand(2.0).intersects(*rect))
-        });
+                && on_screen
+                    .iter()
+                    .flatten()
+                    .all(|point| !rect.contains(*point))
+        };
+        // From the end backwards: there the curves have drawn apart, and nothing is written yet.
+        let place = on_screen[k]
+            .iter()
+            .rev()
+            .step_by(APART)
+            .flat_map(|at| {
+                [-size.y - 3.0, 4.0]
+                    .map(|below| Rect::from_min_size(pos2(at.x - 0.5 * size.x, at.y + below), size))
+            })
+            .find(is_free);
         if let Some(place) = place {
             painter.galley(place.min, text, colour);
             taken.push(place);
