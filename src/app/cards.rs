@@ -5,9 +5,9 @@ use super::palette::Look;
 use super::scene::Scene;
 use super::state::Motion;
 use super::widgets::{bold, card, card_frame, figure, text};
-use super::wording::Words;
 use crate::measure::Angle;
 use crate::sky::{Body, refraction};
+use crate::words::Words;
 use eframe::egui::{Align, Color32, Layout, Response, Stroke, Ui, vec2};
 
 /// The sentence, at the size to be read aloud from.
@@ -66,8 +66,8 @@ fn caution_text(
     words: &Words,
     motion: Motion,
 ) -> (String, String) {
-    let time = |moment| words.time(scene, moment);
-    let timed = |id: &str, moment| words.text_with(id, &[("time", &time(moment))]);
+    let time = |moment| words.time(scene.clock(), moment);
+    let timed = |id: &str, moment| words.text_with::<&str>(id, &[("time", &time(moment))]);
     let (title, first) = match caution.optics {
         OpticsState::NoTime => (
             words.text("caution-no-time"),
@@ -111,8 +111,10 @@ fn caution_text(
     parts.push(first);
     if caution.is_near_the_sun {
         let degrees = words.degrees(caution.elongation, 0);
-        let body = words.body_aloud(scene.body);
-        parts.push(words.text_with("caution-near-sun", &[("body", &body), ("angle", &degrees)]));
+        let body = words.body_in_sentence(scene.body);
+        parts.push(
+            words.text_with::<&str>("caution-near-sun", &[("body", &body), ("angle", &degrees)]),
+        );
     }
     parts.push(words.text("caution-always"));
     (title, parts.join(" "))
@@ -121,8 +123,8 @@ fn caution_text(
 fn sunrise_text(scene: &Scene<'_>, words: &Words) -> String {
     match scene.night.sun.rise {
         Some(rise) => {
-            let time = words.time(scene, rise);
-            words.text_with("caution-sunrise-text", &[("time", &time)])
+            let time = words.time(scene.clock(), rise);
+            words.text_with::<&str>("caution-sunrise-text", &[("time", &time)])
         }
         None => words.text("caution-sun-up-text"),
     }

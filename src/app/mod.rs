@@ -15,7 +15,6 @@ pub mod palette;
 mod pickers;
 mod planned;
 pub mod scene;
-mod sentence;
 mod settings;
 mod sites;
 mod start;
@@ -24,7 +23,6 @@ mod theme;
 mod transport;
 mod widgets;
 mod window;
-pub mod wording;
 
 pub use start::{Renderer, Start, WindowError, run};
 pub use window::DesktopWindow;

@@ -7,6 +7,7 @@ use crate::measure::{Moment, TimeScales};
 use crate::place::{Site, Skyline, Spot};
 use crate::plan::{Half, Night};
 use crate::sky::{Body, Ephemeris, Observer, Span};
+use crate::words::{CivilClock, HalfNight, Words};
 use chrono_tz::Tz;
 
 /// One half-night at one spot, and the moment in it that is shown. Plain references: a drawing
@@ -39,6 +40,8 @@ pub struct Scene<'a> {
     pub ephemeris: &'a Ephemeris,
     /// How civil time leads to TT.
     pub scales: TimeScales,
+    /// The wording.
+    pub words: &'a Words,
     /// How the chosen optics show the disc.
     pub optics_view: OpticsView,
     /// Colours and sizes in the present theme.
@@ -65,6 +68,25 @@ impl Scene<'_> {
             night_count: self.night_count,
             half: self.half,
             body: self.body,
+        }
+    }
+
+    /// The site's clock.
+    pub fn clock(&self) -> CivilClock {
+        CivilClock {
+            scales: self.scales,
+            zone: self.zone,
+        }
+    }
+
+    /// The half-night as words speak of it.
+    pub fn half_night(&self) -> HalfNight<'_> {
+        HalfNight {
+            night: self.night,
+            half: self.half,
+            body: self.body,
+            skyline: self.skyline,
+            clock: self.clock(),
         }
     }
 

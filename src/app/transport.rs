@@ -4,7 +4,7 @@ use super::command::{Command, Commands, Speed};
 use super::palette::Look;
 use super::state::{Motion, State};
 use super::widgets::{bold, choice, command_button, sign_button, text};
-use super::wording::Words;
+use crate::words::Words;
 use eframe::egui::{Role, Ui, WidgetInfo};
 
 /// The row between the view and the fade.
@@ -57,7 +57,7 @@ fn speeds_ui(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &
             let minutes = speed.minutes_per_second();
             let is_running = state.motion() == Motion::Running(speed);
             let response = choice(ui, look, is_running, &minutes.to_string());
-            let name = words.counted("speed", ("minutes", minutes));
+            let name = words.text_with("speed", &[("minutes", minutes)]);
             let enabled = ui.is_enabled();
             response.widget_info(|| WidgetInfo::selected(Role::Button, enabled, is_running, &name));
             if response.on_hover_text(name).clicked() {

@@ -2,7 +2,7 @@
 
 use super::command::{Command, Commands};
 use super::palette::Look;
-use super::wording::Words;
+use crate::words::Words;
 use eframe::egui::{
     Button, Color32, FontId, Frame, Label, Margin, Response, RichText, Role, Stroke, TextEdit, Ui,
     WidgetInfo,

@@ -6,14 +6,13 @@ use super::keys::TakeKeys;
 use super::lookout::Drawings;
 use super::palette::{Palette, Theme};
 use super::scene::{Scene, SceneKey};
-use super::sentence::sentence;
 use super::settings::Settings;
 use super::sites::Sites;
 use super::start::Start;
 use super::state::{Motion, State};
 use super::theme;
-use super::wording::Words;
 use crate::place::Site;
+use crate::words::Words;
 use eframe::egui::{self, Context};
 use std::path::PathBuf;
 use std::sync::Arc;
@@ -58,7 +57,7 @@ impl DesktopWindow {
         start: Start,
     ) -> Result<Self, Box<dyn std::error::Error + Send + Sync>> {
         let palette = Palette::shipped()?;
-        let words = Words::shipped()?;
+        let words = Words::english();
         let mut notices = Vec::new();
         let (settings, set_aside) = match &start.settings_file {
             Some(file) => Settings::load(file),
@@ -66,7 +65,7 @@ impl DesktopWindow {
         };
         if let Some(aside) = set_aside {
             let file = aside.kept_as.unwrap_or(aside.file);
-            notices.push(words.text_with(
+            notices.push(words.text_with::<&str>(
                 "settings-set-aside",
                 &[("reason", &aside.reason), ("file", &file.to_string_lossy())],
             ));
@@ -139,6 +138,7 @@ impl DesktopWindow {
             zone: planned.zone,
             ephemeris: self.state.ephemeris(),
             scales: self.state.scales(),
+            words: &self.words,
             optics_view: self.state.optics_view,
             look: self.palette.look(self.state.theme),
             palette: &self.palette,
@@ -154,7 +154,8 @@ impl DesktopWindow {
     fn make_sentence(&mut self) {
         let made_for = self.sentence.as_ref().map(|(key, _)| *key);
         let fresh = self.scene().and_then(|scene| {
-            (made_for != Some(scene.key())).then(|| (scene.key(), sentence(&scene, &self.words)))
+            (made_for != Some(scene.key()))
+                .then(|| (scene.key(), self.words.half_night(&scene.half_night())))
         });
         if fresh.is_some() {
             self.sentence = fresh;
@@ -242,7 +243,7 @@ impl DesktopWindow {
         if let Err(error) = self.latest.save(file) {
             let file = file.to_string_lossy();
             let reason = error.to_string();
-            self.notices.push(self.words.text_with(
+            self.notices.push(self.words.text_with::<&str>(
                 "settings-not-saved",
                 &[("file", &file), ("reason", &reason)],
             ));

@@ -4,7 +4,7 @@ use crate::app::command::{Command, Commands};
 use crate::app::palette::Look;
 use crate::app::sites::is_site_file;
 use crate::app::widgets::{bold, field, text};
-use crate::app::wording::Words;
+use crate::words::Words;
 use eframe::egui::{ScrollArea, Ui};
 use std::path::{Path, PathBuf};
 

@@ -3,7 +3,7 @@
 use crate::app::command::keys;
 use crate::app::palette::Look;
 use crate::app::widgets::{bold, figure, text};
-use crate::app::wording::Words;
+use crate::words::Words;
 use eframe::egui::{Grid, ModifierNames, Ui, vec2};
 
 /// Between the lines of the keys, points.

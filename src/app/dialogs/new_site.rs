@@ -3,9 +3,9 @@
 use crate::app::palette::Look;
 use crate::app::sites;
 use crate::app::widgets::{bold, error_line, field, text};
-use crate::app::wording::Words;
 use crate::measure::Angle;
 use crate::place::{Site, SkylinePoint, zone};
+use crate::words::Words;
 use chrono_tz::Tz;
 use eframe::egui::{ComboBox, ScrollArea, TextEdit, Ui};
 use std::path::{Path, PathBuf};
@@ -170,19 +170,19 @@ impl NewSite {
         let number = (index + 1).to_string();
         let (compass, fists) = &mut self.points[index];
         ui.horizontal(|ui| {
-            let direction = words.text_with("skyline-direction", &[("number", &number)]);
+            let direction = words.text_with::<&str>("skyline-direction", &[("number", &number)]);
             let label = text(ui, look, look.sizes.label, look.colours.lesser, &direction);
             ComboBox::from_id_salt(("direction", index))
-                .selected_text(words.compass_point(*compass))
+                .selected_text(words.direction(azimuth(*compass)))
                 .width(160.0)
                 .show_ui(ui, |ui| {
                     for point in 0..16 {
-                        ui.selectable_value(compass, point, words.compass_point(point));
+                        ui.selectable_value(compass, point, words.direction(azimuth(point)));
                     }
                 })
                 .response
                 .labelled_by(label.id);
-            let height = words.text_with("skyline-fists", &[("number", &number)]);
+            let height = words.text_with::<&str>("skyline-fists", &[("number", &number)]);
             let label = text(ui, look, look.sizes.label, look.colours.lesser, &height);
             ui.add(TextEdit::singleline(fists).desired_width(70.0))
                 .labelled_by(label.id);
@@ -202,7 +202,8 @@ impl NewSite {
         let file = folder.join(sites::file_name(&site.name));
         if file.exists() {
             let file = file.to_string_lossy();
-            self.errors.name = Some(words.text_with("site-file-exists", &[("file", &file)]));
+            self.errors.name =
+                Some(words.text_with::<&str>("site-file-exists", &[("file", &file)]));
             return None;
         }
         let saved = std::fs::create_dir_all(folder)
@@ -238,7 +239,7 @@ impl NewSite {
             if fists.trim().is_empty() {
                 continue; // Left out: three are offered, none is needed.
             }
-            let azimuth_deg = *compass as f64 * 22.5;
+            let azimuth_deg = azimuth(*compass).degrees();
             let is_doubled = skyline.iter().any(|p| p.azimuth_deg == azimuth_deg);
             match number(fists).filter(|fists| (0.0..=9.0).contains(fists)) {
                 Some(_) if is_doubled => {
@@ -261,6 +262,11 @@ impl NewSite {
             .map_err(|error| self.errors.whole = Some(error.to_string()))
             .ok()
     }
+}
+
+/// The azimuth of a compass point in sixteenths of a turn.
+fn azimuth(point: usize) -> Angle {
+    Angle::from_degrees(22.5 * point as f64)
 }
 
 /// Degrees with an optional letter for the hemisphere, north or south.

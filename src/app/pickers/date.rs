@@ -4,7 +4,7 @@ use crate::app::command::{Command, Commands};
 use crate::app::palette::Look;
 use crate::app::state::State;
 use crate::app::widgets::{error_line, name_it, sign_button, text};
-use crate::app::wording::Words;
+use crate::words::Words;
 use chrono::{Datelike, Months, NaiveDate};
 use eframe::egui::containers::menu::{MenuButton, MenuConfig};
 use eframe::egui::{Button, Grid, Id, PopupCloseBehavior, Role, Stroke, TextEdit, Ui, vec2};
@@ -52,7 +52,7 @@ pub fn date_picker(
     name_it(
         &button,
         Role::Button,
-        &words.text_with("date-picker", &[("date", &shown)]),
+        &words.text_with::<&str>("date-picker", &[("date", &shown)]),
     );
     sign_button(ui, words, "▸", Command::StepDays(1), commands);
 }

@@ -6,9 +6,9 @@ use super::command::{Command, Commands};
 use super::palette::Look;
 use super::state::State;
 use super::widgets::{choice, command_button, name_it, text};
-use super::wording::Words;
 use crate::plan::Half;
 use crate::sky::Body;
+use crate::words::Words;
 use eframe::egui::containers::menu::MenuButton;
 use eframe::egui::{Role, ScrollArea, Ui};
 
@@ -42,7 +42,7 @@ pub fn picker_row(ui: &mut Ui, look: &Look, words: &Words, state: &State, comman
 fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
     let site = &state.site().name;
     let spot = &state.spot().name;
-    let shown = words.text_with("site-and-spot", &[("site", site), ("spot", spot)]);
+    let shown = words.text_with::<&str>("site-and-spot", &[("site", site), ("spot", spot)]);
     let (button, _) = MenuButton::new(format!("{shown} ▾")).ui(ui, |ui| {
         ui.set_min_width(240.0);
         ScrollArea::vertical().max_height(320.0).show(ui, |ui| {
@@ -78,6 +78,6 @@ fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands:
     name_it(
         &button,
         Role::Button,
-        &words.text_with("site-picker", &[("shown", &shown)]),
+        &words.text_with::<&str>("site-picker", &[("shown", &shown)]),
     );
 }

@@ -80,7 +80,10 @@ impl Layout {
         layout.ticks = builder.ticks(&layout);
         let below = Rangef::new(band.bottom() + ruler, whole.bottom());
         layout.absent = builder.absent(&layout, below.max);
-        let absent_top = layout.absent.as_ref().map_or(below.max, |(at, _)| at.y - 3.0);
+        let absent_top = layout
+            .absent
+            .as_ref()
+            .map_or(below.max, |(at, _)| at.y - 3.0);
         layout.lanes = builder.lanes(&layout, names, Rangef::new(below.min, absent_top));
         layout
     }
