@@ -16,9 +16,10 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 2] = [
+const ENGLISH: [&str; 3] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
+    include_str!("../../assets/words/en/window.ftl"),
 ];
 
 /// The wording of one language.
