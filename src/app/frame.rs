@@ -179,10 +179,10 @@ impl DesktopWindow {
             });
             transport_ui(ui, look, &self.words, &self.state, commands);
             place(ui, heights.fade, |ui| {
-                ui.label("fade");
+                drawings.fade(ui, &scene, commands);
             });
             place(ui, heights.plot, |ui| {
-                ui.label("plot");
+                drawings.plot(ui, &scene, commands);
             });
         }
         self.drawings = drawings;
@@ -201,7 +201,10 @@ impl DesktopWindow {
                 300.0
             };
             place(ui, inset, |ui| {
-                ui.label("inset");
+                drawings.inset(ui, &scene);
+            });
+            place(ui, 178.0, |ui| {
+                drawings.phase(ui, &scene, commands);
             });
         }
         self.drawings = drawings;
