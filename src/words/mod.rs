@@ -9,6 +9,7 @@ mod time;
 
 pub use fluent_bundle::FluentValue;
 pub use night::HalfNight;
+pub use number::decimal;
 pub use time::CivilClock;
 
 use fluent_bundle::concurrent::FluentBundle;
@@ -16,9 +17,10 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 2] = [
+const ENGLISH: [&str; 3] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
+    include_str!("../../assets/words/en/cli.ftl"),
 ];
 
 /// The wording of one language.
