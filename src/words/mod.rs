@@ -149,7 +149,14 @@ mod tests {
             &mut text,
         );
         // These are worked out from a number or a name.
-        let made = ["body-", "compass-", "weekday-", "month-"];
+        let made = [
+            "body-",
+            "compass-",
+            "weekday-",
+            "month-",
+            "cli-about-",
+            "cli-arg-",
+        ];
         for file in ENGLISH {
             for line in file.lines() {
                 let Some((id, _)) = line.split_once(" =") else {
