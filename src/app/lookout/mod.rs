@@ -13,6 +13,10 @@ pub mod model;
 pub mod phase;
 pub mod plot;
 mod says;
+#[cfg(test)]
+mod staged;
+#[cfg(test)]
+mod tests;
 
 use super::command::Commands;
 use super::palette::{Look, Theme};

@@ -2,7 +2,7 @@
 
 mod camera;
 mod layout;
-mod model;
+pub(super) mod model;
 mod paint;
 mod path;
 pub mod sky;
@@ -95,6 +95,12 @@ impl Horizon {
         }
         choose_body(ui, &response, &model, &layout, commands);
         response
+    }
+
+    /// How far the view is turned, widened and tilted.
+    #[cfg(test)]
+    pub(super) fn turn(&self) -> Turn {
+        self.turn
     }
 
     /// Turning, tilting and widening by hand; what goes beyond a limit is taken back next time
