@@ -10,10 +10,18 @@ use crate::sky::{Body, refraction};
 use crate::words::Words;
 use eframe::egui::{Align, Color32, Layout, Response, Stroke, Ui, vec2};
 
-/// The sentence, at the size to be read aloud from.
+/// The sentence, at the size to be read aloud from; at the controls' size where it is long.
 pub fn sentence_card(ui: &mut Ui, look: &Look, sentence: &str, least_height: f32) {
+    const MOST_LINES: usize = 5;
     card(ui, look, least_height, |ui| {
-        text(ui, look, look.sizes.sentence, look.colours.text, sentence);
+        let (large, colour) = (look.sizes.sentence, look.colours.text);
+        let width = ui.available_width();
+        let galley = ui
+            .painter()
+            .layout(sentence.to_owned(), look.font(large), colour, width);
+        let is_long = galley.rows.len() > MOST_LINES;
+        let size = if is_long { look.sizes.control } else { large };
+        text(ui, look, size, colour, sentence);
     });
 }
 
@@ -160,12 +168,12 @@ pub fn facts(scene: &Scene<'_>, words: &Words) -> [Fact; 8] {
 
 /// The facts in two columns.
 pub fn facts_card(ui: &mut Ui, scene: &Scene<'_>, words: &Words) {
-    const ROW_HEIGHT: f32 = 20.0;
+    const ROW_HEIGHT: f32 = 18.0;
     let look = &scene.look;
     let facts = facts(scene, words);
     let (left, right) = facts.split_at(facts.len() / 2);
     card(ui, look, 0.0, |ui| {
-        ui.spacing_mut().item_spacing = vec2(look.room.between, 6.0);
+        ui.spacing_mut().item_spacing = vec2(look.room.between, 4.0);
         ui.columns(2, |columns| {
             for (column, facts) in columns.iter_mut().zip([left, right]) {
                 for (name, value) in facts {
