@@ -17,9 +17,10 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 4] = [
+const ENGLISH: [&str; 5] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
+    include_str!("../../assets/words/en/cli.ftl"),
     include_str!("../../assets/words/en/window.ftl"),
     include_str!("../../assets/words/en/lookout.ftl"),
 ];
