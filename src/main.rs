@@ -55,11 +55,37 @@ fn open_window(
 
 #[cfg(feature = "desktop")]
 fn window(
-    _request: WindowRequest,
-    _folders: Option<&ProjectDirs>,
+    request: WindowRequest,
+    folders: Option<&ProjectDirs>,
     around: &Surroundings<'_>,
 ) -> Result<(), String> {
-    Err(around.words.text("no-window-built"))
+    use dimmet::app::{self, Start, state::Choices};
+    use std::{sync::Arc, time::Instant};
+
+    let renderer = request.renderer.map(str::parse).transpose()?;
+    let clock: app::state::Clock = match request.now {
+        // Stands in for the clock, and goes on from there.
+        Some(now) => {
+            let started = Instant::now();
+            Arc::new(move || now + started.elapsed())
+        }
+        None => Arc::new(Utc::now),
+    };
+    let start = Start {
+        clock,
+        scales: request.scales,
+        settings_file: folders.map(|f| f.config_dir().join("settings.ron")),
+        sites_folder: around.sites_folder.map(ToOwned::to_owned),
+        site: request.site,
+        spot: request.spot,
+        choices: Choices {
+            body: request.body,
+            date: request.date,
+            half: request.half,
+        },
+        renderer,
+    };
+    app::run(start).map_err(|error| error.reason)
 }
 
 #[cfg(not(feature = "desktop"))]

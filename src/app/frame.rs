@@ -47,7 +47,7 @@ impl Heights {
 /// Heights of inset and phase in the right column.
 fn column_heights(available: f32) -> (f32, f32) {
     let phase = (0.38 * available).clamp(126.0, 190.0);
-    ((available - phase).clamp(168.0, 420.0), phase)
+    ((available - phase).clamp(160.0, 420.0), phase)
 }
 
 impl DesktopWindow {

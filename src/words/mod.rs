@@ -20,9 +20,9 @@ use unic_langid::LanguageIdentifier;
 const ENGLISH: [&str; 5] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
+    include_str!("../../assets/words/en/cli.ftl"),
     include_str!("../../assets/words/en/window.ftl"),
     include_str!("../../assets/words/en/lookout.ftl"),
-    include_str!("../../assets/words/en/cli.ftl"),
 ];
 
 /// The wording of one language.

@@ -140,6 +140,27 @@ fn time_runs_and_stops() {
 }
 
 #[test]
+fn space_runs_after_a_click_and_presses_what_tab_has_reached() {
+    let desk = Desk::new();
+    let mut harness = desk.open();
+    click(&mut harness, "Mars");
+    harness.key_press(Key::Space);
+    harness.run_steps(2);
+    assert!(matches!(
+        harness.state().state().motion(),
+        Motion::Running(_)
+    ));
+    harness.key_press(Key::Space);
+    harness.run();
+    harness.get_by_label("Jupiter").focus();
+    harness.run();
+    harness.key_press(Key::Space);
+    harness.run();
+    assert_eq!(harness.state().state().body(), Body::Jupiter);
+    assert_eq!(harness.state().state().motion(), Motion::Still);
+}
+
+#[test]
 fn choosing_a_body_keeps_the_moment_and_plans_nothing() {
     let desk = Desk::new();
     let mut harness = desk.open();

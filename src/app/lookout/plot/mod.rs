@@ -1,6 +1,6 @@
 //! The plot: the bright bodies' clearance against minutes from sunset or sunrise.
 
-mod model;
+pub(super) mod model;
 
 use super::model::Tracks;
 use super::says::Says;
