@@ -1,11 +1,15 @@
 //! Arguments to the window or a subcommand; reads the clock and the folders once.
 
+#[cfg(feature = "desktop")]
+use chrono::DateTime;
 use chrono::Utc;
 use dimmet::cli::{self, Fault, Next, Surroundings, WindowRequest};
 use dimmet::words::Words;
 use directories::ProjectDirs;
 use std::io;
 use std::process::ExitCode;
+#[cfg(feature = "desktop")]
+use std::{sync::Arc, time::Instant};
 
 fn main() -> ExitCode {
     let words = Words::english();
@@ -55,11 +59,36 @@ fn open_window(
 
 #[cfg(feature = "desktop")]
 fn window(
-    _request: WindowRequest,
-    _folders: Option<&ProjectDirs>,
+    request: WindowRequest,
+    folders: Option<&ProjectDirs>,
     around: &Surroundings<'_>,
 ) -> Result<(), String> {
-    Err(around.words.text("no-window-built"))
+    use dimmet::app::{self, Start, state::Choices};
+    app::run(Start {
+        clock: clock(request.now),
+        scales: request.scales,
+        settings_file: folders.map(|folders| folders.config_dir().join("window.ron")),
+        sites_folder: around.sites_folder.map(Into::into),
+        site: request.site,
+        spot: request.spot,
+        choices: Choices {
+            body: request.body,
+            date: request.date,
+            half: request.half,
+        },
+        renderer: request.renderer.and_then(|name| name.parse().ok()),
+    })
+    .map_err(|error| error.reason)
+}
+
+/// The machine's clock, or one that runs on from a given time.
+#[cfg(feature = "desktop")]
+fn clock(start: Option<DateTime<Utc>>) -> Arc<dyn Fn() -> DateTime<Utc> + Send + Sync> {
+    let Some(start) = start else {
+        return Arc::new(Utc::now);
+    };
+    let started = Instant::now();
+    Arc::new(move || start + started.elapsed())
 }
 
 #[cfg(not(feature = "desktop"))]

@@ -3,6 +3,7 @@
 mod absence;
 mod coming;
 mod interval;
+mod neighbours;
 mod night;
 mod optics;
 mod survey;
@@ -11,6 +12,7 @@ mod windows;
 
 pub use absence::Absence;
 pub use coming::{Coming, coming};
+pub use neighbours::{Aspect, Neighbour, Neighbours, neighbours};
 pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,
     SunTimes, Window,

@@ -17,9 +17,11 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 3] = [
+const ENGLISH: [&str; 5] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
+    include_str!("../../assets/words/en/window.ftl"),
+    include_str!("../../assets/words/en/lookout.ftl"),
     include_str!("../../assets/words/en/cli.ftl"),
 ];
 
@@ -76,6 +78,7 @@ impl Words {
         let text = self
             .bundle
             .format_pattern(pattern, Some(&arguments), &mut errors);
+        debug_assert!(errors.is_empty(), "the message {id} lacks: {errors:?}");
         text.into_owned()
     }
 
@@ -147,7 +150,14 @@ mod tests {
             &mut text,
         );
         // These are worked out from a number or a name.
-        let made = ["body-", "compass-", "weekday-", "month-"];
+        let made = [
+            "body-",
+            "compass-",
+            "weekday-",
+            "month-",
+            "cli-about-",
+            "cli-arg-",
+        ];
         for file in ENGLISH {
             for line in file.lines() {
                 let Some((id, _)) = line.split_once(" =") else {

@@ -241,3 +241,23 @@ fn every_date_that_exists_starts_within_itself_and_days_follow_each_other() {
         }
     }
 }
+
+#[test]
+fn dates_at_the_ends_of_the_calendar_are_answered() {
+    for zone in [
+        Tz::Pacific__Kiritimati,
+        Tz::Pacific__Pago_Pago,
+        Tz::Europe__London,
+    ] {
+        for day in [NaiveDate::MIN, NaiveDate::MAX] {
+            assert_eq!(civil::start_of_date(day, zone), None, "{zone} {day}");
+            assert_eq!(civil::end_of_date(day, zone), None, "{zone} {day}");
+            assert_eq!(civil::middle_of(day, zone), None, "{zone} {day}");
+            let midnight = day.and_time(chrono::NaiveTime::MIN);
+            assert!(
+                civil::utc_from_local(midnight, zone).is_ok(),
+                "{zone} {day}"
+            );
+        }
+    }
+}
