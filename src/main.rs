@@ -78,7 +78,19 @@ fn window(
         },
         renderer: request.renderer.and_then(|name| name.parse().ok()),
     })
-    .map_err(|error| error.reason)
+    .map_err(|error| plain_reason(&error.reason).to_owned())
+}
+
+/// A reason without the place in the window library's sources that it starts with, and without
+/// its full stop: it stands within a sentence.
+#[cfg(feature = "desktop")]
+fn plain_reason(reason: &str) -> &str {
+    let past_source = reason
+        .split_once(".rs:")
+        .and_then(|(_, rest)| rest.split_once(": "));
+    past_source
+        .map_or(reason, |(_, rest)| rest)
+        .trim_end_matches('.')
 }
 
 /// The machine's clock, or one that runs on from a given time.
