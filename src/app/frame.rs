@@ -11,6 +11,7 @@ use super::pickers::picker_row;
 use super::transport::transport_ui;
 use super::widgets::{bold, choice, command_button, text};
 use super::window::DesktopWindow;
+use crate::measure::CivilScale;
 use eframe::egui::{Align, Layout, Rect, ScrollArea, Sense, Stroke, Ui, UiBuilder, pos2, vec2};
 
 /// From this width on, points, the right column stands beside the view.
@@ -24,7 +25,7 @@ const BESIDE_HEIGHT: f32 = 250.0;
 /// The sentence card's height in the right column: four lines.
 const SENTENCE_HEIGHT: f32 = 112.0;
 /// The caution card's height where it has the column's width.
-const CAUTION_HEIGHT: f32 = 116.0;
+const CAUTION_HEIGHT: f32 = 100.0;
 
 /// Heights of the three drawings on the left.
 struct Heights {
@@ -46,7 +47,7 @@ impl Heights {
 /// Heights of inset and phase in the right column.
 fn column_heights(available: f32) -> (f32, f32) {
     let phase = (0.38 * available).clamp(126.0, 190.0);
-    ((available - phase).clamp(176.0, 420.0), phase)
+    ((available - phase).clamp(168.0, 420.0), phase)
 }
 
 impl DesktopWindow {
@@ -121,7 +122,7 @@ impl DesktopWindow {
             picker_row(ui, look, &self.words, &self.state, commands);
         }
         let whole = ui.available_rect_before_wrap();
-        let column = (0.245 * whole.width()).clamp(330.0, 420.0);
+        let column = (0.245 * whole.width()).clamp(356.0, 420.0);
         let divide = whole.right() - column;
         let left = whole.with_max_x(divide - look.room.between);
         let right = whole.with_min_x(divide);
@@ -226,6 +227,12 @@ impl DesktopWindow {
         self.drawings = drawings;
     }
 
+    /// Whether civil time means UT1 at the moment shown.
+    fn is_counted_from_ut1(&self) -> bool {
+        let (_, scale) = self.state.scales().civil(self.state.moment());
+        scale == CivilScale::Ut1
+    }
+
     /// Keys on the left, the air on the right.
     fn status_line(&self, ui: &mut Ui, look: &Look) {
         let (size, colour) = (look.sizes.least, look.colours.lesser);
@@ -233,6 +240,9 @@ impl DesktopWindow {
             text(ui, look, size, colour, &self.words.text("status-keys"));
             ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
                 text(ui, look, size, colour, &self.words.air(self.state.site()));
+                if self.is_counted_from_ut1() {
+                    text(ui, look, size, colour, &self.words.text("clock-is-ut1"));
+                }
             });
         });
     }

@@ -201,3 +201,17 @@ fn a_date_outside_the_years_is_one_sentence_and_loses_nothing() {
     assert!(harness.state().state().planned().is_ok());
     assert_eq!(harness.state().state().date().to_string(), "2400-12-29");
 }
+
+#[test]
+fn before_1972_it_says_that_civil_time_is_ut1() {
+    let desk = Desk::new();
+    for (date, is_ut1) in [("1882-12-06", true), ("2026-12-06", false)] {
+        let mut start = desk.start(NOW);
+        start.choices.date = date.parse().ok();
+        let harness = desk.open_sized(1280.0, 800.0, start);
+        let said = harness
+            .query_by_label_contains("counted from UT1")
+            .is_some();
+        assert_eq!(said, is_ut1, "{date}");
+    }
+}
