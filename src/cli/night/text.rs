@@ -46,19 +46,27 @@ fn write_half(page: &mut Page, words: &Words, planned: &Planned<'_>, half: Half)
     page.line(&heading(words, planned, half));
     page.gap();
     let order = in_order(planned, half);
-    for body in &order {
-        page.line(&words.half_night(&HalfNight {
-            night,
-            half,
-            body: body.body,
-            skyline: &planned.skyline,
-            clock: planned.clock,
-        }));
+    let sun_stays_up = night.sun.lowest.degrees() > SUNSET_ALTITUDE_DEG;
+    if sun_stays_up {
+        // The same for every body, so it is said once.
+        page.line(&sun(words, planned, half));
+    } else {
+        for body in &order {
+            page.line(&words.half_night(&HalfNight {
+                night,
+                half,
+                body: body.body,
+                skyline: &planned.skyline,
+                clock: planned.clock,
+            }));
+        }
     }
     page.gap();
     page.line(&optics(words, planned, half));
     page.gap();
-    page.line(&sun(words, planned, half));
+    if !sun_stays_up {
+        page.line(&sun(words, planned, half));
+    }
     page.line(&moon(words, planned));
     page.gap();
     write_table(page, words, planned, half, &order);
