@@ -1,2 +1,103 @@
-//! Arguments to the window or a subcommand; reads the clock and the zone once.
-fn main() {}
+//! Arguments to the window or a subcommand; reads the clock and the folders once.
+
+use chrono::Utc;
+use dimmet::cli::{self, Fault, Next, Surroundings, WindowRequest};
+use dimmet::words::Words;
+use directories::ProjectDirs;
+use std::io;
+use std::process::ExitCode;
+
+fn main() -> ExitCode {
+    let words = Words::english();
+    let folders = ProjectDirs::from("", "", "dimmet");
+    let sites_folder = folders.as_ref().map(|f| f.data_dir().join("sites"));
+    let mut around = Surroundings {
+        words: &words,
+        now: Utc::now(),
+        sites_folder: sites_folder.as_deref(),
+        input: &mut io::stdin().lock(),
+        output: &mut io::stdout().lock(),
+        messages: &mut io::stderr(),
+    };
+    let outcome = match cli::run(std::env::args_os(), &mut around) {
+        Ok(Next::Done) => Ok(()),
+        Ok(Next::OpenWindow(request)) => open_window(*request, folders.as_ref(), &mut around),
+        Err(fault) => Err(fault),
+    };
+    match outcome {
+        Ok(()) => ExitCode::SUCCESS,
+        Err(fault) => {
+            if let Some(sentence) = fault.sentence(&words) {
+                tell(
+                    &mut around,
+                    &words.text_with("cli-message", &[("sentence", sentence)]),
+                );
+            }
+            ExitCode::from(fault.exit_code())
+        }
+    }
+}
+
+/// Opens the window; where none can be opened, says so and prints the coming dusk.
+fn open_window(
+    request: WindowRequest,
+    folders: Option<&ProjectDirs>,
+    around: &mut Surroundings<'_>,
+) -> Result<(), Fault> {
+    let scales = request.scales;
+    let Err(reason) = window(request, folders, around) else {
+        return Ok(());
+    };
+    let sentence = around.words.text_with("no-display", &[("reason", reason)]);
+    tell(around, &sentence);
+    cli::coming_dusk(scales, around)
+}
+
+#[cfg(feature = "desktop")]
+fn window(
+    request: WindowRequest,
+    folders: Option<&ProjectDirs>,
+    around: &Surroundings<'_>,
+) -> Result<(), String> {
+    use dimmet::app::{self, Start, state::Choices};
+    use std::{sync::Arc, time::Instant};
+
+    let renderer = request.renderer.map(str::parse).transpose()?;
+    let clock: app::state::Clock = match request.now {
+        // Stands in for the clock, and goes on from there.
+        Some(now) => {
+            let started = Instant::now();
+            Arc::new(move || now + started.elapsed())
+        }
+        None => Arc::new(Utc::now),
+    };
+    let start = Start {
+        clock,
+        scales: request.scales,
+        settings_file: folders.map(|f| f.config_dir().join("settings.ron")),
+        sites_folder: around.sites_folder.map(ToOwned::to_owned),
+        site: request.site,
+        spot: request.spot,
+        choices: Choices {
+            body: request.body,
+            date: request.date,
+            half: request.half,
+        },
+        renderer,
+    };
+    app::run(start).map_err(|error| error.reason)
+}
+
+#[cfg(not(feature = "desktop"))]
+fn window(
+    _request: WindowRequest,
+    _folders: Option<&ProjectDirs>,
+    around: &Surroundings<'_>,
+) -> Result<(), String> {
+    Err(around.words.text("no-window-built"))
+}
+
+/// Says something beside the output; a message that nobody can read is not worth failing for.
+fn tell(around: &mut Surroundings<'_>, sentence: &str) {
+    let _ = writeln!(around.messages, "{sentence}");
+}

@@ -8,12 +8,20 @@ use super::widgets::{bold, card, card_frame, figure, text};
 use crate::measure::Angle;
 use crate::sky::{Body, refraction};
 use crate::words::Words;
-use eframe::egui::{Align, Color32, Layout, Response, Stroke, Ui, vec2};
+use eframe::egui::{Align, Color32, Layout, Rect, Response, Sense, Stroke, Ui, UiBuilder, vec2};
 
-/// The sentence, at the size to be read aloud from.
+/// The sentence, at the size to be read aloud from; at the controls' size where it is long.
 pub fn sentence_card(ui: &mut Ui, look: &Look, sentence: &str, least_height: f32) {
+    const MOST_LINES: usize = 5;
     card(ui, look, least_height, |ui| {
-        text(ui, look, look.sizes.sentence, look.colours.text, sentence);
+        let (large, colour) = (look.sizes.sentence, look.colours.text);
+        let width = ui.available_width();
+        let galley = ui
+            .painter()
+            .layout(sentence.to_owned(), look.font(large), colour, width);
+        let is_long = galley.rows.len() > MOST_LINES;
+        let size = if is_long { look.sizes.control } else { large };
+        text(ui, look, size, colour, sentence);
     });
 }
 
@@ -160,31 +168,32 @@ pub fn facts(scene: &Scene<'_>, words: &Words) -> [Fact; 8] {
 
 /// The facts in two columns.
 pub fn facts_card(ui: &mut Ui, scene: &Scene<'_>, words: &Words) {
-    const ROW_HEIGHT: f32 = 20.0;
+    const ROW_HEIGHT: f32 = 18.0;
+    /// The azimuth with its compass point is the widest figure.
+    const LEFT_SHARE: f32 = 0.53;
     let look = &scene.look;
     let facts = facts(scene, words);
     let (left, right) = facts.split_at(facts.len() / 2);
     card(ui, look, 0.0, |ui| {
-        ui.spacing_mut().item_spacing = vec2(look.room.between, 6.0);
-        ui.columns(2, |columns| {
-            for (column, facts) in columns.iter_mut().zip([left, right]) {
-                for (name, value) in facts {
-                    let size = vec2(column.available_width(), ROW_HEIGHT);
-                    column.allocate_ui_with_layout(
-                        size,
-                        Layout::left_to_right(Align::Center),
-                        |ui| {
-                            let name = words.text(name);
-                            let font = look.font(look.sizes.label);
-                            figure(ui, font, look.colours.lesser, &name);
-                            ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-                                figure(ui, look.bold(look.sizes.control), look.colours.text, value);
-                            });
-                        },
-                    );
-                }
-            }
-        });
+        let size = vec2(ui.available_width(), ROW_HEIGHT);
+        ui.spacing_mut().item_spacing.y = 4.0;
+        for (left, right) in left.iter().zip(right) {
+            let (row, _) = ui.allocate_exact_size(size, Sense::hover());
+            let divide = row.left() + LEFT_SHARE * row.width();
+            let half_gap = 0.5 * look.room.inside;
+            fact_ui(ui, look, words, row.with_max_x(divide - half_gap), left);
+            fact_ui(ui, look, words, row.with_min_x(divide + half_gap), right);
+        }
+    });
+}
+
+fn fact_ui(ui: &mut Ui, look: &Look, words: &Words, rect: Rect, (name, value): &Fact) {
+    let layout = Layout::left_to_right(Align::Center);
+    let mut ui = ui.new_child(UiBuilder::new().max_rect(rect).layout(layout));
+    let font = look.font(look.sizes.label);
+    figure(&mut ui, font, look.colours.lesser, &words.text(name));
+    ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
+        figure(ui, look.bold(look.sizes.control), look.colours.text, value);
     });
 }
 

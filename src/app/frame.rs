@@ -11,16 +11,21 @@ use super::pickers::picker_row;
 use super::transport::transport_ui;
 use super::widgets::{bold, choice, command_button, text};
 use super::window::DesktopWindow;
+use crate::measure::CivilScale;
 use eframe::egui::{Align, Layout, Rect, ScrollArea, Sense, Stroke, Ui, UiBuilder, pos2, vec2};
 
 /// From this width on, points, the right column stands beside the view.
 const WIDE: f32 = 1200.0;
 /// From this width on, points, the pickers leave the right column its whole height.
 const ROW_BESIDE: f32 = 1500.0;
+/// Below this width, points, inset and phase stand one below the other.
+const COLUMN: f32 = 500.0;
+/// Height of inset and phase where they stand beside one another.
+const BESIDE_HEIGHT: f32 = 250.0;
 /// The sentence card's height in the right column: four lines.
-const SENTENCE_HEIGHT: f32 = 118.0;
+const SENTENCE_HEIGHT: f32 = 112.0;
 /// The caution card's height where it has the column's width.
-const CAUTION_HEIGHT: f32 = 132.0;
+const CAUTION_HEIGHT: f32 = 100.0;
 
 /// Heights of the three drawings on the left.
 struct Heights {
@@ -37,6 +42,12 @@ impl Heights {
         let view = (available - fade - plot - 2.0 * gap).max(220.0);
         Self { view, fade, plot }
     }
+}
+
+/// Heights of inset and phase in the right column.
+fn column_heights(available: f32) -> (f32, f32) {
+    let phase = (0.38 * available).clamp(126.0, 190.0);
+    ((available - phase).clamp(160.0, 420.0), phase)
 }
 
 impl DesktopWindow {
@@ -111,7 +122,7 @@ impl DesktopWindow {
             picker_row(ui, look, &self.words, &self.state, commands);
         }
         let whole = ui.available_rect_before_wrap();
-        let column = (0.245 * whole.width()).clamp(330.0, 420.0);
+        let column = (0.245 * whole.width()).clamp(356.0, 420.0);
         let divide = whole.right() - column;
         let left = whole.with_max_x(divide - look.room.between);
         let right = whole.with_min_x(divide);
@@ -179,32 +190,47 @@ impl DesktopWindow {
             });
             transport_ui(ui, look, &self.words, &self.state, commands);
             place(ui, heights.fade, |ui| {
-                ui.label("fade");
+                drawings.fade(ui, &scene, commands);
             });
             place(ui, heights.plot, |ui| {
-                ui.label("plot");
+                drawings.plot(ui, &scene, commands);
             });
         }
         self.drawings = drawings;
     }
 
-    /// Facts, inset and phase.
+    /// Facts, inset and phase: one below the other in a column, beside one another elsewhere.
     fn figures(&mut self, ui: &mut Ui, look: &Look, commands: &mut Commands) {
         let mut drawings = std::mem::take(&mut self.drawings);
         if let Some(scene) = self.scene() {
             facts_card(ui, &scene, &self.words);
-            let is_column = ui.available_width() < 500.0;
-            let inset = if is_column {
-                let left = ui.available_height() - 2.0 * look.room.inside;
-                (0.58 * left).clamp(230.0, 320.0)
+            if ui.available_width() < COLUMN {
+                let gap = look.room.inside;
+                let (inset, phase) = column_heights(ui.available_height() - gap);
+                place(ui, inset, |ui| {
+                    drawings.inset(ui, &scene);
+                });
+                place(ui, phase, |ui| {
+                    drawings.phase(ui, &scene, commands);
+                });
             } else {
-                300.0
-            };
-            place(ui, inset, |ui| {
-                ui.label("inset");
-            });
+                ui.columns(2, |columns| {
+                    place(&mut columns[0], BESIDE_HEIGHT, |ui| {
+                        drawings.inset(ui, &scene);
+                    });
+                    place(&mut columns[1], BESIDE_HEIGHT, |ui| {
+                        drawings.phase(ui, &scene, commands);
+                    });
+                });
+            }
         }
         self.drawings = drawings;
+    }
+
+    /// Whether civil time means UT1 at the moment shown.
+    fn is_counted_from_ut1(&self) -> bool {
+        let (_, scale) = self.state.scales().civil(self.state.moment());
+        scale == CivilScale::Ut1
     }
 
     /// Keys on the left, the air on the right.
@@ -214,6 +240,9 @@ impl DesktopWindow {
             text(ui, look, size, colour, &self.words.text("status-keys"));
             ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
                 text(ui, look, size, colour, &self.words.air(self.state.site()));
+                if self.is_counted_from_ut1() {
+                    text(ui, look, size, colour, &self.words.text("clock-is-ut1"));
+                }
             });
         });
     }

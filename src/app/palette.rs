@@ -225,7 +225,7 @@ pub fn red_of_same_brightness(colour: Color32) -> Color32 {
     /// Red light spares the eye only while it is dim.
     const DIMMED: f32 = 0.85;
     /// Dark reds are told apart less well than dark blues, so the dark end is spread.
-    const SPREAD: f32 = 0.75;
+    const SPREAD: f32 = 0.85;
     let [r, g, b, a] = colour.to_array();
     let share = f32::from(brightness(r, g, b)) / 255.0;
     let red = 255.0 * DIMMED * share.powf(SPREAD);

@@ -63,7 +63,11 @@ pub fn apply(ctx: &Context, look: &Look) {
         style.spacing.button_padding = vec2(9.0, 6.0);
         style.spacing.interact_size.y = 30.0;
         style.spacing.menu_margin = Margin::same(look.room.inside as i8);
-        style.spacing.scroll = egui::style::ScrollStyle::solid();
+        // Over the content, so that cards keep one width whether or not they scroll, yet seen.
+        style.spacing.scroll = egui::style::ScrollStyle {
+            dormant_handle_opacity: 0.6,
+            ..egui::style::ScrollStyle::floating()
+        };
         // Nothing moves but what the host moves.
         style.animation_time = 0.0;
     });

@@ -4,8 +4,8 @@ use super::command::{Command, Commands};
 use super::palette::Look;
 use crate::words::Words;
 use eframe::egui::{
-    Button, Color32, FontId, Frame, Label, Margin, Response, RichText, Role, Stroke, TextEdit, Ui,
-    WidgetInfo,
+    Align2, Button, Color32, FontId, Frame, Label, Margin, Response, RichText, Role, Stroke,
+    TextEdit, Ui, WidgetInfo,
 };
 
 /// A button that runs a command, worded and hinted by the command itself.
@@ -59,9 +59,16 @@ pub fn field(ui: &mut Ui, look: &Look, label: &str, text: &mut String, error: Op
             .font(look.font(look.sizes.label))
             .color(look.colours.lesser),
     );
-    ui.add(TextEdit::singleline(text).desired_width(f32::INFINITY))
+    ui.add(line(text).desired_width(f32::INFINITY))
         .labelled_by(name.id);
     error_line(ui, look, error);
+}
+
+/// One line to write in.
+pub fn line(text: &mut String) -> TextEdit<'_> {
+    TextEdit::singleline(text)
+        .margin(Margin::symmetric(8, 6))
+        .align(Align2::LEFT_CENTER)
 }
 
 /// What is wrong, in one sentence, where there is anything.

@@ -92,7 +92,7 @@ impl DesktopWindow {
             commands,
             is_blocked: are_keys_blocked.clone(),
         });
-        Ok(Self {
+        let mut window = Self {
             state,
             words,
             palette,
@@ -108,7 +108,9 @@ impl DesktopWindow {
             latest: settings.clone(),
             saved: settings,
             saved_at_s: f64::NEG_INFINITY,
-        })
+        };
+        window.warn_of_terrain();
+        Ok(window)
     }
 
     /// What is chosen and shown.
@@ -164,9 +166,28 @@ impl DesktopWindow {
 
     /// Runs a command, as its control or key would.
     pub fn run(&mut self, command: Command) {
-        let Some(command) = self.state.run(command) else {
-            return;
-        };
+        let site = self.state.site_index();
+        if let Some(command) = self.state.run(command) {
+            self.run_in_window(command);
+        }
+        if self.state.site_index() != site {
+            self.warn_of_terrain();
+        }
+    }
+
+    /// Says that the site names an elevation tile, which the skyline does not look at.
+    fn warn_of_terrain(&mut self) {
+        let site = self.state.site();
+        if site.ignores_terrain() {
+            let text = self
+                .words
+                .text_with("terrain-ignored", &[("site", site.name.as_str())]);
+            self.notices.push(text);
+        }
+    }
+
+    /// What is a matter of dialogs and files.
+    fn run_in_window(&mut self, command: Command) {
         match command {
             Command::NewSite => self.dialog = Some(Dialog::new_site()),
             Command::FindSiteFile => {

@@ -9,6 +9,7 @@ mod time;
 
 pub use fluent_bundle::FluentValue;
 pub use night::HalfNight;
+pub use number::decimal;
 pub use time::CivilClock;
 
 use fluent_bundle::concurrent::FluentBundle;
@@ -16,10 +17,12 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 3] = [
+const ENGLISH: [&str; 5] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
+    include_str!("../../assets/words/en/cli.ftl"),
     include_str!("../../assets/words/en/window.ftl"),
+    include_str!("../../assets/words/en/lookout.ftl"),
 ];
 
 /// The wording of one language.
@@ -146,7 +149,14 @@ mod tests {
             &mut text,
         );
         // These are worked out from a number or a name.
-        let made = ["body-", "compass-", "weekday-", "month-"];
+        let made = [
+            "body-",
+            "compass-",
+            "weekday-",
+            "month-",
+            "cli-about-",
+            "cli-arg-",
+        ];
         for file in ENGLISH {
             for line in file.lines() {
                 let Some((id, _)) = line.split_once(" =") else {

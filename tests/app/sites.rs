@@ -132,7 +132,7 @@ fn a_site_file_is_opened_from_any_folder() {
     let elsewhere = tempfile::tempdir().expect("a folder");
     let file = elsewhere.path().join("far.site.ron");
     let text = r#"(name: "Far End", latitude_deg: -33.9, longitude_deg: 18.4,
-        time_zone: "Africa/Johannesburg")"#;
+        time_zone: "Africa/Johannesburg", terrain: "hills.tif")"#;
     std::fs::write(&file, text).expect("a file");
     let mut harness = desk.open();
     harness.key_press(Key::O);
@@ -149,6 +149,7 @@ fn a_site_file_is_opened_from_any_folder() {
     );
     click(&mut harness, "far.site.ron");
     assert_eq!(harness.state().state().site().name, "Far End");
+    harness.get_by_label_contains("The skyline does not look at terrain yet");
 
     // Remembered, although it lies outside the sites folder.
     eframe::App::on_exit(harness.state_mut(), None);

@@ -140,6 +140,27 @@ fn time_runs_and_stops() {
 }
 
 #[test]
+fn space_runs_after_a_click_and_presses_what_tab_has_reached() {
+    let desk = Desk::new();
+    let mut harness = desk.open();
+    click(&mut harness, "Mars");
+    harness.key_press(Key::Space);
+    harness.run_steps(2);
+    assert!(matches!(
+        harness.state().state().motion(),
+        Motion::Running(_)
+    ));
+    harness.key_press(Key::Space);
+    harness.run();
+    harness.get_by_label("Jupiter").focus();
+    harness.run();
+    harness.key_press(Key::Space);
+    harness.run();
+    assert_eq!(harness.state().state().body(), Body::Jupiter);
+    assert_eq!(harness.state().state().motion(), Motion::Still);
+}
+
+#[test]
 fn choosing_a_body_keeps_the_moment_and_plans_nothing() {
     let desk = Desk::new();
     let mut harness = desk.open();
@@ -200,4 +221,18 @@ fn a_date_outside_the_years_is_one_sentence_and_loses_nothing() {
     harness.run();
     assert!(harness.state().state().planned().is_ok());
     assert_eq!(harness.state().state().date().to_string(), "2400-12-29");
+}
+
+#[test]
+fn before_1972_it_says_that_civil_time_is_ut1() {
+    let desk = Desk::new();
+    for (date, is_ut1) in [("1882-12-06", true), ("2026-12-06", false)] {
+        let mut start = desk.start(NOW);
+        start.choices.date = date.parse().ok();
+        let harness = desk.open_sized(1280.0, 800.0, start);
+        let said = harness
+            .query_by_label_contains("counted from UT1")
+            .is_some();
+        assert_eq!(said, is_ut1, "{date}");
+    }
 }

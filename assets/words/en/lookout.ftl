@@ -1,42 +1,15 @@
 # The drawings of the Lookout: horizon view, fade, inset, phase, plot.
 
-body-sun = Sun
-body-moon = Moon
-body-mercury = Mercury
-body-venus = Venus
-body-mars = Mars
-body-jupiter = Jupiter
-body-saturn = Saturn
-
-compass-north = north
-compass-north-east = north-east
-compass-east = east
-compass-south-east = south-east
-compass-south = south
-compass-south-west = south-west
-compass-west = west
-compass-north-west = north-west
-
-the-skyline = the skyline
-the-obstacle = the { $label }
-
 # The horizon view. Keys are named as on the keyboard.
 horizon-name = Horizon view. Drag or Ctrl and arrows turn it, the wheel or plus and minus widen it.
 horizon-target = { $body } { $magnitude }
-horizon-target-clear = { $altitude } up · { $fists } { $count ->
-    [few] fist
-   *[many] fists
-} over { $obstacle }
+horizon-target-clear = { $altitude } up · { $fists } over { $obstacle }
 horizon-target-close = { $altitude } up · just over { $obstacle }
 horizon-target-washed-out = { $altitude } up · sky too bright
 horizon-target-blocked = { $altitude } up · behind { $obstacle }
 horizon-clearance = clear by { $clearance }
 horizon-moon = Moon { $lit }
-horizon-altitude = { $degrees }
-horizon-fists = { $fists } { $count ->
-    [few] fist
-   *[many] fists
-}  { $degrees }
+horizon-fists = { $fists }  { $degrees }
 
 # The fade.
 fade-name = Fade
@@ -91,11 +64,13 @@ phase-eye-point = a brilliant point
 phase-eye-disc = as it hangs
 phase-binocular = binocular
 phase-telescope = telescope
-phase-power = { $power }, { $view }
+phase-power = { $power }×, { $view }
 phase-erect = erect
 phase-inverted = inverted
 phase-mirrored = mirrored
 phase-scale = ring { $size }
+phase-arcseconds = { $size }″
+phase-arcminutes = { $size }′
 phase-change = { $name }, { $note }. Press for the next way round.
 
 # The plot.
@@ -104,3 +79,5 @@ plot-title = Clearance over the skyline
 plot-minutes-sunset = minutes from sunset
 plot-minutes-sunrise = minutes from sunrise
 plot-minutes-start = minutes of the half-night
+plot-after = +{ $minutes }
+plot-before = { $minutes }

@@ -35,14 +35,12 @@ night-sun-stays-down = The Sun does not rise: its highest point is { $altitude }
 night-moon = Moon: { $percent } lit, { $elongation } from the Sun; rises { $rise }, sets { $set }
 night-dusk = Dusk, { $date }
 night-dawn = Dawn, { $date }
-night-order = Bodies in order: { $bodies }
 optics-from = Caps stay on until at least { $time }, and until the named Sun-watcher agrees.
 optics-until = Cap every instrument by { $time }.
 optics-none-dusk = No optics time at dusk: the Sun does not go down far enough.
 optics-none-dawn = No optics time at dawn: the Sun does not go down far enough.
 clock-of-site = Times are the site’s own ({ $zone }).
 clock-is-ut1 = Beyond 1972 to 2050 civil time is counted from UT1.
-clock-is-unmarked = Times are of the zone { $zone }.
 
 # No display
 no-display = There is no display to open the window on ({ $reason }). Here is the coming dusk at the demo site instead.

@@ -82,6 +82,9 @@ no-such-folder = There is no such folder.
 folder-above = .. (the folder above)
 no-site-files = No site files stand in this folder.
 
+# Sites
+terrain-ignored = { $site } names an elevation tile. The skyline does not look at terrain yet: measure the hills into the skyline.
+
 # Settings
 settings-set-aside = The settings could not be used ({ $reason }); they were kept as { $file } and the usual ones are in use.
 settings-not-saved = The settings could not be written to { $file }: { $reason }.

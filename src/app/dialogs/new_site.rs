@@ -2,12 +2,12 @@
 
 use crate::app::palette::Look;
 use crate::app::sites;
-use crate::app::widgets::{bold, error_line, field, text};
+use crate::app::widgets::{bold, error_line, field, line, text};
 use crate::measure::Angle;
 use crate::place::{Site, SkylinePoint, zone};
 use crate::words::Words;
 use chrono_tz::Tz;
-use eframe::egui::{ComboBox, ScrollArea, TextEdit, Ui};
+use eframe::egui::{ComboBox, ScrollArea, Ui};
 use std::path::{Path, PathBuf};
 
 /// A fist at arm's length covers so many degrees.
@@ -147,8 +147,7 @@ impl NewSite {
             .show_ui(ui, |ui| {
                 let filter = words.text("time-zone-filter");
                 let filter = text(ui, look, look.sizes.label, look.colours.lesser, &filter);
-                ui.add(TextEdit::singleline(&mut self.zone_filter))
-                    .labelled_by(filter.id);
+                ui.add(line(&mut self.zone_filter)).labelled_by(filter.id);
                 let wanted = self.zone_filter.trim().to_lowercase().replace(' ', "_");
                 ScrollArea::vertical().max_height(220.0).show(ui, |ui| {
                     let matching = zone::names().filter(|n| n.to_lowercase().contains(&wanted));
@@ -184,7 +183,7 @@ impl NewSite {
                 .labelled_by(label.id);
             let height = words.text_with::<&str>("skyline-fists", &[("number", &number)]);
             let label = text(ui, look, look.sizes.label, look.colours.lesser, &height);
-            ui.add(TextEdit::singleline(fists).desired_width(70.0))
+            ui.add(line(fists).desired_width(70.0))
                 .labelled_by(label.id);
         });
         error_line(ui, look, self.errors.points[index].as_deref());

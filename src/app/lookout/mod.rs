@@ -13,6 +13,10 @@ pub mod model;
 pub mod phase;
 pub mod plot;
 mod says;
+#[cfg(test)]
+mod staged;
+#[cfg(test)]
+mod tests;
 
 use super::command::Commands;
 use super::palette::{Look, Theme};
@@ -20,7 +24,7 @@ use super::scene::Scene;
 use crate::light::Eye;
 use crate::plan::Half;
 use crate::sky::Body;
-use eframe::egui::{Galley, Painter, Pos2, Response, Ui, Vec2, vec2};
+use eframe::egui::{Galley, Painter, Pos2, Rect, Response, Ui, Vec2, vec2};
 use model::Tracks;
 use std::sync::Arc;
 
@@ -78,9 +82,12 @@ const AROUND: [Vec2; 4] = [
 
 /// Letters over the sky: with a dark shade around them, so that they read in every light.
 fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
-    // In red light letters and sky differ in brightness alone.
-    let depth = if look.theme == Theme::Red { 0.95 } else { 0.55 };
-    let shade = look.colours.sky_shade.gamma_multiply(depth);
+    let shade = look.colours.sky_shade.gamma_multiply(0.55);
+    if look.theme == Theme::Red {
+        // Letters and sky differ in brightness alone: a rim is not enough.
+        let ground = Rect::from_min_size(at, text.size()).expand2(vec2(3.0, 0.0));
+        painter.rect_filled(ground, 2.0, shade);
+    }
     for aside in AROUND {
         painter.galley_with_override_text_color(at + aside, text.clone(), shade);
     }

@@ -1,135 +1,86 @@
-//! Everything that the drawings say, each by one message of `assets/words/en/lookout.ftl`.
+//! What the drawings say, by the scene's wording and on the site's clock.
 
 use crate::app::scene::Scene;
-use crate::measure::{Angle, Moment, civil};
+use crate::measure::{Angle, Moment};
 use crate::plan::{Aspect, Cause};
 use crate::sky::Body;
-use fluent_bundle::{FluentArgs, FluentBundle, FluentResource};
+use crate::words::{CivilClock, FluentValue, Words, decimal};
 
-thread_local! {
-    static BUNDLE: FluentBundle<FluentResource> = {
-        let mut bundle = FluentBundle::new(vec!["en".parse().expect("en")]);
-        bundle.set_use_isolating(false);
-        let text = include_str!("../../../assets/words/en/lookout.ftl").to_owned();
-        bundle.add_resource(FluentResource::try_new(text).expect("ftl")).expect("twice");
-        bundle
-    };
-}
-
-/// Says things in the scene's language.
+/// Says things of a scene.
 #[derive(Clone, Copy)]
 pub struct Says<'a> {
-    scene: &'a Scene<'a>,
+    /// The wording.
+    pub words: &'a Words,
+    clock: CivilClock,
 }
 
 impl<'a> Says<'a> {
-    /// Says things about a scene.
-    pub fn new(scene: &'a Scene<'a>) -> Self {
-        Self { scene }
+    /// Says things of a scene.
+    pub fn new(scene: &Scene<'a>) -> Self {
+        Self {
+            words: scene.words,
+            clock: scene.clock(),
+        }
     }
     /// A message with its arguments.
-    pub fn text(&self, id: &str, args: &[(&str, &str)]) -> String {
-        BUNDLE.with(|bundle| {
-            let mut fluent = FluentArgs::new();
-            for (name, value) in args {
-                fluent.set(*name, *value);
-            }
-            let Some(pattern) = bundle.get_message(id).and_then(|m| m.value()) else {
-                return format!("«{id}»");
-            };
-            bundle
-                .format_pattern(pattern, Some(&fluent), &mut vec![])
-                .into_owned()
-        })
-    }
-    /// A message with its arguments and a counted number.
-    pub fn counted(&self, id: &str, args: &[(&str, &str)], (name, count): (&str, f64)) -> String {
-        BUNDLE.with(|bundle| {
-            let mut fluent = FluentArgs::new();
-            for (name, value) in args {
-                fluent.set(*name, *value);
-            }
-            fluent.set(name, count);
-            let Some(pattern) = bundle.get_message(id).and_then(|m| m.value()) else {
-                return format!("«{id}»");
-            };
-            bundle
-                .format_pattern(pattern, Some(&fluent), &mut vec![])
-                .into_owned()
-        })
+    pub fn text(&self, id: &str, arguments: &[(&str, &str)]) -> String {
+        self.words.text_with(id, arguments)
     }
     /// A body's name.
     pub fn body(&self, body: Body) -> String {
-        self.text(&format!("body-{}", body.name()), &[])
+        self.words.body(body)
     }
     /// A local time, hours and minutes.
     pub fn time(&self, moment: Moment) -> String {
-        let utc = self.scene.scales.civil(moment.plus_seconds(30.0)).0;
-        civil::local(utc, self.scene.zone)
-            .format("%-H:%M")
-            .to_string()
+        self.words.time(self.clock, moment)
     }
     /// A whole number of degrees.
     pub fn degrees(&self, degrees: i32) -> String {
-        format!("{degrees}°").replace('-', "−")
+        self.words
+            .degrees(Angle::from_degrees(f64::from(degrees)), 0)
     }
     /// An angle in degrees to a tenth.
     pub fn tenths(&self, angle: Angle) -> String {
-        format!("{:.1}°", angle.degrees()).replace('-', "−")
+        self.words.degrees(angle, 1)
     }
     /// A magnitude to a tenth.
     pub fn magnitude(&self, magnitude: f64) -> String {
-        format!("{magnitude:.1}").replace('-', "−")
+        decimal(magnitude, 1)
     }
     /// A share in whole percent.
     pub fn percent(&self, share: f64) -> String {
-        format!("{:.0} %", share * 100.0)
+        self.words.percent(share)
     }
-    /// A number of fists (10° at arm's length), to a half.
+    /// A height in fists.
     pub fn fists(&self, angle: Angle) -> String {
-        let halves = (angle.degrees() / 5.0).round() as i64;
-        match (halves / 2, halves % 2) {
-            (0, 1) => "½".to_owned(),
-            (whole, 1) => format!("{whole}½"),
-            (whole, _) => whole.to_string(),
-        }
+        self.words.fists(angle)
     }
-    /// Arcseconds.
+    /// A small angle in arcseconds.
     pub fn arcsec(&self, angle: Angle) -> String {
-        format!("{:.1}″", angle.arcsec())
+        self.words.disc(angle)
     }
-    /// Arcseconds without a fraction.
-    pub fn whole_arcsec(&self, angle: Angle) -> String {
-        format!("{:.0}″", angle.arcsec())
-    }
-    /// Arcminutes without a fraction.
-    pub fn arcmin(&self, angle: Angle) -> String {
-        format!("{:.0}′", angle.arcsec() / 60.0)
-    }
-    /// A magnification.
-    pub fn power(&self, power: f64) -> String {
-        format!("{power:.0}×")
-    }
-    /// Minutes with their sign.
+    /// A whole number of minutes with its sign.
     pub fn signed_minutes(&self, minutes: f64) -> String {
-        let sign = if minutes > 0.5 { "+" } else { "" };
-        format!("{sign}{minutes:.0}").replace('-', "−")
+        let id = if minutes > 0.5 {
+            "plot-after"
+        } else {
+            "plot-before"
+        };
+        self.text(id, &[("minutes", &decimal(minutes, 0))])
     }
     /// The name of one of the eight compass points, clockwise from north.
     pub fn compass(&self, point: usize) -> String {
-        const IDS: [&str; 8] = [
-            "compass-north",
-            "compass-north-east",
-            "compass-east",
-            "compass-south-east",
-            "compass-south",
-            "compass-south-west",
-            "compass-west",
-            "compass-north-west",
-        ];
-        self.text(IDS[point % 8], &[])
+        self.words
+            .direction(Angle::from_degrees(45.0 * point as f64))
     }
-    /// Why a window ends (or starts), with the time.
+    /// What stands on the skyline there.
+    pub fn obstacle(&self, label: Option<&str>) -> String {
+        match label {
+            Some(label) => self.text("the-obstacle", &[("label", label)]),
+            None => self.words.text("the-skyline"),
+        }
+    }
+    /// Why a window ends (or starts), with the time; nothing where only the half-night does.
     pub fn edge(
         &self,
         cause: Cause,
@@ -146,15 +97,12 @@ impl<'a> Says<'a> {
             (Cause::Horizon, false) => "lane-rises",
             (Cause::Half | Cause::Noon, _) => return None,
         };
-        let obstacle = obstacle.map_or_else(
-            || self.text("the-skyline", &[]),
-            |label| self.text("the-obstacle", &[("label", label)]),
-        );
+        let obstacle = self.obstacle(obstacle);
         Some(self.text(id, &[("time", time), ("obstacle", &obstacle)]))
     }
-    /// An aspect's name.
-    pub fn aspect(&self, body: Body, aspect: Aspect) -> String {
-        let id = match aspect {
+    /// An event and how many days it lies before (negative) or after today.
+    pub fn dated(&self, body: Body, aspect: Aspect, days: i64) -> String {
+        let aspect_id = match aspect {
             Aspect::Conjunction if body == Body::Moon => "aspect-new-moon",
             Aspect::Opposition if body == Body::Moon => "aspect-full-moon",
             Aspect::InferiorConjunction => "aspect-inferior-conjunction",
@@ -164,6 +112,18 @@ impl<'a> Says<'a> {
             Aspect::GreatestElongationEast => "aspect-greatest-elongation-east",
             Aspect::GreatestElongationWest => "aspect-greatest-elongation-west",
         };
-        self.text(id, &[])
+        let id = match days {
+            ..=-1 => "inset-days-ago",
+            0 => "inset-today",
+            1.. => "inset-days-on",
+        };
+        let aspect = self.words.text(aspect_id);
+        self.words.text_with(
+            id,
+            &[
+                ("aspect", FluentValue::from(aspect)),
+                ("days", FluentValue::from(days.abs())),
+            ],
+        )
     }
 }

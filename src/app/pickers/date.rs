@@ -3,11 +3,16 @@
 use crate::app::command::{Command, Commands};
 use crate::app::palette::Look;
 use crate::app::state::State;
-use crate::app::widgets::{error_line, name_it, sign_button, text};
+use crate::app::widgets::{error_line, figure, line, name_it, sign_button, text};
 use crate::words::Words;
-use chrono::{Datelike, Months, NaiveDate};
+use chrono::{Datelike, Days, Months, NaiveDate};
 use eframe::egui::containers::menu::{MenuButton, MenuConfig};
-use eframe::egui::{Button, Grid, Id, PopupCloseBehavior, Role, Stroke, TextEdit, Ui, vec2};
+use eframe::egui::{Button, Grid, Id, PopupCloseBehavior, Role, Stroke, Ui, Vec2, vec2};
+
+/// Width of the list, points: seven days and the gaps between them.
+const WIDTH: f32 = 7.0 * DAY.x + 6.0 * GAP;
+const DAY: Vec2 = vec2(36.0, 28.0);
+const GAP: f32 = 2.0;
 
 /// What is being chosen while the list is open; kept in the window library's memory.
 #[derive(Clone, Debug, Default)]
@@ -58,12 +63,12 @@ pub fn date_picker(
 }
 
 fn draft_ui(ui: &mut Ui, look: &Look, words: &Words, draft: &mut DateDraft) -> Option<NaiveDate> {
-    ui.set_min_width(270.0);
+    ui.set_width(WIDTH);
     let mut chosen = None;
     let name = words.text("date-field");
     let label = text(ui, look, look.sizes.label, look.colours.lesser, &name);
     let field = ui
-        .add(TextEdit::singleline(&mut draft.written).desired_width(f32::INFINITY))
+        .add(line(&mut draft.written).desired_width(f32::INFINITY))
         .labelled_by(label.id);
     if field.lost_focus() && ui.input(|input| input.key_pressed(eframe::egui::Key::Enter)) {
         match draft.written.trim().parse() {
@@ -76,12 +81,18 @@ fn draft_ui(ui: &mut Ui, look: &Look, words: &Words, draft: &mut DateDraft) -> O
         let back = ui.button("◂");
         name_it(&back, Role::Button, &words.text("previous-month"));
         if back.clicked() {
-            draft.month = draft.month - Months::new(1);
+            draft.month = draft
+                .month
+                .checked_sub_months(Months::new(1))
+                .unwrap_or(draft.month);
         }
         let on = ui.button("▸");
         name_it(&on, Role::Button, &words.text("next-month"));
         if on.clicked() {
-            draft.month = draft.month + Months::new(1);
+            draft.month = draft
+                .month
+                .checked_add_months(Months::new(1))
+                .unwrap_or(draft.month);
         }
         text(
             ui,
@@ -98,8 +109,15 @@ fn draft_ui(ui: &mut Ui, look: &Look, words: &Words, draft: &mut DateDraft) -> O
 fn month_ui(ui: &mut Ui, look: &Look, words: &Words, draft: &DateDraft) -> Option<NaiveDate> {
     let first = draft.month.with_day(1)?;
     let mut chosen = None;
-    let mut day = first - chrono::Days::new(u64::from(first.weekday().num_days_from_monday()));
-    Grid::new("month").spacing(vec2(2.0, 2.0)).show(ui, |ui| {
+    let before = u64::from(first.weekday().num_days_from_monday());
+    let mut day = first.checked_sub_days(Days::new(before))?;
+    Grid::new("month").spacing(vec2(GAP, GAP)).show(ui, |ui| {
+        let font = look.font(look.sizes.label);
+        for number in 1..=7 {
+            let weekday = words.text(&format!("weekday-{number}"));
+            ui.vertical_centered(|ui| figure(ui, font.clone(), look.colours.lesser, &weekday));
+        }
+        ui.end_row();
         for _week in 0..6 {
             for _weekday in 0..7 {
                 let is_shown = draft.shown == Some(day);
@@ -109,9 +127,7 @@ fn month_ui(ui: &mut Ui, look: &Look, words: &Words, draft: &DateDraft) -> Optio
                     look.colours.lesser
                 };
                 let figures = eframe::egui::RichText::new(day.day().to_string()).color(colour);
-                let mut button = Button::new(figures)
-                    .min_size(vec2(36.0, 28.0))
-                    .selected(is_shown);
+                let mut button = Button::new(figures).min_size(DAY).selected(is_shown);
                 if is_shown {
                     button = button.stroke(Stroke::new(1.5, look.colours.chosen));
                 }
@@ -120,7 +136,7 @@ fn month_ui(ui: &mut Ui, look: &Look, words: &Words, draft: &DateDraft) -> Optio
                 if response.clicked() {
                     chosen = Some(day);
                 }
-                day = day + chrono::Days::new(1);
+                day = day.checked_add_days(Days::new(1)).unwrap_or(day);
             }
             ui.end_row();
         }

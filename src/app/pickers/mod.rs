@@ -45,6 +45,7 @@ fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands:
     let shown = words.text_with::<&str>("site-and-spot", &[("site", site), ("spot", spot)]);
     let (button, _) = MenuButton::new(format!("{shown} ▾")).ui(ui, |ui| {
         ui.set_min_width(240.0);
+        ui.spacing_mut().button_padding.x = 8.0;
         ScrollArea::vertical().max_height(320.0).show(ui, |ui| {
             for (index, known) in state.sites().list().iter().enumerate() {
                 let is_chosen = index == state.site_index();

@@ -5,7 +5,7 @@ use crate::app::lookout::model::{Tick, Tracks};
 use crate::app::lookout::says::Says;
 use crate::app::palette::Look;
 use eframe::egui::text::{LayoutJob, TextWrapping};
-use eframe::egui::{Color32, FontId, Galley, Painter, Pos2, Rangef, Rect, pos2};
+use eframe::egui::{Color32, FontId, Galley, Painter, Pos2, Rangef, Rect, pos2, vec2};
 use std::sync::Arc;
 
 /// Where things go, in points of the screen.
@@ -237,6 +237,7 @@ impl Builder<'_> {
         let share = share.min(3.0 * self.look.sizes.label);
         let mut y = below.min;
         let mut placed = Vec::new();
+        let mut taken = Vec::new();
         for (k, lane) in self.shown() {
             let rect = Rect::from_min_max(
                 pos2(layout.band.left(), y + GAP),
@@ -247,7 +248,7 @@ impl Builder<'_> {
             let lane = LaneLayout {
                 rect,
                 name: (at, name),
-                notes: self.notes(layout, lane, rect),
+                notes: self.notes(layout, lane, rect, &mut taken),
             };
             placed.push((k, lane));
             y = rect.bottom();
@@ -257,7 +258,13 @@ impl Builder<'_> {
 
     /// Ends of windows: what ends one stands right of it, what starts one left of it; else why
     /// there is none. What finds no room is dropped.
-    fn notes(&self, layout: &Layout, lane: &Lane, rect: Rect) -> Vec<(Pos2, Arc<Galley>)> {
+    fn notes(
+        &self,
+        layout: &Layout,
+        lane: &Lane,
+        rect: Rect,
+        taken: &mut Vec<Rect>,
+    ) -> Vec<(Pos2, Arc<Galley>)> {
         const GAP: f32 = 7.0;
         let colours = &self.look.colours;
         if let Some(absence) = lane.absence {
@@ -288,13 +295,14 @@ impl Builder<'_> {
                 };
                 let at = pos2(at_x, rect.bottom() - text.size().y - 1.0);
                 let place = Rect::from_min_size(at, text.size());
-                let is_free = placed
-                    .iter()
-                    .all(|(other_at, other): &(Pos2, Arc<Galley>)| {
-                        let other = Rect::from_min_size(*other_at, other.size());
-                        !other.expand(4.0).intersects(place)
-                    });
-                is_free.then_some((at, text))
+                let is_free = taken.iter().all(|other: &Rect| {
+                    // Lines of neighbouring lanes may touch, words in one line may not.
+                    !other.expand2(vec2(4.0, -2.0)).intersects(place)
+                });
+                is_free.then(|| {
+                    taken.push(place);
+                    (at, text)
+                })
             });
             placed.extend(note);
         }

@@ -2,7 +2,7 @@
 //! with a lane for every bright body hanging below.
 
 mod layout;
-mod model;
+pub(super) mod model;
 mod paint;
 
 use super::horizon::sky;

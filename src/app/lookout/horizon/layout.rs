@@ -178,8 +178,12 @@ impl Builder<'_> {
                     self.says.text(
                         "horizon-fists",
                         &[
-                            ("fists", &fists.to_string()),
-                            ("count", if fists == 1 { "few" } else { "many" }),
+                            (
+                                "fists",
+                                &self
+                                    .says
+                                    .fists(Angle::from_degrees(10.0 * f64::from(fists))),
+                            ),
                             ("degrees", &self.says.degrees(10 * fists)),
                         ],
                     ),
@@ -272,13 +276,6 @@ impl Builder<'_> {
         self.anchors.push(anchor);
     }
 
-    fn obstacle(&self, label: Option<&str>) -> String {
-        match label {
-            Some(label) => self.says.text("the-obstacle", &[("label", label)]),
-            None => self.says.text("the-skyline", &[]),
-        }
-    }
-
     fn target(&mut self, model: &Model, at: Pos2) {
         let (says, look) = (self.says, self.look);
         let mark = &model.target;
@@ -304,15 +301,7 @@ impl Builder<'_> {
             &[
                 ("altitude", &says.tenths(mark.sample.altitude)),
                 ("fists", &says.fists(clearance)),
-                (
-                    "count",
-                    if clearance.degrees() < 12.5 {
-                        "few"
-                    } else {
-                        "many"
-                    },
-                ),
-                ("obstacle", &self.obstacle(model.obstacle.as_deref())),
+                ("obstacle", &says.obstacle(model.obstacle.as_deref())),
             ],
         );
         let colour = look.colours.sky_text;

@@ -2,7 +2,7 @@
 
 mod camera;
 mod layout;
-mod model;
+pub(super) mod model;
 mod paint;
 mod path;
 pub mod sky;
@@ -97,12 +97,20 @@ impl Horizon {
         response
     }
 
+    /// How far the view is turned, widened and tilted.
+    #[cfg(test)]
+    pub(super) fn turn(&self) -> Turn {
+        self.turn
+    }
+
     /// Turning, tilting and widening by hand; what goes beyond a limit is taken back next time
     /// the view is framed.
     fn steer(&mut self, ui: &Ui, response: &Response, camera: &Camera) {
         /// Degrees and share of one press of a key.
         const KEY_DEG: f64 = 5.0;
         const KEY_SHARE: f64 = 1.15;
+        /// Of the wheel, for a view e times as wide.
+        const POINTS_PER_E: f64 = 400.0;
         if response.double_clicked() {
             self.turn = Turn::default();
         }
@@ -111,15 +119,18 @@ impl Horizon {
             self.turn.turn_deg -= f64::from(moved.x) / camera.points_per_deg;
             self.turn.tilt_deg += f64::from(moved.y) / camera.points_per_deg;
         }
-        ui.ctx()
-            .set_cursor_icon(match (response.dragged(), response.hovered()) {
-                (true, _) => CursorIcon::Grabbing,
-                (_, true) => CursorIcon::Grab,
-                _ => return self.steer_by_keys(ui, response, KEY_DEG, KEY_SHARE),
+        if response.dragged() {
+            ui.ctx().set_cursor_icon(CursorIcon::Grabbing);
+        } else if response.hovered() {
+            ui.ctx().set_cursor_icon(CursorIcon::Grab);
+        }
+        if response.hovered() {
+            // The wheel is taken out of the input, so that the page around does not move as well.
+            let (wheel, pinch) = ui.input_mut(|input| {
+                let wheel = std::mem::take(&mut input.smooth_scroll_delta.y);
+                (f64::from(wheel), f64::from(input.zoom_delta()))
             });
-        let wheel = ui.input(|input| input.smooth_scroll_delta().y);
-        if response.hovered() && wheel != 0.0 {
-            self.turn.widening *= f64::from(-wheel / 400.0).exp();
+            self.turn.widening *= (-wheel / POINTS_PER_E).exp() / pinch;
         }
         self.steer_by_keys(ui, response, KEY_DEG, KEY_SHARE);
     }

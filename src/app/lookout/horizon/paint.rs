@@ -60,8 +60,9 @@ fn stars(painter: &Painter, look: &Look, model: &Model, layout: &Layout) {
     let ruler = layout.camera.rect.left() + 24.0 + ruler.fold(0.0, f32::max);
     for star in &model.stars {
         let at = layout.camera.pos(star.azimuth, star.altitude);
-        // None between the ruler's letters.
-        if layout.camera.rect.contains(at) && at.x > ruler {
+        // None among letters.
+        let is_free = at.x > ruler && layout.labels.iter().all(|label| !label.rect.contains(at));
+        if layout.camera.rect.contains(at) && is_free {
             let spare = (model.faintest - star.magnitude) as f32;
             let radius = 0.7 + 0.28 * (4.6 - star.magnitude as f32).clamp(0.0, 5.0);
             let share = (0.25 + 0.5 * spare).clamp(0.0, 1.0);

@@ -93,14 +93,19 @@ pub fn image(palette: &Palette, look: &Look, camera: &Camera, sun: (Angle, Angle
     let mut pixels = Vec::with_capacity(columns * rows);
     for row in 0..rows {
         let altitude_deg = lerp(camera.top_deg()..=camera.bottom_deg, share(row, rows)) as f32;
-        // Along a row the colour runs straight from the one side's to the other's.
-        let towards = gradient.colour(altitude_deg, 1.0);
-        let away = gradient.colour(altitude_deg, 0.0);
-        pixels.extend(
-            sunwards
-                .iter()
-                .map(|sunward| look.texel(mix(away, towards, *sunward).into())),
-        );
+        // Along a row the colour runs straight from the one side's to the other's; blended as
+        // the screen counts, so that only the ends need converting.
+        let towards: Color32 = gradient.colour(altitude_deg, 1.0).into();
+        let away: Color32 = gradient.colour(altitude_deg, 0.0).into();
+        let (towards, away) = (look.texel(towards), look.texel(away));
+        let blend = |share: f32, channel: usize| {
+            let (from, to) = (f32::from(away[channel]), f32::from(towards[channel]));
+            // Half a step, so that the cast rounds.
+            (from + (to - from) * share + 0.5) as u8
+        };
+        pixels.extend(sunwards.iter().map(|share| {
+            Color32::from_rgb(blend(*share, 0), blend(*share, 1), blend(*share, 2))
+        }));
     }
     ColorImage::new(SIZE, pixels)
 }

@@ -1,7 +1,7 @@
 //! The inset: a plan of the inner solar system to scale, with the line of sight and the
 //! elongation.
 
-mod model;
+pub(super) mod model;
 mod paint;
 
 use super::Kept;

@@ -31,7 +31,11 @@ pub fn paint(
     painter.galley(inner.min, title.clone(), colours.lesser);
     let mut bottom = inner.bottom();
     for event in [next, last].into_iter().flatten() {
-        let text = galley(words(says, model, &event), label(), colours.lesser);
+        let text = galley(
+            says.dated(model.body, event.event.aspect, event.days),
+            label(),
+            colours.lesser,
+        );
         bottom -= text.size().y;
         painter.galley(pos2(inner.left(), bottom), text, colours.lesser);
     }
@@ -48,17 +52,6 @@ pub fn paint(
         room,
         title_rect,
     );
-}
-
-fn words(says: Says<'_>, model: &Model, dated: &Dated) -> String {
-    let aspect = says.aspect(model.body, dated.event.aspect);
-    let id = match (dated.days, dated.days <= 0) {
-        (0, _) => "inset-today",
-        (_, true) => "inset-days-ago",
-        (_, false) => "inset-days-on",
-    };
-    let days = dated.days.unsigned_abs();
-    says.counted(id, &[("aspect", &aspect)], ("days", days as f64))
 }
 
 fn plan(painter: &Painter, scene: &Scene<'_>, model: &Model, room: Rect, title: Rect) {

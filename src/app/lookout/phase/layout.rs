@@ -5,6 +5,7 @@ use crate::app::command::OpticsView;
 use crate::app::lookout::says::Says;
 use crate::app::scene::Scene;
 use crate::sky::Body;
+use crate::words::decimal;
 use eframe::egui::text::{LayoutJob, TextWrapping};
 use eframe::egui::{Align2, Color32, Galley, Painter, Pos2, Rect, pos2};
 use std::sync::Arc;
@@ -46,8 +47,14 @@ impl Layout {
         };
         let lesser = look.colours.lesser;
         let size = match model.body {
-            Body::Moon | Body::Sun => says.arcmin(model.ring),
-            _ => says.whole_arcsec(model.ring),
+            Body::Moon | Body::Sun => says.text(
+                "phase-arcminutes",
+                &[("size", &decimal(model.ring.arcsec() / 60.0, 0))],
+            ),
+            _ => says.text(
+                "phase-arcseconds",
+                &[("size", &decimal(model.ring.arcsec(), 0))],
+            ),
         };
         let scale = says.text("phase-scale", &[("size", &size)]);
         let scale = line(scale, lesser, 0.4 * inner.width());
@@ -118,7 +125,7 @@ fn captions_of(says: Says<'_>, model: &Model, seen: &Seen) -> (String, String) {
         }
         Through::Telescope(None) => (says.text("phase-telescope", &[]), view),
         Through::Telescope(Some((label, power))) => {
-            let power = says.power(*power);
+            let power = decimal(*power, 0);
             let note = says.text("phase-power", &[("power", &power), ("view", &view)]);
             (label.clone(), note)
         }

@@ -2,7 +2,7 @@
 //! optics show it.
 
 mod layout;
-mod model;
+pub(super) mod model;
 mod paint;
 
 use super::says::Says;

@@ -3,9 +3,9 @@
 use super::layout::Layout;
 use super::model::{Model, Rings, Seen};
 use crate::app::lookout::disc;
-use crate::app::palette::Look;
+use crate::app::palette::{Colours, Look};
 use crate::app::scene::Scene;
-use eframe::egui::{Color32, Mesh, Painter, Pos2, Shape, Stroke, StrokeKind, Vec2};
+use eframe::egui::{Mesh, Painter, Pos2, Shape, Stroke, StrokeKind, Vec2};
 
 /// The card with the three discs; `is_lit` where the telescope's is under the pointer.
 pub fn paint(painter: &Painter, scene: &Scene<'_>, model: &Model, layout: &Layout, is_lit: bool) {
@@ -37,14 +37,8 @@ fn body(painter: &Painter, look: &Look, model: &Model, seen: &Seen, centre: Pos2
     let tones = (colours.disc_lit, colours.disc_shade);
     let half = |is_near| {
         if let Some(rings) = model.rings {
-            painter.add(ring_half(
-                rings,
-                centre,
-                radius,
-                seen.towards_pole,
-                is_near,
-                colours.disc_lit,
-            ));
+            let pole = seen.towards_pole;
+            painter.extend(ring_half(rings, centre, radius, pole, is_near, colours));
         }
     };
     half(false);
@@ -59,38 +53,44 @@ fn body(painter: &Painter, look: &Look, model: &Model, seen: &Seen, centre: Pos2
 }
 
 /// Half of Saturn's rings: the near half crosses the disc on the side away from the pole that is
-/// turned towards us.
+/// turned towards us. Its edges are drawn in the shade, so that it shows before the disc too.
 fn ring_half(
     rings: Rings,
     centre: Pos2,
     radius: f32,
     towards_pole: Vec2,
     is_near: bool,
-    colour: Color32,
-) -> Shape {
-    const STEPS: u32 = 48;
+    colours: &Colours,
+) -> [Shape; 3] {
+    const STEPS: u32 = 64;
     let along = towards_pole.rot90();
     let squeeze = rings.opening_sine.abs() as f32;
-    let side = if is_near == (rings.opening_sine > 0.0) {
-        -1.0
-    } else {
-        1.0
+    let is_below_pole = is_near == (rings.opening_sine > 0.0);
+    let side = if is_below_pole { -1.0 } else { 1.0 };
+    let edge = |size: f64| -> Vec<Pos2> {
+        (0..=STEPS)
+            .map(|k| {
+                let (sin, cos) = (std::f32::consts::PI * k as f32 / STEPS as f32).sin_cos();
+                let towards = along * cos + towards_pole * (side * squeeze * sin);
+                centre + towards * (radius * size as f32)
+            })
+            .collect()
     };
+    let (outer, inner) = (edge(rings.outer), edge(rings.inner));
     let mut mesh = Mesh::default();
-    for k in 0..=STEPS {
-        let (sin, cos) = (std::f32::consts::PI * k as f32 / STEPS as f32).sin_cos();
-        let towards = along * cos + towards_pole * (side * squeeze * sin);
-        for edge in [rings.outer, rings.inner] {
-            mesh.colored_vertex(
-                centre + towards * (radius * edge as f32),
-                colour.gamma_multiply(0.8),
-            );
+    for (k, (outer, inner)) in (0..).zip(outer.iter().zip(&inner)) {
+        for point in [outer, inner] {
+            mesh.colored_vertex(*point, colours.disc_lit.gamma_multiply(0.85));
         }
         if k > 0 {
-            let k = 2 * k;
-            mesh.add_triangle(k - 2, k - 1, k);
-            mesh.add_triangle(k - 1, k + 1, k);
+            mesh.add_triangle(2 * k - 2, 2 * k - 1, 2 * k);
+            mesh.add_triangle(2 * k - 1, 2 * k + 1, 2 * k);
         }
     }
-    Shape::mesh(mesh)
+    let line = Stroke::new(1.0, colours.disc_shade);
+    [
+        Shape::mesh(mesh),
+        Shape::line(outer, line),
+        Shape::line(inner, line),
+    ]
 }

@@ -1,6 +1,6 @@
 //! The plot: the bright bodies' clearance against minutes from sunset or sunrise.
 
-mod model;
+pub(super) mod model;
 
 use super::model::Tracks;
 use super::says::Says;
@@ -47,7 +47,7 @@ impl ClearancePlot {
         let now_min = (tracks.at_s(scene.moment) - model.origin_s) / 60.0;
         let plot = frame(scene, says, &model).show(&mut child, |plot| {
             plot.set_plot_bounds_x(model.from_min..=model.to_min);
-            plot.set_plot_bounds_y(lowest_deg(&model)..=1.12 * model.highest_deg);
+            plot.set_plot_bounds_y(lowest_deg(&model)..=1.3 * model.highest_deg);
             curves(plot, scene, says, &model);
             if (model.from_min..=model.to_min).contains(&now_min) {
                 let cursor = Stroke::new(2.0, look.colours.text);
