@@ -9,15 +9,22 @@
 mod body;
 pub mod ephemeris;
 mod epoch;
-mod frame;
+pub mod frame;
 pub mod magnitude;
 mod observer;
+mod orbit;
 mod phase;
 pub mod refraction;
 pub mod stars;
+mod vantage;
+mod view;
 
 pub use body::{Body, UnknownBody};
 pub use ephemeris::{Ephemeris, OutsideEphemeris, Span};
-pub use epoch::{Apparent, Epoch, Horizontal, View};
+pub use epoch::{Apparent, Epoch};
 pub use observer::{Air, Observer};
 pub use phase::Appearance;
+pub use view::{Horizontal, Refracted, View};
+
+/// One astronomical unit, km (IAU 2012 Resolution B2).
+const AU_KM: f64 = 149_597_870.7;

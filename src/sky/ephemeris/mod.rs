@@ -56,9 +56,21 @@ impl Span {
     pub fn heliocentric(&self, _body: Body, _tt: Tt) -> Vector {
         todo!()
     }
+    /// Heliocentric place (au) and velocity (au/day) of a planet, as [`Self::heliocentric`].
+    pub fn heliocentric_with_velocity(&self, body: Body, tt: Tt) -> (Vector, Vector) {
+        let h = 0.01;
+        let rate = (self.heliocentric(body, tt.plus_days(h))
+            - self.heliocentric(body, tt.plus_days(-h)))
+            / (2.0 * h);
+        (self.heliocentric(body, tt), rate)
+    }
     /// Heliocentric place (au) and velocity (au/day) of the Earth, on the axes of the ICRS.
     pub fn earth(&self, _tt: Tt) -> (Vector, Vector) {
         todo!()
+    }
+    /// The three components of [`super::frame::nutation`].
+    pub fn nutation(&self, tt: Tt) -> Vector {
+        super::frame::nutation(tt)
     }
     /// Geocentric geometric place of the Moon, au, on the axes of the ICRS.
     pub fn moon(&self, _tt: Tt) -> Vector {
