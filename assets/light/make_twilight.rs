@@ -1,6 +1,6 @@
 //! Makes the table of the sky's brightness and colour that the program ships.
 //!
-//! `cargo run --release --no-default-features --example make_twilight` writes
+//! `cargo run --release --no-default-features --features tables --bin make_twilight` writes
 //! `assets/light/twilight.bin`, the same bytes every time on one machine, in about 15 s.
 //! [`dimmet::light::twilight`] says what it holds.
 

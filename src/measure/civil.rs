@@ -53,7 +53,7 @@ impl LocalTime {
             },
             (Some(once), _) => Self::Once(once.to_utc()),
             _ => Self::Never {
-                turned_at: first_reaching(zone, local),
+                turned_at: first_reaching(local, zone),
             },
         }
     }
