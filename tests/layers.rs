@@ -4,8 +4,9 @@
 
 use std::path::{Path, PathBuf};
 
-const LAYERS: [&str; 9] =
-    ["measure", "sky", "place", "light", "plan", "words", "publish", "cli", "app"];
+const LAYERS: [&str; 9] = [
+    "measure", "sky", "place", "light", "plan", "words", "publish", "cli", "app",
+];
 
 fn rust_files(folder: &Path, found: &mut Vec<PathBuf>) {
     for entry in std::fs::read_dir(folder).expect("a source folder") {
@@ -26,11 +27,22 @@ fn sources() -> Vec<(usize, String, String)> {
     files
         .into_iter()
         .filter_map(|path| {
-            let name = path.strip_prefix(&root).expect("below src").to_string_lossy().into_owned();
-            let first = name.split(['/', '\\', '.']).next().expect("a first part").to_owned();
+            let name = path
+                .strip_prefix(&root)
+                .expect("below src")
+                .to_string_lossy()
+                .into_owned();
+            let first = name
+                .split(['/', '\\', '.'])
+                .next()
+                .expect("a first part")
+                .to_owned();
             let layer = LAYERS.iter().position(|layer| *layer == first)?;
             let text = std::fs::read_to_string(&path).expect("a readable source file");
-            let code: Vec<&str> = text.lines().filter(|l| !l.trim_start().starts_with("//")).collect();
+            let code: Vec<&str> = text
+                .lines()
+                .filter(|l| !l.trim_start().starts_with("//"))
+                .collect();
             Some((layer, name, code.join("\n")))
         })
         .collect()
@@ -46,9 +58,15 @@ fn a_module_uses_only_the_layers_above_it() {
                 assert!(target <= layer, "{name} uses the lower layer {target_name}");
             }
         }
-        assert!(!code.contains("use crate::{"), "{name}: one `use crate::LAYER` a line, so that this check sees it");
+        assert!(
+            !code.contains("use crate::{"),
+            "{name}: one `use crate::LAYER` a line, so that this check sees it"
+        );
     }
-    assert!(uses > 50, "the check found only {uses} uses: does it still see the sources?");
+    assert!(
+        uses > 50,
+        "the check found only {uses} uses: does it still see the sources?"
+    );
 }
 
 #[test]
@@ -66,7 +84,9 @@ fn only_the_window_names_the_window_library() {
 fn nothing_below_main_reads_the_clock_the_zone_or_the_environment() {
     for (_, name, code) in sources() {
         for word in ["Utc::now", "Local", "SystemTime", "std::env", "env::var"] {
-            let is_found = code.split(|c: char| !(c.is_alphanumeric() || c == ':' || c == '_')).any(|token| token == word || token.ends_with(&format!("::{word}")));
+            let is_found = code
+                .split(|c: char| !(c.is_alphanumeric() || c == ':' || c == '_'))
+                .any(|token| token == word || token.ends_with(&format!("::{word}")));
             assert!(!is_found, "{name} uses {word}");
         }
     }

@@ -113,7 +113,15 @@ pub fn start_of_date(date: NaiveDate, zone: Tz) -> Option<DateTime<Utc>> {
 pub fn end_of_date(date: NaiveDate, zone: Tz) -> Option<DateTime<Utc>> {
     start_of_date(date, zone)?;
     let next = date.checked_add_days(Days::new(1))?;
-    Some(LocalTime::find(next.and_time(NaiveTime::MIN), zone).last())
+    let midnight = LocalTime::find(next.and_time(NaiveTime::MIN), zone);
+    // A clock turned back to midnight shows it twice, but the date ends only once; one turned
+    // back over midnight leads into the date again.
+    let is_last_piece = |end: DateTime<Utc>| local_date(end - TimeDelta::seconds(1), zone) == date;
+    Some(if is_last_piece(midnight.last()) {
+        midnight.last()
+    } else {
+        midnight.first()
+    })
 }
 
 /// The middle between the start and the end of a local date, noon on most days. `None` where

@@ -4,7 +4,7 @@
 //! | --- | --- | --- |
 //! | 1600 to 1962 | the cubics of Morrison, Stephenson, Hohenkerk and Zawilski 2021 (Proc. R. Soc. A 477, 20200776, Table S15.2020) | 20 s in 1600, 1 s in 1800, 0.5 s after 1900 |
 //! | 1962 to autumn 2027 | values every 30 days from IERS EOP 20 C04, the last year a Bulletin A prediction | 0.006 s (interpolation; 0.03 s at the end) |
-//! | to 2400 | one cubic that leaves the table with its last year's slope and meets the long-term parabola of Stephenson, Morrison and Hohenkerk 2016 (Proc. R. Soc. A 472, 20160404) in 2500, slope included | unknown: 2 s in 2035, minutes by 2300 |
+//! | to 2400 | one cubic that leaves the table with the mean slope of its last five years and meets the long-term parabola of Stephenson, Morrison and Hohenkerk 2016 (Proc. R. Soc. A 472, 20160404) in 2500, slope included | unknown: 2 s in 2035, minutes by 2300 |
 //!
 //! The cubics of 2021 end 0.38 s below the first IERS value; that difference is let in linearly
 //! from 1950 on, so that there is no step. The Earth's rotation cannot be predicted: the last
@@ -106,12 +106,13 @@ fn observed_s(step: f64) -> f64 {
 
 /// From the table's end to the long-term parabola.
 fn future_s(year: f64) -> f64 {
-    const STEPS_A_YEAR: usize = 12;
+    // About five years: longer than the seasons' swing, so that it does not set the slope.
+    const STEPS_BACK: usize = 61;
     let start = observed_end_year();
     let width = PARABOLA_YEAR - start;
     let last = OBSERVED_S[OBSERVED_S.len() - 1];
-    let year_earlier = OBSERVED_S[OBSERVED_S.len() - 1 - STEPS_A_YEAR];
-    let slope = (last - year_earlier) * 365.25 / (STEPS_A_YEAR as f64 * OBSERVED_STEP_DAYS);
+    let earlier = OBSERVED_S[OBSERVED_S.len() - 1 - STEPS_BACK];
+    let slope = (last - earlier) * 365.25 / (STEPS_BACK as f64 * OBSERVED_STEP_DAYS);
     // Stephenson, Morrison and Hohenkerk 2016: -320 + 32.5 ((year - 1825) / 100)^2.
     let centuries = (PARABOLA_YEAR - 1825.0) / 100.0;
     let parabola = -320.0 + 32.5 * centuries * centuries;

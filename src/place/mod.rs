@@ -1,12 +1,28 @@
 //! Sites: the site file, spots, the skyline, the time zone.
+//!
+//! [`Site::read`] and [`Site::save`] are the way in and out; [`Site::observer`],
+//! [`Site::skyline`] and [`Site::zone`] are what a night is planned with. Azimuths are from true
+//! north, and a site's plan is flat: east and north of its mark in metres.
 
+mod air;
+mod check;
 mod demo;
+mod file;
+mod kit;
+mod limits;
+mod locate;
+mod measured;
 mod obstacle;
+mod silhouette;
 mod site;
 mod skyline;
 pub mod zone;
 
-pub use demo::demo_sites;
-pub use obstacle::Obstacle;
+pub use air::{Extinction, Haze, SiteAir, SiteSky, standard_pressure_hpa};
+pub use demo::{demo_site, demo_sites, slug};
+pub use file::LARGEST_FILE_BYTES;
+pub use kit::{Eyepiece, Instrument, Orientation};
+pub use measured::{SkylinePoint, read_skyline_table, skyline_from_table};
+pub use obstacle::{Obstacle, PlanPoint};
 pub use site::{Site, SiteError, Spot};
-pub use skyline::Skyline;
+pub use skyline::{Feature, Skyline};

@@ -22,7 +22,9 @@ pub fn rows(text: &str) -> Vec<HashMap<String, String>> {
 }
 
 pub fn number(row: &HashMap<String, String>, column: &str) -> f64 {
-    row[column].parse().unwrap_or_else(|_| panic!("{column} is a number in {row:?}"))
+    row[column]
+        .parse()
+        .unwrap_or_else(|_| panic!("{column} is a number in {row:?}"))
 }
 
 pub fn date(row: &HashMap<String, String>) -> NaiveDate {
@@ -37,7 +39,9 @@ pub fn sites() -> HashMap<String, ReferenceSite> {
     let site = |row: &HashMap<String, String>| {
         let hours = number(row, "utc_offset_min") / 60.0;
         // The IANA names of fixed offsets count westward.
-        let zone = format!("Etc/GMT{:+}", -hours).parse().expect("a fixed zone");
+        let zone = format!("Etc/GMT{:+}", -hours)
+            .parse()
+            .expect("a fixed zone");
         let observer = Observer {
             latitude: Angle::from_degrees(number(row, "lat_deg")),
             longitude: Angle::from_degrees(number(row, "lon_east_deg")),
@@ -49,5 +53,8 @@ pub fn sites() -> HashMap<String, ReferenceSite> {
         };
         (row["site"].clone(), ReferenceSite { observer, zone })
     };
-    rows(include_str!("../data/sites.csv")).iter().map(site).collect()
+    rows(include_str!("../data/sites.csv"))
+        .iter()
+        .map(site)
+        .collect()
 }

@@ -58,8 +58,12 @@ fn events(
             }
         }
         for body in &night.bodies {
-            body.rise.iter().for_each(|moment| add(body.body, "rise", *moment));
-            body.set.iter().for_each(|moment| add(body.body, "set", *moment));
+            body.rise
+                .iter()
+                .for_each(|moment| add(body.body, "rise", *moment));
+            body.set
+                .iter()
+                .for_each(|moment| add(body.body, "set", *moment));
         }
     }
     events
@@ -72,31 +76,50 @@ fn risings_settings_and_twilights_match_de440() {
     let mut by_day: BTreeMap<(String, NaiveDate), Vec<_>> = BTreeMap::new();
     for row in rows(include_str!("../data/rise_set.csv")) {
         if row["event"] != "transit" {
-            by_day.entry((row["site"].clone(), date(&row))).or_default().push(row);
+            by_day
+                .entry((row["site"].clone(), date(&row)))
+                .or_default()
+                .push(row);
         }
     }
     let (mut compared, mut absent, mut worst) = (0, 0, [0.0_f64; 2]);
     let mut wrong = Vec::new();
     for ((name, date), rows) in by_day {
         let site = &sites[&name];
-        let scales = TimeScales::with_delta_t_s(number(&rows[0], "delta_t_s"));
+        // Rows of events that do not occur have none.
+        let dated = rows.iter().find(|row| !row["delta_t_s"].is_empty());
+        let scales = TimeScales::with_delta_t_s(dated.map_or(69.2, |row| number(row, "delta_t_s")));
         let found = events(&ephemeris, site, date, scales);
         let is_polar = site.observer.latitude.degrees().abs() > 60.0;
-        let tolerance = if is_polar { POLAR_TOLERANCE_S } else { TOLERANCE_S };
+        let tolerance = if is_polar {
+            POLAR_TOLERANCE_S
+        } else {
+            TOLERANCE_S
+        };
         for row in rows {
             // Near a turning point or the date's edge the event itself may come or go.
-            if !row["note"].is_empty() && !row["note"].starts_with("always") && row["note"] != "not_on_date" {
+            if !row["note"].is_empty()
+                && !row["note"].starts_with("always")
+                && row["note"] != "not_on_date"
+            {
                 continue;
             }
             if row["note"].contains("grazing") {
                 continue;
             }
             let body: Body = row["body"].parse().expect("a known body");
-            let same = || found.iter().filter(|(b, name, _)| *b == body && *name == row["event"]);
+            let same = || {
+                found
+                    .iter()
+                    .filter(|(b, name, _)| *b == body && *name == row["event"])
+            };
             if row["utc"].is_empty() {
                 absent += 1;
                 if let Some((_, _, when)) = same().next() {
-                    wrong.push(format!("{name} {date} {body} {}: found {when}, none expected", row["event"]));
+                    wrong.push(format!(
+                        "{name} {date} {body} {}: found {when}, none expected",
+                        row["event"]
+                    ));
                 }
                 continue;
             }
@@ -110,11 +133,25 @@ fn risings_settings_and_twilights_match_de440() {
                     let worst = &mut worst[usize::from(is_polar)];
                     *worst = worst.max(off_s);
                 }
-                _ => wrong.push(format!("{name} {date} {body} {} {expected}: off by {off_s:?} s", row["event"])),
+                _ => wrong.push(format!(
+                    "{name} {date} {body} {} {expected}: off by {off_s:?} s",
+                    row["event"]
+                )),
             }
         }
     }
-    println!("{compared} events compared, {absent} absences; worst {:.2} s to 60 deg, {:.2} s beyond", worst[0], worst[1]);
-    assert!(wrong.is_empty(), "{} of {compared} wrong:\n{}", wrong.len(), wrong[..wrong.len().min(30)].join("\n"));
-    assert!(compared > 7500 && absent > 400, "only {compared} events and {absent} absences were compared");
+    println!(
+        "{compared} events compared, {absent} absences; worst {:.2} s to 60 deg, {:.2} s beyond",
+        worst[0], worst[1]
+    );
+    assert!(
+        wrong.is_empty(),
+        "{} of {compared} wrong:\n{}",
+        wrong.len(),
+        wrong[..wrong.len().min(30)].join("\n")
+    );
+    assert!(
+        compared > 7500 && absent > 400,
+        "only {compared} events and {absent} absences were compared"
+    );
 }

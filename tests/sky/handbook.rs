@@ -87,26 +87,15 @@ fn the_moon_matches_47a_and_48a() {
         4.0 * ARCSEC_DEG,
         "47.a latitude",
     );
-    assert_within(
-        moon.distance_au * 149_597_870.7,
-        368_409.7,
-        10.0,
-        "47.a distance, km",
-    );
+    let geometric_km = span.moon(tt).length() * 149_597_870.7;
+    assert_within(geometric_km, 368_409.7, 10.0, "47.a distance, km");
 
     let appearance = epoch.appearance(Body::Moon);
-    assert_within(
-        appearance.phase_angle.degrees(),
-        69.0756,
-        0.003,
-        "48.a phase angle",
-    );
-    assert_within(
-        appearance.illuminated_fraction,
-        0.6786,
-        0.0001,
-        "48.a fraction",
-    );
+    // From apparent places there, which aberration turns by 20 arcsec: 0.01 degree of phase.
+    let phase_deg = appearance.phase_angle.degrees();
+    assert_within(phase_deg, 69.0756, 0.01, "48.a phase angle");
+    let fraction = appearance.illuminated_fraction;
+    assert_within(fraction, 0.6786, 0.000_15, "48.a fraction");
     assert_within(
         appearance.bright_limb.degrees(),
         285.0,
@@ -115,7 +104,8 @@ fn the_moon_matches_47a_and_48a() {
     );
 }
 
-// Meeus, p. 265: printed to 0.01 s of time and 0.1 arcsec.
+// Printed to 0.01 s of time and 0.1 arcsec; the book leaves out diurnal aberration, up to 0.27
+// arcsec at that latitude.
 #[test]
 fn mars_from_palomar_matches_40a() {
     let delta_t_s = 64.5;
@@ -131,7 +121,7 @@ fn mars_from_palomar_matches_40a() {
     };
     let mars = epoch.seen_by(&palomar).topocentric(Body::Mars);
     let (ra_deg, dec_deg) = (hours(22.0, 38.0, 8.54), south(15.0, 46.0, 30.0));
-    assert_place(mars, ra_deg, dec_deg, 0.3, "40.a");
+    assert_place(mars, ra_deg, dec_deg, 0.4, "40.a");
 }
 
 // Venus from the U.S. Naval Observatory; the example turns a given geocentric place, so the

@@ -5,6 +5,7 @@ use dimmet::measure::{Angle, Moment, TimeScales, Tt, Vector};
 use dimmet::sky::refraction::refracted;
 use dimmet::sky::{Air, Body, Ephemeris, Horizontal, Observer, Span};
 use proptest::prelude::*;
+use std::sync::OnceLock;
 
 fn observer(latitude_deg: f64, longitude_deg: f64) -> Observer {
     Observer {
@@ -18,10 +19,12 @@ fn observer(latitude_deg: f64, longitude_deg: f64) -> Observer {
 /// 2026 October 17, 0h TT, and a day from there.
 const START: Tt = Tt::from_days_since_j2000(9785.5);
 
-fn day() -> Span {
-    Ephemeris::new()
-        .cover(START, START.plus_days(1.0), &Body::ALL)
-        .unwrap()
+fn day() -> &'static Span {
+    static DAY: OnceLock<Span> = OnceLock::new();
+    DAY.get_or_init(|| {
+        let end = START.plus_days(1.0);
+        Ephemeris::new().cover(START, end, &Body::ALL).unwrap()
+    })
 }
 
 fn moment(day: f64) -> Moment {
@@ -161,8 +164,7 @@ proptest! {
         azimuth_deg in 0.0..360.0_f64,
         day_part in 0.0..1.0_f64,
     ) {
-        let span = Ephemeris::new().cover(START, START.plus_days(1.0), &[]).unwrap();
-        let epoch = span.at(moment(day_part));
+        let epoch = day().at(moment(day_part));
         let observer = observer(latitude_deg, longitude_deg);
         let view = epoch.seen_by(&observer);
         let place = Horizontal {

@@ -1,0 +1,100 @@
+//! What no single number of a site file shows: rules between its fields.
+
+use super::locate::Token;
+use super::{Extinction, Site, SiteError};
+
+/// A broken rule, and the text of the file that shows it.
+pub(super) struct Flaw {
+    pub sentence: String,
+    pub token: Token,
+}
+
+const MOST_SPOTS: usize = 200;
+const MOST_OBSTACLES: usize = 2000;
+
+impl Site {
+    /// Whether the site, however it came about, can be written to a file and read again.
+    ///
+    /// # Errors
+    /// A number is out of range or a rule between fields is broken; one sentence.
+    pub fn check(&self) -> Result<(), SiteError> {
+        super::file::reread(self).map(|_| ())
+    }
+}
+
+/// The first rule that a site breaks.
+pub(super) fn flaw(site: &Site) -> Option<Flaw> {
+    air(site)
+        .or_else(|| counts(site))
+        .or_else(|| spot_names(site))
+        .or_else(|| shapes(site))
+        .or_else(|| spots_within(site))
+}
+
+fn air(site: &Site) -> Option<Flaw> {
+    let total_mag = site.air.extinction_mag?;
+    if site.air.haze.is_some() {
+        return Some(Flaw {
+            sentence: "air has both extinction_mag and haze: keep one".into(),
+            token: Token::word("haze"),
+        });
+    }
+    let least_mag = Extinction::of_clean_air(site.elevation_m).total_mag();
+    (total_mag < least_mag).then(|| Flaw {
+        sentence: format!(
+            "extinction_mag is {total_mag}, but clean air at {} m alone takes {:.4}: give that \
+             or more",
+            site.elevation_m,
+            // Rounded up, so that the figure given is accepted.
+            (least_mag * 1e4).ceil() / 1e4
+        ),
+        token: Token::word("extinction_mag"),
+    })
+}
+
+fn counts(site: &Site) -> Option<Flaw> {
+    let too_many = |what: &str, count: usize, most: usize| {
+        (count > most).then(|| Flaw {
+            sentence: format!("there are {count} {what}, but may be at most {most}"),
+            token: Token::word(what),
+        })
+    };
+    too_many("spots", site.spots.len(), MOST_SPOTS)
+        .or_else(|| too_many("obstacles", site.obstacles.len(), MOST_OBSTACLES))
+}
+
+fn spot_names(site: &Site) -> Option<Flaw> {
+    let spots = &site.spots;
+    let is_repeated = |k: &usize| spots[..*k].iter().any(|spot| spot.name == spots[*k].name);
+    (1..spots.len()).find(is_repeated).map(|k| Flaw {
+        sentence: format!("there are two spots named {:?}: rename one", spots[k].name),
+        token: Token::quoted(&spots[k].name, 1),
+    })
+}
+
+fn shapes(site: &Site) -> Option<Flaw> {
+    site.obstacles.iter().find_map(|obstacle| {
+        let flaw = obstacle.flaw()?;
+        Some(Flaw {
+            sentence: format!("the obstacle {:?} cannot be: {flaw}", obstacle.label()),
+            token: Token::quoted(obstacle.label(), 0),
+        })
+    })
+}
+
+fn spots_within(site: &Site) -> Option<Flaw> {
+    site.spots.iter().find_map(|spot| {
+        let around = site
+            .obstacles
+            .iter()
+            .find(|obstacle| obstacle.surrounds(spot))?;
+        Some(Flaw {
+            sentence: format!(
+                "the spot {:?} stands inside the obstacle {:?}: move one of them",
+                spot.name,
+                around.label()
+            ),
+            token: Token::quoted(&spot.name, 0),
+        })
+    })
+}
