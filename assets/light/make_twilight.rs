@@ -45,9 +45,10 @@ fn sky(haze_mag: f64, site_km: f64) -> Vec<u16> {
         let sun = sun_deg.to_radians();
         for (i, j) in (0..ALTITUDES).flat_map(|i| (0..AZIMUTHS).map(move |j| (i, j))) {
             let (altitude, azimuth) = (node_altitude(i), node_azimuth(j));
-            let [once, more] = field.radiance(sun, altitude, azimuth).map(|light| spectrum::xyz(&light));
-            let cos_angle =
-                altitude.sin() * sun.sin() + altitude.cos() * sun.cos() * azimuth.cos();
+            let [once, more] = field
+                .radiance(sun, altitude, azimuth)
+                .map(|light| spectrum::xyz(&light));
+            let cos_angle = altitude.sin() * sun.sin() + altitude.cos() * sun.cos() * azimuth.cos();
             let shape = shape.at(cos_angle.clamp(-1.0, 1.0));
             values.extend([0, 1, 2].map(|axis| stored(((once[axis] + more[axis]) / shape).ln())));
         }

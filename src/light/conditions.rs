@@ -1,7 +1,8 @@
 //! The air and the night sky of a site.
 
+use super::LightError;
 use super::moonlight::airmass;
-use super::{Extinction, LightError};
+use crate::place::{Extinction, Site};
 
 /// Luminance of 0 mag per square arcsecond, cd/m² (common practice).
 const ZERO_MAG_CD_M2: f64 = 1.08e5;
@@ -23,28 +24,62 @@ pub fn mag_arcsec2_from_luminance(luminance: f64) -> f64 {
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Conditions {
     extinction: Extinction,
+    elevation_m: f64,
     dark_mag_arcsec2: f64,
 }
 
 impl Conditions {
-    /// A site with this extinction, and at its zenith on a moonless night this many magnitudes
-    /// per square arcsecond.
+    /// The air over a site at an elevation, and the brightness of its zenith on a moonless
+    /// night, magnitudes per square arcsecond.
     ///
     /// # Errors
-    /// A surface brightness outside 15 to 22.2, or not finite.
-    pub fn new(extinction: Extinction, dark_mag_arcsec2: f64) -> Result<Self, LightError> {
-        let what = "dark sky in mag per square arcsecond";
-        LightError::check(what, dark_mag_arcsec2, 15.0, 22.2)?;
-        Ok(Self { extinction, dark_mag_arcsec2 })
+    /// A part of the extinction outside 0 to 3 mag, an elevation outside -450 to 9000 m, a
+    /// surface brightness outside 14 to 22.5, or a figure that is not finite.
+    pub fn new(
+        extinction: Extinction,
+        elevation_m: f64,
+        dark_mag_arcsec2: f64,
+    ) -> Result<Self, LightError> {
+        let Extinction {
+            rayleigh_mag,
+            ozone_mag,
+            aerosol_mag,
+        } = extinction;
+        for part in [rayleigh_mag, ozone_mag, aerosol_mag] {
+            LightError::check("extinction in magnitudes at the zenith", part, 0.0, 3.0)?;
+        }
+        LightError::check("elevation in metres", elevation_m, -450.0, 9000.0)?;
+        let what = "dark sky in magnitudes per square arcsecond";
+        LightError::check(what, dark_mag_arcsec2, 14.0, 22.5)?;
+        Ok(Self {
+            extinction,
+            elevation_m,
+            dark_mag_arcsec2,
+        })
     }
-    /// The extinction.
+    /// The conditions that a site file states.
+    ///
+    /// # Errors
+    /// As [`Conditions::new`]; a site that was read from a file has none.
+    pub fn of_site(site: &Site) -> Result<Self, LightError> {
+        Self::new(
+            site.extinction(),
+            site.elevation_m,
+            site.sky.dark_mag_arcsec2,
+        )
+    }
+    /// The extinction's parts at the zenith.
     pub fn extinction(&self) -> &Extinction {
         &self.extinction
+    }
+    /// Elevation of the site, metres.
+    pub fn elevation_m(&self) -> f64 {
+        self.elevation_m
     }
     /// The same site with its haze multiplied.
     #[must_use]
     pub fn with_haze_times(mut self, factor: f64) -> Self {
-        self.extinction = self.extinction.with_haze_times(factor);
+        self.extinction.aerosol_mag = (self.extinction.aerosol_mag * factor).clamp(0.0, 3.0);
         self
     }
     /// Luminance of the night sky without Sun and Moon at an altitude (radians), cd/m²: airglow

@@ -4,29 +4,15 @@ use std::fmt;
 
 /// A figure that is not finite or lies outside what the model covers.
 #[derive(Clone, Copy, Debug, PartialEq)]
-pub enum LightError {
-    /// Outside its range.
-    OutOfRange {
-        /// What it is, with its unit.
-        what: &'static str,
-        /// The value given.
-        value: f64,
-        /// Least allowed.
-        least: f64,
-        /// Most allowed.
-        most: f64,
-    },
-    /// A total extinction below what gas and ozone alone take at that elevation.
-    ImpossibleExtinction {
-        /// The total given, magnitudes at the zenith.
-        total_mag: f64,
-        /// Elevation, metres.
-        elevation_m: f64,
-        /// The least possible total there.
-        least_mag: f64,
-        /// Most allowed.
-        most_mag: f64,
-    },
+pub struct LightError {
+    /// What it is, with its unit.
+    pub what: &'static str,
+    /// The value given.
+    pub value: f64,
+    /// Least allowed.
+    pub least: f64,
+    /// Most allowed.
+    pub most: f64,
 }
 
 impl LightError {
@@ -40,24 +26,25 @@ impl LightError {
         if (least..=most).contains(&value) {
             Ok(value)
         } else {
-            Err(Self::OutOfRange { what, value, least, most })
+            Err(Self {
+                what,
+                value,
+                least,
+                most,
+            })
         }
     }
 }
 
 impl fmt::Display for LightError {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
-        match self {
-            Self::OutOfRange { what, value, least, most } => {
-                write!(f, "the {what} {value} is not within {least} to {most}")
-            }
-            Self::ImpossibleExtinction { total_mag, elevation_m, least_mag, most_mag } => write!(
-                f,
-                "the extinction {total_mag} mag is impossible at {elevation_m} m, where air and \
-                 ozone alone take {least_mag:.3}: give {:.3} to {most_mag}",
-                (least_mag * 1000.0).ceil() / 1000.0
-            ),
-        }
+        let Self {
+            what,
+            value,
+            least,
+            most,
+        } = self;
+        write!(f, "the {what} is {value}: give {least} to {most}")
     }
 }
 

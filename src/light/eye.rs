@@ -84,11 +84,18 @@ impl Gaze {
             None => (luminance, area_arcmin2, 0.0),
             Some(optics) => {
                 let through = optics.against(luminance);
-                (through.luminance, area_arcmin2 * through.area_factor, through.gain_mag)
+                (
+                    through.luminance,
+                    area_arcmin2 * through.area_factor,
+                    through.gain_mag,
+                )
             }
         };
-        let threshold =
-            if area > 0.0 { extended_lx(luminance, area) } else { point_lx(luminance) };
+        let threshold = if area > 0.0 {
+            extended_lx(luminance, area)
+        } else {
+            point_lx(luminance)
+        };
         magnitude_from_lux(threshold) - self.factor_mag + gain_mag
     }
 }

@@ -1,5 +1,6 @@
 //! The light of the whole sky over a site at one instant.
 
+use super::extinction::extinction_mag;
 use super::twilight::{Dome, Row, Slice};
 use super::{Conditions, Gaze, Margin, Moonlight, Target};
 
@@ -40,7 +41,10 @@ impl Luminance {
 impl SkyLight {
     /// The sky over a site under these conditions; some 0.2 ms of work.
     pub fn new(conditions: Conditions) -> Self {
-        Self { conditions, dome: Dome::new(conditions.extinction()) }
+        Self {
+            conditions,
+            dome: Dome::new(&conditions),
+        }
     }
     /// The conditions.
     pub fn conditions(&self) -> &Conditions {
@@ -49,7 +53,12 @@ impl SkyLight {
     /// The sky while the Sun stands there (airless altitude and azimuth of its centre, radians)
     /// and the Moon, if it counts.
     pub fn at(&self, sun_altitude: f64, sun_azimuth: f64, moon: Option<Moonlight>) -> Glow<'_> {
-        Glow { site: self, slice: self.dome.slice(sun_altitude), sun_azimuth, moon }
+        Glow {
+            site: self,
+            slice: self.dome.slice(sun_altitude),
+            sun_azimuth,
+            moon,
+        }
     }
 }
 
@@ -83,7 +92,7 @@ impl Glow<'_> {
         if !target.is_moonlit {
             luminance.moon = 0.0;
         }
-        let extinction_mag = self.site.conditions.extinction().towards(target.altitude);
+        let extinction_mag = extinction_mag(self.site.conditions.extinction(), target.altitude);
         Margin::new(target, extinction_mag, luminance, gaze)
     }
     /// The same for several eyes, the sky being looked at once.
@@ -123,10 +132,16 @@ impl GlowRow<'_> {
         let moon = self.moonlight(azimuth);
         let lamps = self.night * self.conditions.part_from_lamps();
         let airglow = self.night - lamps;
-        let others = [(moon, MOON_COLOUR), (airglow, AIRGLOW_COLOUR), (lamps, LAMP_COLOUR)];
-        others.iter().fold([x, y, z], |[x, y, z], (light, [rx, rz])| {
-            [x + light * rx, y + light, z + light * rz]
-        })
+        let others = [
+            (moon, MOON_COLOUR),
+            (airglow, AIRGLOW_COLOUR),
+            (lamps, LAMP_COLOUR),
+        ];
+        others
+            .iter()
+            .fold([x, y, z], |[x, y, z], (light, [rx, rz])| {
+                [x + light * rx, y + light, z + light * rz]
+            })
     }
     fn moonlight(&self, azimuth: f64) -> f64 {
         self.moon.map_or(0.0, |moon| {

@@ -20,7 +20,13 @@ pub struct Target {
 impl Target {
     /// A point, in moonlight where there is any.
     pub fn point(magnitude: f64, altitude: f64, azimuth: f64) -> Self {
-        Self { magnitude, area_arcmin2: 0.0, altitude, azimuth, is_moonlit: true }
+        Self {
+            magnitude,
+            area_arcmin2: 0.0,
+            altitude,
+            azimuth,
+            is_moonlit: true,
+        }
     }
     /// A disc lit in part: its apparent diameter in arcseconds, and the part of it that is lit.
     #[must_use]

@@ -1,6 +1,6 @@
 //! Whether an eye sees a body in that sky.
 //!
-//! A site's [`Conditions`] (its [`Extinction`] and how dark its nights are) make a [`SkyLight`],
+//! A site's [`Conditions`] (its extinction and how dark its nights are) make a [`SkyLight`],
 //! once per site. [`SkyLight::at`] fixes an instant by the places of Sun and Moon and gives a
 //! [`Glow`], once per instant. That answers for every body ([`Target`]) and eye ([`Gaze`], one
 //! of [`Eyes`]) with a [`Margin`] in magnitudes and its parts; and for a painter with the sky's
@@ -11,7 +11,7 @@
 //!
 //! | part | source |
 //! | --- | --- |
-//! | [`Extinction`] | Schaefer 1998 |
+//! | [`extinction_mag`] | Schaefer 1998 |
 //! | [`twilight`], day and dusk | computed: [`scattering`] |
 //! | [`Moonlight`] | Krisciunas and Schaefer 1991 |
 //! | [`threshold`] | Crumey 2014 |
@@ -37,7 +37,7 @@ pub mod twilight;
 
 pub use conditions::{Conditions, luminance_from_mag_arcsec2, mag_arcsec2_from_luminance};
 pub use error::LightError;
-pub use extinction::{Extinction, Haze};
+pub use extinction::extinction_mag;
 pub use eye::{Eyes, Gaze};
 pub use glow::{Glow, GlowRow, Luminance, SkyLight};
 pub use margin::{Cost, Margin, Target};

@@ -1,6 +1,6 @@
 //! The sky lit by the Moon.
 
-use super::extinction::Extinction;
+use crate::place::Extinction;
 
 /// The Moon as a lamp.
 #[derive(Clone, Copy, Debug, PartialEq)]

@@ -1,6 +1,7 @@
 //! What binoculars and telescopes do for an eye.
 
 use super::LightError;
+use crate::place::Instrument;
 
 /// An instrument, as far as light is concerned.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -10,10 +11,17 @@ pub struct Optics {
     transmission: f64,
 }
 
+/// Part of the light that glass and coatings pass (common practice).
+const USUAL_TRANSMISSION: f64 = 0.8;
+
 impl Default for Optics {
-    /// 10x50 binoculars with four fifths of the light passed: what most sessions have.
+    /// 10x50 binoculars: what most sessions have.
     fn default() -> Self {
-        Self { aperture_mm: 50.0, magnification: 10.0, transmission: 0.8 }
+        Self {
+            aperture_mm: 50.0,
+            magnification: 10.0,
+            transmission: USUAL_TRANSMISSION,
+        }
     }
 }
 
@@ -32,7 +40,7 @@ impl Optics {
     /// passes (0 to 1).
     ///
     /// # Errors
-    /// An aperture outside 10 to 2000 mm, a magnification outside 1 to 1000, a transmission
+    /// An aperture outside 5 to 10000 mm, a magnification outside 1 to 5000, a transmission
     /// outside 0.1 to 1, or a figure that is not finite.
     pub fn new(
         aperture_mm: f64,
@@ -40,10 +48,23 @@ impl Optics {
         transmission: f64,
     ) -> Result<Self, LightError> {
         Ok(Self {
-            aperture_mm: LightError::check("aperture in mm", aperture_mm, 10.0, 2000.0)?,
-            magnification: LightError::check("magnification", magnification, 1.0, 1000.0)?,
+            aperture_mm: LightError::check("aperture in mm", aperture_mm, 5.0, 10_000.0)?,
+            magnification: LightError::check("magnification", magnification, 1.0, 5000.0)?,
             transmission: LightError::check("transmission", transmission, 0.1, 1.0)?,
         })
+    }
+    /// An instrument of a site's kit with each of its eyepieces, in the order of
+    /// [`Instrument::views`].
+    ///
+    /// # Errors
+    /// As [`Optics::new`]: an eyepiece that makes less than 1 times of the instrument.
+    pub fn of(instrument: &Instrument) -> Result<Vec<Self>, LightError> {
+        let views = instrument.views().into_iter();
+        views
+            .map(|(magnification, _)| {
+                Self::new(instrument.aperture_mm(), magnification, USUAL_TRANSMISSION)
+            })
+            .collect()
     }
     /// Looking at a sky of a luminance in cd/m².
     ///
@@ -80,11 +101,17 @@ mod tests {
     /// Common practice: 2 to 3 mm in daylight, 4 at 10 cd/m², 5 to 6 at 0.1, 7 in the dark.
     #[test]
     fn a_pupil_opens_as_the_sky_darkens() {
-        for (luminance, least, most) in
-            [(1000.0, 2.0, 3.0), (10.0, 3.5, 4.5), (0.1, 5.0, 6.0), (2e-4, 6.5, 7.2)]
-        {
+        for (luminance, least, most) in [
+            (1000.0, 2.0, 3.0),
+            (10.0, 3.5, 4.5),
+            (0.1, 5.0, 6.0),
+            (2e-4, 6.5, 7.2),
+        ] {
             let pupil = pupil_mm(luminance);
-            assert!((least..=most).contains(&pupil), "{luminance} cd/m²: {pupil} mm");
+            assert!(
+                (least..=most).contains(&pupil),
+                "{luminance} cd/m²: {pupil} mm"
+            );
         }
     }
 }

@@ -17,7 +17,10 @@ impl Default for Spread {
     /// Half as much haze again, as between one good evening and the next, and 0.5 mag, the
     /// spread between practised observers (common practice; half-widths).
     fn default() -> Self {
-        Self { haze_factor: 1.5, eye_mag: 0.5 }
+        Self {
+            haze_factor: 1.5,
+            eye_mag: 0.5,
+        }
     }
 }
 

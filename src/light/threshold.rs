@@ -81,7 +81,10 @@ mod tests {
     #[test]
     fn the_plateau_holds_where_the_published_curve_dips() {
         let peak = eq_34(PLATEAU[0]);
-        assert!(eq_34(PLATEAU[0] * 0.99) < peak, "still rising before the plateau");
+        assert!(
+            eq_34(PLATEAU[0] * 0.99) < peak,
+            "still rising before the plateau"
+        );
         assert!(eq_34(PLATEAU[0] * 1.01) < peak, "falling after its start");
         assert!(eq_34(PLATEAU[1] * 1.001) > peak, "above it at its end");
         assert!(eq_34(PLATEAU[1] * 0.999) < peak, "not sooner");

@@ -36,16 +36,27 @@ impl Exposure {
     /// A typical patch is shown at 40 % in daylight (3000 cd/m²), and 0.19 of a decade lower for
     /// each decade of luminance: about 10 % at sunset less 3 degrees, 1 % on a dark night.
     pub fn for_luminance(typical: f64) -> Self {
-        let typical = if typical.is_finite() { typical.clamp(1e-5, 1e6) } else { 1.0 };
+        let typical = if typical.is_finite() {
+            typical.clamp(1e-5, 1e6)
+        } else {
+            1.0
+        };
         let shown = (0.40 * (typical / 3000.0).powf(0.22)).min(0.60);
         // The curve of `linear` maps scale * Y = s to s / (1 + s).
         let fade = (FULL_COLOUR / typical).log10() / (FULL_COLOUR / NO_COLOUR).log10();
         let night = fade.clamp(0.0, 1.0);
-        Self { scale: shown / (1.0 - shown) / typical, night: night * night * (3.0 - 2.0 * night) }
+        Self {
+            scale: shown / (1.0 - shown) / typical,
+            night: night * night * (3.0 - 2.0 * night),
+        }
     }
     /// The picture's linear sRGB, each 0 to 1, of a colour X, Y, Z (Y in cd/m²).
     pub fn linear(&self, xyz: [f64; 3]) -> [f64; 3] {
-        let y = if xyz[1].is_finite() { xyz[1].max(1e-9) } else { 1e-9 };
+        let y = if xyz[1].is_finite() {
+            xyz[1].max(1e-9)
+        } else {
+            1e-9
+        };
         let s = self.scale * y;
         let shown = s / (1.0 + s);
         let mut rgb = linear_srgb_from_xyz(xyz).map(|part| part / y);

@@ -9,7 +9,7 @@
 //! scattering falls off with the angle from the Sun: what is left is smooth, so the glow around
 //! the Sun moves with it instead of jumping from node to node.
 
-use super::Extinction;
+use super::Conditions;
 use super::scattering::phase;
 use std::f64::consts::PI;
 use std::sync::OnceLock;
@@ -47,7 +47,9 @@ const LN_LEAST: f32 = -20.0;
 
 /// A logarithm as the table stores it.
 pub fn stored(ln: f64) -> u16 {
-    ((ln as f32 - LN_LEAST) / LN_STEP).round().clamp(0.0, 65_535.0) as u16
+    ((ln as f32 - LN_LEAST) / LN_STEP)
+        .round()
+        .clamp(0.0, 65_535.0) as u16
 }
 
 /// The altitude of node `index`, radians.
@@ -81,7 +83,9 @@ impl Shape {
     pub fn new(haze_mag: f64, elevation_km: f64) -> Self {
         let air_mag = 0.1066 * (-elevation_km / 8.2).exp();
         // Very thick haze scatters its light more than once and loses the sharp lobe.
-        Self { haze: (phase::HAZE_ALBEDO * haze_mag / air_mag).min(2.0) }
+        Self {
+            haze: (phase::HAZE_ALBEDO * haze_mag / air_mag).min(2.0),
+        }
     }
     /// Its value at an angle from the Sun of given cosine: about 1 away from the Sun.
     #[inline]
@@ -108,7 +112,12 @@ impl Four {
         let t = x - i as f32;
         let (t2, t3) = (t * t, t * t * t);
         Self {
-            first: [i.abs_diff(1).min(i + 1), i, i + 1, if i + 2 < nodes { i + 2 } else { i }],
+            first: [
+                i.abs_diff(1).min(i + 1),
+                i,
+                i + 1,
+                if i + 2 < nodes { i + 2 } else { i },
+            ],
             weight: [
                 0.5 * (-t + 2.0 * t2 - t3),
                 0.5 * (2.0 - 5.0 * t2 + 3.0 * t3),
@@ -132,7 +141,10 @@ impl Four {
 
 /// The cell of an axis that holds `value`, and how far into it.
 fn cell(nodes: &[f64], value: f64) -> (usize, f64) {
-    let i = nodes.partition_point(|node| *node <= value).clamp(1, nodes.len() - 1) - 1;
+    let i = nodes
+        .partition_point(|node| *node <= value)
+        .clamp(1, nodes.len() - 1)
+        - 1;
     (i, (value - nodes[i]) / (nodes[i + 1] - nodes[i]))
 }
 
@@ -146,9 +158,10 @@ pub struct Dome {
 impl Dome {
     /// Reads the table for a site's air. Haze thicker than the thickest in the table is taken
     /// as that; elevations beyond its ends continue its trend to 5 km.
-    pub fn new(extinction: &Extinction) -> Self {
-        let haze_mag = extinction.aerosol_mag().clamp(0.0, HAZE_MAG[HAZE_MAG.len() - 1]);
-        let elevation_km = (extinction.elevation_m() / 1000.0).clamp(-0.5, 5.0);
+    pub fn new(conditions: &Conditions) -> Self {
+        let aerosol_mag = conditions.extinction().aerosol_mag;
+        let haze_mag = aerosol_mag.clamp(0.0, HAZE_MAG[HAZE_MAG.len() - 1]);
+        let elevation_km = (conditions.elevation_m() / 1000.0).clamp(-0.5, 5.0);
         let (i, s) = cell(&HAZE_MAG, haze_mag);
         let (j, t) = cell(&ELEVATION_KM, elevation_km);
         let size = SUN_ALTITUDE_DEG.len() * SLICE * 3;
@@ -166,24 +179,38 @@ impl Dome {
         let ln = (0..size / 3)
             .map(|k| {
                 std::array::from_fn(|axis| {
-                    corners.iter().map(|(block, weight)| block[3 * k + axis] * *weight as f32).sum()
+                    corners
+                        .iter()
+                        .map(|(block, weight)| block[3 * k + axis] * *weight as f32)
+                        .sum()
                 })
             })
             .collect();
-        Self { ln, shape: Shape::new(haze_mag, elevation_km) }
+        Self {
+            ln,
+            shape: Shape::new(haze_mag, elevation_km),
+        }
     }
     /// The sky for one airless altitude of the Sun's centre. Below -18 deg it goes on falling as
     /// it does there.
     pub fn slice(&self, sun_altitude: f64) -> Slice {
         let (sin_sun, cos_sun) = sun_altitude.sin_cos();
-        let (i, t) = cell(&SUN_ALTITUDE_DEG, sun_altitude.to_degrees().clamp(-40.0, 90.0));
+        let (i, t) = cell(
+            &SUN_ALTITUDE_DEG,
+            sun_altitude.to_degrees().clamp(-40.0, 90.0),
+        );
         let t = t as f32;
         let [low, high] = [i, i + 1].map(|i| &self.ln[i * SLICE..(i + 1) * SLICE]);
         let mut ln = [[0.0; 3]; SLICE];
         for (ln, (a, b)) in ln.iter_mut().zip(low.iter().zip(high)) {
             *ln = std::array::from_fn(|axis| a[axis] + (b[axis] - a[axis]) * t);
         }
-        Slice { ln, shape: self.shape, sin_sun, cos_sun }
+        Slice {
+            ln,
+            shape: self.shape,
+            sin_sun,
+            cos_sun,
+        }
     }
 }
 
@@ -229,7 +256,11 @@ impl Row {
     #[inline]
     pub fn xyz(&self, azimuth_from_sun: f64) -> [f64; 3] {
         let from_sun = (azimuth_from_sun.abs() % (2.0 * PI)) / PI;
-        let from_sun = if from_sun > 1.0 { 2.0 - from_sun } else { from_sun };
+        let from_sun = if from_sun > 1.0 {
+            2.0 - from_sun
+        } else {
+            from_sun
+        };
         let four = Four::new(from_sun.sqrt() as f32 * (AZIMUTHS - 1) as f32, AZIMUTHS);
         let ln = four.of(|j| self.ln[j]);
         let cos_angle = self.along + self.across * azimuth_from_sun.cos();

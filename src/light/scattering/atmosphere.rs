@@ -143,7 +143,10 @@ fn densities(ingredients: &Ingredients) -> Vec<Mix> {
     let air = |h: f64| log_interpolated(&AIR_DENSITY, 5.0, h);
     let ozone = |h: f64| log_interpolated(&OZONE_DENSITY, 4.0, h);
     let column = |density: &dyn Fn(f64) -> f64| {
-        heights.clone().map(|h| density(h + DENSITY_STEP_KM / 2.0) * DENSITY_STEP_KM).sum::<f64>()
+        heights
+            .clone()
+            .map(|h| density(h + DENSITY_STEP_KM / 2.0) * DENSITY_STEP_KM)
+            .sum::<f64>()
     };
     let (air_column, ozone_column) = (column(&air), column(&ozone));
     let upper = UPPER_HAZE_DEPTH.min(ingredients.haze_depth);
@@ -194,7 +197,8 @@ impl SunwardColumns {
                 let mut column = Mix::default();
                 for step in Path::clear(height, edge + (1.0 - edge) * w * w, 60).steps() {
                     let length = step.length_km as f32;
-                    column = column.with(density_at(densities, step.height_km), |a, b| a + b * length);
+                    column =
+                        column.with(density_at(densities, step.height_km), |a, b| a + b * length);
                 }
                 ln.push(column.with(column, |value, _| value.max(1e-30).ln()));
             }

@@ -39,8 +39,11 @@ const GAUSS_8: [(f64, f64); 8] = [
     (0.898_333_239, 0.111_190_517),
     (0.980_144_928, 0.050_614_268),
 ];
-const GAUSS_3: [(f64, f64); 3] =
-    [(0.112_701_665, 0.277_777_778), (0.5, 0.444_444_444), (0.887_298_335, 0.277_777_778)];
+const GAUSS_3: [(f64, f64); 3] = [
+    (0.112_701_665, 0.277_777_778),
+    (0.5, 0.444_444_444),
+    (0.887_298_335, 0.277_777_778),
+];
 
 /// All light in an atmosphere that has been scattered at least once.
 pub struct Field<'a> {
@@ -62,7 +65,10 @@ impl<'a> Field<'a> {
             }
         }
         let ln_mean = sum.iter().map(|mean| mean.map(f32::ln)).collect();
-        Self { atmosphere, ln_mean }
+        Self {
+            atmosphere,
+            ln_mean,
+        }
     }
     /// Radiance seen from the site, W m⁻² sr⁻¹ nm⁻¹: of light scattered once, and of light
     /// scattered more often. Angles in radians; azimuth is counted from the Sun's, to either
@@ -117,7 +123,10 @@ fn gather(
     ground: &[Spectrum],
     emission: impl Fn(&Ray, &Step, &Mix, &Spectrum) -> Spectrum,
 ) -> Pass {
-    let mut pass = Pass { ln_mean: Vec::new(), ground: Vec::new() };
+    let mut pass = Pass {
+        ln_mean: Vec::new(),
+        ground: Vec::new(),
+    };
     for height_index in 0..HEIGHTS {
         // At the ground itself a level path would be of no length.
         let height = node_height_km(height_index).max(0.005);
@@ -179,7 +188,9 @@ fn along(
     for step in path.steps() {
         let density = atmosphere.density(step.height_km);
         let length = step.length_km as f32;
-        let across = atmosphere.optical_depth(density).map(|per_km| per_km * length);
+        let across = atmosphere
+            .optical_depth(density)
+            .map(|per_km| per_km * length);
         let mut middle = [0.0; WAVELENGTHS];
         for i in 0..WAVELENGTHS {
             middle[i] = depth[i] + 0.5 * across[i];
@@ -205,7 +216,8 @@ struct Ray {
 impl Ray {
     fn new(height_km: f64, sin_altitude: f64, sin_sun: f64, cos_azimuth: f64) -> Self {
         let cos = |sin: f64| (1.0 - sin * sin).max(0.0).sqrt();
-        let cos_scattering = sin_altitude * sin_sun + cos(sin_altitude) * cos(sin_sun) * cos_azimuth;
+        let cos_scattering =
+            sin_altitude * sin_sun + cos(sin_altitude) * cos(sin_sun) * cos_azimuth;
         Self {
             radius_km: EARTH_KM + height_km,
             sin_sun,
@@ -305,7 +317,12 @@ fn between(table: &[Spectrum], height_km: f64, sun_zenith_deg: f64) -> Spectrum 
     let s = (x - i as f64) as f32;
     let (j, t) = angle_index(sun_zenith_deg);
     let node = i * ANGLES + j;
-    let corners = [&table[node], &table[node + 1], &table[node + ANGLES], &table[node + ANGLES + 1]];
+    let corners = [
+        &table[node],
+        &table[node + 1],
+        &table[node + ANGLES],
+        &table[node + ANGLES + 1],
+    ];
     let weights = [(1.0 - s) * (1.0 - t), (1.0 - s) * t, s * (1.0 - t), s * t];
     let mut value = [0.0; WAVELENGTHS];
     for (corner, weight) in corners.into_iter().zip(weights) {

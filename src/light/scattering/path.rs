@@ -35,7 +35,12 @@ impl Path {
     /// The path that leaves at a zenith distance of given cosine; `steps` is the number on each
     /// of its legs.
     pub fn new(height_km: f64, cos_zenith: f64, steps: usize) -> Self {
-        Self::with_ground(height_km, cos_zenith, steps, cos_zenith < cos_edge(height_km))
+        Self::with_ground(
+            height_km,
+            cos_zenith,
+            steps,
+            cos_zenith < cos_edge(height_km),
+        )
     }
     /// The same for a direction known to miss the Earth, if only just.
     pub fn clear(height_km: f64, cos_zenith: f64, steps: usize) -> Self {
@@ -52,7 +57,14 @@ impl Path {
             let inward = to_lowest.max(0.0);
             (inward, half_chord(EARTH_KM + TOP_KM) + to_lowest - inward)
         };
-        Self { radius_km, cos_zenith, inward_km, outward_km, steps, meets_ground }
+        Self {
+            radius_km,
+            cos_zenith,
+            inward_km,
+            outward_km,
+            steps,
+            meets_ground,
+        }
     }
     /// Where it meets the ground, if it does: the distance from the start, km.
     pub fn ground_km(&self) -> Option<f64> {
@@ -62,7 +74,9 @@ impl Path {
     pub fn steps(&self) -> impl Iterator<Item = Step> {
         let path = *self;
         let count = |length_km: f64| if length_km > 0.0 { path.steps } else { 0 };
-        let inward = (0..count(path.inward_km)).rev().map(move |k| path.step(k, path.inward_km, -1.0));
+        let inward = (0..count(path.inward_km))
+            .rev()
+            .map(move |k| path.step(k, path.inward_km, -1.0));
         let outward = (0..count(path.outward_km)).map(move |k| path.step(k, path.outward_km, 1.0));
         inward.chain(outward)
     }

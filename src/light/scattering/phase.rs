@@ -11,7 +11,8 @@ pub const HAZE_ALBEDO: f64 = 0.93;
 /// (Joseph, Wiscombe and Weinman 1976, J. Atmos. Sci. 33, 2452). The first scattering seen by
 /// the eye keeps the whole function (Nakajima and Tanaka 1988, J. Quant. Spectrosc. Radiat.
 /// Transfer 40, 51).
-pub const HAZE_STRAIGHT_ON: f64 = FORWARD * G_FORWARD * G_FORWARD + (1.0 - FORWARD) * G_BACK * G_BACK;
+pub const HAZE_STRAIGHT_ON: f64 =
+    FORWARD * G_FORWARD * G_FORWARD + (1.0 - FORWARD) * G_BACK * G_BACK;
 
 const FORWARD: f64 = 0.90;
 const G_FORWARD: f64 = 0.80;

@@ -73,8 +73,10 @@ pub fn haze_depth() -> Spectrum {
 pub fn ozone_depth() -> Spectrum {
     let weight = |index: usize| f64::from(MATCHING[index][1] * SUN[index]);
     let total: f64 = (0..WAVELENGTHS).map(weight).sum();
-    let mean: f64 =
-        (0..WAVELENGTHS).map(|i| weight(i) * f64::from(OZONE_CROSS_SECTION[i])).sum::<f64>() / total;
+    let mean: f64 = (0..WAVELENGTHS)
+        .map(|i| weight(i) * f64::from(OZONE_CROSS_SECTION[i]))
+        .sum::<f64>()
+        / total;
     let scale = 0.031 / (2.5 * std::f64::consts::LOG10_E) / mean;
     spectrum(|index| f64::from(OZONE_CROSS_SECTION[index]) * scale)
 }
@@ -82,7 +84,9 @@ pub fn ozone_depth() -> Spectrum {
 /// CIE 1931 XYZ of a spectral radiance (W m⁻² sr⁻¹ nm⁻¹); Y in cd/m².
 pub fn xyz(radiance: &Spectrum) -> [f64; 3] {
     std::array::from_fn(|axis| {
-        let sum: f32 = (0..WAVELENGTHS).map(|i| radiance[i] * MATCHING[i][axis]).sum();
+        let sum: f32 = (0..WAVELENGTHS)
+            .map(|i| radiance[i] * MATCHING[i][axis])
+            .sum();
         683.0 * STEP_NM * f64::from(sum)
     })
 }
@@ -97,6 +101,7 @@ pub fn exp(x: f32) -> f32 {
     let f = (y - (rounded - ROUND)) * std::f32::consts::LN_2;
     let power = f32::from_bits((rounded.to_bits() << 23).wrapping_add(0x3f80_0000));
     let series = 1.0
-        + f * (1.0 + f * (0.5 + f * (1.0 / 6.0 + f * (1.0 / 24.0 + f * (1.0 / 120.0 + f / 720.0)))));
+        + f * (1.0
+            + f * (0.5 + f * (1.0 / 6.0 + f * (1.0 / 24.0 + f * (1.0 / 120.0 + f / 720.0)))));
     power * series
 }
