@@ -14,17 +14,19 @@ use super::scattering::phase;
 use std::f64::consts::PI;
 use std::sync::OnceLock;
 
-/// Zenith extinction by haze at the nodes, magnitudes.
-pub const HAZE_MAG: [f64; 5] = [0.0, 0.06, 0.16, 0.36, 0.80];
+/// Hazes: node `i` has a zenith extinction by haze of 0.85 mag (i / 7)², crowded at clean air.
+pub const HAZES: usize = 8;
+
+/// The thickest haze, magnitudes at the zenith.
+const MOST_HAZE_MAG: f64 = 0.85;
 
 /// Site elevations at the nodes, km.
 pub const ELEVATION_KM: [f64; 3] = [0.0, 1.4, 3.0];
 
 /// Sun altitudes at the nodes, degrees.
-pub const SUN_ALTITUDE_DEG: [f64; 36] = [
+pub const SUN_ALTITUDE_DEG: [f64; 31] = [
     -18.0, -17.0, -16.0, -15.0, -14.0, -13.0, -12.0, -11.0, -10.0, -9.0, -8.0, -7.0, -6.0, -5.0,
-    -4.0, -3.0, -2.0, -1.0, 0.0, 1.0, 2.0, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0, 13.0, 17.0, 22.0, 28.0,
-    36.0, 45.0, 56.0, 70.0, 90.0,
+    -4.0, -3.0, -2.0, -1.0, 0.0, 1.0, 2.0, 3.0, 4.0, 5.0, 6.0, 9.0, 14.0, 22.0, 35.0, 56.0, 90.0,
 ];
 
 /// Altitudes in the sky: node `i` is at 90 deg (i / 16)², crowded at the horizon.
@@ -52,6 +54,11 @@ pub fn stored(ln: f64) -> u16 {
         .clamp(0.0, 65_535.0) as u16
 }
 
+/// The zenith extinction by haze of node `index`, magnitudes.
+pub fn node_haze_mag(index: usize) -> f64 {
+    MOST_HAZE_MAG * (index as f64 / (HAZES - 1) as f64).powi(2)
+}
+
 /// The altitude of node `index`, radians.
 pub fn node_altitude(index: usize) -> f64 {
     PI / 2.0 * (index as f64 / (ALTITUDES - 1) as f64).powi(2)
@@ -62,12 +69,13 @@ pub fn node_azimuth(index: usize) -> f64 {
     PI * (index as f64 / (AZIMUTHS - 1) as f64).powi(2)
 }
 
-fn table() -> &'static [f32] {
-    static DECODED: OnceLock<Vec<f32>> = OnceLock::new();
+fn table() -> &'static [Ln] {
+    static DECODED: OnceLock<Vec<Ln>> = OnceLock::new();
     DECODED.get_or_init(|| {
+        let value = |low, high| LN_LEAST + LN_STEP * f32::from(u16::from_le_bytes([low, high]));
         TABLE
-            .chunks_exact(2)
-            .map(|pair| LN_LEAST + LN_STEP * f32::from(u16::from_le_bytes([pair[0], pair[1]])))
+            .chunks_exact(6)
+            .map(|b| [value(b[0], b[1]), value(b[2], b[3]), value(b[4], b[5])])
             .collect()
     })
 }
@@ -95,11 +103,11 @@ impl Shape {
     }
 }
 
-/// A place between nodes: the first of the four that count, and their weights (Catmull and Rom;
+/// A place between nodes: the four that count, and their weights (Catmull and Rom;
 /// the value and its slope are continuous).
 #[derive(Clone, Copy)]
 struct Four {
-    first: [usize; 4],
+    node: [usize; 4],
     weight: [f32; 4],
 }
 
@@ -112,7 +120,7 @@ impl Four {
         let t = x - i as f32;
         let (t2, t3) = (t * t, t * t * t);
         Self {
-            first: [
+            node: [
                 i.abs_diff(1).min(i + 1),
                 i,
                 i + 1,
@@ -129,7 +137,7 @@ impl Four {
     #[inline]
     fn of(&self, value: impl Fn(usize) -> Ln) -> Ln {
         let mut sum = [0.0; 3];
-        for (node, weight) in self.first.into_iter().zip(self.weight) {
+        for (node, weight) in self.node.into_iter().zip(self.weight) {
             let ln = value(node);
             for i in 0..3 {
                 sum[i] += weight * ln[i];
@@ -159,33 +167,30 @@ impl Dome {
     /// Reads the table for a site's air. Haze thicker than the thickest in the table is taken
     /// as that; elevations beyond its ends continue its trend to 5 km.
     pub fn new(conditions: &Conditions) -> Self {
-        let aerosol_mag = conditions.extinction().aerosol_mag;
-        let haze_mag = aerosol_mag.clamp(0.0, HAZE_MAG[HAZE_MAG.len() - 1]);
+        let haze_mag = conditions
+            .extinction()
+            .aerosol_mag
+            .clamp(0.0, MOST_HAZE_MAG);
         let elevation_km = (conditions.elevation_m() / 1000.0).clamp(-0.5, 5.0);
-        let (i, s) = cell(&HAZE_MAG, haze_mag);
-        let (j, t) = cell(&ELEVATION_KM, elevation_km);
-        let size = SUN_ALTITUDE_DEG.len() * SLICE * 3;
-        let table = table();
-        let block = |i: usize, j: usize| {
-            let start = (i * ELEVATION_KM.len() + j) * size;
-            &table[start..start + size]
-        };
-        let corners = [
-            (block(i, j), (1.0 - s) * (1.0 - t)),
-            (block(i, j + 1), (1.0 - s) * t),
-            (block(i + 1, j), s * (1.0 - t)),
-            (block(i + 1, j + 1), s * t),
-        ];
-        let ln = (0..size / 3)
-            .map(|k| {
-                std::array::from_fn(|axis| {
-                    corners
-                        .iter()
-                        .map(|(block, weight)| block[3 * k + axis] * *weight as f32)
-                        .sum()
-                })
-            })
-            .collect();
+        let hazes = Four::new(
+            (haze_mag / MOST_HAZE_MAG).sqrt() as f32 * (HAZES - 1) as f32,
+            HAZES,
+        );
+        let (low, part) = cell(&ELEVATION_KM, elevation_km);
+        let elevations = [(low, 1.0 - part as f32), (low + 1, part as f32)];
+        let size = SUN_ALTITUDE_DEG.len() * SLICE;
+        let mut ln = vec![[0.0; 3]; size];
+        for (haze, haze_weight) in hazes.node.into_iter().zip(hazes.weight) {
+            for (elevation, elevation_weight) in elevations {
+                let start = (haze * ELEVATION_KM.len() + elevation) * size;
+                let weight = haze_weight * elevation_weight;
+                for (ln, node) in ln.iter_mut().zip(&table()[start..start + size]) {
+                    for (ln, node) in ln.iter_mut().zip(node) {
+                        *ln += weight * node;
+                    }
+                }
+            }
+        }
         Self {
             ln,
             shape: Shape::new(haze_mag, elevation_km),

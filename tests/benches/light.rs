@@ -41,9 +41,13 @@ fn half_night(bencher: Bencher<'_, '_>) {
             let glow = site.at(0.3 - turned, 4.0 + turned, Some(MOON));
             for body in 0..6 {
                 let altitude = 0.9 - turned * 0.5 + f64::from(body) * 0.05;
-                let target = Target::point(f64::from(body) - 4.0, altitude, 3.5).with_disc(20.0, 0.5);
+                let target =
+                    Target::point(f64::from(body) - 4.0, altitude, 3.5).with_disc(20.0, 0.5);
                 let margins = glow.margins(&target, &gazes);
-                seen += margins.iter().filter(|margin| margin.margin_mag > 0.0).count();
+                seen += margins
+                    .iter()
+                    .filter(|margin| margin.margin_mag > 0.0)
+                    .count();
             }
         }
         seen
