@@ -6,15 +6,27 @@ use crate::sky::Body;
 /// Whose eye.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
 pub enum Eye {
+    /// Untrained, nobody points.
+    PasserBy,
     /// Untrained, pointed to the place.
     Visitor,
+    /// Practised, knows exactly where.
+    Keen,
+    /// Behind an instrument from the site's kit.
+    Optics,
 }
 
 impl Eye {
+    /// All of them, from the least demanding of light to the most helped.
+    pub const ALL: [Self; 4] = [Self::PasserBy, Self::Visitor, Self::Keen, Self::Optics];
+
     /// The name used in files and on the command line.
     pub const fn name(self) -> &'static str {
         match self {
+            Self::PasserBy => "passer-by",
             Self::Visitor => "visitor",
+            Self::Keen => "keen",
+            Self::Optics => "optics",
         }
     }
 }

@@ -1,0 +1,56 @@
+//! What a dark sky and twilight let an eye see at the zenith.
+
+use crate::common::assert_within;
+use crate::published::{SUN_ALTITUDES_DEG, lowland, moonless, mountain, sky, zenith};
+use dimmet::light::{Eye, Eyes, luminance_from_mag_arcsec2};
+
+/// Limiting magnitude at the zenith, place known: Koomen et al. 1952's luminances through
+/// Tousey and Koomen 1953's thresholds.
+const MOUNTAIN_LIMIT: [f64; 6] = [-0.3, 1.4, 4.0, 4.8, 5.5, 5.8];
+const LOWLAND_LIMIT: [f64; 6] = [-0.9, 0.9, 3.4, 4.8, 5.3, 5.7];
+
+#[test]
+fn the_zenith_shows_stars_as_the_two_published_data_sets_say() {
+    let visitor = Eyes::default().gaze(Eye::Visitor);
+    for (name, site, published) in [
+        ("mountain", mountain(), MOUNTAIN_LIMIT),
+        ("lowland", lowland(), LOWLAND_LIMIT),
+    ] {
+        for (sun, expected) in SUN_ALTITUDES_DEG.into_iter().zip(published) {
+            let limit = visitor.limit(zenith(&moonless(&site, sun)), 0.0);
+            println!("{name} {sun} {limit:.2} {expected}");
+            assert_within(
+                limit,
+                expected,
+                0.5,
+                &format!("{name}, Sun {sun}, Koomen 1952 and T&K 1953"),
+            );
+        }
+    }
+}
+
+#[test] // the site file's own figure
+fn the_darkest_zenith_is_the_sites() {
+    for dark in [17.5, 20.4, 21.9] {
+        let site = sky(0.11, 100.0, dark);
+        let expected = luminance_from_mag_arcsec2(dark);
+        assert_within(
+            zenith(&moonless(&site, -40.0)) / expected,
+            1.0,
+            1e-4,
+            "zenith at Sun -40",
+        );
+    }
+}
+
+/// Krisciunas 1997 and others from dark sites: the natural sky at 10 deg of altitude is
+/// brighter than the zenith, by some 0.3 to 1.0 mag (common practice).
+#[test]
+fn the_night_sky_brightens_towards_the_horizon() {
+    let site = sky(0.06, 1000.0, 21.7);
+    let glow = moonless(&site, -40.0);
+    let ratio = glow.luminance(10f64.to_radians(), 1.0).night
+        / glow.luminance(std::f64::consts::FRAC_PI_2, 1.0).night;
+    let mag = 2.5 * ratio.log10();
+    assert!((0.3..=1.0).contains(&mag), "{mag} mag");
+}

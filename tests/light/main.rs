@@ -1,0 +1,19 @@
+//! The layer `light` against published values and against itself.
+
+#![allow(clippy::unwrap_used)]
+
+#[path = "../common/mod.rs"]
+mod common;
+
+mod darkness;
+mod daylight;
+mod input;
+mod moon;
+mod optics;
+mod practice;
+mod properties;
+mod published;
+mod screen;
+mod table;
+mod threshold;
+mod twilight;
