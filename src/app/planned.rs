@@ -4,7 +4,7 @@
 use crate::light::Eye;
 use crate::measure::TimeScales;
 use crate::place::{Site, Skyline, Spot};
-use crate::plan::{Night, NightError, NightRequest};
+use crate::plan::{Night, NightError, NightRequest, Sight};
 use crate::sky::{Body, Ephemeris, Observer, Span};
 use chrono::NaiveDate;
 use chrono_tz::Tz;
@@ -22,6 +22,8 @@ pub struct Planned {
     pub skyline: Skyline,
     /// The site's civil zone.
     pub zone: Tz,
+    /// How the sky is lit and whose eyes look.
+    pub sight: Sight,
     /// Different for every plan made.
     pub count: u64,
 }
@@ -31,27 +33,33 @@ pub struct Standpoint {
     observer: Observer,
     skyline: Skyline,
     zone: Tz,
+    sight: Sight,
 }
 
 impl Standpoint {
     /// What a spot on a site means for planning.
-    pub fn new(site: &Site, spot: &Spot) -> Self {
-        Self {
+    ///
+    /// # Errors
+    /// The site's air, sky or kit is beyond what the light model takes.
+    pub fn new(site: &Site, spot: &Spot) -> Result<Self, NightError> {
+        Ok(Self {
             observer: site.observer(),
             skyline: site.skyline(spot),
             zone: site.zone(),
-        }
+            sight: Sight::of_site(site)?,
+        })
     }
 
     /// The request for a night seen from here.
-    pub fn request(&self, date: NaiveDate, scales: TimeScales, eye: Eye) -> NightRequest<'_> {
+    pub fn request(&self, date: NaiveDate, scales: TimeScales) -> NightRequest<'_> {
         NightRequest {
             observer: &self.observer,
             skyline: &self.skyline,
             zone: self.zone,
             date,
             scales,
-            eye,
+            sight: &self.sight,
+            eyes: &Eye::ALL,
             bodies: &Body::BRIGHT,
         }
     }
@@ -63,10 +71,10 @@ impl Standpoint {
     pub fn plan(
         self,
         ephemeris: &Ephemeris,
-        (date, scales, eye): (NaiveDate, TimeScales, Eye),
+        (date, scales): (NaiveDate, TimeScales),
         count: u64,
     ) -> Result<Planned, NightError> {
-        let night = Night::plan(ephemeris, &self.request(date, scales, eye))?;
+        let night = Night::plan(ephemeris, &self.request(date, scales))?;
         let span = ephemeris
             .cover(night.start.tt(), night.end.tt(), &Body::ALL)
             .map_err(|_| {
@@ -80,6 +88,7 @@ impl Standpoint {
             observer: self.observer,
             skyline: self.skyline,
             zone: self.zone,
+            sight: self.sight,
             count,
         })
     }

@@ -30,6 +30,8 @@ pub struct Scene<'a> {
     pub body: Body,
     /// Whose eye.
     pub eye: Eye,
+    /// How the sky is lit and whose eyes look.
+    pub sight: &'a Sight,
     /// The instant shown, within the half.
     pub moment: Moment,
     /// All nine bodies over the whole night with room on either side.
@@ -59,6 +61,7 @@ pub struct SceneKey {
     night_count: u64,
     half: Half,
     body: Body,
+    eye: Eye,
 }
 
 impl Scene<'_> {
@@ -68,6 +71,7 @@ impl Scene<'_> {
             night_count: self.night_count,
             half: self.half,
             body: self.body,
+            eye: self.eye,
         }
     }
 
@@ -85,6 +89,7 @@ impl Scene<'_> {
             night: self.night,
             half: self.half,
             body: self.body,
+            eye: self.eye,
             skyline: self.skyline,
             clock: self.clock(),
         }

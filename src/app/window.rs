@@ -138,6 +138,7 @@ impl DesktopWindow {
             moment: self.state.moment(),
             span: &planned.span,
             zone: planned.zone,
+            sight: &planned.sight,
             ephemeris: self.state.ephemeris(),
             scales: self.state.scales(),
             words: &self.words,

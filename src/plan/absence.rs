@@ -1,8 +1,9 @@
 //! Why a body has no window in a half-night.
 
 use super::{BodyNight, Half, Night};
-use crate::light;
+use crate::light::Eye;
 use crate::measure::Moment;
+use crate::sky::Body;
 
 /// Why a body has no window in a half-night: the first of these that holds.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -21,7 +22,7 @@ pub enum Absence {
 
 impl BodyNight {
     /// Why there is no window in that half.
-    pub fn absence(&self, night: &Night, half: Half) -> Absence {
+    pub fn absence(&self, night: &Night, eye: Eye, half: Half) -> Absence {
         let (from, to) = night.half(half);
         let sun_stays_up = night.sun.set.is_none()
             && night.sun.rise.is_none()
@@ -35,7 +36,8 @@ impl BodyNight {
             .skyline_events
             .iter()
             .map(|event| (event.moment, event.clears));
-        if light::sun_altitude_limit(self.body).is_none() {
+        let is_faint = matches!(self.body, Body::Uranus | Body::Neptune);
+        if is_faint && eye != Eye::Optics {
             Absence::NotForEyes
         } else if sun_stays_up {
             Absence::SunStaysUp

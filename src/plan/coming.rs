@@ -1,6 +1,7 @@
 //! Which half-night to open on.
 
 use super::{Half, Night, NightError, NightRequest, Window};
+use crate::light::Eye;
 use crate::measure::Moment;
 use crate::sky::{Body, Ephemeris};
 
@@ -27,6 +28,7 @@ pub fn coming(
     ephemeris: &Ephemeris,
     request: &NightRequest<'_>,
     body: Body,
+    eye: Eye,
     now: Moment,
     nights: u32,
 ) -> Result<Option<Coming>, NightError> {
@@ -38,7 +40,7 @@ pub fn coming(
     for night_count in 0..=nights {
         match Night::plan(ephemeris, &NightRequest { date, ..*request }) {
             Ok(night) => {
-                let offer = |half| offer(&night, half, body, now);
+                let offer = |half| offer(&night, half, body, eye, now);
                 dusk = dusk.or_else(|| offer(Half::Dusk));
                 dawn = dawn.or_else(|| offer(Half::Dawn));
             }
@@ -60,8 +62,8 @@ pub fn coming(
 }
 
 /// The half's window of the greatest merit, if its end is still to come.
-fn offer(night: &Night, half: Half, body: Body, now: Moment) -> Option<Coming> {
-    let windows = night.body(body)?.windows_in(half);
+fn offer(night: &Night, half: Half, body: Body, eye: Eye, now: Moment) -> Option<Coming> {
+    let windows = night.body(body)?.windows_in(eye, half);
     windows
         .iter()
         .filter(|window| window.end.moment > now)

@@ -3,9 +3,11 @@
 mod absence;
 mod coming;
 mod interval;
+mod lit;
 mod neighbours;
 mod night;
 mod optics;
+mod sight;
 mod survey;
 mod track;
 mod windows;
@@ -15,5 +17,6 @@ pub use coming::{Coming, coming};
 pub use neighbours::{Aspect, Neighbour, Neighbours, neighbours};
 pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,
-    SunTimes, Window,
+    Stray, SunTimes, Window,
 };
+pub use sight::{Lamps, Luck, Sight, target};

@@ -1,6 +1,7 @@
 //! One night at one spot: from the Sun's highest point on a date to its next.
 
-use crate::light::Eye;
+use super::Sight;
+use crate::light::{Eye, LightError};
 use crate::measure::{Angle, DateOutOfRange, Moment, TimeScales};
 use crate::place::Skyline;
 use crate::sky::{Body, Ephemeris, Observer};
@@ -31,8 +32,10 @@ pub struct NightRequest<'a> {
     pub date: NaiveDate,
     /// How civil time leads to TT.
     pub scales: TimeScales,
-    /// Whose eye.
-    pub eye: Eye,
+    /// How the sky is lit and whose eyes look.
+    pub sight: &'a Sight,
+    /// Which eyes, one at least.
+    pub eyes: &'a [Eye],
     /// Which bodies; the Sun and the Moon are always planned.
     pub bodies: &'a [Body],
 }
@@ -89,11 +92,29 @@ pub struct BodyNight {
     pub is_clear_at_start: bool,
     /// Where it clears or goes behind the skyline, in order.
     pub skyline_events: Vec<SkylineEvent>,
-    /// When it is plain for the eye, in order, through the whole night.
-    pub windows: Vec<Window>,
-    /// The same within dusk and within dawn: read them with [`BodyNight::windows_in`].
-    pub(super) dusk_windows: Vec<Window>,
-    pub(super) dawn_windows: Vec<Window>,
+    /// Its windows for each of the eyes: read them with [`BodyNight::windows`] and
+    /// [`BodyNight::windows_in`].
+    pub(super) eyes: Vec<EyeWindows>,
+}
+
+/// One eye's windows for one body, each list in order.
+#[derive(Clone, Debug)]
+pub(super) struct EyeWindows {
+    pub eye: Eye,
+    pub night: Vec<Window>,
+    pub dusk: Vec<Window>,
+    pub dawn: Vec<Window>,
+}
+
+impl EyeWindows {
+    pub fn none(eye: Eye) -> Self {
+        Self {
+            eye,
+            night: Vec::new(),
+            dusk: Vec::new(),
+            dawn: Vec::new(),
+        }
+    }
 }
 
 /// A body clearing the skyline or going behind it.
@@ -112,8 +133,12 @@ pub struct SkylineEvent {
 /// Why a window starts or ends.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Cause {
-    /// The sky's brightness.
+    /// The Sun's light in the sky.
     Twilight,
+    /// The Moon's.
+    Moonlight,
+    /// The air before it: rising extinction is the larger loss.
+    Haze,
     /// Something on the skyline.
     Skyline,
     /// The horizon, where nothing stands above it.
@@ -129,6 +154,8 @@ impl Cause {
     pub const fn name(self) -> &'static str {
         match self {
             Self::Twilight => "twilight",
+            Self::Moonlight => "moonlight",
+            Self::Haze => "haze",
             Self::Skyline => "skyline",
             Self::Horizon => "horizon",
             Self::Half => "half",
@@ -146,6 +173,15 @@ pub struct Edge {
     pub cause: Cause,
 }
 
+/// How far an end may stray as haze and eyes differ within [`crate::light::Spread`].
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Stray {
+    /// At the earliest.
+    pub earliest: Option<Moment>,
+    /// At the latest.
+    pub latest: Option<Moment>,
+}
+
 /// An unbroken interval in which a body is plain for an eye.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Window {
@@ -153,16 +189,21 @@ pub struct Window {
     pub eye: Eye,
     /// Its start.
     pub start: Edge,
+    /// How early and how late that may come. `latest` is `None` where the harshest air and eye
+    /// miss the body altogether.
+    pub start_stray: Stray,
     /// Its end.
     pub end: Edge,
+    /// How early and how late that may come. `earliest` is `None` where the harshest air and eye
+    /// miss the body altogether.
+    pub end_stray: Stray,
     /// The moment to show it at.
     pub best: Best,
 }
 
 /// The moment to show a body at: where the lesser of two merits is greatest, the clearance
-/// counted in fists (10°) and the Sun's depth below the body's limit counted in steps of 5°. So
-/// a body that sinks into a darkening sky is shown while it still stands clear, in a sky that
-/// has begun to deepen.
+/// counted in fists (10°) and the margin counted in magnitudes. So a body that sinks into a
+/// darkening sky is shown while it still stands clear, in a sky that has begun to deepen.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Best {
     /// When.
@@ -173,6 +214,8 @@ pub struct Best {
     pub altitude: Angle,
     /// That altitude above the skyline.
     pub clearance: Angle,
+    /// Magnitudes by which it outshines the eye's threshold.
+    pub margin_mag: f64,
     /// The lesser of the two merits.
     pub merit: f64,
 }
@@ -207,12 +250,15 @@ pub enum NightError {
         /// The zone.
         zone: Tz,
     },
+    /// The site's air, sky or kit is beyond what the light model takes.
+    Light(LightError),
 }
 
 impl fmt::Display for NightError {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         match self {
             Self::OutOfRange(error) => error.fmt(f),
+            Self::Light(error) => error.fmt(f),
             Self::NoSuchDate { date, zone } => {
                 write!(
                     f,
@@ -224,6 +270,12 @@ impl fmt::Display for NightError {
 }
 
 impl std::error::Error for NightError {}
+
+impl From<LightError> for NightError {
+    fn from(error: LightError) -> Self {
+        Self::Light(error)
+    }
+}
 
 impl Night {
     /// Plans a night.
@@ -247,12 +299,20 @@ impl Night {
 }
 
 impl BodyNight {
-    /// Its windows within one half, cut at the half's ends with [`Cause::Half`], each with the
-    /// best moment of that half.
-    pub fn windows_in(&self, half: Half) -> &[Window] {
-        match half {
-            Half::Dusk => &self.dusk_windows,
-            Half::Dawn => &self.dawn_windows,
-        }
+    /// Its windows for an eye through the whole night, in order; none for an eye that was not
+    /// asked for.
+    pub fn windows(&self, eye: Eye) -> &[Window] {
+        self.of_eye(eye).map_or(&[], |windows| &windows.night)
+    }
+    /// The same within one half, cut at the half's ends with [`Cause::Half`], each with the best
+    /// moment of that half.
+    pub fn windows_in(&self, eye: Eye, half: Half) -> &[Window] {
+        self.of_eye(eye).map_or(&[], |windows| match half {
+            Half::Dusk => &windows.dusk,
+            Half::Dawn => &windows.dawn,
+        })
+    }
+    fn of_eye(&self, eye: Eye) -> Option<&EyeWindows> {
+        self.eyes.iter().find(|windows| windows.eye == eye)
     }
 }

@@ -1,5 +1,6 @@
 //! Going through a night: culminations, the Sun's times, each body's events.
 
+use super::lit::Lit;
 use super::night::{BodyNight, Night, NightError, NightRequest, SkylineEvent, SunTimes};
 use super::track::{Track, Watch};
 use super::{Half, optics, windows};
@@ -43,13 +44,14 @@ pub(super) fn survey(
         bodies: Vec::new(),
         optics: optics::optics_times(&sun, middle, request),
     };
+    let lit = Lit::new(watch, request.sight, length_s);
     night.bodies = Body::ALL
         .into_iter()
         .filter(|body| *body == Body::Moon || request.bodies.contains(body))
         .filter(|body| *body != Body::Sun)
         .map(|body| {
             let track = Track::new(watch, body, length_s).with_skyline_breaks();
-            body_night(&track, &sun, &night, request)
+            body_night(&track, &lit, &night, request)
         })
         .collect();
     Ok(night)
@@ -169,7 +171,7 @@ fn sun_times(sun: &Track<'_>, middle: Moment) -> SunTimes {
 
 fn body_night(
     track: &Track<'_>,
-    sun: &Track<'_>,
+    lit: &Lit<'_>,
     night: &Night,
     request: &NightRequest<'_>,
 ) -> BodyNight {
@@ -198,13 +200,8 @@ fn body_night(
             }
         })
         .collect();
-    let searched = windows::Searched {
-        track,
-        sun,
-        night,
-        eye: request.eye,
-    };
-    let (whole, dusk, dawn) = searched.windows(&skyline_events);
+    let searched = windows::Searched { track, lit, night };
+    let eyes = searched.windows(&skyline_events, request.eyes);
     BodyNight {
         body,
         rise: moments(true),
@@ -218,9 +215,7 @@ fn body_night(
             .first()
             .is_some_and(|first| first.clearance > Angle::ZERO),
         skyline_events,
-        windows: whole,
-        dusk_windows: dusk,
-        dawn_windows: dawn,
+        eyes,
     }
 }
 

@@ -1,6 +1,7 @@
 //! The one sentence a host could read aloud about a body in a half-night.
 
 use super::{CivilClock, FluentValue, Words};
+use crate::light::Eye;
 use crate::measure::Angle;
 use crate::place::Skyline;
 use crate::plan::{Absence, BodyNight, Edge, Half, Night, Window};
@@ -15,6 +16,8 @@ pub struct HalfNight<'a> {
     pub half: Half,
     /// The body.
     pub body: Body,
+    /// Whose eye.
+    pub eye: Eye,
     /// What blocks the view, for its labels.
     pub skyline: &'a Skyline,
     /// The site's clock.
@@ -28,7 +31,7 @@ impl Words {
         let Some(body) = about.night.body(about.body) else {
             return String::new();
         };
-        let sentences: Vec<String> = match body.windows_in(about.half) {
+        let sentences: Vec<String> = match body.windows_in(about.eye, about.half) {
             [] => vec![self.absence(about, body)],
             [first, again @ ..] => {
                 let again = again.iter().map(|window| self.window_again(about, window));
@@ -55,6 +58,7 @@ impl Words {
             "half-night-window",
             &[
                 ("body", self.body_in_sentence(about.body).into()),
+                ("eye", about.eye.name().into()),
                 ("startCause", cause(window.start)),
                 ("start", time(window.start)),
                 (
@@ -101,7 +105,7 @@ impl Words {
     }
 
     fn absence(&self, about: &HalfNight<'_>, body: &BodyNight) -> String {
-        let id = match body.absence(about.night, about.half) {
+        let id = match body.absence(about.night, about.eye, about.half) {
             Absence::NotForEyes => "half-night-not-for-eyes",
             Absence::SunStaysUp => "half-night-sun-up",
             Absence::Down => "half-night-down",

@@ -4,22 +4,28 @@ half-dusk-phrase = this dusk
 half-dawn-phrase = this dawn
 
 # One window, its two ends by their causes, and its best moment.
-half-night-window = { $startCause ->
-    [skyline] Visitors see { $body } from { $start }, when it comes out over { $startObstacle },
-    [horizon] Visitors see { $body } from { $start }, when it rises,
-    [half] Visitors see { $body } from the middle of the night ({ $start })
-    [noon] Visitors see { $body } from midday on
-   *[twilight] Visitors see { $body } from { $start }, as the sky darkens,
+half-night-window = { $eye ->
+    [passer-by] Passers-by notice { $body }
+    [keen] A practised eye sees { $body }
+    [optics] The telescope shows { $body }
+   *[visitor] Visitors see { $body }
+} { $startCause ->
+    [skyline] from { $start }, when it comes out over { $startObstacle },
+    [horizon] from { $start }, when it rises,
+    [haze] from about { $start }, when it is up out of the haze,
+    [moonlight] from about { $start }, when the moonlight fades,
+    [half] from the middle of the night ({ $start })
+    [noon] from midday on
+   *[twilight] from about { $start }, as the sky darkens,
 } { $endCause ->
     [skyline] until { $end }, when it goes behind { $endObstacle }.
     [horizon] until { $end }, when it sets.
+    [haze] until about { $end }, when it fades into the haze.
+    [moonlight] until about { $end }, when the moonlight drowns it.
     [half] until the middle of the night ({ $end }) and beyond.
     [noon] until midday.
    *[twilight] until about { $end }, when the sky gets too bright.
-} Best near { $best }: { $altitude } up in the { $direction }, { $room ->
-    [close] just clear of
-   *[clear] { $fists } clear of
-} { $bestObstacle }.
+} Best near { $best }: { $altitude } up in the { $direction }, { $fists } clear of { $bestObstacle }.
 half-night-window-again = It is plain again from { $start } until { $end }, best near { $best }.
 
 # No window, and why.

@@ -203,7 +203,7 @@ pub fn shown_span(scene: &Scene<'_>) -> (f64, f64) {
     let windows = scene
         .night
         .body(scene.body)
-        .map_or(&[][..], |night| night.windows_in(scene.half));
+        .map_or(&[][..], |night| night.windows_in(scene.eye, scene.half));
     let sun = &scene.night.sun;
     let (from, to) = match scene.half {
         Half::Dusk => {

@@ -83,13 +83,7 @@ impl State {
             self.show_night(date, Goal::Best(Half::Dusk));
             return;
         };
-        let standpoint = Standpoint::new(self.site(), self.spot());
-        let bodies = [self.body];
-        let request = plan::NightRequest {
-            bodies: &bodies,
-            ..standpoint.request(date, self.scales, self.eye())
-        };
-        match plan::coming(&self.ephemeris, &request, self.body, now, NIGHTS_AHEAD) {
+        match self.coming(date, now) {
             Ok(Some(coming)) => self.show_night(coming.night.date, Goal::Best(coming.half)),
             Ok(None) => self.show_night(date, Goal::Best(Half::Dusk)),
             Err(error) => {
@@ -99,16 +93,29 @@ impl State {
         }
     }
 
+    fn coming(&self, date: NaiveDate, now: Moment) -> Result<Option<plan::Coming>, NightError> {
+        let standpoint = Standpoint::new(self.site(), self.spot())?;
+        let request = plan::NightRequest {
+            bodies: &[self.body],
+            eyes: &[self.eye],
+            ..standpoint.request(date, self.scales)
+        };
+        plan::coming(&self.ephemeris, &request, self.body, self.eye, now, NIGHTS_AHEAD)
+    }
+
+    fn plan(&mut self, date: NaiveDate) -> Result<Planned, NightError> {
+        self.plan_count += 1;
+        let standpoint = Standpoint::new(self.site(), self.spot())?;
+        standpoint.plan(&self.ephemeris, (date, self.scales), self.plan_count)
+    }
+
     /// Plans a night and goes to the goal within it.
     pub(super) fn show_night(&mut self, date: NaiveDate, goal: Goal) {
         if let Goal::Local(_, wanted) = goal {
             self.wanted = wanted;
         }
         self.date = date;
-        self.plan_count += 1;
-        let standpoint = Standpoint::new(self.site(), self.spot());
-        let what = (date, self.scales, self.eye());
-        self.planned = standpoint.plan(&self.ephemeris, what, self.plan_count);
+        self.planned = self.plan(date);
         self.go(goal);
     }
 
@@ -161,10 +168,7 @@ impl State {
             date.checked_add_days(Days::new(1)),
         ];
         for date in near.into_iter().flatten() {
-            self.plan_count += 1;
-            let standpoint = Standpoint::new(self.site(), self.spot());
-            let what = (date, self.scales, self.eye());
-            match standpoint.plan(&self.ephemeris, what, self.plan_count) {
+            match self.plan(date) {
                 Ok(planned) => {
                     if moment >= planned.night.start && moment <= planned.night.end {
                         self.date = date;

@@ -53,6 +53,7 @@ pub struct State {
     date: NaiveDate,
     half: Half,
     body: Body,
+    eye: Eye,
     moment: Moment,
     /// The civil time wanted, on the site's clock: that of the moment wherever the night could
     /// be planned, and what was asked for where it could not.
@@ -86,6 +87,7 @@ impl State {
             date: now.date_naive(),
             half: Half::Dusk,
             body: choices.body.unwrap_or(Body::Venus),
+            eye: Eye::Visitor,
             moment: scales.moment_from_ut1(Ut1::from_days_since_j2000(0.0)),
             wanted: now.naive_utc(),
             planned: Err(NightError::OutOfRange(DateOutOfRange {
@@ -145,7 +147,7 @@ impl State {
     }
     /// Whose eye.
     pub fn eye(&self) -> Eye {
-        Eye::Visitor
+        self.eye
     }
     /// The instant shown.
     pub fn moment(&self) -> Moment {

@@ -9,7 +9,7 @@ use super::{Fault, Surroundings, resolve};
 use crate::light::Eye;
 use crate::measure::{Moment, TimeScales, civil};
 use crate::place::{Site, Skyline, Spot, demo_sites};
-use crate::plan::{Half, Night, NightError, NightRequest};
+use crate::plan::{Half, Night, NightError, NightRequest, Sight};
 use crate::sky::{Appearance, Body, Ephemeris, Observer};
 use crate::words::CivilClock;
 use chrono::{Days, NaiveDate};
@@ -101,13 +101,15 @@ impl<'a> Planned<'a> {
     ) -> Result<Self, NightError> {
         let ephemeris = Ephemeris::new();
         let (observer, skyline): (Observer, Skyline) = (site.observer(), site.skyline(spot));
+        let sight = Sight::of_site(site)?;
         let request = NightRequest {
             observer: &observer,
             skyline: &skyline,
             zone: site.zone(),
             date,
             scales,
-            eye: Eye::Visitor,
+            sight: &sight,
+            eyes: &Eye::ALL,
             bodies: &BODIES,
         };
         let night = Night::plan(&ephemeris, &request)?;

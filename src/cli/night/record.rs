@@ -3,6 +3,7 @@
 use super::Planned;
 use crate::cli::moment::{MomentRecord, MomentWriter};
 use crate::cli::{Fault, JSON_VERSION, rounded};
+use crate::light::Eye;
 use crate::measure::Angle;
 use crate::plan::{BodyNight, SkylineEvent, Window};
 use serde::Serialize;
@@ -73,12 +74,16 @@ struct WindowRecord {
     end: MomentRecord,
     start_cause: &'static str,
     end_cause: &'static str,
+    /// As haze and eyes differ; null where the harshest of them miss the body altogether.
+    start_earliest: Option<MomentRecord>,
+    start_latest: Option<MomentRecord>,
+    end_earliest: Option<MomentRecord>,
+    end_latest: Option<MomentRecord>,
     best: MomentRecord,
     best_alt_deg: f64,
     best_az_deg: f64,
     best_clearance_deg: f64,
-    /// Not known while visibility is a rule about the Sun's altitude.
-    best_margin_mag: Option<f64>,
+    best_margin_mag: f64,
 }
 
 #[derive(Serialize)]
@@ -158,7 +163,11 @@ fn body(night: &BodyNight, moments: MomentWriter) -> BodyRecord {
             .iter()
             .map(|event| skyline_event(event, moments))
             .collect(),
-        windows: night.windows.iter().map(|w| window(w, moments)).collect(),
+        windows: Eye::ALL
+            .iter()
+            .flat_map(|eye| night.windows(*eye))
+            .map(|w| window(w, moments))
+            .collect(),
     }
 }
 
@@ -178,11 +187,15 @@ fn window(window: &Window, moments: MomentWriter) -> WindowRecord {
         end: moments.record(window.end.moment),
         start_cause: window.start.cause.name(),
         end_cause: window.end.cause.name(),
+        start_earliest: moments.some(window.start_stray.earliest),
+        start_latest: moments.some(window.start_stray.latest),
+        end_earliest: moments.some(window.end_stray.earliest),
+        end_latest: moments.some(window.end_stray.latest),
         best: moments.record(window.best.moment),
         best_alt_deg: degrees(window.best.altitude),
         best_az_deg: degrees(window.best.azimuth.wrapped()),
         best_clearance_deg: degrees(window.best.clearance),
-        best_margin_mag: None,
+        best_margin_mag: rounded(window.best.margin_mag, 3),
     }
 }
 

@@ -3,19 +3,25 @@
 use super::Planned;
 use crate::cli::Fault;
 use crate::cli::moment::MomentWriter;
+use crate::light::Eye;
+use crate::measure::Moment;
 use csv::Writer;
 use std::io;
 
-const COLUMNS: [&str; 16] = [
+const COLUMNS: [&str; 20] = [
     "date",
     "body",
     "eye",
     "start_utc",
     "start_local_time",
     "start_cause",
+    "start_earliest_utc",
+    "start_latest_utc",
     "end_utc",
     "end_local_time",
     "end_cause",
+    "end_earliest_utc",
+    "end_latest_utc",
     "best_utc",
     "best_local_time",
     "best_alt_deg",
@@ -34,11 +40,14 @@ pub(super) fn csv(planned: &Planned<'_>) -> Result<Vec<u8>, Fault> {
     let failed = |error: csv::Error| Fault::Output(io::Error::from(error));
     writer.write_record(COLUMNS).map_err(failed)?;
     for body in &planned.night.bodies {
-        for window in &body.windows {
+        for window in Eye::ALL.iter().flat_map(|eye| body.windows(*eye)) {
             let (start, end) = (
                 moments.record(window.start.moment),
                 moments.record(window.end.moment),
             );
+            let utc = |moment: Option<Moment>| {
+                moments.some(moment).map(|record| record.utc).unwrap_or_default()
+            };
             let best = moments.record(window.best.moment);
             let degrees = |angle: crate::measure::Angle| format!("{:.7}", angle.degrees());
             let record = [
@@ -48,15 +57,19 @@ pub(super) fn csv(planned: &Planned<'_>) -> Result<Vec<u8>, Fault> {
                 start.utc,
                 start.local_time,
                 window.start.cause.name().to_owned(),
+                utc(window.start_stray.earliest),
+                utc(window.start_stray.latest),
                 end.utc,
                 end.local_time,
                 window.end.cause.name().to_owned(),
+                utc(window.end_stray.earliest),
+                utc(window.end_stray.latest),
                 best.utc,
                 best.local_time,
                 degrees(window.best.altitude),
                 degrees(window.best.azimuth.wrapped()),
                 degrees(window.best.clearance),
-                String::new(),
+                format!("{:.3}", window.best.margin_mag),
                 best.scale.unwrap_or("utc").to_owned(),
             ];
             writer.write_record(&record).map_err(failed)?;

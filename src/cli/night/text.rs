@@ -2,6 +2,7 @@
 
 use super::Planned;
 use crate::cli::page::{Page, Side};
+use crate::light::Eye;
 use crate::measure::{CivilScale, Moment};
 use crate::plan::{BodyNight, Half, Window};
 use crate::sky::Body;
@@ -56,6 +57,7 @@ fn write_half(page: &mut Page, words: &Words, planned: &Planned<'_>, half: Half)
                 night,
                 half,
                 body: body.body,
+                eye: Eye::Visitor,
                 skyline: &planned.skyline,
                 clock: planned.clock,
             }));
@@ -90,7 +92,7 @@ fn in_order<'a>(planned: &'a Planned<'_>, half: Half) -> Vec<&'a BodyNight> {
         .filter_map(|body| planned.night.body(*body))
         .collect();
     let appears = |body: &BodyNight| {
-        let first = body.windows_in(half).first();
+        let first = body.windows_in(Eye::Visitor, half).first();
         first.map_or(f64::INFINITY, |window| {
             window.start.moment.seconds_since(planned.night.start)
         })
@@ -185,7 +187,7 @@ fn write_table(
     ];
     let lines: Vec<Vec<String>> = order
         .iter()
-        .flat_map(|body| body.windows_in(half).iter().map(|w| (body.body, w)))
+        .flat_map(|body| body.windows_in(Eye::Visitor, half).iter().map(|w| (body.body, w)))
         .map(|(body, window)| line(words, planned, body, window))
         .collect();
     if lines.is_empty() {

@@ -128,7 +128,7 @@ impl Lane {
             .map(Point::of)
             .collect();
         let night = scene.night.body(body);
-        let windows = night.map_or(&[][..], |night| night.windows_in(scene.half));
+        let windows = night.map_or(&[][..], |night| night.windows_in(scene.eye, scene.half));
         let ends: Vec<End> = windows
             .iter()
             .flat_map(|window| [(window.start, false), (window.end, true)])
