@@ -37,8 +37,8 @@ struct Heights {
 impl Heights {
     /// Shares out what there is; never less than can be read, so that the column may scroll.
     fn new(available: f32, gap: f32) -> Self {
-        let fade = (0.27 * available).clamp(150.0, 210.0);
-        let plot = (0.18 * available).clamp(104.0, 150.0);
+        let fade = (0.29 * available).clamp(172.0, 220.0);
+        let plot = (0.17 * available).clamp(100.0, 150.0);
         let view = (available - fade - plot - 2.0 * gap).max(220.0);
         Self { view, fade, plot }
     }

@@ -67,7 +67,7 @@ impl FromStr for Renderer {
 /// a display fails for having been tried twice.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub struct WindowError {
-    /// The window library's own words.
+    /// In a few words.
     pub reason: String,
 }
 
@@ -78,6 +78,17 @@ impl fmt::Display for WindowError {
 }
 
 impl std::error::Error for WindowError {}
+
+/// What a person can do something about; the window library's own words where nothing better
+/// is known.
+fn reason(error: &eframe::Error) -> String {
+    match error {
+        eframe::Error::WinitEventLoop(_) => {
+            "neither a Wayland nor an X11 display answers".to_owned()
+        }
+        other => other.to_string(),
+    }
+}
 
 /// Opens the window and returns when it is closed.
 ///
@@ -118,7 +129,7 @@ pub fn run(start: Start) -> Result<(), WindowError> {
             Ok(()) => return Ok(()),
             Err(error) => {
                 first_failure.get_or_insert(WindowError {
-                    reason: error.to_string(),
+                    reason: reason(&error),
                 });
             }
         }

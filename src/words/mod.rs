@@ -78,6 +78,7 @@ impl Words {
         let text = self
             .bundle
             .format_pattern(pattern, Some(&arguments), &mut errors);
+        debug_assert!(errors.is_empty(), "the message {id} lacks: {errors:?}");
         text.into_owned()
     }
 
@@ -149,7 +150,14 @@ mod tests {
             &mut text,
         );
         // These are worked out from a number or a name.
-        let made = ["body-", "compass-", "weekday-", "month-"];
+        let made = [
+            "body-",
+            "compass-",
+            "weekday-",
+            "month-",
+            "cli-about-",
+            "cli-arg-",
+        ];
         for file in ENGLISH {
             for line in file.lines() {
                 let Some((id, _)) = line.split_once(" =") else {

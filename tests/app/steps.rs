@@ -33,6 +33,18 @@ fn it_opens_on_the_coming_half_in_which_the_body_stands_best_at_its_best_moment(
 }
 
 #[test]
+fn a_date_alone_opens_on_the_better_half() {
+    let desk = Desk::new();
+    for (date, half) in [("2026-04-11", Half::Dusk), ("2026-12-04", Half::Dawn)] {
+        let mut start = desk.start(NOW);
+        start.choices.date = date.parse().ok();
+        let harness = desk.open_sized(1280.0, 800.0, start);
+        // Venus is an evening star in April 2026 and a morning star in December.
+        assert_eq!(harness.state().state().half(), half, "{date}");
+    }
+}
+
+#[test]
 fn arrow_keys_step_by_one_and_by_ten_minutes() {
     let desk = Desk::new();
     let mut harness = desk.open();

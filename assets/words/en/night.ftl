@@ -16,7 +16,10 @@ half-night-window = { $startCause ->
     [half] until the middle of the night ({ $end }) and beyond.
     [noon] until midday.
    *[twilight] until about { $end }, when the sky gets too bright.
-} Best near { $best }: { $altitude } up in the { $direction }, { $fists } clear of { $bestObstacle }.
+} Best near { $best }: { $altitude } up in the { $direction }, { $room ->
+    [close] just clear of
+   *[clear] { $fists } clear of
+} { $bestObstacle }.
 half-night-window-again = It is plain again from { $start } until { $end }, best near { $best }.
 
 # No window, and why.
@@ -35,14 +38,12 @@ night-sun-stays-down = The Sun does not rise: its highest point is { $altitude }
 night-moon = Moon: { $percent } lit, { $elongation } from the Sun; rises { $rise }, sets { $set }
 night-dusk = Dusk, { $date }
 night-dawn = Dawn, { $date }
-night-order = Bodies in order: { $bodies }
 optics-from = Caps stay on until at least { $time }, and until the named Sun-watcher agrees.
 optics-until = Cap every instrument by { $time }.
 optics-none-dusk = No optics time at dusk: the Sun does not go down far enough.
 optics-none-dawn = No optics time at dawn: the Sun does not go down far enough.
 clock-of-site = Times are the site’s own ({ $zone }).
 clock-is-ut1 = Beyond 1972 to 2050 civil time is counted from UT1.
-clock-is-unmarked = Times are of the zone { $zone }.
 
 # No display
 no-display = There is no display to open the window on ({ $reason }). Here is the coming dusk at the demo site instead.

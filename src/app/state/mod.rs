@@ -38,7 +38,7 @@ pub struct Choices {
     pub body: Option<Body>,
     /// An evening's date, else the coming night in which the body stands best.
     pub date: Option<NaiveDate>,
-    /// A half of that night.
+    /// A half of that night, else the one in which the body stands better.
     pub half: Option<Half>,
 }
 
@@ -100,8 +100,9 @@ impl State {
         };
         match choices.date {
             Some(date) => {
-                let half = choices.half.unwrap_or(Half::Dusk);
-                state.show_night(date, Goal::Best(half));
+                state.show_night(date, Goal::Best(Half::Dusk));
+                let half = choices.half.unwrap_or_else(|| state.better_half());
+                state.go(Goal::Best(half));
             }
             None => state.show_coming(),
         }
@@ -246,6 +247,16 @@ impl State {
     pub fn add_site(&mut self, site: Site, file: std::path::PathBuf) {
         let index = self.sites.add(site, file);
         self.choose_site(index);
+    }
+
+    /// The half of the night in which the chosen body stands better; dusk where it is not seen.
+    fn better_half(&self) -> Half {
+        let merit = |half| self.best_window(half).map(|window| window.best.merit);
+        if merit(Half::Dawn) > merit(Half::Dusk) {
+            Half::Dawn
+        } else {
+            Half::Dusk
+        }
     }
 
     /// The chosen body's window of the greatest merit in a half.
