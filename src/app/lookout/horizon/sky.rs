@@ -103,9 +103,11 @@ pub fn image(palette: &Palette, look: &Look, camera: &Camera, sun: (Angle, Angle
             // Half a step, so that the cast rounds.
             (from + (to - from) * share + 0.5) as u8
         };
-        pixels.extend(sunwards.iter().map(|share| {
-            Color32::from_rgb(blend(*share, 0), blend(*share, 1), blend(*share, 2))
-        }));
+        pixels.extend(
+            sunwards.iter().map(|share| {
+                Color32::from_rgb(blend(*share, 0), blend(*share, 1), blend(*share, 2))
+            }),
+        );
     }
     ColorImage::new(SIZE, pixels)
 }
