@@ -1,11 +1,15 @@
 //! Arguments to the window or a subcommand; reads the clock and the folders once.
 
+#[cfg(feature = "desktop")]
+use chrono::DateTime;
 use chrono::Utc;
 use dimmet::cli::{self, Fault, Next, Surroundings, WindowRequest};
 use dimmet::words::Words;
 use directories::ProjectDirs;
 use std::io;
 use std::process::ExitCode;
+#[cfg(feature = "desktop")]
+use std::{sync::Arc, time::Instant};
 
 fn main() -> ExitCode {
     let words = Words::english();
@@ -60,22 +64,11 @@ fn window(
     around: &Surroundings<'_>,
 ) -> Result<(), String> {
     use dimmet::app::{self, Start, state::Choices};
-    use std::{sync::Arc, time::Instant};
-
-    let renderer = request.renderer.map(str::parse).transpose()?;
-    let clock: app::state::Clock = match request.now {
-        // Stands in for the clock, and goes on from there.
-        Some(now) => {
-            let started = Instant::now();
-            Arc::new(move || now + started.elapsed())
-        }
-        None => Arc::new(Utc::now),
-    };
-    let start = Start {
-        clock,
+    app::run(Start {
+        clock: clock(request.now),
         scales: request.scales,
-        settings_file: folders.map(|f| f.config_dir().join("settings.ron")),
-        sites_folder: around.sites_folder.map(ToOwned::to_owned),
+        settings_file: folders.map(|folders| folders.config_dir().join("settings.ron")),
+        sites_folder: around.sites_folder.map(Into::into),
         site: request.site,
         spot: request.spot,
         choices: Choices {
@@ -83,9 +76,31 @@ fn window(
             date: request.date,
             half: request.half,
         },
-        renderer,
+        renderer: request.renderer.and_then(|name| name.parse().ok()),
+    })
+    .map_err(|error| plain_reason(&error.reason).to_owned())
+}
+
+/// A reason without the place in the window library's sources that it starts with, and without
+/// its full stop: it stands within a sentence.
+#[cfg(feature = "desktop")]
+fn plain_reason(reason: &str) -> &str {
+    let past_source = reason
+        .split_once(".rs:")
+        .and_then(|(_, rest)| rest.split_once(": "));
+    past_source
+        .map_or(reason, |(_, rest)| rest)
+        .trim_end_matches('.')
+}
+
+/// The machine's clock, or one that runs on from a given time.
+#[cfg(feature = "desktop")]
+fn clock(start: Option<DateTime<Utc>>) -> Arc<dyn Fn() -> DateTime<Utc> + Send + Sync> {
+    let Some(start) = start else {
+        return Arc::new(Utc::now);
     };
-    app::run(start).map_err(|error| error.reason)
+    let started = Instant::now();
+    Arc::new(move || start + started.elapsed())
 }
 
 #[cfg(not(feature = "desktop"))]

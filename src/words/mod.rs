@@ -78,6 +78,7 @@ impl Words {
         let text = self
             .bundle
             .format_pattern(pattern, Some(&arguments), &mut errors);
+        debug_assert!(errors.is_empty(), "the message {id} lacks: {errors:?}");
         text.into_owned()
     }
 

@@ -70,6 +70,7 @@ impl Words {
                 ("best", self.time(about.clock, best.moment).into()),
                 ("altitude", self.degrees(best.altitude, 0).into()),
                 ("direction", self.direction(best.azimuth).into()),
+                ("room", room(best.clearance).into()),
                 ("fists", self.fists(best.clearance).into()),
                 (
                     "bestObstacle",
@@ -125,5 +126,14 @@ impl Words {
                 ("obstacle", self.text("the-skyline")),
             ],
         )
+    }
+}
+
+/// Whether a clearance would round to no fists at all.
+fn room(clearance: Angle) -> &'static str {
+    if clearance.degrees() < 2.5 {
+        "close"
+    } else {
+        "clear"
     }
 }

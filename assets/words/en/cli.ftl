@@ -58,6 +58,5 @@ cli-table-column-missing = { $file }, line 1: there is no column { $column }; a 
 cli-table-column-twice = { $file }, line 1: the column { $column } stands there twice
 cli-table-no-text = --format text is not for tables: choose csv or json
 cli-output-failed = cannot write the output: { $reason }
-cli-terrain-unused = The site names an elevation tile, which is not used yet: the skyline is that of its points and obstacles.
 cli-message = dimmet: { $sentence }
 no-window-built = this program was built without its window

@@ -16,7 +16,10 @@ half-night-window = { $startCause ->
     [half] until the middle of the night ({ $end }) and beyond.
     [noon] until midday.
    *[twilight] until about { $end }, when the sky gets too bright.
-} Best near { $best }: { $altitude } up in the { $direction }, { $fists } clear of { $bestObstacle }.
+} Best near { $best }: { $altitude } up in the { $direction }, { $room ->
+    [close] just clear of
+   *[clear] { $fists } clear of
+} { $bestObstacle }.
 half-night-window-again = It is plain again from { $start } until { $end }, best near { $best }.
 
 # No window, and why.

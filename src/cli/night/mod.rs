@@ -56,7 +56,9 @@ pub(super) fn run(
         Format::Csv => rows::csv(&planned)?,
     };
     if site.ignores_terrain() {
-        writeln!(around.messages, "{}", words.text("cli-terrain-unused"))?;
+        let site = site.name.as_str();
+        let sentence = words.text_with("terrain-ignored", &[("site", site)]);
+        writeln!(around.messages, "{sentence}")?;
     }
     around.output.write_all(&output)?;
     Ok(around.output.flush()?)

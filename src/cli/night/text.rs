@@ -46,20 +46,28 @@ fn write_half(page: &mut Page, words: &Words, planned: &Planned<'_>, half: Half)
     page.line(&heading(words, planned, half));
     page.gap();
     let order = in_order(planned, half);
-    for body in &order {
-        page.line(&words.half_night(&HalfNight {
-            night,
-            half,
-            body: body.body,
-            skyline: &planned.skyline,
-            clock: planned.clock,
-        }));
+    let sun_stays_up = night.sun.lowest.degrees() > SUNSET_ALTITUDE_DEG;
+    if sun_stays_up {
+        // The same for every body, so it is said once.
+        page.line(&sun(words, planned, half));
+    } else {
+        for body in &order {
+            page.line(&words.half_night(&HalfNight {
+                night,
+                half,
+                body: body.body,
+                skyline: &planned.skyline,
+                clock: planned.clock,
+            }));
+        }
     }
     page.gap();
     page.line(&optics(words, planned, half));
     page.gap();
-    page.line(&sun(words, planned, half));
-    page.line(&moon(words, planned));
+    if !sun_stays_up {
+        page.line(&sun(words, planned, half));
+    }
+    page.line(&moon(words, planned, half));
     page.gap();
     write_table(page, words, planned, half, &order);
 }
@@ -138,11 +146,14 @@ fn sun(words: &Words, planned: &Planned<'_>, half: Half) -> String {
     }
 }
 
-fn moon(words: &Words, planned: &Planned<'_>) -> String {
+/// The Moon's phase, and its rising and setting within the half.
+fn moon(words: &Words, planned: &Planned<'_>, half: Half) -> String {
     let night = planned.night.body(Body::Moon);
+    let (from, to) = planned.night.half(half);
     let time = |moments: Option<&Vec<Moment>>| {
-        let first = moments.and_then(|moments| moments.first()).copied();
-        words.time_or_dash(planned.clock, first)
+        let within = |moment: &&Moment| **moment >= from && **moment <= to;
+        let first = moments.and_then(|moments| moments.iter().find(within));
+        words.time_or_dash(planned.clock, first.copied())
     };
     words.text_with(
         "night-moon",

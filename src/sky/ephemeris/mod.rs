@@ -27,8 +27,8 @@ use std::sync::Arc;
 
 /// The theories, evaluated on demand into Chebyshev pieces that are kept and shared.
 ///
-/// Clones share the pieces. What is kept is bounded (some 16 MB), however many instants are
-/// asked for. Threads may use one ephemeris at the same time.
+/// Clones share the pieces. What is kept is bounded (40 MB when every piece of every body has been
+/// asked for). Threads may use one ephemeris at the same time.
 #[derive(Clone, Debug, Default)]
 pub struct Ephemeris {
     cache: Arc<Cache>,
