@@ -5,7 +5,7 @@ use super::palette::{Look, Palette};
 use crate::light::Eye;
 use crate::measure::{Moment, TimeScales};
 use crate::place::{Site, Skyline, Spot};
-use crate::plan::{Half, Night};
+use crate::plan::{Half, Night, Sight};
 use crate::sky::{Body, Ephemeris, Observer, Span};
 use crate::words::{CivilClock, HalfNight, Words};
 use chrono_tz::Tz;

@@ -16,9 +16,6 @@
 //! | [`Moonlight`] | Krisciunas and Schaefer 1991 |
 //! | [`threshold`] | Crumey 2014 |
 //! | [`Optics`] | Crumey 2014, Schaefer 1990 |
-//!
-//! Until the light model takes its place, [`standing`] answers by a stated Sun altitude per
-//! body.
 
 mod conditions;
 mod error;
@@ -28,9 +25,9 @@ mod glow;
 mod margin;
 mod moonlight;
 mod optics;
-mod rule;
 pub mod scattering;
 mod spread;
+mod standing;
 pub mod threshold;
 pub mod tone;
 pub mod twilight;
@@ -43,5 +40,5 @@ pub use glow::{Glow, GlowRow, Luminance, SkyLight};
 pub use margin::{Cost, Margin, Target};
 pub use moonlight::Moonlight;
 pub use optics::Optics;
-pub use rule::{Eye, Standing, standing, sun_altitude_limit};
 pub use spread::Spread;
+pub use standing::{Eye, Standing};

@@ -4,15 +4,18 @@ use chrono::NaiveDate;
 use dimmet::light::Eye;
 use dimmet::measure::TimeScales;
 use dimmet::place::demo_sites;
-use dimmet::plan::{Night, NightRequest};
+use dimmet::plan::{Night, NightRequest, Sight};
 use dimmet::sky::{Body, Ephemeris};
+use std::sync::LazyLock;
 
 fn main() {
     divan::main();
 }
 
 fn plan(ephemeris: &Ephemeris) -> Night {
-    let site = &demo_sites()[0];
+    static SIGHT: LazyLock<Sight> =
+        LazyLock::new(|| Sight::of_site(&demo_sites()[0]).expect("the demo site's air"));
+    let (site, sight) = (&demo_sites()[0], &*SIGHT);
     Night::plan(
         ephemeris,
         &NightRequest {
@@ -21,7 +24,8 @@ fn plan(ephemeris: &Ephemeris) -> Night {
             zone: site.zone(),
             date: NaiveDate::from_ymd_opt(2026, 12, 4).expect("a date"),
             scales: TimeScales::new(),
-            eye: Eye::Visitor,
+            sight,
+            eyes: &Eye::ALL,
             bodies: &Body::ALL,
         },
     )

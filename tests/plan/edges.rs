@@ -1,5 +1,6 @@
 //! Nights at the edges: polar day and night, a body that dips for minutes, skipped dates.
 
+use crate::reference::sight;
 use chrono::NaiveDate;
 use chrono_tz::Tz;
 use dimmet::light::Eye;
@@ -26,7 +27,8 @@ fn try_night(observer: &Observer, zone: Tz, date: (i32, u32, u32)) -> Result<Nig
             zone,
             date: NaiveDate::from_ymd_opt(date.0, date.1, date.2).expect("a date"),
             scales: TimeScales::new(),
-            eye: Eye::Visitor,
+            sight: sight(),
+            eyes: &[Eye::Visitor],
             bodies: &Body::ALL,
         },
     )
@@ -89,7 +91,10 @@ fn polar_day_has_neither_sunset_nor_optics_time() {
     assert!(night.sun.lowest > Angle::ZERO, "the Sun stays up");
     assert_eq!((night.optics.from, night.optics.until), (None, None));
     assert!(
-        night.bodies.iter().all(|body| body.windows.is_empty()),
+        night
+            .bodies
+            .iter()
+            .all(|body| body.windows(Eye::Visitor).is_empty()),
         "no window in daylight"
     );
 }
@@ -115,14 +120,14 @@ fn polar_night_is_dark_enough_for_optics_from_end_to_end() {
     // Jupiter at declination +12 never sets there: one window, bounded by the noons.
     let jupiter = night.body(Body::Jupiter).expect("Jupiter was asked for");
     assert!(jupiter.is_up_at_start && jupiter.set.is_empty() && jupiter.rise.is_empty());
-    let [window] = jupiter.windows[..] else {
-        panic!("{:?}", jupiter.windows)
+    let [window] = jupiter.windows(Eye::Visitor)[..] else {
+        panic!("{:?}", jupiter.windows(Eye::Visitor))
     };
     assert_eq!(
         (window.start.cause, window.end.cause),
         (Cause::Noon, Cause::Noon)
     );
-    let [dawn] = jupiter.windows_in(Half::Dawn)[..] else {
+    let [dawn] = jupiter.windows_in(Eye::Visitor, Half::Dawn)[..] else {
         panic!("one window at dawn")
     };
     assert_eq!(
@@ -231,14 +236,19 @@ fn a_window_ends_with_the_cause_that_comes_first() {
                 zone: Tz::Europe__London,
                 date: NaiveDate::from_ymd_opt(2026, 12, 4).expect("a date"),
                 scales: TimeScales::new(),
-                eye: Eye::Visitor,
+                sight: sight(),
+                eyes: &[Eye::Visitor],
                 bodies: &[Body::Venus],
             },
         )
         .expect("the night can be planned")
     };
     let open = plan(&Skyline::open());
-    let [window] = open.body(Body::Venus).expect("asked for").windows[..] else {
+    let [window] = open
+        .body(Body::Venus)
+        .expect("asked for")
+        .windows(Eye::Visitor)[..]
+    else {
         panic!("one window at dawn")
     };
     assert_eq!(
@@ -250,7 +260,11 @@ fn a_window_ends_with_the_cause_that_comes_first() {
         Angle::ZERO,
         Angle::from_degrees(10.0),
     )]));
-    let [window] = low_wall.body(Body::Venus).expect("asked for").windows[..] else {
+    let [window] = low_wall
+        .body(Body::Venus)
+        .expect("asked for")
+        .windows(Eye::Visitor)[..]
+    else {
         panic!("one window over a low wall")
     };
     assert_eq!(
@@ -265,7 +279,7 @@ fn a_window_ends_with_the_cause_that_comes_first() {
         high_wall
             .body(Body::Venus)
             .expect("asked for")
-            .windows
+            .windows(Eye::Visitor)
             .is_empty()
     );
 }

@@ -2,9 +2,27 @@
 
 use chrono::{DateTime, NaiveDate, Utc};
 use chrono_tz::Tz;
+use dimmet::light::{Conditions, Eyes, Spread};
 use dimmet::measure::Angle;
+use dimmet::place::Extinction;
+use dimmet::plan::Sight;
 use dimmet::sky::{Air, Observer};
 use std::collections::HashMap;
+use std::sync::LazyLock;
+
+/// The light over a lowland site: of no account for risings and skyline moments.
+pub fn sight() -> &'static Sight {
+    static SIGHT: LazyLock<Sight> = LazyLock::new(|| {
+        let air = Extinction {
+            rayleigh_mag: 0.107,
+            ozone_mag: 0.031,
+            aerosol_mag: 0.11,
+        };
+        let conditions = Conditions::new(air, 0.0, 20.5).expect("figures within range");
+        Sight::new(conditions, Eyes::default(), Spread::default())
+    });
+    &SIGHT
+}
 
 pub struct ReferenceSite {
     pub observer: Observer,

@@ -1,6 +1,6 @@
 //! Risings, settings and twilights against JPL DE440 (tests/data/rise_set.csv).
 
-use crate::reference::{ReferenceSite, date, instant, number, rows, sites};
+use crate::reference::{ReferenceSite, date, instant, number, rows, sight, sites};
 use chrono::{DateTime, NaiveDate, Utc};
 use dimmet::light::Eye;
 use dimmet::measure::{Moment, TimeScales};
@@ -31,7 +31,8 @@ fn events(
                 zone: site.zone,
                 date: evening,
                 scales,
-                eye: Eye::Visitor,
+                sight: sight(),
+                eyes: &[Eye::Visitor],
                 bodies: &Body::ALL,
             },
         )

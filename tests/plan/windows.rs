@@ -1,6 +1,6 @@
 //! Crossings of a skyline against JPL DE440 (tests/data/windows.csv).
 
-use crate::reference::{date, instant, number, rows, sites};
+use crate::reference::{date, instant, number, rows, sight, sites};
 use chrono::{DateTime, Utc};
 use dimmet::light::Eye;
 use dimmet::measure::{Angle, TimeScales};
@@ -72,7 +72,8 @@ fn skyline_crossings_match_de440() {
                     zone: site.zone,
                     date,
                     scales,
-                    eye: Eye::Visitor,
+                    sight: sight(),
+                    eyes: &[Eye::Visitor],
                     bodies: &[body],
                 },
             )

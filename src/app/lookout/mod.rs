@@ -9,6 +9,7 @@ pub mod fade;
 pub mod horizon;
 pub mod inset;
 mod labels;
+mod lights;
 pub mod model;
 pub mod phase;
 pub mod plot;

@@ -1,8 +1,9 @@
 //! Where every bright body stands, minute by minute through one half-night: what the horizon
 //! view, the fade and the plot are all made from.
 
+use super::lights::Lights;
 use crate::app::scene::Scene;
-use crate::light::{self, Standing};
+use crate::light::{Eye, Standing};
 use crate::measure::{Angle, Moment, TimeScales, civil, search};
 use crate::plan::Half;
 use crate::sky::{Body, Epoch, Observer, refraction};
@@ -39,6 +40,11 @@ pub struct Sample {
     pub clearance: Angle,
     /// Airless altitude of the Sun's centre.
     pub sun_altitude: Angle,
+    /// Magnitudes by which it outshines the threshold of each eye, in the order of
+    /// [`Eye::ALL`]; the Sun's are zero.
+    pub margins_mag: [f64; 4],
+    /// The same for the scene's eye, in the harshest and in the kindest air.
+    pub spread_mag: (f64, f64),
     /// What the body is for the scene's eye.
     pub standing: Standing,
 }
@@ -55,8 +61,8 @@ impl Tracks {
             .collect();
         for at_s in search::grid(0.0, length_s, STEP_S) {
             let epoch = scene.span.at(start.plus_seconds(at_s));
-            let sun_altitude = epoch.seen_by(scene.observer).place(Body::Sun).altitude;
-            let sample = |body| Sample::new(scene, &epoch, body, sun_altitude, at_s);
+            let lights = Lights::new(scene, &epoch);
+            let sample = |body| Sample::new(scene, &epoch, &lights, body, at_s);
             sun.push(sample(Body::Sun));
             for (body, samples) in &mut bodies {
                 samples.push(sample(*body));
@@ -111,8 +117,8 @@ impl Sample {
     pub fn new(
         scene: &Scene<'_>,
         epoch: &Epoch<'_>,
+        lights: &Lights<'_>,
         body: Body,
-        sun_altitude: Angle,
         at_s: f64,
     ) -> Self {
         let view = epoch.seen_by(scene.observer);
@@ -123,13 +129,18 @@ impl Sample {
             _ => altitude,
         };
         let clearance = counting - scene.skyline.altitude(place.azimuth);
+        let (margins_mag, spread_mag) = lights.margins(&view, body);
+        let of_eye = Eye::ALL.iter().position(|eye| *eye == scene.eye);
+        let margin_mag = of_eye.map_or(0.0, |number| margins_mag[number]);
         Self {
             at_s,
             azimuth: place.azimuth,
             altitude,
             clearance,
-            sun_altitude,
-            standing: light::standing(scene.eye, body, counting, clearance, sun_altitude),
+            sun_altitude: lights.sun_altitude,
+            margins_mag,
+            spread_mag,
+            standing: Standing::of(counting, clearance, margin_mag),
         }
     }
 }

@@ -91,6 +91,10 @@ impl<'a> Says<'a> {
         let id = match (cause, is_end) {
             (Cause::Twilight, true) => "lane-too-bright-from",
             (Cause::Twilight, false) => "lane-dark-enough-from",
+            (Cause::Haze, true) => "lane-into-haze",
+            (Cause::Haze, false) => "lane-out-of-haze",
+            (Cause::Moonlight, true) => "lane-moonlight-from",
+            (Cause::Moonlight, false) => "lane-moonlight-until",
             (Cause::Skyline, true) => "lane-behind-from",
             (Cause::Skyline, false) => "lane-clears-at",
             (Cause::Horizon, true) => "lane-sets",

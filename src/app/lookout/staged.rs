@@ -7,7 +7,7 @@ use crate::app::scene::Scene;
 use crate::light::Eye;
 use crate::measure::{TimeScales, civil};
 use crate::place::{Site, Skyline, demo_site};
-use crate::plan::{Half, Night, NightRequest};
+use crate::plan::{Half, Night, NightRequest, Sight};
 use crate::sky::{Body, Ephemeris, Observer, Span};
 use crate::words::Words;
 use chrono::NaiveDateTime;
@@ -19,6 +19,7 @@ pub struct Stage {
     observer: Observer,
     skyline: Skyline,
     night: Night,
+    sight: Sight,
     span: Span,
     palette: Palette,
     words: Words,
@@ -32,13 +33,15 @@ impl Stage {
         let site = demo_site(site).unwrap().clone();
         let (observer, skyline) = (site.observer(), site.skyline(&site.spots[0]));
         let ephemeris = Ephemeris::new();
+        let sight = Sight::of_site(&site).unwrap();
         let request = NightRequest {
             observer: &observer,
             skyline: &skyline,
             zone: site.zone(),
             date: evening.parse().unwrap(),
             scales: TimeScales::new(),
-            eye: Eye::Visitor,
+            sight: &sight,
+            eyes: &Eye::ALL,
             bodies: &Body::BRIGHT,
         };
         let night = Night::plan(&ephemeris, &request).unwrap();
@@ -50,6 +53,7 @@ impl Stage {
             observer,
             skyline,
             night,
+            sight,
             span,
             palette: Palette::shipped().unwrap(),
             words: Words::english(),
@@ -73,6 +77,7 @@ impl Stage {
             half: self.half,
             body: self.body,
             eye: Eye::Visitor,
+            sight: &self.sight,
             moment: scales.moment_from_civil(utc).unwrap(),
             span: &self.span,
             zone: self.site.zone(),

@@ -1,6 +1,7 @@
 //! Going from one moment to another: within the half-night, into the neighbouring one, to other
 //! days and to other sites. The only place where nights are planned.
 
+use super::super::planned::Planned;
 use super::{Motion, State};
 use crate::app::planned::Standpoint;
 use crate::measure::{Moment, civil};
@@ -100,7 +101,14 @@ impl State {
             eyes: &[self.eye],
             ..standpoint.request(date, self.scales)
         };
-        plan::coming(&self.ephemeris, &request, self.body, self.eye, now, NIGHTS_AHEAD)
+        plan::coming(
+            &self.ephemeris,
+            &request,
+            self.body,
+            self.eye,
+            now,
+            NIGHTS_AHEAD,
+        )
     }
 
     fn plan(&mut self, date: NaiveDate) -> Result<Planned, NightError> {

@@ -264,7 +264,7 @@ impl State {
     /// The chosen body's window of the greatest merit in a half.
     pub fn best_window(&self, half: Half) -> Option<Window> {
         let night = &self.planned.as_ref().ok()?.night;
-        let windows = night.body(self.body)?.windows_in(half);
+        let windows = night.body(self.body)?.windows_in(self.eye, half);
         windows
             .iter()
             .max_by(|a, b| a.best.merit.total_cmp(&b.best.merit))

@@ -46,7 +46,10 @@ pub(super) fn csv(planned: &Planned<'_>) -> Result<Vec<u8>, Fault> {
                 moments.record(window.end.moment),
             );
             let utc = |moment: Option<Moment>| {
-                moments.some(moment).map(|record| record.utc).unwrap_or_default()
+                moments
+                    .some(moment)
+                    .map(|record| record.utc)
+                    .unwrap_or_default()
             };
             let best = moments.record(window.best.moment);
             let degrees = |angle: crate::measure::Angle| format!("{:.7}", angle.degrees());

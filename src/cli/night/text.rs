@@ -187,7 +187,11 @@ fn write_table(
     ];
     let lines: Vec<Vec<String>> = order
         .iter()
-        .flat_map(|body| body.windows_in(Eye::Visitor, half).iter().map(|w| (body.body, w)))
+        .flat_map(|body| {
+            body.windows_in(Eye::Visitor, half)
+                .iter()
+                .map(|w| (body.body, w))
+        })
         .map(|(body, window)| line(words, planned, body, window))
         .collect();
     if lines.is_empty() {

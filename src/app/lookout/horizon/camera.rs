@@ -223,6 +223,8 @@ mod tests {
                 altitude: Angle::from_degrees(altitude_deg),
                 clearance: Angle::ZERO,
                 sun_altitude: Angle::ZERO,
+                margins_mag: [0.0; 4],
+                spread_mag: (0.0, 0.0),
                 standing: Standing::Plain,
             })
             .collect()

@@ -1,5 +1,6 @@
 //! What the horizon view shows at one moment.
 
+use crate::app::lookout::lights::Lights;
 use crate::app::lookout::model::{Sample, Tracks};
 use crate::app::scene::Scene;
 use crate::light::Standing;
@@ -62,13 +63,13 @@ impl Model {
     pub fn new(scene: &Scene<'_>, tracks: &Tracks) -> Self {
         let epoch = scene.span.at(scene.moment);
         let view = epoch.seen_by(scene.observer);
-        let sun_altitude = view.place(Body::Sun).altitude;
+        let lights = Lights::new(scene, &epoch);
         let at_s = tracks.at_s(scene.moment);
         let mark = |body| {
             let appearance = view.appearance(body);
             Mark {
                 body,
-                sample: Sample::new(scene, &epoch, body, sun_altitude, at_s),
+                sample: Sample::new(scene, &epoch, &lights, body, at_s),
                 magnitude: appearance.magnitude.value(),
                 phase_angle: appearance.phase_angle,
                 illuminated_fraction: appearance.illuminated_fraction,
@@ -81,7 +82,7 @@ impl Model {
         let mut others: Vec<Mark> = others.map(|body| mark(*body)).collect();
         let brightness = |mark: &Mark| mark.magnitude.unwrap_or(f64::INFINITY);
         others.sort_by(|a, b| brightness(a).total_cmp(&brightness(b)));
-        let faintest = super::sky::faintest_star(sun_altitude);
+        let faintest = super::sky::faintest_star(lights.sun_altitude);
         Self {
             skyline: scene.skyline.altitude(target.sample.azimuth),
             obstacle: scene

@@ -124,6 +124,8 @@ mod tests {
             altitude: Angle::from_degrees(20.0),
             clearance: Angle::ZERO,
             sun_altitude: Angle::ZERO,
+            margins_mag: [0.0; 4],
+            spread_mag: (0.0, 0.0),
             standing,
         }
     }
