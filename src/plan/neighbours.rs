@@ -104,7 +104,8 @@ fn nearest(
                 Side::After => of_kind.next().copied(),
             }
         };
-        found = (pick(true), pick(false));
+        // Where the theories end within the longer reach, what lay near still stands.
+        found = (pick(true).or(found.0), pick(false).or(found.1));
         if found.0.is_some() && found.1.is_some() {
             break;
         }
@@ -450,18 +451,15 @@ mod tests {
     }
 
     #[test]
-    fn the_last_supported_day_still_has_neighbours_on_both_sides() {
-        // The theories reach two years beyond the supported dates.
+    fn at_the_end_of_the_covered_years_what_lies_near_is_still_found() {
         let ephemeris = Ephemeris::new();
         let now = moment("2400-12-30T00:00:00Z");
-        let found = neighbours(&ephemeris, TimeScales::new(), Body::Venus, now);
-        assert!(
-            found.last_conjunction.is_some() && found.last_height.is_some(),
-            "{found:?}"
-        );
-        assert!(
-            found.next_conjunction.is_some() && found.next_height.is_some(),
-            "{found:?}"
-        );
+        for body in [Body::Moon, Body::Mercury, Body::Venus, Body::Saturn] {
+            let found = neighbours(&ephemeris, TimeScales::new(), body, now);
+            let last = [found.last_conjunction, found.last_height];
+            let next = [found.next_conjunction, found.next_height];
+            let count = last.iter().chain(&next).flatten().count();
+            assert_eq!(count, 4, "{body}: {found:?}");
+        }
     }
 }

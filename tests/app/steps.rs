@@ -203,6 +203,14 @@ fn a_date_can_be_written() {
         harness.run();
     };
     click(&mut harness, "Date: Sat 5 Dec 2026");
+    let before = harness.state().state().moment();
+    harness.key_press(Key::ArrowLeft);
+    harness.run();
+    assert_eq!(
+        harness.state().state().moment(),
+        before,
+        "keys are the field's while it is open"
+    );
     write(&mut harness, "soon");
     harness.get_by_label_contains("Write the date as year-month-day");
     write(&mut harness, "2027-01-09");

@@ -1,10 +1,12 @@
 //! The horizon view: azimuth against altitude, with the chosen body's path over the skyline.
 
 mod camera;
+mod captions;
 mod layout;
 pub(super) mod model;
 mod paint;
 mod path;
+mod rulers;
 pub mod sky;
 
 use super::model::{Tracks, ticks};

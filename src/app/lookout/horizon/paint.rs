@@ -1,6 +1,7 @@
 //! Draws the horizon view.
 
-use super::layout::{Label, Layout, outline};
+use super::captions::Label;
+use super::layout::{Layout, outline};
 use super::model::Model;
 use super::path::Stretch;
 use crate::app::lookout::{disc, shaded};

@@ -92,7 +92,7 @@ impl Model {
                 let orbits: Vec<Vec<Plan>> = std::iter::once(orbit(Some(planet)))
                     .chain(context)
                     .collect();
-                let reach_au = orbits.iter().flatten().map(Plan::from_centre_au);
+                let reach_au = orbits.iter().flatten().map(Plan::centre_distance_au);
                 Some(Self {
                     body: planet,
                     centre: Centre::Sun,
@@ -109,7 +109,7 @@ impl Model {
 
 impl Plan {
     /// Distance from the plan's centre, au.
-    pub fn from_centre_au(&self) -> f64 {
+    pub fn centre_distance_au(&self) -> f64 {
         self.right_au.hypot(self.up_au)
     }
 }
