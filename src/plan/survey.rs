@@ -10,7 +10,7 @@ use crate::sky::{Body, Ephemeris, OutsideEphemeris, Span};
 /// The refraction that the convention for rising and setting takes at the horizon.
 const HORIZON_REFRACTION: Angle = Angle::from_arcmin(34.0);
 /// The Sun's centre at rising and setting by convention: 34' of refraction and 16' of radius.
-const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
+pub(super) const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
 
 const SECONDS_PER_HOUR: f64 = 3600.0;
 
