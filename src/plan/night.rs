@@ -34,7 +34,7 @@ pub struct NightRequest<'a> {
     pub scales: TimeScales,
     /// How the sky is lit and whose eyes look.
     pub sight: &'a Sight,
-    /// Which eyes, one at least.
+    /// Which eyes; for none, no windows are looked for.
     pub eyes: &'a [Eye],
     /// Which bodies; the Sun and the Moon are always planned.
     pub bodies: &'a [Body],

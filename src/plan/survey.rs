@@ -44,7 +44,12 @@ pub(super) fn survey(
         bodies: Vec::new(),
         optics: optics::optics_times(&sun, middle, request),
     };
-    let lit = Lit::new(watch, request.sight, length_s);
+    let lit_s = if request.eyes.is_empty() {
+        0.0
+    } else {
+        length_s
+    };
+    let lit = Lit::new(watch, request.sight, lit_s);
     night.bodies = Body::ALL
         .into_iter()
         .filter(|body| *body == Body::Moon || request.bodies.contains(body))
