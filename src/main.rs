@@ -49,7 +49,7 @@ fn open_window(
     around: &mut Surroundings<'_>,
 ) -> Result<(), Fault> {
     let scales = request.scales;
-    let Err(reason) = window(request, folders, around) else {
+    let Err(reason) = window(request, folders, around)? else {
         return Ok(());
     };
     let sentence = around.words.text_with("no-display", &[("reason", reason)]);
@@ -57,14 +57,22 @@ fn open_window(
     cli::coming_dusk(scales, around)
 }
 
+/// Runs the window; the inner error is why none can be opened.
 #[cfg(feature = "desktop")]
 fn window(
     request: WindowRequest,
     folders: Option<&ProjectDirs>,
     around: &Surroundings<'_>,
-) -> Result<(), String> {
+) -> Result<Result<(), String>, Fault> {
     use dimmet::app::{self, Start, state::Choices};
-    app::run(Start {
+    let renderer = match request.renderer {
+        Some(name) => Some(name.parse().map_err(|unknown: String| {
+            let arguments = [("place", "--renderer".to_owned()), ("error", unknown)];
+            Fault::Input(around.words.text_with("cli-refused", &arguments))
+        })?),
+        None => None,
+    };
+    let closed = app::run(Start {
         clock: clock(request.now),
         scales: request.scales,
         settings_file: folders.map(|folders| folders.config_dir().join("settings.ron")),
@@ -76,9 +84,9 @@ fn window(
             date: request.date,
             half: request.half,
         },
-        renderer: request.renderer.and_then(|name| name.parse().ok()),
-    })
-    .map_err(|error| plain_reason(&error.reason).to_owned())
+        renderer,
+    });
+    Ok(closed.map_err(|error| plain_reason(&error.reason).to_owned()))
 }
 
 /// A reason without the place in the window library's sources that it starts with, and without
@@ -108,8 +116,8 @@ fn window(
     _request: WindowRequest,
     _folders: Option<&ProjectDirs>,
     around: &Surroundings<'_>,
-) -> Result<(), String> {
-    Err(around.words.text("no-window-built"))
+) -> Result<Result<(), String>, Fault> {
+    Ok(Err(around.words.text("no-window-built")))
 }
 
 /// Says something beside the output; a message that nobody can read is not worth failing for.

@@ -46,7 +46,7 @@ pub struct WindowArguments {
     #[arg(long, value_name = "NAME")]
     pub body: Option<String>,
     #[arg(long, value_name = "NAME")]
-    pub renderer: Option<RendererName>,
+    pub renderer: Option<String>,
 }
 
 /// A half of a night.
@@ -55,14 +55,6 @@ pub struct WindowArguments {
 pub enum HalfName {
     Dusk,
     Dawn,
-}
-
-/// What draws the window.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
-#[allow(missing_docs)]
-pub enum RendererName {
-    Glow,
-    Wgpu,
 }
 
 /// The subcommands.

@@ -112,7 +112,7 @@ pub(super) fn date(words: &Words, place: &str, text: &str) -> Result<NaiveDate, 
 pub(super) fn supported(words: &Words, place: &str, date: NaiveDate) -> Result<(), Fault> {
     check_date(date).map_err(|error| {
         Fault::Input(words.text_with(
-            "cli-out-of-years",
+            "cli-refused",
             &[("place", place.to_owned()), ("error", error.to_string())],
         ))
     })

@@ -1,6 +1,6 @@
 //! What the window is asked to open on.
 
-use super::arguments::{HalfName, RendererName, WindowArguments};
+use super::arguments::{HalfName, WindowArguments};
 use super::{Fault, Surroundings, resolve};
 use crate::measure::TimeScales;
 use crate::place::Site;
@@ -9,7 +9,7 @@ use crate::sky::Body;
 use chrono::{DateTime, NaiveDate, Utc};
 use std::path::PathBuf;
 
-/// What the window opens on, all of it valid.
+/// What the window opens on; all but the renderer is valid.
 #[derive(Clone, Debug)]
 pub struct WindowRequest {
     /// How civil time leads to TT.
@@ -26,8 +26,8 @@ pub struct WindowRequest {
     pub half: Option<Half>,
     /// A body.
     pub body: Option<Body>,
-    /// The name of what draws: `glow` or `wgpu`.
-    pub renderer: Option<&'static str>,
+    /// The name of what draws, as it was typed: the window knows which there are.
+    pub renderer: Option<String>,
 }
 
 impl WindowRequest {
@@ -64,10 +64,7 @@ impl WindowRequest {
                 HalfName::Dawn => Half::Dawn,
             }),
             body,
-            renderer: arguments.renderer.map(|renderer| match renderer {
-                RendererName::Glow => "glow",
-                RendererName::Wgpu => "wgpu",
-            }),
+            renderer: arguments.renderer.clone(),
         })
     }
 }

@@ -451,7 +451,8 @@ mod tests {
     }
 
     #[test]
-    fn at_the_end_of_the_covered_years_what_lies_near_is_still_found() {
+    fn the_last_supported_day_still_has_neighbours_on_both_sides() {
+        // The theories reach two years beyond the supported dates.
         let ephemeris = Ephemeris::new();
         let now = moment("2400-12-30T00:00:00Z");
         for body in [Body::Moon, Body::Mercury, Body::Venus, Body::Saturn] {

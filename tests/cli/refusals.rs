@@ -49,6 +49,9 @@ fn times_and_dates_that_are_none() {
     night("fennick-common", "1599-12-31").refused(&["--date", "1599-12-31", "1600 to 2400"]);
     night("fennick-common", "2401-01-01").refused(&["--date", "2401-01-01", "1600 to 2400"]);
     run(&["--now", "soon"]).refused(&["--now", "\"soon\""]);
+    if cfg!(feature = "desktop") {
+        run(&["--renderer", "pencil"]).refused(&["--renderer", "pencil"]);
+    }
     run(&["--date", "soon"]).refused(&["--date", "\"soon\""]);
 }
 

@@ -282,17 +282,22 @@ impl Builder<'_> {
                 .ends
                 .get(k + 1)
                 .map_or(rect.right(), |end| layout.x(end.at_s));
-            let note = self.end(end).into_iter().find_map(|words| {
-                let text = self.label(words, colours.text);
+            // Outside its window the whole text, else the time alone; at the rim an end's text
+            // stands inside its own window rather than nowhere.
+            let words = self.end(end);
+            let outside = words.iter().map(|words| (words, end.is_end));
+            let inside = words
+                .iter()
+                .filter(|_| end.is_end)
+                .map(|words| (words, false));
+            let note = outside.chain(inside).find_map(|(words, is_right)| {
+                let text = self.label(words.clone(), colours.text);
                 let width = text.size().x;
-                let fits = |left: f32, right: f32| width + 2.0 * GAP < right - left;
-                let at_x = match end.is_end {
-                    true if fits(x, after) => x + GAP,
-                    // At the rim an end stands inside its own window.
-                    true if fits(before, x) => x - GAP - width,
-                    false if fits(before, x) => x - GAP - width,
-                    _ => return None,
-                };
+                let (left, right) = if is_right { (x, after) } else { (before, x) };
+                if width + 2.0 * GAP > right - left {
+                    return None;
+                }
+                let at_x = if is_right { x + GAP } else { x - GAP - width };
                 let at = pos2(at_x, rect.bottom() - text.size().y - 1.0);
                 let place = Rect::from_min_size(at, text.size());
                 let is_free = taken.iter().all(|other: &Rect| {

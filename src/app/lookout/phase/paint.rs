@@ -32,7 +32,8 @@ pub fn paint(painter: &Painter, scene: &Scene<'_>, model: &Model, layout: &Layou
 fn body(painter: &Painter, look: &Look, model: &Model, seen: &Seen, centre: Pos2, ring: f32) {
     let colours = &look.colours;
     let scale = Stroke::new(1.0, colours.line);
-    painter.circle_stroke(centre, ring, scale);
+    // A field of dark sky, so that the lit part stands out on a light card too.
+    painter.circle(centre, ring, colours.sky_shade, scale);
     let radius = ring * (model.diameter / model.ring) as f32;
     let tones = (colours.disc_lit, colours.disc_shade);
     let half = |is_near| {
