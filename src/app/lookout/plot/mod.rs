@@ -8,8 +8,8 @@ use super::{Kept, SpanKey};
 use crate::app::command::{Command, Commands};
 use crate::app::scene::Scene;
 use eframe::egui::{
-    Align2, CursorIcon, Pos2, Rect, Response, RichText, Role, Sense, Stroke, StrokeKind, Ui,
-    UiBuilder, WidgetInfo, pos2, vec2,
+    Align2, CursorIcon, Pos2, Rangef, Rect, Response, RichText, Role, Sense, Stroke, StrokeKind,
+    Ui, UiBuilder, WidgetInfo, pos2, vec2,
 };
 use egui_plot::{AxisHints, GridInput, GridMark, HLine, Line, LineStyle, Plot, PlotPoint, VLine};
 use model::{Model, Origin};
@@ -107,7 +107,10 @@ fn frame<'a>(scene: &'a Scene<'a>, says: Says<'a>, model: &'a Model) -> Plot<'a>
                 .formatter(move |mark, _| says.signed_minutes(mark.value)),
         ])
         .custom_y_axes(vec![
-            hint(AxisHints::new_y()).formatter(move |mark, _| says.degrees(mark.value as i32)),
+            hint(AxisHints::new_y())
+                // Shown in a low plot too.
+                .label_spacing(Rangef::new(6.0, 12.0))
+                .formatter(move |mark, _| says.degrees(mark.value as i32)),
         ])
         .x_grid_spacer(move |input| marks(&input, x_step))
         .y_grid_spacer(move |input| marks(&input, y_step))
