@@ -52,11 +52,9 @@ impl Exposure {
     }
     /// The picture's linear sRGB, each 0 to 1, of a colour X, Y, Z (Y in cd/m²).
     pub fn linear(&self, xyz: [f64; 3]) -> [f64; 3] {
-        let y = if xyz[1].is_finite() {
-            xyz[1].max(1e-9)
-        } else {
-            1e-9
-        };
+        let is_light = xyz.iter().all(|part| part.is_finite());
+        let xyz = if is_light { xyz } else { [0.0; 3] };
+        let y = xyz[1].max(1e-9);
         let s = self.scale * y;
         let shown = s / (1.0 + s);
         let mut rgb = linear_srgb_from_xyz(xyz).map(|part| part / y);
