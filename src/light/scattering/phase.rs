@@ -13,12 +13,14 @@ pub const HAZE_ALBEDO: f64 = 0.93;
 /// country air (about 11, 6, 3.4, 0.8 and 0.3; from memory of AERONET climatologies).
 const ASYMMETRY: f64 = 0.70;
 
-/// Part of the light scattered by haze that goes almost straight on and is left in the beam
-/// while light is followed: the second moment of [`haze`], as in the delta-Eddington method
-/// (Joseph, Wiscombe and Weinman 1976, J. Atmos. Sci. 33, 2452). The first scattering seen by
-/// the eye keeps the whole function (Nakajima and Tanaka 1988, J. Quant. Spectrosc. Radiat.
-/// Transfer 40, 51).
-pub const HAZE_STRAIGHT_ON: f64 = ASYMMETRY * ASYMMETRY;
+/// Part of the light scattered by haze that counts as going straight on, and is left in the
+/// beam while light is followed: the fourth moment of [`haze`], as in the delta-M method with
+/// four streams (Wiscombe 1977, J. Atmos. Sci. 34, 1408). As much light is turned by less than
+/// 15 deg, the height of the glow at dusk. (The second moment, of two streams, would carry along
+/// light that in truth is turned into the ground, and make the horizon too bright.) The first
+/// scattering seen by the eye keeps the whole function (Nakajima and Tanaka 1988, J. Quant.
+/// Spectrosc. Radiat. Transfer 40, 51).
+pub const HAZE_STRAIGHT_ON: f64 = ASYMMETRY * ASYMMETRY * ASYMMETRY * ASYMMETRY;
 
 /// Chance per steradian of scattering by air through an angle of given cosine (Rayleigh).
 pub fn air(cos_angle: f64) -> f64 {
@@ -32,7 +34,7 @@ pub fn haze(cos_angle: f64) -> f64 {
 
 /// The same for haze with the light that goes straight on taken out.
 pub fn haze_aside(cos_angle: f64) -> f64 {
-    lobe(cos_angle, ASYMMETRY / (1.0 + ASYMMETRY))
+    lobe(cos_angle, (ASYMMETRY - HAZE_STRAIGHT_ON) / (1.0 - HAZE_STRAIGHT_ON))
 }
 
 /// Henyey and Greenstein 1941 (Astrophys. J. 93, 70).
