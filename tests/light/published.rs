@@ -33,7 +33,11 @@ pub const NATURAL_DARK: f64 = 21.7;
 const USUAL_HAZE_MAG: f64 = 0.166;
 
 fn usual(elevation_m: f64) -> SkyLight {
-    sky(USUAL_HAZE_MAG * (-elevation_m / 1500.0).exp(), elevation_m, NATURAL_DARK)
+    sky(
+        USUAL_HAZE_MAG * (-elevation_m / 1500.0).exp(),
+        elevation_m,
+        NATURAL_DARK,
+    )
 }
 
 /// Usual air at the height of Koomen's Maryland.

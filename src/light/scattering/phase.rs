@@ -34,7 +34,10 @@ pub fn haze(cos_angle: f64) -> f64 {
 
 /// The same for haze with the light that goes straight on taken out.
 pub fn haze_aside(cos_angle: f64) -> f64 {
-    lobe(cos_angle, (ASYMMETRY - HAZE_STRAIGHT_ON) / (1.0 - HAZE_STRAIGHT_ON))
+    lobe(
+        cos_angle,
+        (ASYMMETRY - HAZE_STRAIGHT_ON) / (1.0 - HAZE_STRAIGHT_ON),
+    )
 }
 
 /// Henyey and Greenstein 1941 (Astrophys. J. 93, 70).
