@@ -75,8 +75,9 @@ impl Exposure {
     pub fn srgb(&self, xyz: [f64; 3]) -> [u8; 3] {
         let bytes = srgb_bytes();
         self.linear(xyz).map(|part| {
-            let index = (part as f32).sqrt() * SRGB_STEPS as f32 + 0.5;
-            bytes[(index as usize).min(SRGB_STEPS)]
+            // Parts are within 0 to 1, so the cast is safe and short.
+            let index = ((part as f32).sqrt() * SRGB_STEPS as f32 + 0.5) as i32 as usize;
+            bytes[index.min(SRGB_STEPS)]
         })
     }
 }

@@ -32,6 +32,14 @@ pub fn haze(cos_angle: f64) -> f64 {
     lobe(cos_angle, ASYMMETRY)
 }
 
+/// [`haze`] in units of its mean over all directions.
+#[inline]
+pub fn haze_of_mean(cos_angle: f32) -> f32 {
+    const G: f32 = ASYMMETRY as f32;
+    let d = 1.0 + G * G - 2.0 * G * cos_angle;
+    (1.0 - G * G) / (d * d.sqrt())
+}
+
 /// The same for haze with the light that goes straight on taken out.
 pub fn haze_aside(cos_angle: f64) -> f64 {
     lobe(
