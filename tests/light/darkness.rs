@@ -43,8 +43,8 @@ fn the_darkest_zenith_is_the_sites() {
     }
 }
 
-/// Krisciunas 1997 and others from dark sites: the natural sky at 10 deg of altitude is
-/// brighter than the zenith, by some 0.3 to 1.0 mag (common practice).
+/// Common practice: at 10 deg of altitude the natural sky is brighter than at the zenith by
+/// some 0.5 to 1 mag.
 #[test]
 fn the_night_sky_brightens_towards_the_horizon() {
     let site = sky(0.06, 1000.0, 21.7);
@@ -52,5 +52,5 @@ fn the_night_sky_brightens_towards_the_horizon() {
     let ratio = glow.luminance(10f64.to_radians(), 1.0).night
         / glow.luminance(std::f64::consts::FRAC_PI_2, 1.0).night;
     let mag = 2.5 * ratio.log10();
-    assert!((0.3..=1.0).contains(&mag), "{mag} mag");
+    assert!((0.5..=1.0).contains(&mag), "{mag} mag");
 }

@@ -5,6 +5,8 @@
 #[path = "../common/mod.rs"]
 mod common;
 
+mod arcus;
+mod crescent;
 mod darkness;
 mod daylight;
 mod input;

@@ -32,11 +32,8 @@ fn by_night_the_limits_are_the_usual_ones() {
     let dark = dimmet::light::luminance_from_mag_arcsec2(21.5);
     for (aperture, magnification, expected) in [(50.0, 10.0, 10.2), (200.0, 100.0, 13.9)] {
         let optics = Optics::new(aperture, magnification, 0.8).unwrap();
-        let keen = Eyes::default()
-            .with_instrument(optics)
-            .with_factor(Eye::Optics, 1.4)
-            .unwrap();
-        let limit = keen.gaze(Eye::Optics).limit(dark, 0.0);
+        let eyes = Eyes::default().with_instrument(optics);
+        let limit = eyes.gaze(Eye::Optics).limit(dark, 0.0);
         println!("{aperture} {limit}");
         assert_within(limit, expected, 0.6, "limit of an instrument");
     }
