@@ -70,10 +70,9 @@ fn horizon_text(scene: &Scene<'_>) -> String {
     let named: Vec<&str> = named.take(4).collect();
     writeln!(
         text,
-        "over {:?}, {} stars to {:.1}: {}",
+        "over {:?}, {} stars: {}",
         model.obstacle,
         model.stars.len(),
-        model.faintest,
         named.join(", ")
     )
     .unwrap();
