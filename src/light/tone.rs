@@ -19,9 +19,8 @@ pub fn linear_srgb_from_xyz([x, y, z]: [f64; 3]) -> [f64; 3] {
 /// How a scene is exposed: made once per picture.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Exposure {
-    scale: f64,
-    /// How much of night vision's grey is mixed in.
-    night: f64,
+    /// Natural logarithm of the shown light of 1 cd/m², before the curve that keeps it under 1.
+    ln_scale: f64,
 }
 
 /// The light levels between which colour vision fades, cd/m²: above the first full, below the
@@ -29,47 +28,44 @@ pub struct Exposure {
 const FULL_COLOUR: f64 = 3.0;
 const NO_COLOUR: f64 = 0.005;
 
-/// A little colour is left in the darkest picture, so that lamps and afterglow still tell.
-const MOST_GREY: f64 = 0.85;
+/// Contrast within a picture, as a power of the sky's: the eye adapts to each part of a wide
+/// sky, so the glow of dusk neither blinds it to the rest nor turns white.
+const CONTRAST: f64 = 0.75;
 
 impl Exposure {
-    /// Exposes for a scene whose typical luminance, such as the mean of the logarithm over the
-    /// picture, is this (cd/m²).
+    /// Exposes for a scene whose typical luminance, such as the mean over the sky, is this
+    /// (cd/m²).
     ///
-    /// A typical patch is shown at 40 % (linear) in daylight (3000 cd/m²), and 0.22 of a decade
-    /// lower for each decade of luminance: 12 % at the middle of civil twilight, 1 % on a dark
-    /// night.
+    /// A typical patch is shown at 45 % in daylight (3000 cd/m²), and 0.24 of a decade lower for
+    /// each decade of luminance: about 20 % with the Sun 2 degrees down, 1 % on a dark night.
+    /// These are chosen by eye: a screen cannot follow the sky, only tell how dark it is getting.
     pub fn for_luminance(typical: f64) -> Self {
         let typical = if typical.is_finite() {
             typical.clamp(1e-5, 1e6)
         } else {
             1.0
         };
-        let shown = (0.40 * (typical / 3000.0).powf(0.22)).min(0.60);
-        // The curve of `linear` maps scale * Y = s to s / (1 + s).
-        let fade = (FULL_COLOUR / typical).log10() / (FULL_COLOUR / NO_COLOUR).log10();
-        let x = fade.clamp(0.0, 1.0);
+        let shown = (0.45 * (typical / 3000.0).powf(0.24)).min(0.60);
+        // The curve of `linear` maps s to s / (1 + s).
         Self {
-            scale: shown / (1.0 - shown) / typical,
-            night: MOST_GREY * x * x * (3.0 - 2.0 * x),
+            ln_scale: (shown / (1.0 - shown)).ln() - CONTRAST * typical.ln(),
         }
     }
     /// The picture's linear sRGB, each 0 to 1, of a colour X, Y, Z (Y in cd/m²).
     pub fn linear(&self, xyz: [f64; 3]) -> [f64; 3] {
-        let y = xyz[1];
-        if !(y > 1e-9 && (xyz[0] + y + xyz[2]).is_finite()) {
+        if !xyz.iter().all(|part| part.is_finite()) {
             return [0.0; 3];
         }
-        // Night vision: a bluish grey of the same luminance.
-        const NIGHT_GREY: [f64; 3] = [0.78, 1.00, 1.55];
-        let factor = self.scale / (1.0 + self.scale * y);
-        let shown = factor * y;
-        let (colour, grey) = ((1.0 - self.night) * factor, self.night * shown);
-        let rgb = linear_srgb_from_xyz(xyz);
-        into_gamut(
-            [0, 1, 2].map(|i| rgb[i] * colour + NIGHT_GREY[i] * grey),
-            shown,
-        )
+        let y = xyz[1].max(1e-9);
+        let ln_y = y.ln();
+        let s = (CONTRAST * ln_y + self.ln_scale).exp();
+        let shown = s / (1.0 + s);
+        let mut rgb = linear_srgb_from_xyz(xyz).map(|part| part / y);
+        let night = nightly(ln_y);
+        for (part, grey) in rgb.iter_mut().zip(NIGHT_GREY) {
+            *part += (grey - *part) * night;
+        }
+        into_gamut(rgb.map(|part| part * shown), shown)
     }
     /// The picture's sRGB bytes of a colour X, Y, Z (Y in cd/m²).
     pub fn srgb(&self, xyz: [f64; 3]) -> [u8; 3] {
@@ -80,6 +76,16 @@ impl Exposure {
             bytes[index.min(SRGB_STEPS)]
         })
     }
+}
+
+/// Night vision: a bluish grey, of luminance 1.
+const NIGHT_GREY: [f64; 3] = [0.62, 1.00, 2.10];
+
+/// How far the colour of a patch gives way to night vision's, 0 to 0.85: a hint of it is kept.
+fn nightly(ln_y: f64) -> f64 {
+    let fade = (FULL_COLOUR.ln() - ln_y) / (FULL_COLOUR / NO_COLOUR).ln();
+    let fade = fade.clamp(0.0, 1.0);
+    0.85 * fade * fade * (3.0 - 2.0 * fade)
 }
 
 /// Mixes with grey of the same luminance until no part is below 0 or above 1.
