@@ -38,7 +38,10 @@ fn the_sentence_and_the_windows_follow_the_chosen_eye_without_a_new_plan() {
 
     choose(&mut harness, "passer-by", "keen");
     let state = harness.state().state();
-    assert!(last_seen(state) > visitor, "a practised eye holds it longer");
+    assert!(
+        last_seen(state) > visitor,
+        "a practised eye holds it longer"
+    );
     harness.get_by_label_contains("A practised eye sees Venus");
     assert_eq!(state.moment(), moment);
     assert_eq!(state.planned().expect("a night").count, count);

@@ -107,6 +107,13 @@ fact-lit = lit
 fact-disc = disc
 fact-magnitude = magnitude
 
+# In which order the chosen eye finds things at dusk, or loses them at dawn
+appearing-dusk = Order of appearing
+appearing-dawn = Order of vanishing, the last first
+appearing-none = Nothing comes out between sunset and the end of twilight.
+appearing-by = by { $time }
+appearing-past = past { $time }
+
 # Cautions
 cautions = Cautions
 caution-until = Caps stay on until at least { $time }
