@@ -97,12 +97,12 @@ fn fade_of_a_december_dawn() {
 6:39 Nautical
 7:21 Civil
 8:00 Sunrise
-venus: from 4:34 skyline -; to 7:59 twilight -;
-mercury: from 7:13 skyline -; to 7:21 twilight -;
-mars: to 7:21 twilight -;
-jupiter: to 7:43 twilight -;
+venus: from 4:34 skyline -; to 8:00 twilight -;
+mercury: WashedOut
+mars: to 7:44 twilight -;
+jupiter: to 8:00 twilight -;
 saturn: Down
-moon: from 5:01 skyline -; to 8:07 twilight -;
+moon: from 5:01 skyline -; to 8:00 twilight -;
 ";
     assert_eq!(text, expected, "{text}");
 }
@@ -133,12 +133,12 @@ fn fade_of_a_june_dusk_behind_the_oak() {
 21:32 Sunset
 22:19 Civil
 23:30 Nautical
-venus: from 21:33 twilight -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
-mercury: from 22:19 twilight -; to 22:30 skyline hedge;
+venus: from 21:32 twilight -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
+mercury: WashedOut
 mars: Down
-jupiter: from 21:51 twilight -; to 22:47 skyline hedge;
+jupiter: from 21:55 twilight -; to 22:47 skyline hedge;
 saturn: Down
-moon: from 21:25 twilight -; to 0:18 skyline hedge;
+moon: from 21:32 twilight -; to 0:18 skyline hedge;
 ";
     assert_eq!(text, expected, "{text}");
 }

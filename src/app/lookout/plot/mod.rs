@@ -12,8 +12,8 @@ use crate::app::scene::Scene;
 use crate::light::Eye;
 use eframe::egui::epaint::Mesh;
 use eframe::egui::{
-    Color32, CursorIcon, Pos2, Rect, Response, RichText, Role, Sense, Shape, Stroke, StrokeKind,
-    Ui, UiBuilder, WidgetInfo, pos2, vec2,
+    Color32, CursorIcon, Pos2, Rangef, Rect, Response, RichText, Role, Sense, Shape, Stroke,
+    StrokeKind, Ui, UiBuilder, WidgetInfo, pos2, vec2,
 };
 use egui_plot::{AxisHints, GridInput, GridMark, HLine, Line, LineStyle, Plot, PlotPoint, VLine};
 use model::{Model, Origin};
@@ -117,7 +117,10 @@ fn frame<'a>(scene: &'a Scene<'a>, says: Says<'a>, model: &'a Model) -> Plot<'a>
                 .formatter(move |mark, _| says.signed(mark.value)),
         ])
         .custom_y_axes(vec![
-            hint(AxisHints::new_y()).formatter(move |mark, _| says.signed(mark.value)),
+            hint(AxisHints::new_y())
+                // Shown in a low plot too.
+                .label_spacing(Rangef::new(6.0, 12.0))
+                .formatter(move |mark, _| says.signed(mark.value)),
         ])
         .x_grid_spacer(move |input| marks(&input, x_step))
         .y_grid_spacer(move |input| marks(&input, y_step))
