@@ -4,7 +4,9 @@
 //! the figures in a column on the right. Narrow (below [`WIDE`] points): one column that
 //! scrolls, the caution fixed above it.
 
-use super::cards::{caution_card, facts_card, instead_of_view, notice_line, sentence_card};
+use super::cards::{
+    appearing_card, caution_card, facts_card, instead_of_view, notice_line, sentence_card,
+};
 use super::command::{Command, Commands};
 use super::palette::{Look, Theme};
 use super::pickers::picker_row;
@@ -210,11 +212,13 @@ impl DesktopWindow {
         self.drawings = drawings;
     }
 
-    /// Facts, inset and phase: one below the other in a column, beside one another elsewhere.
+    /// Facts, order of appearing, inset and phase: one below the other in a column, beside one another elsewhere.
     fn figures(&mut self, ui: &mut Ui, look: &Look, commands: &mut Commands) {
         let mut drawings = std::mem::take(&mut self.drawings);
         if let Some(scene) = self.scene() {
             facts_card(ui, &scene, &self.words);
+            let sightings = drawings.appearing(&scene);
+            appearing_card(ui, &scene, &self.words, &sightings);
             if ui.available_width() < COLUMN {
                 let gap = look.room.inside;
                 let (inset, phase) = column_heights(ui.available_height() - gap);

@@ -1,6 +1,7 @@
 //! What a night holds: from engine results to a host's questions.
 
 mod absence;
+mod appearing;
 mod coming;
 mod interval;
 mod lit;
@@ -13,6 +14,7 @@ mod track;
 mod windows;
 
 pub use absence::Absence;
+pub use appearing::{AppearingRequest, Found, Sighting, appearing};
 pub use coming::{Coming, coming};
 pub use neighbours::{Aspect, Neighbour, Neighbours, neighbours};
 pub use night::{

@@ -1,6 +1,8 @@
 //! What the drawings say, by the scene's wording and on the site's clock.
 
+use crate::app::command::Command;
 use crate::app::scene::Scene;
+use crate::light::Eye;
 use crate::measure::{Angle, Moment};
 use crate::plan::{Aspect, Cause};
 use crate::sky::Body;
@@ -59,14 +61,19 @@ impl<'a> Says<'a> {
     pub fn arcsec(&self, angle: Angle) -> String {
         self.words.disc(angle)
     }
-    /// A whole number of minutes with its sign.
-    pub fn signed_minutes(&self, minutes: f64) -> String {
-        let id = if minutes > 0.5 {
-            "plot-after"
+    /// A whole number with its sign.
+    pub fn signed(&self, number: f64) -> String {
+        let id = if number > 0.5 {
+            "plot-positive"
         } else {
-            "plot-before"
+            "plot-negative"
         };
-        self.text(id, &[("minutes", &decimal(minutes, 0))])
+        self.text(id, &[("number", &decimal(number, 0))])
+    }
+    /// An eye's name.
+    pub fn eye(&self, eye: Eye) -> String {
+        let id = Command::ChooseEye(eye).wording();
+        self.words.text(id.unwrap_or_default())
     }
     /// The name of one of the eight compass points, clockwise from north.
     pub fn compass(&self, point: usize) -> String {

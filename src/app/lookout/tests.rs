@@ -8,7 +8,7 @@ use super::{Drawings, fade, horizon, inset, phase, plot};
 use crate::app::command::{Command, Commands};
 use crate::app::scene::Scene;
 use crate::app::theme::install_fonts;
-use crate::light::Standing;
+use crate::light::{Eye, Standing};
 use crate::plan::{Half, neighbours};
 use crate::sky::Body;
 use eframe::egui::accesskit::Role;
@@ -33,9 +33,15 @@ fn fade_text(scene: &Scene<'_>) -> String {
             let obstacle = end.obstacle.as_deref().unwrap_or("-");
             write!(
                 text,
-                " {word} {} {} {obstacle};",
+                " {word} {} {}{} {obstacle};",
                 time(end.at_s),
-                end.cause.name()
+                end.cause.name(),
+                match end.stray {
+                    None => String::new(),
+                    Some(fade::model::Stray::Between(from, to)) =>
+                        format!(" {}-{}", time(from), time(to)),
+                    Some(fade::model::Stray::OrNotAtAll(at)) => format!(" {} or not", time(at)),
+                }
             )
             .unwrap();
         }
@@ -257,13 +263,51 @@ fn the_plot_counts_minutes_from_the_suns_own_event() {
     let rise = scene.night.sun.rise.unwrap();
     assert!((model.origin_s - rise.seconds_since(tracks.start)).abs() < 1e-6);
     assert!((model.to_min - 60.0).abs() < 1e-6, "{}", model.to_min);
-    assert_eq!(model.curves[0].body, Body::Venus);
-    let plain = tracks
+    let eyes: Vec<Eye> = model.curves.iter().map(|curve| curve.eye).collect();
+    assert_eq!(eyes, Eye::ALL);
+    let up = tracks
         .body(Body::Venus)
         .iter()
         .filter(|sample| sample.standing != Standing::Down);
-    let drawn: usize = model.curves[0].pieces.iter().map(Vec::len).sum();
-    assert!(drawn > 200 && drawn <= plain.count(), "{drawn}");
+    let drawn: usize = model.curves[1].pieces.iter().map(Vec::len).sum();
+    assert!(drawn > 200 && drawn <= up.count(), "{drawn}");
+}
+
+#[test]
+fn the_plots_curves_cross_zero_where_the_windows_end() {
+    let stage = december_dawn();
+    let scene = stage.scene("2026-12-05T07:02:00");
+    let tracks = Tracks::new(&scene);
+    let model = plot::model::Model::new(&scene, &tracks);
+    let mut crossings = 0;
+    for curve in &model.curves[..3] {
+        let night = scene.night.body(Body::Venus).unwrap();
+        let window = night.windows_in(curve.eye, Half::Dawn).last().unwrap();
+        let end_s = window.end.moment.seconds_since(tracks.start);
+        let end_min = (end_s - model.origin_s) / 60.0;
+        let points = curve.pieces.last().unwrap();
+        if end_min > model.to_min {
+            // Plain beyond what is shown.
+            assert!(points.last().unwrap()[1] >= 0.0, "{:?}", curve.eye);
+            continue;
+        }
+        crossings += 1;
+        let last = points.iter().rfind(|[_, mag]| *mag >= 0.0).unwrap();
+        let off_min = end_min - last[0];
+        assert!((0.0..=1.02).contains(&off_min), "{:?} {off_min}", curve.eye);
+    }
+    assert!(crossings > 0, "at least a passer-by loses Venus by then");
+    // The chosen eye's own margin lies within its spread.
+    let within = model.curves[1].pieces.iter().flatten();
+    for ([_, mag], [_, least, greatest]) in within.zip(model.spread.iter().flatten()) {
+        assert!(least < mag && mag < greatest, "{least} {mag} {greatest}");
+    }
+    // Nothing is said of optics once they must be capped.
+    let until = scene.night.optics.until.unwrap();
+    let until_min = (until.seconds_since(tracks.start) - model.origin_s) / 60.0;
+    let last = model.curves[3].pieces.last().and_then(|piece| piece.last());
+    let short_min = until_min - last.unwrap()[0];
+    assert!((0.0..=1.02).contains(&short_min), "{short_min}");
 }
 
 /// The drawings in a window of their own, with what they asked for.
@@ -409,7 +453,7 @@ fn plot_and_inset_say_what_they_are() {
     let harness = shown(|drawings, ui, scene, commands| {
         drawings.plot(ui, scene, commands);
     });
-    harness.get_by_label_contains("Clearance of the bright bodies");
+    harness.get_by_label_contains("Margin of Venus for each eye");
     let harness = shown(|drawings, ui, scene, _| {
         drawings.inset(ui, scene);
     });
