@@ -2,6 +2,7 @@
 
 mod absence;
 mod coming;
+mod daylight;
 mod interval;
 mod lit;
 mod neighbours;
@@ -14,6 +15,7 @@ mod windows;
 
 pub use absence::Absence;
 pub use coming::{Coming, coming};
+pub use daylight::{Apart, Daylight, DaylightRequest, Drift, Slot, Stretch, Whereabouts};
 pub use neighbours::{Aspect, Neighbour, Neighbours, neighbours};
 pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,
