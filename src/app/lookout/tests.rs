@@ -35,7 +35,7 @@ fn fade_text(scene: &Scene<'_>) -> String {
                 text,
                 " {word} {} {}{} {obstacle};",
                 time(end.at_s),
-                end.cause.name(),
+                end.spoken,
                 match end.stray {
                     None => String::new(),
                     Some(fade::model::Stray::Between(from, to)) =>
@@ -97,12 +97,12 @@ fn fade_of_a_december_dawn() {
 6:39 Nautical
 7:21 Civil
 8:00 Sunrise
-venus: from 4:34 skyline -; to 8:00 twilight -;
+venus: from 4:34 skyline -; to 8:00 sunrise -;
 mercury: WashedOut
 mars: to 7:44 twilight 7:38-7:49 -;
-jupiter: to 8:00 twilight -;
+jupiter: to 8:00 sunrise -;
 saturn: Down
-moon: from 5:01 skyline -; to 8:00 twilight -;
+moon: from 5:01 skyline -; to 8:00 sunrise -;
 ";
     assert_eq!(text, expected, "{text}");
 }
@@ -133,12 +133,12 @@ fn fade_of_a_june_dusk_behind_the_oak() {
 21:32 Sunset
 22:19 Civil
 23:30 Nautical
-venus: from 21:32 twilight -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
+venus: from 21:32 sunset -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
 mercury: WashedOut
 mars: Down
 jupiter: from 21:55 twilight 21:44-22:15 -; to 22:47 skyline hedge;
 saturn: Down
-moon: from 21:32 twilight -; to 0:18 skyline hedge;
+moon: from 21:32 sunset -; to 0:18 skyline hedge;
 ";
     assert_eq!(text, expected, "{text}");
 }
