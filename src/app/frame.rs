@@ -24,6 +24,9 @@ const WIDE: f32 = 1200.0;
 const ROW_BESIDE: f32 = 1500.0;
 /// Below this width, points, inset and phase stand one below the other.
 const COLUMN: f32 = 500.0;
+/// From this height below the facts on, points, the right column holds the order of appearing
+/// with inset and phase.
+const ROOM_FOR_ORDER: f32 = 440.0;
 /// Height of inset and phase where they stand beside one another.
 const BESIDE_HEIGHT: f32 = 250.0;
 /// The sentence card's height in the right column: four lines.
@@ -212,15 +215,20 @@ impl DesktopWindow {
         self.drawings = drawings;
     }
 
-    /// Facts, order of appearing, inset and phase: one below the other in a column, beside one another elsewhere.
+    /// Facts, order of appearing, inset and phase: one below the other in a column, beside one
+    /// another elsewhere. Where the column is low the order goes below the rest.
     fn figures(&mut self, ui: &mut Ui, look: &Look, commands: &mut Commands) {
         let mut drawings = std::mem::take(&mut self.drawings);
         if let Some(scene) = self.scene() {
             facts_card(ui, &scene, &self.words);
             let sightings = drawings.appearing(&scene);
-            appearing_card(ui, &scene, &self.words, &sightings);
-            if ui.available_width() < COLUMN {
-                let gap = look.room.inside;
+            let gap = look.room.inside;
+            let is_column = ui.available_width() < COLUMN;
+            let has_room = !is_column || ui.available_height() > ROOM_FOR_ORDER;
+            if has_room {
+                appearing_card(ui, &scene, &self.words, &sightings);
+            }
+            if is_column {
                 let (inset, phase) = column_heights(ui.available_height() - gap);
                 place(ui, inset, |ui| {
                     drawings.inset(ui, &scene);
@@ -237,6 +245,9 @@ impl DesktopWindow {
                         drawings.phase(ui, &scene, commands);
                     });
                 });
+            }
+            if !has_room {
+                appearing_card(ui, &scene, &self.words, &sightings);
             }
         }
         self.drawings = drawings;

@@ -9,7 +9,7 @@ mod number;
 mod time;
 
 pub use fluent_bundle::FluentValue;
-pub use night::HalfNight;
+pub use night::{HalfNight, spoken_cause};
 pub use number::decimal;
 pub use time::CivilClock;
 

@@ -143,8 +143,9 @@ fn room(clearance: Angle) -> &'static str {
 }
 
 /// An end's cause as the sentence tells it: where eyes are sent out and called back by the Sun
-/// itself or by the optics times, that is said in place of the sky's brightness.
-fn spoken_cause(night: &Night, edge: Edge) -> &'static str {
+/// itself or by the optics times, that is said in place of the sky's brightness: `sunset`,
+/// `sunrise` or `optics`, else the cause's name.
+pub fn spoken_cause(night: &Night, edge: Edge) -> &'static str {
     let at = |moment| moment == Some(edge.moment);
     match edge.cause {
         Cause::Twilight if at(night.sun.set) => "sunset",

@@ -19,6 +19,10 @@ fade-sunrise = sunrise
 fade-civil = civil
 fade-nautical = nautical
 fade-astronomical = astronomical
+lane-sunset = sunset { $time }
+lane-sunrise = sunrise { $time }
+lane-caps-on = caps on { $time }
+lane-caps-off = caps off { $time }
 lane-too-bright-from = sky too bright { $time }
 lane-dark-enough-from = from { $time }
 lane-into-haze = into the haze { $time }
@@ -84,7 +88,8 @@ phase-change = { $name }, { $note }. Press for the next way round.
 
 # The plot.
 plot-name = Margin of { $body } for each eye in magnitudes against minutes from sunset or sunrise: above 0 it is seen. The upright line marks the moment shown; a click sets it.
-plot-title = Margin of each eye, magnitudes
+plot-title = margin of each eye in magnitudes · { $minutes }
+plot-sun-up = Sun up
 plot-threshold = seen above this line
 # An eye's curve that leaves the plot at the top.
 plot-off-the-top = { $eye } ↑

@@ -11,7 +11,7 @@ use chrono::Timelike;
 use chrono_tz::Tz;
 
 /// The Sun's centre at rising and setting by convention.
-const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
+pub const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
 
 /// Seconds between samples.
 const STEP_S: f64 = 60.0;

@@ -35,7 +35,7 @@ fn fade_text(scene: &Scene<'_>) -> String {
                 text,
                 " {word} {} {}{} {obstacle};",
                 time(end.at_s),
-                end.cause.name(),
+                end.spoken,
                 match end.stray {
                     None => String::new(),
                     Some(fade::model::Stray::Between(from, to)) =>
@@ -96,12 +96,12 @@ fn fade_of_a_december_dawn() {
 6:39 Nautical
 7:21 Civil
 8:00 Sunrise
-venus: from 4:34 skyline -; to 8:00 twilight -;
+venus: from 4:34 skyline -; to 8:00 sunrise -;
 mercury: WashedOut
-mars: to 7:44 twilight -;
-jupiter: to 8:00 twilight -;
+mars: to 7:44 twilight 7:38-7:49 -;
+jupiter: to 8:00 sunrise -;
 saturn: Down
-moon: from 5:01 skyline -; to 8:00 twilight -;
+moon: from 5:01 skyline -; to 8:00 sunrise -;
 ";
     assert_eq!(text, expected, "{text}");
 }
@@ -132,12 +132,12 @@ fn fade_of_a_june_dusk_behind_the_oak() {
 21:32 Sunset
 22:19 Civil
 23:30 Nautical
-venus: from 21:32 twilight -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
+venus: from 21:32 sunset -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
 mercury: WashedOut
 mars: Down
-jupiter: from 21:55 twilight -; to 22:47 skyline hedge;
+jupiter: from 21:55 twilight 21:44-22:15 -; to 22:47 skyline hedge;
 saturn: Down
-moon: from 21:32 twilight -; to 0:18 skyline hedge;
+moon: from 21:32 sunset -; to 0:18 skyline hedge;
 ";
     assert_eq!(text, expected, "{text}");
 }
@@ -275,28 +275,21 @@ fn the_plot_counts_minutes_from_the_suns_own_event() {
 
 #[test]
 fn the_plots_curves_cross_zero_where_the_windows_end() {
-    let stage = december_dawn();
+    // Mars is lost before sunrise by every unaided eye.
+    let stage = Stage::new("Fennick Common", "2026-12-04", Half::Dawn, Body::Mars);
     let scene = stage.scene("2026-12-05T07:02:00");
     let tracks = Tracks::new(&scene);
     let model = plot::model::Model::new(&scene, &tracks);
-    let mut crossings = 0;
     for curve in &model.curves[..3] {
-        let night = scene.night.body(Body::Venus).unwrap();
+        let night = scene.night.body(Body::Mars).unwrap();
         let window = night.windows_in(curve.eye, Half::Dawn).last().unwrap();
         let end_s = window.end.moment.seconds_since(tracks.start);
         let end_min = (end_s - model.origin_s) / 60.0;
         let points = curve.pieces.last().unwrap();
-        if end_min > model.to_min {
-            // Plain beyond what is shown.
-            assert!(points.last().unwrap()[1] >= 0.0, "{:?}", curve.eye);
-            continue;
-        }
-        crossings += 1;
         let last = points.iter().rfind(|[_, mag]| *mag >= 0.0).unwrap();
         let off_min = end_min - last[0];
         assert!((0.0..=1.02).contains(&off_min), "{:?} {off_min}", curve.eye);
     }
-    assert!(crossings > 0, "at least a passer-by loses Venus by then");
     // The chosen eye's own margin lies within its spread.
     let within = model.curves[1].pieces.iter().flatten();
     for ([_, mag], [_, least, greatest]) in within.zip(model.spread.iter().flatten()) {

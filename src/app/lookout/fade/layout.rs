@@ -323,7 +323,7 @@ impl Builder<'_> {
             .map(|stray| self.strayed(&time, stray, end.is_end));
         let words = |time: &str| {
             let obstacle = end.obstacle.as_deref();
-            self.says.edge(end.cause, end.is_end, obstacle, time)
+            self.says.edge(end.spoken, end.is_end, obstacle, time)
         };
         let Some(plain) = words(&time) else {
             return Vec::new();

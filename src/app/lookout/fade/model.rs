@@ -6,6 +6,7 @@ use crate::light::Standing;
 use crate::measure::Moment;
 use crate::plan::{BodyNight, Cause, Edge, Half, Window};
 use crate::sky::Body;
+use crate::words::spoken_cause;
 
 /// The fade of one half-night. Times are seconds after its start.
 #[derive(Clone, Debug, PartialEq)]
@@ -75,9 +76,11 @@ pub struct End {
     pub at_s: f64,
     /// Why.
     pub cause: Cause,
+    /// The same as it is told: see [`spoken_cause`].
+    pub spoken: &'static str,
     /// Whether the window ends there, or else starts.
     pub is_end: bool,
-    /// How far it may stray, where light is the cause.
+    /// How far it may stray, where the sky's light or the air is the cause.
     pub stray: Option<Stray>,
     /// What stands there, where the skyline is the cause and what stands there has a name.
     pub obstacle: Option<String>,
@@ -173,12 +176,15 @@ impl Lane {
             .filter_map(|(window, edge, is_end)| {
                 let since_start = |moment: Moment| moment.seconds_since(tracks.start);
                 let at_s = since_start(edge.moment);
+                let spoken = spoken_cause(scene.night, edge);
                 let is_within = at_s >= from_s - 1.0 && at_s <= to_s + 1.0;
                 is_within.then(|| End {
                     at_s,
                     cause: edge.cause,
+                    spoken,
                     is_end,
-                    stray: Stray::of(window, is_end, since_start),
+                    stray: Stray::of(window, is_end, since_start)
+                        .filter(|_| spoken == edge.cause.name()),
                     obstacle: night.and_then(|night| obstacle(scene, night, edge)),
                 })
             })

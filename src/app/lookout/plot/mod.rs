@@ -64,10 +64,11 @@ impl MarginPlot {
             let point = PlotPoint::new(minutes, mag);
             plot.transform.position_from_point(&point)
         };
-        child.painter().set(
-            below,
+        let grounds = vec![
+            daylight(&model, look, frame, screen),
             spread(&model, colour(look, scene.eye), frame, screen),
-        );
+        ];
+        child.painter().set(below, Shape::Vec(grounds));
         names::paint(ui, scene, says, &model, frame, screen);
         let response = plot.response;
         let body = says.body(scene.body);
@@ -100,7 +101,8 @@ fn frame<'a>(scene: &'a Scene<'a>, says: Says<'a>, model: &'a Model) -> Plot<'a>
         Origin::Start => "plot-minutes-start",
     };
     let hint = |axis: AxisHints<'a>| axis.tick_label_color(colour).tick_label_font(font.clone());
-    let name = RichText::new(says.text(axis_name, &[]))
+    let minutes = says.text(axis_name, &[]);
+    let name = RichText::new(says.text("plot-title", &[("minutes", &minutes)]))
         .font(font.clone())
         .color(colour);
     let span_min = model.to_min - model.from_min;
@@ -179,6 +181,16 @@ fn curves<'a>(plot: &mut egui_plot::PlotUi<'a>, scene: &Scene<'_>, says: Says<'_
             plot.line(line.allow_hover(false));
         }
     }
+}
+
+/// The ground of the part in which the Sun is up.
+fn daylight(model: &Model, look: &Look, frame: Rect, screen: impl Fn([f64; 2]) -> Pos2) -> Shape {
+    let Some((from, to)) = model.daylight_min else {
+        return Shape::Noop;
+    };
+    let [from, to] = [from, to].map(|minutes| screen([minutes, 0.0]).x);
+    let ground = Rect::from_x_y_ranges(from..=to, frame.y_range());
+    Shape::rect_filled(ground, 0.0, look.colours.line.gamma_multiply(0.6))
 }
 
 /// The chosen eye's spread as a band, cut off at the frame.

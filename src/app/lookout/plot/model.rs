@@ -1,6 +1,6 @@
 //! The chosen body's margin for each eye through the shown span.
 
-use crate::app::lookout::model::{Sample, Tracks, shown_span};
+use crate::app::lookout::model::{SUN_RISE_SET, Sample, Tracks, shown_span};
 use crate::app::scene::Scene;
 use crate::light::{Eye, Standing};
 use crate::measure::Moment;
@@ -17,6 +17,8 @@ pub struct Model {
     pub from_min: f64,
     /// Its end.
     pub to_min: f64,
+    /// The part of it in which the Sun is up: nobody is sent looking then.
+    pub daylight_min: Option<(f64, f64)>,
     /// The least margin that is shown.
     pub lowest_mag: f64,
     /// The greatest.
@@ -89,6 +91,7 @@ impl Model {
             origin_s,
             from_min: minutes(from_s),
             to_min: minutes(to_s),
+            daylight_min: daylight(scene, minutes(from_s), minutes(to_s), origin),
             lowest_mag,
             highest_mag,
             curves,
@@ -104,6 +107,16 @@ fn origin(scene: &Scene<'_>, tracks: &Tracks) -> (Origin, f64) {
         (Half::Dusk, Some(set), _) => (Origin::Sunset, at_s(set)),
         (Half::Dawn, _, Some(rise)) => (Origin::Sunrise, at_s(rise)),
         _ => (Origin::Start, 0.0),
+    }
+}
+
+/// The part of the shown span in which the Sun is up, minutes.
+fn daylight(scene: &Scene<'_>, from: f64, to: f64, origin: Origin) -> Option<(f64, f64)> {
+    match origin {
+        Origin::Sunset => (from < 0.0).then_some((from, 0.0)),
+        Origin::Sunrise => (to > 0.0).then_some((0.0, to)),
+        // It stays up, or else down, throughout.
+        Origin::Start => (scene.night.sun.highest > SUN_RISE_SET).then_some((from, to)),
     }
 }
 

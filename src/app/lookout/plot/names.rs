@@ -1,5 +1,5 @@
-//! What is written in the plot: its title, what the dashed line means, and the eyes' names at
-//! the ends of their curves.
+//! What is written in the plot: what the dashed line means, which part is daylight, and the
+//! eyes' names at the ends of their curves.
 
 use super::colour;
 use super::model::Model;
@@ -7,7 +7,7 @@ use crate::app::lookout::says::Says;
 use crate::app::palette::Look;
 use crate::app::scene::Scene;
 use crate::light::Eye;
-use eframe::egui::{Align2, FontId, Galley, Pos2, Rect, Ui, Vec2, pos2, vec2};
+use eframe::egui::{Align2, FontId, Galley, Pos2, Rect, Ui, Vec2, pos2};
 use std::sync::Arc;
 
 /// Between a curve's end and its name.
@@ -52,40 +52,34 @@ pub fn paint(
     let text = |id: &str, font: FontId| {
         painter.layout_no_wrap(says.text(id, &[]), font, look.colours.lesser)
     };
-    let title = text("plot-title", look.font(look.sizes.label));
     let threshold = text("plot-threshold", look.font(look.sizes.least));
     let zero = screen([model.from_min, 0.0]).y;
-    let corners = [(Align2::RIGHT_TOP, -1.0), (Align2::LEFT_TOP, 1.0)];
-    let title_at = first_free(
-        &points,
-        corners.map(|(corner, inwards)| {
-            let at = corner.pos_in_rect(&frame) + vec2(inwards * GAP, 1.0);
-            corner.anchor_size(at, title.size())
-        }),
-    );
     let sides = [
         (Align2::LEFT_BOTTOM, frame.left() + GAP),
         (Align2::RIGHT_BOTTOM, frame.right() - GAP),
         (Align2::LEFT_TOP, frame.left() + GAP),
         (Align2::RIGHT_TOP, frame.right() - GAP),
     ];
-    let threshold_at = first_free(
-        &points,
-        sides.map(|(side, x)| side.anchor_size(pos2(x, zero), threshold.size())),
-    );
-    painter.galley(title_at.min, title, look.colours.lesser);
-    if !threshold_at.intersects(title_at) {
-        painter.galley(threshold_at.min, threshold, look.colours.lesser);
+    let places = sides.map(|(side, x)| side.anchor_size(pos2(x, zero), threshold.size()));
+    let threshold_at = first_free(&points, places).unwrap_or(places[0]);
+    painter.galley(threshold_at.min, threshold, look.colours.lesser);
+    if let Some((from, to)) = model.daylight_min {
+        let daylight = text("plot-sun-up", look.font(look.sizes.least));
+        let [from, to] = [from, to].map(|minutes| screen([minutes, model.highest_mag]));
+        let place = Align2::CENTER_TOP.anchor_size(from.lerp(to, 0.5), daylight.size());
+        if first_free(&points, [place]).is_some() {
+            painter.galley(place.min, daylight, look.colours.lesser);
+        }
     }
     for (at, name) in names {
         painter.galley(at, name, look.colours.lesser);
     }
 }
 
-/// The first of some places that no curve runs through, or else the first.
-fn first_free<const PLACES: usize>(points: &[Pos2], places: [Rect; PLACES]) -> Rect {
-    let is_free = |place: &&Rect| !points.iter().any(|point| place.contains(*point));
-    *places.iter().find(is_free).unwrap_or(&places[0])
+/// The first of some places that no curve runs through.
+fn first_free<const PLACES: usize>(points: &[Pos2], places: [Rect; PLACES]) -> Option<Rect> {
+    let is_free = |place: &Rect| !points.iter().any(|point| place.contains(*point));
+    places.into_iter().find(is_free)
 }
 
 /// The eyes' names right of where their curves end, pushed apart where these end close together.
@@ -123,7 +117,7 @@ fn eyes(
     names.sort_by(|(a, _), (b, _)| a.y.total_cmp(&b.y));
     let heights: Vec<f32> = names.iter().map(|(_, name)| name.size().y).collect();
     let mut tops: Vec<f32> = names.iter().map(|(at, _)| at.y).collect();
-    push_apart(&mut tops, &heights, frame.top(), frame.bottom() + GAP);
+    push_apart(&mut tops, &heights, frame.top(), frame.bottom() + 2.0);
     for ((at, _), top) in names.iter_mut().zip(tops) {
         at.y = top;
     }
