@@ -57,8 +57,9 @@ impl Exposure {
             return [0.0; 3];
         }
         let y = xyz[1].max(1e-9);
-        let ln_y = y.ln();
-        let s = (CONTRAST * ln_y + self.ln_scale).exp();
+        // Single precision: far finer than a screen's step, and much quicker.
+        let ln_y = f64::from((y as f32).ln());
+        let s = f64::from(((CONTRAST * ln_y + self.ln_scale) as f32).exp());
         let shown = s / (1.0 + s);
         let mut rgb = linear_srgb_from_xyz(xyz).map(|part| part / y);
         let night = nightly(ln_y);

@@ -13,6 +13,7 @@ use crate::app::command::{Command, Commands};
 use crate::app::palette::Theme;
 use crate::app::scene::Scene;
 use crate::measure::Angle;
+use crate::sky::Body;
 use eframe::egui::accesskit::{Action, ActionData};
 use eframe::egui::{
     Color32, ColorImage, CursorIcon, EventFilter, Response, Role, Sense, Stroke, StrokeKind,
@@ -109,6 +110,12 @@ impl Fade {
 /// above does.
 fn band_image(scene: &Scene<'_>, tracks: &Tracks, model: &Model) -> ColorImage {
     const HIGHEST_DEG: f64 = 24.0;
+    /// The Moon's own glare would be a string of beads across its band.
+    const BESIDE_THE_MOON: Angle = Angle::from_degrees(15.0);
+    let beside = match scene.body {
+        Body::Moon => BESIDE_THE_MOON,
+        _ => Angle::ZERO,
+    };
     let [columns, rows] = SKY_SIZE;
     let samples = tracks.body(scene.body);
     let mut pixels = vec![Color32::BLACK; columns * rows];
@@ -119,7 +126,8 @@ fn band_image(scene: &Scene<'_>, tracks: &Tracks, model: &Model) -> ColorImage {
         let nearest = samples.partition_point(|sample| sample.at_s < at_s);
         let azimuth = samples
             .get(nearest.min(samples.len().saturating_sub(1)))
-            .map_or(Angle::ZERO, |sample| sample.azimuth);
+            .map_or(Angle::ZERO, |sample| sample.azimuth)
+            + beside;
         let glow = sky::glow(scene, tracks.moment(at_s));
         let picture = Picture::new(&glow, &scene.look);
         for row in 0..rows {

@@ -132,10 +132,11 @@ fn path(painter: &Painter, look: &Look, stretch: &Stretch) {
     let colours = &look.colours;
     match stretch.standing {
         Standing::Plain => {
-            painter.add(Shape::line(
-                stretch.points.clone(),
-                Stroke::new(4.0, colours.seen),
-            ));
+            // The dark edge keeps it apart from the glow of dusk, which has the same colour.
+            let edge = Stroke::new(6.0, colours.sky_shade.gamma_multiply(0.35));
+            painter.add(Shape::line(stretch.points.clone(), edge));
+            let line = Stroke::new(4.0, colours.seen);
+            painter.add(Shape::line(stretch.points.clone(), line));
         }
         Standing::WashedOut => {
             let stroke = Stroke::new(1.8, colours.too_bright);
