@@ -1,78 +1,71 @@
-"""Makes the planets' series (NAME.csv) from the VSOP87A coefficients.
+"""Trims VSOP87A to the files *.txt beside this.
 
-Source: Bretagnon & Francou 1988 (Astron. Astrophys. 202, 309), version A: heliocentric
-rectangular coordinates, dynamical ecliptic and equinox J2000, as carried by the registry
-crate `vsop87` 3.0.0 (MIT or Apache-2.0). Call: python3 make_planets.py FOLDER_OF_THE_CRATE
+    pip install numpy jplephem
+    python make_planets.py SOURCE_FOLDER_OF_THE_CRATE_vsop87_3.0.0/src
 
-Each series is cut where the loss, measured at random instants of 1598-2402, stays within
-LOSS_ARCSEC as seen over the planet's least distance from the Earth.
+A term goes when its greatest amplitude over 1598-2403, A |t|^power, is below one threshold for
+the whole planet; the threshold is the largest for which the trimmed series stays, at 4000
+random instants, within 0.005 arcsec of the full one as seen from the planet's least distance
+from the Earth (for the Earth: as seen from Venus at its closest).
 """
-import math
-import os
-import re
+
 import sys
 
-import numpy as np
+import numpy
 
-LOSS_ARCSEC = 0.004
-# Least distance at which an error of this planet's place is seen, au. The Earth's own counts
-# at Venus' least distance.
-LEAST_AU = {
+from vsop87 import (ARCSEC, DAYS_PER_MILLENNIUM, FIRST_DAY, HERE, LAST_DAY, PLANETS, evaluate,
+                    read_asset, read_crate)
+
+ALLOWED = 0.005 * ARCSEC
+# Least distance from the Earth, au, rounded down.
+LEAST_DISTANCE_AU = {
     "mercury": 0.54, "venus": 0.26, "earth": 0.26, "mars": 0.37,
-    "jupiter": 3.9, "saturn": 8.0, "uranus": 17.2, "neptune": 28.8,
+    "jupiter": 3.9, "saturn": 7.9, "uranus": 17.2, "neptune": 28.6,
 }
-NUMBER = re.compile(r"-?\d+\.?\d*(?:[eE]-?\d+)?")
+T_MAX = max(-FIRST_DAY, LAST_DAY) / DAYS_PER_MILLENNIUM
 
 
-def series_of(path):
-    """[(axis, power, a, b, c)] of one planet's source file."""
-    text = open(path).read()
-    terms = []
-    for block in re.finditer(r"const ([XYZ])(\d): \[\[f64; \d+\]; 3\] = \[(.*?)\n\];", text, re.S):
-        axis, power, body = block.group(1), int(block.group(2)), block.group(3)
-        body = re.sub(r"//.*", "", body).replace("_", "")
-        body = re.sub(r"(?:std::f64::consts::|core::f64::consts::)?\bPI\b", repr(math.pi), body)
-        columns = [
-            [float(number) for number in NUMBER.findall(column)]
-            for column in re.findall(r"\[(.*?)\]", body, re.S)
-        ]
-        assert len(columns) == 3 and len(set(map(len, columns))) == 1, (path, axis, power)
-        terms += [(axis, power, a, b, c) for a, b, c in zip(*columns) if a != 0.0]
-    return terms
+def split(series, threshold):
+    kept, dropped = {}, {}
+    for (axis, power), terms in series.items():
+        keep = numpy.abs(terms[:, 0]) * T_MAX**power >= threshold
+        kept[(axis, power)] = terms[keep]
+        dropped[(axis, power)] = terms[~keep]
+    return kept, dropped
 
 
-def places(terms, millennia):
-    total = {axis: np.zeros_like(millennia) for axis in "XYZ"}
-    for axis, power, a, b, c in terms:
-        total[axis] += a * millennia**power * np.cos(b + c * millennia)
-    return np.array([total[axis] for axis in "XYZ"])
+def loss(series, threshold, days):
+    return numpy.linalg.norm(evaluate(split(series, threshold)[1], days), axis=0).max()
 
 
-def main(crate):
-    rng = np.random.default_rng(1)
-    millennia = rng.uniform(-0.402, 0.402, 1500)
-    for planet, least_au in LEAST_AU.items():
-        terms = series_of(os.path.join(crate, "src", "vsop87a", planet + ".rs"))
-        size = [a * 0.402**power for _, power, a, _, _ in terms]
-        whole = places(terms, millennia)
+def main(source_folder):
+    days = numpy.random.default_rng(1987).uniform(FIRST_DAY, LAST_DAY, 4000)
+    for planet in PLANETS:
+        full = read_crate(source_folder, planet)
+        allowed_au = ALLOWED * LEAST_DISTANCE_AU[planet]
+        low, high = allowed_au / 1000, allowed_au
+        while high / low > 1.05:
+            middle = (low * high) ** 0.5
+            if loss(full, middle, days) <= allowed_au:
+                low = middle
+            else:
+                high = middle
+        kept, _ = split(full, low)
+        count = sum(map(len, kept.values()))
+        of = sum(map(len, full.values()))
+        with open(HERE / f"{planet}.txt", "w") as out:
+            out.write("# axis power A_1e-11_au B_rad C_rad_per_millennium\n")
+            for (axis, power), terms in sorted(kept.items()):
+                for a, b, c in terms:
+                    digits = max(1, len(str(round(abs(a) * 1e11))))
+                    phase = f"{b:.{digits}f}"  # good to the last digit of A
+                    out.write(f"{axis} {power} {a * 1e11:.0f} {phase} {c:.11f}".rstrip("0"))
+                    out.write("\n")
+        # Of the file as written, with its rounded amplitudes and phases.
+        difference = evaluate(read_asset(planet), days) - evaluate(full, days)
+        lost = numpy.linalg.norm(difference, axis=0).max()
+        print(f"| {planet} | {of} | {count} | {lost:.1e} | {lost / LEAST_DISTANCE_AU[planet] / ARCSEC:.4f} |")
 
-        def kept(cut):
-            return [term for term, s in zip(terms, size) if abs(s) >= cut]
 
-        def loss(cut):
-            missed = places(kept(cut), millennia) - whole
-            return np.degrees(np.linalg.norm(missed, axis=0).max() / least_au) * 3600
-
-        low, high = 1e-12, 1e-5
-        for _ in range(24):
-            middle = math.sqrt(low * high)
-            low, high = (middle, high) if loss(middle) <= LOSS_ARCSEC else (low, middle)
-        chosen = kept(low)
-        with open(planet + ".csv", "w") as out:
-            out.write("axis,power,amplitude_au,phase_rad,rate_rad_per_millennium\n")
-            for axis, power, a, b, c in chosen:
-                out.write(f"{axis.lower()},{power},{a!r},{b!r},{c!r}\n")
-        print(f"{planet}: {len(chosen)} of {len(terms)} terms, loss {loss(low):.4f} arcsec")
-
-
-main(sys.argv[1])
+if __name__ == "__main__":
+    main(sys.argv[1])

@@ -1,1 +1,28 @@
 //! The desktop window.
+//!
+//! A frame runs in this order: keys are taken out of the input ([`keys`]), time passes
+//! ([`state::State::pass`]), the frame is drawn and only records [`command::Command`]s, and
+//! these are run at its end. Planning happens in [`state`], when site, spot or date change.
+
+mod cards;
+mod caution;
+pub mod command;
+mod dialogs;
+mod frame;
+mod keys;
+pub mod lookout;
+pub mod palette;
+mod pickers;
+mod planned;
+pub mod scene;
+mod settings;
+mod sites;
+mod start;
+pub mod state;
+mod theme;
+mod transport;
+mod widgets;
+mod window;
+
+pub use start::{Renderer, Start, WindowError, run};
+pub use window::DesktopWindow;

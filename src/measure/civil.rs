@@ -43,8 +43,12 @@ pub struct NotOnce {
 }
 
 impl LocalTime {
-    /// Looks a local time up.
+    /// Looks a local time up. At the far ends of the calendar, where an offset could lead out of
+    /// it, the offset is taken as zero.
     pub fn find(local: NaiveDateTime, zone: Tz) -> Self {
+        if is_at_the_calendars_end(local.date()) {
+            return Self::Once(local.and_utc());
+        }
         let found = zone.from_local_datetime(&local);
         match (found.earliest(), found.latest()) {
             (Some(earlier), Some(later)) if earlier != later => Self::Twice {
@@ -99,8 +103,12 @@ pub fn date_exists(date: NaiveDate, zone: Tz) -> bool {
 }
 
 /// The first instant of a local date: midnight, or the instant at which the clock jumps over
-/// midnight into it. `None` where the zone skipped the date.
+/// midnight into it. `None` where the zone skipped the date (or beyond the year ±262000, where
+/// the calendar ends).
 pub fn start_of_date(date: NaiveDate, zone: Tz) -> Option<DateTime<Utc>> {
+    if is_at_the_calendars_end(date) {
+        return None;
+    }
     let start = LocalTime::find(date.and_time(NaiveTime::MIN), zone).first();
     (local_date(start, zone) == date).then_some(start)
 }
@@ -149,6 +157,10 @@ pub fn weekday(instant: DateTime<Utc>, zone: Tz) -> Weekday {
 /// Local time minus civil time at offset zero, at an instant; east of Greenwich positive.
 pub fn offset(instant: DateTime<Utc>, zone: Tz) -> FixedOffset {
     zone.offset_from_utc_datetime(&instant.naive_utc()).fix()
+}
+
+fn is_at_the_calendars_end(date: NaiveDate) -> bool {
+    date.year().abs() > 262_000
 }
 
 /// The first instant, to the second, at which the clock shows `local` or more. Only asked where

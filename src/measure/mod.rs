@@ -10,5 +10,5 @@ mod vector;
 
 pub use angle::Angle;
 pub use chebyshev::Chebyshev;
-pub use instant::{DateOutOfRange, Moment, TimeScales, Tt, Ut1};
+pub use instant::{CivilScale, DateOutOfRange, Moment, TimeScales, Tt, Ut1, check_date};
 pub use vector::{Matrix, Vector};

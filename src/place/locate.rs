@@ -62,8 +62,8 @@ fn token_length(rest: &str, first: char) -> usize {
     let is_in_word = |c: char| c.is_alphanumeric() || c == '_';
     if rest.starts_with("//") {
         rest.find('\n').unwrap_or(rest.len())
-    } else if rest.starts_with("/*") {
-        rest[2..].find("*/").map_or(rest.len(), |end| end + 4)
+    } else if let Some(comment) = rest.strip_prefix("/*") {
+        comment.find("*/").map_or(rest.len(), |end| end + 4)
     } else if first == '"' {
         let mut is_escaped = false;
         let end = rest[1..].find(|c: char| {

@@ -16,6 +16,7 @@ mod obstacle;
 mod silhouette;
 mod site;
 mod skyline;
+mod stretch;
 pub mod zone;
 
 pub use air::{Extinction, Haze, SiteAir, SiteSky, standard_pressure_hpa};

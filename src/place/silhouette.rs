@@ -7,6 +7,7 @@
 
 use super::obstacle::{PlanPoint, sides};
 use super::{Obstacle, Spot};
+use std::f64::consts::PI;
 
 /// A straight edge in space, seen from the eye.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -48,7 +49,7 @@ impl Edge {
             (self.end, self.start)
         };
         let width = turn.abs().atan2(a.plan.dot(b.plan));
-        if width < NARROWEST || width > std::f64::consts::PI - NARROWEST {
+        if !(NARROWEST..=PI - NARROWEST).contains(&width) {
             return None;
         }
         let area = a.plan.cross(b.plan);

@@ -20,7 +20,7 @@ pub const BORDERS_NOTICE: &str = "Time zone suggestions contain information from
 pub struct UnknownZone {
     /// The name.
     pub name: String,
-    /// Names of the list that are spelled most like it, the nearest first.
+    /// Names of the list that are spelled most like it.
     pub nearest: Vec<&'static str>,
 }
 
@@ -53,7 +53,7 @@ pub fn suggestion(latitude: Angle, longitude: Angle) -> Option<Tz> {
         .and_then(|name| name.parse().ok())
 }
 
-/// Up to three names: those spelled alike, and those whose last part is.
+/// Up to three names, all equally near: spelled most alike as a whole or in their last part.
 fn nearest(name: &str) -> Vec<&'static str> {
     const MOST: usize = 3;
     const FARTHEST: usize = 3;
@@ -73,6 +73,8 @@ fn nearest(name: &str) -> Vec<&'static str> {
         .filter(|(distance, _)| *distance <= FARTHEST)
         .collect();
     ranked.sort_unstable();
+    let best = ranked.first().map_or(0, |(distance, _)| *distance);
+    ranked.retain(|(distance, _)| *distance == best);
     ranked
         .into_iter()
         .take(MOST)

@@ -85,6 +85,8 @@ pub struct BodyNight {
     /// Whether it is above that horizon when the night begins; with no rising and no setting
     /// it then never sets, or else never rises.
     pub is_up_at_start: bool,
+    /// Whether it stands clear of the skyline when the night begins.
+    pub is_clear_at_start: bool,
     /// Where it clears or goes behind the skyline, in order.
     pub skyline_events: Vec<SkylineEvent>,
     /// When it is plain for the eye, in order, through the whole night.
@@ -165,9 +167,11 @@ pub struct Window {
 pub struct Best {
     /// When.
     pub moment: Moment,
-    /// Refracted altitude.
+    /// Azimuth of the centre.
+    pub azimuth: Angle,
+    /// Refracted altitude of the point that counts.
     pub altitude: Angle,
-    /// Clearance.
+    /// That altitude above the skyline.
     pub clearance: Angle,
     /// The lesser of the two merits.
     pub merit: f64,

@@ -3,7 +3,7 @@
 use super::night::{BodyNight, Night, NightError, NightRequest, SkylineEvent, SunTimes};
 use super::track::{Track, Watch};
 use super::{Half, optics, windows};
-use crate::measure::{Angle, DateOutOfRange, Moment, civil, search};
+use crate::measure::{Angle, DateOutOfRange, Moment, check_date, civil, search};
 use crate::sky::{Body, Ephemeris, OutsideEphemeris, Span};
 
 /// The refraction that the convention for rising and setting takes at the horizon.
@@ -71,6 +71,7 @@ impl Culminations {
     /// latitude and, unlike the altitude's turning points, at the poles too, where the altitude
     /// follows the declination alone. The two differ by seconds elsewhere.
     fn find(ephemeris: &Ephemeris, request: &NightRequest<'_>) -> Result<Self, NightError> {
+        check_date(request.date).map_err(NightError::OutOfRange)?;
         let noon = civil::middle_of(request.date, request.zone).ok_or(NightError::NoSuchDate {
             date: request.date,
             zone: request.zone,
@@ -212,6 +213,10 @@ fn body_night(
             .samples
             .first()
             .is_some_and(|first| above_horizon(first) >= 0.0),
+        is_clear_at_start: track
+            .samples
+            .first()
+            .is_some_and(|first| first.clearance > Angle::ZERO),
         skyline_events,
         windows: whole,
         dusk_windows: dusk,

@@ -125,6 +125,7 @@ impl Searched<'_> {
         let sample = watch.sample(self.track.body, at_s);
         Best {
             moment: watch.moment(at_s),
+            azimuth: sample.azimuth,
             altitude: sample.refracted,
             clearance: sample.clearance,
             merit: merit(at_s),

@@ -22,11 +22,23 @@ fn hours(date: NaiveDate, zone: Tz) -> f64 {
 #[test]
 fn an_ordinary_day_runs_from_midnight_to_midnight() {
     let (day, zone) = (date("2026-12-05"), Tz::Europe__London);
-    assert_eq!(civil::start_of_date(day, zone), Some(utc("2026-12-05T00:00:00Z")));
-    assert_eq!(civil::end_of_date(day, zone), Some(utc("2026-12-06T00:00:00Z")));
-    assert_eq!(civil::middle_of(day, zone), Some(utc("2026-12-05T12:00:00Z")));
+    assert_eq!(
+        civil::start_of_date(day, zone),
+        Some(utc("2026-12-05T00:00:00Z"))
+    );
+    assert_eq!(
+        civil::end_of_date(day, zone),
+        Some(utc("2026-12-06T00:00:00Z"))
+    );
+    assert_eq!(
+        civil::middle_of(day, zone),
+        Some(utc("2026-12-05T12:00:00Z"))
+    );
     let tonga = Tz::Pacific__Tongatapu;
-    assert_eq!(civil::start_of_date(day, tonga), Some(utc("2026-12-04T11:00:00Z")));
+    assert_eq!(
+        civil::start_of_date(day, tonga),
+        Some(utc("2026-12-04T11:00:00Z"))
+    );
 }
 
 #[test]
@@ -34,7 +46,11 @@ fn days_with_a_clock_change_are_longer_or_shorter() {
     let zone = Tz::Europe__London;
     assert_eq!(hours(date("2026-03-29"), zone), 23.0, "summer time begins");
     assert_eq!(hours(date("2026-10-25"), zone), 25.0, "summer time ends");
-    assert_eq!(hours(date("2026-10-04"), Tz::Australia__Lord_Howe), 23.5, "half an hour there");
+    assert_eq!(
+        hours(date("2026-10-04"), Tz::Australia__Lord_Howe),
+        23.5,
+        "half an hour there"
+    );
 }
 
 #[test]
@@ -67,14 +83,36 @@ fn a_date_skipped_at_the_date_line_does_not_exist() {
 #[test]
 fn a_midnight_that_does_not_exist_gives_the_first_instant_that_does() {
     for (zone, day, start, length_hours) in [
-        (Tz::Africa__Cairo, "2023-04-28", "2023-04-27T22:00:00Z", 23.0),
-        (Tz::America__Sao_Paulo, "2018-11-04", "2018-11-04T03:00:00Z", 23.0),
+        (
+            Tz::Africa__Cairo,
+            "2023-04-28",
+            "2023-04-27T22:00:00Z",
+            23.0,
+        ),
+        (
+            Tz::America__Sao_Paulo,
+            "2018-11-04",
+            "2018-11-04T03:00:00Z",
+            23.0,
+        ),
         (Tz::Asia__Beirut, "2024-03-31", "2024-03-30T22:00:00Z", 23.0),
-        (Tz::America__Santiago, "2026-09-06", "2026-09-06T04:00:00Z", 23.0),
+        (
+            Tz::America__Santiago,
+            "2026-09-06",
+            "2026-09-06T04:00:00Z",
+            23.0,
+        ),
     ] {
-        assert_eq!(civil::start_of_date(date(day), zone), Some(utc(start)), "{zone} {day}");
+        assert_eq!(
+            civil::start_of_date(date(day), zone),
+            Some(utc(start)),
+            "{zone} {day}"
+        );
         let shown = civil::local(utc(start), zone).time().to_string();
-        assert_eq!(shown, "01:00:00", "{zone}: the clock jumped from midnight to one");
+        assert_eq!(
+            shown, "01:00:00",
+            "{zone}: the clock jumped from midnight to one"
+        );
         assert_eq!(hours(date(day), zone), length_hours, "{zone} {day}");
         let midnight = date(day).and_time(chrono::NaiveTime::MIN);
         assert!(
@@ -89,7 +127,10 @@ fn clocks_turned_back_over_midnight_give_the_date_before_its_second_piece() {
     // At 24:00 on 2018-02-17 the clock of Sao Paulo went back to 23:00.
     let zone = Tz::America__Sao_Paulo;
     assert_eq!(hours(date("2018-02-17"), zone), 25.0);
-    assert_eq!(civil::start_of_date(date("2018-02-18"), zone), Some(utc("2018-02-18T03:00:00Z")));
+    assert_eq!(
+        civil::start_of_date(date("2018-02-18"), zone),
+        Some(utc("2018-02-18T03:00:00Z"))
+    );
     // St John's, 1987 to 2006, changed at 00:01: the new date had begun for a minute.
     let (zone, day) = (Tz::America__St_Johns, date("2005-10-30"));
     let start = civil::start_of_date(day, zone).expect("the date exists");
@@ -97,7 +138,10 @@ fn clocks_turned_back_over_midnight_give_the_date_before_its_second_piece() {
     assert_eq!(start, utc("2005-10-30T02:30:00Z"));
     assert_eq!(end_of_eve - start, TimeDelta::hours(1));
     assert_eq!(civil::local_date(start, zone), day);
-    assert_eq!(civil::local_date(end_of_eve - TimeDelta::seconds(1), zone), date("2005-10-29"));
+    assert_eq!(
+        civil::local_date(end_of_eve - TimeDelta::seconds(1), zone),
+        date("2005-10-29")
+    );
 }
 
 #[test]
@@ -107,7 +151,9 @@ fn an_hour_that_occurs_twice_is_refused_in_one_sentence_or_resolved_to_the_earli
     let (earlier, later) = (utc("2026-10-25T00:30:00Z"), utc("2026-10-25T01:30:00Z"));
     assert_eq!(found, LocalTime::Twice { earlier, later });
     assert_eq!((found.first(), found.last()), (earlier, later));
-    let sentence = civil::utc_from_local(twice, zone).expect_err("it occurs twice").to_string();
+    let sentence = civil::utc_from_local(twice, zone)
+        .expect_err("it occurs twice")
+        .to_string();
     assert_eq!(
         sentence,
         "the local time 2026-10-25 01:30:00 occurs twice in Europe/London, at offset +01:00 and \
@@ -120,9 +166,13 @@ fn an_hour_that_does_not_occur_is_refused_in_one_sentence() {
     let (zone, never) = (Tz::Europe__London, local("2026-03-29T01:30:00.250"));
     assert_eq!(
         LocalTime::find(never, zone),
-        LocalTime::Never { turned_at: utc("2026-03-29T01:00:00Z") }
+        LocalTime::Never {
+            turned_at: utc("2026-03-29T01:00:00Z")
+        }
     );
-    let sentence = civil::utc_from_local(never, zone).expect_err("it never occurs").to_string();
+    let sentence = civil::utc_from_local(never, zone)
+        .expect_err("it never occurs")
+        .to_string();
     assert_eq!(
         sentence,
         "the local time 2026-03-29 01:30:00 does not occur in Europe/London: the clock was \
@@ -164,17 +214,50 @@ fn after_2099_summer_time_is_no_longer_known() {
 
 #[test]
 fn every_date_that_exists_starts_within_itself_and_days_follow_each_other() {
-    for zone in [Tz::Asia__Gaza, Tz::America__Havana, Tz::Antarctica__Troll, Tz::Pacific__Apia] {
+    for zone in [
+        Tz::Asia__Gaza,
+        Tz::America__Havana,
+        Tz::Antarctica__Troll,
+        Tz::Pacific__Apia,
+    ] {
         let mut day = date("2009-12-25");
         while day < date("2012-01-05") {
             if let Some(start) = civil::start_of_date(day, zone) {
                 let end = civil::end_of_date(day, zone).expect("a date with a start has an end");
                 assert_eq!(civil::local_date(start, zone), day, "{zone} {day}");
-                assert_ne!(civil::local_date(start - TimeDelta::seconds(1), zone), day, "{zone}");
-                assert_eq!(civil::local_date(end - TimeDelta::seconds(1), zone), day, "{zone} {day}");
+                assert_ne!(
+                    civil::local_date(start - TimeDelta::seconds(1), zone),
+                    day,
+                    "{zone}"
+                );
+                assert_eq!(
+                    civil::local_date(end - TimeDelta::seconds(1), zone),
+                    day,
+                    "{zone} {day}"
+                );
                 assert_ne!(civil::local_date(end, zone), day, "{zone} {day}");
             }
             day = day.succ_opt().expect("a next day");
+        }
+    }
+}
+
+#[test]
+fn dates_at_the_ends_of_the_calendar_are_answered() {
+    for zone in [
+        Tz::Pacific__Kiritimati,
+        Tz::Pacific__Pago_Pago,
+        Tz::Europe__London,
+    ] {
+        for day in [NaiveDate::MIN, NaiveDate::MAX] {
+            assert_eq!(civil::start_of_date(day, zone), None, "{zone} {day}");
+            assert_eq!(civil::end_of_date(day, zone), None, "{zone} {day}");
+            assert_eq!(civil::middle_of(day, zone), None, "{zone} {day}");
+            let midnight = day.and_time(chrono::NaiveTime::MIN);
+            assert!(
+                civil::utc_from_local(midnight, zone).is_ok(),
+                "{zone} {day}"
+            );
         }
     }
 }

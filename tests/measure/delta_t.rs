@@ -32,7 +32,12 @@ fn published_values_are_met() {
     // IERS Bulletin A: TT - UT1 69.11 on 2026-01-01, 69.17 on 2026-07-01.
     for (julian_date, published_s) in [(2_461_041.5, 69.11), (2_461_222.5, 69.17)] {
         let actual = delta_t_s(Tt::from_julian_date(julian_date));
-        assert_within(actual, published_s, 0.01, "TT - UT1 in 2026, IERS Bulletin A");
+        assert_within(
+            actual,
+            published_s,
+            0.01,
+            "TT - UT1 in 2026, IERS Bulletin A",
+        );
     }
 }
 
@@ -115,7 +120,12 @@ fn the_years_2020_to_2026_agree_with_the_values_in_the_rise_and_set_table() {
         }
         let expected: f64 = expected.parse().expect("a figure");
         let actual = delta_t_s(Tt::from_days_since_j2000(days));
-        assert_within(actual, expected, 0.1, &format!("TT - UT1 at {utc}, Skyfield 1.55"));
+        assert_within(
+            actual,
+            expected,
+            0.1,
+            &format!("TT - UT1 at {utc}, Skyfield 1.55"),
+        );
         checked += 1;
     }
     assert!(checked > 1000, "only {checked} rows were compared");
@@ -132,7 +142,12 @@ fn there_is_no_step() {
     while at < days(2401.0) {
         at += STEP_DAYS;
         let here = delta_t_s(Tt::from_days_since_j2000(at));
-        assert_within(here, before, 0.05, &format!("TT - UT1 {STEP_DAYS} days on, day {at}"));
+        assert_within(
+            here,
+            before,
+            0.05,
+            &format!("TT - UT1 {STEP_DAYS} days on, day {at}"),
+        );
         before = here;
     }
     // Across each join within a second; the published coefficients are rounded to 0.001 s.
@@ -140,8 +155,16 @@ fn there_is_no_step() {
         let near = days(join);
         for k in -40..40 {
             let at = near + f64::from(k) * 0.25;
-            let (a, b) = (Tt::from_days_since_j2000(at), Tt::from_days_since_j2000(at + 1e-5));
-            assert_within(delta_t_s(b), delta_t_s(a), 2.5e-3, &format!("across a join, day {at}"));
+            let (a, b) = (
+                Tt::from_days_since_j2000(at),
+                Tt::from_days_since_j2000(at + 1e-5),
+            );
+            assert_within(
+                delta_t_s(b),
+                delta_t_s(a),
+                2.5e-3,
+                &format!("across a join, day {at}"),
+            );
         }
     }
 }
@@ -149,9 +172,23 @@ fn there_is_no_step() {
 #[test]
 fn the_near_future_is_nearly_flat_and_the_far_future_grows() {
     let in_year = |year: f64| delta_t_s(tt_of_year(year));
-    assert_within(in_year(2035.0), 70.0, 1.0, "nearly flat: today's 69.2 s plus a slow rise");
-    assert_within(in_year(2050.0), 72.5, 2.5, "nearly flat: today's 69.2 s plus a slow rise");
-    assert!(in_year(2400.0) > 400.0, "tidal slowing adds minutes by 2400: {}", in_year(2400.0));
+    assert_within(
+        in_year(2035.0),
+        70.0,
+        1.0,
+        "nearly flat: today's 69.2 s plus a slow rise",
+    );
+    assert_within(
+        in_year(2050.0),
+        72.5,
+        2.5,
+        "nearly flat: today's 69.2 s plus a slow rise",
+    );
+    assert!(
+        in_year(2400.0) > 400.0,
+        "tidal slowing adds minutes by 2400: {}",
+        in_year(2400.0)
+    );
 }
 
 #[test]
@@ -160,7 +197,13 @@ fn the_uncertainty_is_least_where_there_are_observations() {
     assert_within(in_year(1600.0), 20.0, 1e-6, "commonly quoted, 1600");
     assert_within(in_year(1750.0), 3.0, 1e-6, "commonly quoted, 1700 and 1800");
     assert_within(in_year(2020.0), 0.01, 1e-6, "observed");
-    let future: Vec<f64> = (2030..=2400).step_by(10).map(|year| in_year(f64::from(year))).collect();
-    assert!(future.is_sorted_by(|a, b| a < b), "grows with time: {future:?}");
+    let future: Vec<f64> = (2030..=2400)
+        .step_by(10)
+        .map(|year| in_year(f64::from(year)))
+        .collect();
+    assert!(
+        future.is_sorted_by(|a, b| a < b),
+        "grows with time: {future:?}"
+    );
     assert!((3.0..10.0).contains(&future[2]), "2050: {}", future[2]);
 }

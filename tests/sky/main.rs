@@ -5,6 +5,7 @@
 #[path = "../common/mod.rs"]
 mod common;
 
+mod ephemeris;
 mod frames;
 mod handbook;
 mod magnitudes;

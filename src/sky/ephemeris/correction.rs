@@ -1,79 +1,128 @@
-//! What brings the outer planets' series to JPL DE440.
-//!
-//! Kept as `assets/series/corrections.csv` and made by `make_corrections.py` beside it: for each
-//! planet the radial, along-track and normal differences, in parts of the distance, as a cubic
-//! in time (units of four centuries) by 1, cos L and sin L.
+//! What VSOP87A lacks against JPL DE440, for Mars to Neptune.
 
-use crate::measure::{Angle, Tt, Vector};
+use crate::measure::{Angle, Vector};
 
-/// Coefficients of one part, by shape (1, cos L, sin L) and power of time.
-type Part = [[f64; 4]; 3];
+const TEXT: &str = include_str!("../../../assets/series/corrections.txt");
+/// The polynomials' variable is the time from J2000 over this many thousands of years.
+const SPAN_MILLENNIA: f64 = 0.403;
 
-/// One planet's correction.
-#[derive(Clone, Debug)]
-pub(super) struct Correction {
-    /// Mean longitude at J2000 and its rate in a Julian century
-    /// (Simon et al. 1994, Astron. Astrophys. 282, 663, table 5.9).
-    longitude: (Angle, Angle),
-    radial: Part,
-    along: Part,
-    normal: Part,
+/// A relative displacement along the radius vector and towards growing ecliptic longitude and
+/// latitude: polynomials in time by 1 and by sines and cosines of multiples of the planet's
+/// mean longitude. `assets/series/fit_corrections.py` fits it.
+#[derive(Debug)]
+pub struct Correction {
+    longitude_at_j2000_rad: f64,
+    rate_rad_per_millennium: f64,
+    rows: Vec<Row>,
+}
+
+#[derive(Debug)]
+struct Row {
+    direction: Direction,
+    factor: Factor,
+    /// From the constant upwards.
+    coefficients_arcsec: Vec<f64>,
+}
+
+#[derive(Clone, Copy, Debug)]
+enum Direction {
+    Radius,
+    Longitude,
+    Latitude,
+}
+
+#[derive(Clone, Copy, Debug)]
+enum Factor {
+    One,
+    Cosine(f64),
+    Sine(f64),
+}
+
+/// The correction of a planet, if it has one.
+///
+/// # Panics
+/// A line of the compiled-in table is malformed; the tests read them all.
+pub fn of(planet: &str) -> Option<Correction> {
+    let mut lines = TEXT
+        .lines()
+        .map(|line| line.split_ascii_whitespace().collect::<Vec<_>>())
+        .filter(|columns| columns.first() == Some(&planet));
+    let elements = numbers(lines.next()?.get(1..)?);
+    let [longitude_at_j2000_rad, rate_rad_per_millennium] = elements[..] else {
+        return None;
+    };
+    let rows = lines
+        .map(|columns| row(&columns).expect("a line of the compiled-in corrections"))
+        .collect();
+    Some(Correction {
+        longitude_at_j2000_rad,
+        rate_rad_per_millennium,
+        rows,
+    })
+}
+
+fn numbers(columns: &[&str]) -> Vec<f64> {
+    columns
+        .iter()
+        .map(|column| {
+            column
+                .parse()
+                .expect("a number of the compiled-in corrections")
+        })
+        .collect()
+}
+
+fn row(columns: &[&str]) -> Option<Row> {
+    let direction = match *columns.get(1)? {
+        "radius" => Direction::Radius,
+        "longitude" => Direction::Longitude,
+        "latitude" => Direction::Latitude,
+        _ => return None,
+    };
+    let factor = *columns.get(2)?;
+    let factor = if factor == "1" {
+        Factor::One
+    } else if let Some(multiple) = factor.strip_prefix("cos") {
+        Factor::Cosine(multiple.parse().ok()?)
+    } else {
+        Factor::Sine(factor.strip_prefix("sin")?.parse().ok()?)
+    };
+    Some(Row {
+        direction,
+        factor,
+        coefficients_arcsec: numbers(columns.get(3..)?),
+    })
 }
 
 impl Correction {
-    /// Reads a planet's lines of the asset.
-    pub fn from_asset(text: &str, planet: &str, longitude_deg: (f64, f64)) -> Self {
-        let mut correction = Self {
-            longitude: (
-                Angle::from_degrees(longitude_deg.0),
-                Angle::from_degrees(longitude_deg.1),
-            ),
-            radial: Part::default(),
-            along: Part::default(),
-            normal: Part::default(),
-        };
-        for line in text.lines().skip(1) {
-            let fields: Vec<&str> = line.split(',').collect();
-            let [name, part, shape, power, coefficient] = fields[..] else {
-                unreachable!("a shipped correction has five columns: {line}")
+    /// A heliocentric place in the ecliptic of J2000, corrected.
+    pub fn applied(&self, place: Vector, millennia: f64) -> Vector {
+        let mean_longitude = self.longitude_at_j2000_rad + self.rate_rad_per_millennium * millennia;
+        let time = millennia / SPAN_MILLENNIA;
+        let (mut along_radius, mut along_longitude, mut along_latitude) = (0.0, 0.0, 0.0);
+        for row in &self.rows {
+            let polynomial = row
+                .coefficients_arcsec
+                .iter()
+                .rev()
+                .fold(0.0, |sum, coefficient| sum * time + coefficient);
+            let factor = match row.factor {
+                Factor::One => 1.0,
+                Factor::Cosine(multiple) => (multiple * mean_longitude).cos(),
+                Factor::Sine(multiple) => (multiple * mean_longitude).sin(),
             };
-            if name != planet {
-                continue;
-            }
-            let part = match part {
-                "radial" => &mut correction.radial,
-                "along" => &mut correction.along,
-                _ => &mut correction.normal,
+            let sum = match row.direction {
+                Direction::Radius => &mut along_radius,
+                Direction::Longitude => &mut along_longitude,
+                Direction::Latitude => &mut along_latitude,
             };
-            if let (Ok(shape), Ok(power), Ok(coefficient)) = (
-                shape.parse::<usize>(),
-                power.parse::<usize>(),
-                coefficient.parse(),
-            ) {
-                part[shape][power] = coefficient;
-            }
+            *sum += Angle::from_arcsec(polynomial * factor).radians();
         }
-        correction
-    }
-
-    /// The corrected place of a planet, from its place by the series and its direction of motion
-    /// (of any length).
-    pub fn applied(&self, tt: Tt, place: Vector, motion: Vector) -> Vector {
-        let centuries = tt.centuries_since_j2000();
-        let (sin, cos) = (self.longitude.0 + self.longitude.1 * centuries).sin_cos();
-        let x = centuries / 4.0;
-        let value = |part: &Part| {
-            part.iter()
-                .zip([1.0, cos, sin])
-                .map(|(powers, shape)| shape * powers.iter().rev().fold(0.0, |sum, c| sum * x + c))
-                .sum::<f64>()
-        };
-        let radial = place.unit();
-        let normal = place.cross(motion).unit();
-        let along = normal.cross(radial);
-        let shift = radial * value(&self.radial)
-            + along * value(&self.along)
-            + normal * value(&self.normal);
-        place + shift * place.length()
+        let radius = place.unit();
+        let longitude = Vector::new(-radius.y, radius.x, 0.0).unit();
+        let latitude = radius.cross(longitude);
+        let displacement =
+            radius * along_radius + longitude * along_longitude + latitude * along_latitude;
+        place + displacement * place.length()
     }
 }

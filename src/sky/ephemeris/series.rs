@@ -1,79 +1,176 @@
-//! The planets' series: VSOP87, version A.
-//!
-//! Source: Bretagnon and Francou 1988, Astron. Astrophys. 202, 309. Cut and kept as
-//! `assets/series/NAME.csv`; the README beside it states the loss.
+//! Sums of periodic terms: the form in which the theories of the planets and the Moon are
+//! published.
 
-use crate::measure::{Matrix, Tt, Vector};
+use crate::measure::Vector;
+use std::cmp::Ordering;
+use std::f64::consts::FRAC_PI_2;
 
-/// The dynamical ecliptic of VSOP87 turned to the equator and equinox of J2000 (FK5), as the
-/// authors give it with the theory.
-const FK5_FROM_DYNAMICAL: Matrix = Matrix([
-    [1.0, 0.000_000_440_360, -0.000_000_190_919],
-    [-0.000_000_479_966, 0.917_482_137_087, -0.397_776_982_902],
-    [0.0, 0.397_776_982_902, 0.917_482_137_087],
-]);
+/// Powers of time from 0 to 5 for each variable.
+const POWERS: usize = 6;
+/// Arguments are polynomials in time of up to this degree (the constant is the phase).
+const DEGREE: usize = 4;
 
-/// One planet's heliocentric place as a sum of cosines.
-#[derive(Clone, Debug)]
-pub(super) struct Series {
-    /// By axis, by power of time: the terms of that polynomial coefficient.
-    axes: [Vec<Vec<Term>>; 3],
+/// Three Poisson series, sum of t^p A cos(argument), the argument a polynomial in t. Terms are
+/// gathered by argument, so that one sine and cosine serve every variable and power.
+#[derive(Debug)]
+pub struct PoissonSeries {
+    arguments: Vec<Argument>,
+    terms: Vec<Term>,
 }
 
+/// How the rows of a text are to be read.
 #[derive(Clone, Copy, Debug)]
-struct Term {
-    amplitude_au: f64,
-    phase_rad: f64,
-    rate_rad_per_millennium: f64,
+pub struct Reading {
+    /// The names of the three variables in the first column.
+    pub variables: [&'static str; 3],
+    /// The units of their amplitudes.
+    pub units: [f64; 3],
+    /// Whether the rows give sines, or else cosines.
+    pub sines: bool,
 }
 
-impl Series {
-    /// Reads a series of the program's own assets.
-    pub fn from_asset(text: &str) -> Self {
-        let mut axes: [Vec<Vec<Term>>; 3] = Default::default();
-        for line in text.lines().skip(1) {
-            let mut fields = line.split(',');
-            let axis = fields.next().unwrap_or_default();
-            let mut number = || fields.next().and_then(|field| field.parse::<f64>().ok());
-            let (Some(power), Some(amplitude_au), Some(phase_rad), Some(rate)) =
-                (number(), number(), number(), number())
-            else {
-                unreachable!("a shipped series has five columns: {line}")
-            };
-            let powers = &mut axes[match axis {
-                "x" => 0,
-                "y" => 1,
-                _ => 2,
-            }];
-            let power = power as usize;
-            if powers.len() <= power {
-                powers.resize(power + 1, Vec::new());
-            }
-            powers[power].push(Term {
-                amplitude_au,
-                phase_rad,
-                rate_rad_per_millennium: rate,
-            });
-        }
-        Self { axes }
+/// Coefficients of t, t², t³, t⁴, radians.
+type Rates = [f64; DEGREE];
+
+#[derive(Debug)]
+struct Argument {
+    rates: Rates,
+    /// How many of the terms, in order, have it.
+    terms: usize,
+}
+
+#[derive(Debug)]
+struct Term {
+    /// Variable times [`POWERS`] plus power.
+    slot: usize,
+    cosine: f64,
+    sine: f64,
+}
+
+impl PoissonSeries {
+    /// Reads rows `variable power A phase rate [rate² ...]`; lines that start with `#` are
+    /// comments.
+    ///
+    /// # Panics
+    /// A row is not of that form: the texts are compiled in, and the tests read every one.
+    pub fn parse(text: &str, reading: Reading) -> Self {
+        let mut rows: Vec<(Rates, Term)> = text
+            .lines()
+            .filter(|line| !line.starts_with('#'))
+            .map(|line| parse_row(line, reading).expect("a row of a compiled-in series"))
+            .collect();
+        rows.sort_by(|(one, _), (other, _)| {
+            one.iter()
+                .zip(other)
+                .map(|(one, other)| one.total_cmp(other))
+                .find(|order| order.is_ne())
+                .unwrap_or(Ordering::Equal)
+        });
+        let arguments = rows
+            .chunk_by(|(one, _), (other, _)| one == other)
+            .map(|same| Argument {
+                rates: same[0].0,
+                terms: same.len(),
+            })
+            .collect();
+        let terms = rows.into_iter().map(|(_, term)| term).collect();
+        Self { arguments, terms }
     }
 
-    /// Heliocentric place, au, on the axes of the ICRS.
-    pub fn place(&self, tt: Tt) -> Vector {
-        // VSOP87 counts TDB, which stays within 2 ms of TT.
-        let millennia = tt.days_since_j2000() / 365_250.0;
-        let [x, y, z] = self.axes.each_ref().map(|powers| {
-            powers.iter().rev().fold(0.0, |sum, terms| {
-                sum * millennia
-                    + terms
-                        .iter()
-                        .map(|term| {
-                            let angle = term.phase_rad + term.rate_rad_per_millennium * millennia;
-                            term.amplitude_au * angle.cos()
-                        })
-                        .sum::<f64>()
-            })
-        });
-        FK5_FROM_DYNAMICAL * Vector::new(x, y, z)
+    /// The three sums at a time, in the time's own unit.
+    pub fn value(&self, time: f64) -> Vector {
+        let mut sums = [0.0; 3 * POWERS];
+        let mut terms = self.terms.as_slice();
+        for Argument {
+            rates,
+            terms: count,
+        } in &self.arguments
+        {
+            let [linear, square, cube, fourth] = rates;
+            let angle = time * (linear + time * (square + time * (cube + time * fourth)));
+            let (sine, cosine) = angle.sin_cos();
+            let (these, later) = terms.split_at(*count);
+            for term in these {
+                sums[term.slot] += term.cosine * cosine + term.sine * sine;
+            }
+            terms = later;
+        }
+        let sum = |variable: usize| {
+            let powers = &sums[variable * POWERS..(variable + 1) * POWERS];
+            powers
+                .iter()
+                .rev()
+                .fold(0.0, |sum, coefficient| sum * time + coefficient)
+        };
+        Vector::new(sum(0), sum(1), sum(2))
+    }
+}
+
+fn parse_row(line: &str, reading: Reading) -> Option<(Rates, Term)> {
+    let mut columns = line.split_ascii_whitespace();
+    let name = columns.next()?;
+    let variable = reading.variables.iter().position(|own| *own == name)?;
+    let power: usize = columns.next()?.parse().ok()?;
+    let amplitude = columns.next()?.parse::<f64>().ok()? * reading.units[variable];
+    let phase: f64 = columns.next()?.parse().ok()?;
+    let mut rates = [0.0; DEGREE];
+    let mut given = 0;
+    for column in columns {
+        *rates.get_mut(given)? = column.parse().ok()?;
+        given += 1;
+    }
+    let quarter = if reading.sines { FRAC_PI_2 } else { 0.0 };
+    let (sine, cosine) = (phase - quarter).sin_cos();
+    let term = Term {
+        slot: variable * POWERS + power,
+        cosine: amplitude * cosine,
+        sine: -amplitude * sine,
+    };
+    (power < POWERS && given > 0).then_some((rates, term))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::{PoissonSeries, Reading};
+
+    const READING: Reading = Reading {
+        variables: ["x", "y", "z"],
+        units: [0.5, 1.0, 2.0],
+        sines: false,
+    };
+
+    #[test]
+    fn terms_are_summed_by_variable_and_power() {
+        let text = "# a heading\nx 0 2 0.5 3.\nx 1 1 0 3.\ny 2 4 1.0 0.\nz 0 1 0.2 5. 0.3 0 -1\n";
+        let expected_x = (0.5f64 + 2.1).cos() + 0.7 * 0.5 * 2.1f64.cos();
+        let argument_z = 0.2 + 3.5 + 0.3 * 0.49 - 0.7f64.powi(4);
+        let value = PoissonSeries::parse(text, READING).value(0.7);
+        assert!((value.x - expected_x).abs() < 1e-14, "x {}", value.x);
+        assert!(
+            (value.y - 0.49 * 4.0 * 1f64.cos()).abs() < 1e-14,
+            "y {}",
+            value.y
+        );
+        assert!(
+            (value.z - 2.0 * argument_z.cos()).abs() < 1e-14,
+            "z {}",
+            value.z
+        );
+        let sines = Reading {
+            sines: true,
+            ..READING
+        };
+        let value = PoissonSeries::parse(text, sines).value(0.7);
+        assert!(
+            (value.z - 2.0 * argument_z.sin()).abs() < 1e-14,
+            "z {}",
+            value.z
+        );
+    }
+
+    #[test]
+    #[should_panic(expected = "a row of a compiled-in series")]
+    fn a_spoilt_row_is_not_passed_over() {
+        PoissonSeries::parse("x 0 2 0.5 3.\nx 6 2 0.5 3.\n", READING);
     }
 }

@@ -1,0 +1,167 @@
+//! Every action of the user, recorded while the window is drawn and run afterwards.
+
+use super::palette::Theme;
+use crate::measure::Moment;
+use crate::plan::Half;
+use crate::sky::Body;
+use chrono::NaiveDate;
+use eframe::egui::{Key, KeyboardShortcut, Modifiers};
+use std::path::PathBuf;
+
+/// One action.
+#[derive(Clone, Debug, PartialEq)]
+pub enum Command {
+    /// Shows an instant of the present half-night; one outside it goes to the nearer end.
+    SetMoment(Moment),
+    /// Goes on (or back) by minutes, across into the neighbouring half-night where it must.
+    StepMinutes(i32),
+    /// Goes on (or back) by days, keeping the half.
+    StepDays(i32),
+    /// Shows another civil date (the moment's own, so that a dawn's date is the morning's).
+    ChooseDate(NaiveDate),
+    /// Shows the other half of the night.
+    ChooseHalf(Half),
+    /// Goes to the chosen body's best moment of this half-night.
+    GoToBest,
+    /// Goes to the clock's time and follows it.
+    ThisMinute,
+    /// Lets the time run.
+    LetItRun(Speed),
+    /// Stops it.
+    Stop,
+    /// Stops it if it runs, else lets it run at the speed last used.
+    RunOrStop,
+    /// Chooses the body.
+    ChooseBody(Body),
+    /// Chooses a site by its place in the list.
+    ChooseSite(usize),
+    /// Chooses a spot of the site by its place in the site's list.
+    ChooseSpot(usize),
+    /// Chooses how the optics show the disc.
+    ChooseOpticsView(OpticsView),
+    /// Colours the window.
+    SetTheme(Theme),
+    /// Opens the short path to a new site.
+    NewSite,
+    /// Opens the path to a site file.
+    FindSiteFile,
+    /// Reads a site file and chooses it.
+    OpenSiteFile(PathBuf),
+    /// Saves the new site being described, and chooses it.
+    SaveNewSite,
+    /// Shows keys and cautions.
+    ShowHelp,
+    /// Closes whatever dialog is open.
+    CloseDialog,
+    /// Takes the notice at the top away.
+    DismissNotice,
+}
+
+/// How fast time runs: minutes of the night in a second of the clock.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+pub enum Speed {
+    /// One minute.
+    Slow,
+    /// Five.
+    #[default]
+    Middle,
+    /// Twenty.
+    Fast,
+}
+
+impl Speed {
+    /// All of them, from slow to fast.
+    pub const ALL: [Self; 3] = [Self::Slow, Self::Middle, Self::Fast];
+
+    /// Minutes of the night in a second of the clock.
+    pub const fn minutes_per_second(self) -> u32 {
+        match self {
+            Self::Slow => 1,
+            Self::Middle => 5,
+            Self::Fast => 20,
+        }
+    }
+}
+
+/// Which way round optics show the sky.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, serde::Serialize, serde::Deserialize)]
+#[serde(rename_all = "lowercase")]
+pub enum OpticsView {
+    /// As the eye: binoculars, terrestrial telescopes.
+    #[default]
+    Erect,
+    /// Turned by half a turn: reflectors, refractors without a diagonal.
+    Inverted,
+    /// Erect with left and right exchanged: a diagonal with one mirror.
+    Mirrored,
+}
+
+impl OpticsView {
+    /// All of them, in the order in which they are offered.
+    pub const ALL: [Self; 3] = [Self::Erect, Self::Inverted, Self::Mirrored];
+}
+
+/// What has been asked for in this frame, in order.
+pub type Commands = Vec<Command>;
+
+/// The keys that work while no text is being written. Held as one table, so that the help
+/// cannot say anything else than what happens.
+pub fn keys() -> [(KeyboardShortcut, Command); 12] {
+    let plain = |key| KeyboardShortcut::new(Modifiers::NONE, key);
+    let shift = |key| KeyboardShortcut::new(Modifiers::SHIFT, key);
+    [
+        (shift(Key::ArrowLeft), Command::StepMinutes(-10)),
+        (shift(Key::ArrowRight), Command::StepMinutes(10)),
+        (plain(Key::ArrowLeft), Command::StepMinutes(-1)),
+        (plain(Key::ArrowRight), Command::StepMinutes(1)),
+        (plain(Key::PageUp), Command::StepDays(-1)),
+        (plain(Key::PageDown), Command::StepDays(1)),
+        (plain(Key::Home), Command::GoToBest),
+        (plain(Key::Space), Command::RunOrStop),
+        (plain(Key::T), Command::ThisMinute),
+        (plain(Key::N), Command::NewSite),
+        (plain(Key::O), Command::FindSiteFile),
+        (plain(Key::F1), Command::ShowHelp),
+    ]
+}
+
+impl Command {
+    /// The wording of the control that does it; its hint is the same with `-hint`. `None` for
+    /// what has no control of its own to name.
+    pub const fn wording(&self) -> Option<&'static str> {
+        Some(match self {
+            Self::StepMinutes(minutes) => match *minutes {
+                ..=-10 => "back-ten-minutes",
+                -9..=-1 => "back-one-minute",
+                0..=9 => "on-one-minute",
+                10.. => "on-ten-minutes",
+            },
+            Self::StepDays(..0) => "previous-day",
+            Self::StepDays(_) => "next-day",
+            Self::ChooseHalf(Half::Dusk) => "half-dusk",
+            Self::ChooseHalf(Half::Dawn) => "half-dawn",
+            Self::GoToBest => "go-to-best",
+            Self::ThisMinute => "this-minute",
+            Self::LetItRun(_) | Self::RunOrStop => "let-it-run",
+            Self::Stop => "stop",
+            Self::SetTheme(Theme::Dark) => "theme-dark",
+            Self::SetTheme(Theme::Light) => "theme-light",
+            Self::SetTheme(Theme::Red) => "theme-red",
+            Self::ChooseOpticsView(OpticsView::Erect) => "optics-erect",
+            Self::ChooseOpticsView(OpticsView::Inverted) => "optics-inverted",
+            Self::ChooseOpticsView(OpticsView::Mirrored) => "optics-mirrored",
+            Self::NewSite => "new-site",
+            Self::FindSiteFile => "find-site-file",
+            Self::OpenSiteFile(_) => "open-site-file",
+            Self::SaveNewSite => "save-new-site",
+            Self::ShowHelp => "help",
+            Self::CloseDialog => "close",
+            Self::DismissNotice => "dismiss-notice",
+            Self::SetMoment(_)
+            | Self::ChooseDate(_)
+            | Self::ChooseBody(_)
+            | Self::ChooseSite(_)
+            | Self::ChooseSpot(_) => return None,
+        })
+    }
+}

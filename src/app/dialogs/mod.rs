@@ -1,0 +1,76 @@
+//! The dialogs: a new site, finding a site file, help. One at a time.
+
+mod find_file;
+mod help;
+mod new_site;
+
+pub use find_file::FindFile;
+pub use new_site::NewSite;
+
+use super::command::{Command, Commands};
+use super::widgets::{card_frame, command_button};
+use super::window::DesktopWindow;
+use eframe::egui::{Context, Id, Modal, ScrollArea, Ui};
+use std::path::Path;
+
+/// An open dialog.
+pub enum Dialog {
+    /// The short path to a new site.
+    NewSite(Box<NewSite>),
+    /// The path to a site file.
+    FindFile(FindFile),
+    /// Keys and cautions.
+    Help,
+}
+
+impl Dialog {
+    /// An empty new site.
+    pub fn new_site() -> Self {
+        Self::NewSite(Box::new(NewSite::new()))
+    }
+    /// Finding a file, from a folder on.
+    pub fn find_file(folder: Option<&Path>) -> Self {
+        Self::FindFile(FindFile::new(folder))
+    }
+}
+
+impl DesktopWindow {
+    /// Draws the open dialog, if there is one, over everything else.
+    pub(super) fn dialog_ui(&mut self, ctx: &Context, commands: &mut Commands) {
+        let look = self.palette.look(self.state.theme);
+        let words = &self.words;
+        let Some(dialog) = &mut self.dialog else {
+            return;
+        };
+        let screen = ctx.content_rect();
+        let modal = Modal::new(Id::unique("dialog"))
+            .frame(card_frame(&look).inner_margin(look.room.between))
+            .show(ctx, |ui: &mut Ui| {
+                ui.set_width((screen.width() - 96.0).clamp(280.0, 620.0));
+                let most = (screen.height() - 140.0).max(160.0);
+                // Both, or the dialog would grow towards its size from frame to frame.
+                ScrollArea::vertical()
+                    .max_height(most)
+                    .min_scrolled_height(most)
+                    .show(ui, |ui| match dialog {
+                        Dialog::NewSite(form) => form.show(ui, &look, words),
+                        Dialog::FindFile(find) => find.show(ui, &look, words, commands),
+                        Dialog::Help => help::show(ui, &look, words),
+                    });
+                ui.horizontal(|ui| {
+                    let act = match dialog {
+                        Dialog::NewSite(_) => Some(Command::SaveNewSite),
+                        Dialog::FindFile(find) => Some(Command::OpenSiteFile(find.path())),
+                        Dialog::Help => None,
+                    };
+                    if let Some(act) = act {
+                        command_button(ui, words, act, commands);
+                    }
+                    command_button(ui, words, Command::CloseDialog, commands);
+                });
+            });
+        if modal.should_close() {
+            commands.push(Command::CloseDialog);
+        }
+    }
+}

@@ -1,0 +1,227 @@
+//! The horizon view: azimuth against altitude, with the chosen body's path over the skyline.
+
+mod camera;
+mod captions;
+mod layout;
+pub(super) mod model;
+mod paint;
+mod path;
+mod rulers;
+pub mod sky;
+
+use super::model::{Tracks, ticks};
+use super::says::Says;
+use super::{Kept, SpanKey};
+use crate::app::command::{Command, Commands};
+use crate::app::palette::Theme;
+use crate::app::scene::Scene;
+use crate::measure::Angle;
+use crate::plan::Half;
+use crate::sky::Body;
+use camera::{Camera, Sector, Turn};
+use eframe::egui::{
+    CursorIcon, EventFilter, Key, Modifiers, Rect, Response, Role, Sense, Stroke, StrokeKind,
+    TextureHandle, TextureOptions, Ui, WidgetInfo, pos2,
+};
+use layout::Layout;
+use model::Model;
+
+/// How fine the skyline's outline is.
+const OUTLINE_STEP: Angle = Angle::from_degrees(0.5);
+
+/// The horizon view and what it keeps between frames.
+#[derive(Default)]
+pub struct Horizon {
+    turn: Turn,
+    /// What the view was turned for; another body or half is framed anew.
+    turned_for: Option<(Half, Body)>,
+    sector: Kept<SpanKey, (Sector, Vec<super::model::Tick>)>,
+    outline: Kept<u64, Vec<(Angle, Angle)>>,
+    sky: Option<(SkyKey, TextureHandle)>,
+}
+
+/// What the sky's picture depends on.
+#[derive(Clone, Copy, PartialEq)]
+struct SkyKey {
+    camera: Camera,
+    sun: (Angle, Angle),
+    theme: Theme,
+}
+
+impl Horizon {
+    /// Draws the view into the room that `ui` has.
+    pub fn show(
+        &mut self,
+        ui: &mut Ui,
+        scene: &Scene<'_>,
+        tracks: &Tracks,
+        commands: &mut Commands,
+    ) -> Response {
+        let (card, response) =
+            ui.allocate_exact_size(ui.available_size_before_wrap(), Sense::click_and_drag());
+        let says = Says::new(scene);
+        response.widget_info(|| {
+            WidgetInfo::labeled(Role::Canvas, true, says.text("horizon-name", &[]))
+        });
+        if !ui.is_rect_visible(card) {
+            return response;
+        }
+        if self.turned_for.replace((scene.half, scene.body)) != Some((scene.half, scene.body)) {
+            self.turn = Turn::default();
+        }
+        let span = super::model::shown_span(scene);
+        let kept = self.sector.get(SpanKey::of(scene), || {
+            let sector = Sector::new(tracks.body(scene.body), &tracks.sun, span);
+            let ticks = ticks(tracks, scene.scales, scene.zone, 0.0, tracks.length_s);
+            (sector, ticks)
+        });
+        let (sector, ticks) = &*kept;
+        let ruler = layout::RULER_LINES * scene.look.sizes.label;
+        let sky = Rect::from_min_max(card.min, pos2(card.right(), card.bottom() - ruler));
+        let (camera, turn) = Camera::new(sector, self.turn, sky);
+        self.turn = turn;
+        self.steer(ui, &response, &camera);
+
+        let model = Model::new(scene, tracks);
+        let layout = Layout::new(scene, &model, tracks, ticks, camera, ui.painter());
+        let outline = self
+            .outline
+            .get(scene.night_count, || scene.skyline.outline(OUTLINE_STEP));
+        let sun = (model.sun.sample.sun_altitude, model.sun.sample.azimuth);
+        let sky = self.sky(ui, scene, camera, sun);
+        paint::paint(ui.painter(), &scene.look, &model, &layout, sky, &outline);
+        if response.has_focus() {
+            let stroke = Stroke::new(2.0, scene.look.colours.chosen);
+            ui.painter()
+                .rect_stroke(card, scene.look.room.corner, stroke, StrokeKind::Inside);
+        }
+        choose_body(ui, &response, &model, &layout, commands);
+        response
+    }
+
+    /// How far the view is turned, widened and tilted.
+    #[cfg(test)]
+    pub(super) fn turn(&self) -> Turn {
+        self.turn
+    }
+
+    /// Turning, tilting and widening by hand; what goes beyond a limit is taken back next time
+    /// the view is framed.
+    fn steer(&mut self, ui: &Ui, response: &Response, camera: &Camera) {
+        /// Degrees and share of one press of a key.
+        const KEY_DEG: f64 = 5.0;
+        const KEY_SHARE: f64 = 1.15;
+        /// Of the wheel, for a view e times as wide.
+        const POINTS_PER_E: f64 = 400.0;
+        if response.double_clicked() {
+            self.turn = Turn::default();
+        }
+        if response.dragged() {
+            let moved = response.drag_delta();
+            self.turn.turn_deg -= f64::from(moved.x) / camera.points_per_deg;
+            self.turn.tilt_deg += f64::from(moved.y) / camera.points_per_deg;
+        }
+        if response.dragged() {
+            ui.ctx().set_cursor_icon(CursorIcon::Grabbing);
+        } else if response.hovered() {
+            ui.ctx().set_cursor_icon(CursorIcon::Grab);
+        }
+        if response.hovered() {
+            // The wheel is taken out of the input, so that the page around does not move as well.
+            let (wheel, pinch) = ui.input_mut(|input| {
+                let wheel = std::mem::take(&mut input.smooth_scroll_delta.y);
+                (f64::from(wheel), f64::from(input.zoom_delta()))
+            });
+            self.turn.widening *= (-wheel / POINTS_PER_E).exp() / pinch;
+        }
+        self.steer_by_keys(ui, response, KEY_DEG, KEY_SHARE);
+    }
+
+    fn steer_by_keys(&mut self, ui: &Ui, response: &Response, step_deg: f64, share: f64) {
+        if !response.has_focus() {
+            return;
+        }
+        let filter = EventFilter {
+            horizontal_arrows: true,
+            vertical_arrows: true,
+            ..EventFilter::default()
+        };
+        ui.memory_mut(|memory| memory.set_focus_lock_filter(response.id, filter));
+        let turn = &mut self.turn;
+        ui.input_mut(|input| {
+            let mut pressed =
+                |modifiers, key| f64::from(input.count_and_consume_key(modifiers, key) as u32);
+            let command = Modifiers::COMMAND;
+            turn.turn_deg +=
+                step_deg * (pressed(command, Key::ArrowRight) - pressed(command, Key::ArrowLeft));
+            turn.tilt_deg += step_deg
+                * (pressed(Modifiers::NONE, Key::ArrowUp)
+                    - pressed(Modifiers::NONE, Key::ArrowDown));
+            let wider = pressed(Modifiers::NONE, Key::Minus);
+            let narrower =
+                pressed(Modifiers::NONE, Key::Plus) + pressed(Modifiers::NONE, Key::Equals);
+            turn.widening *= share.powf(wider - narrower);
+        });
+    }
+
+    /// The sky's picture, made anew only when the moment, the view or the theme changed.
+    fn sky(
+        &mut self,
+        ui: &Ui,
+        scene: &Scene<'_>,
+        camera: Camera,
+        sun: (Angle, Angle),
+    ) -> eframe::egui::TextureId {
+        let key = SkyKey {
+            camera,
+            sun,
+            theme: scene.look.theme,
+        };
+        let image = || sky::image(scene.palette, &scene.look, &camera, sun);
+        match &mut self.sky {
+            Some((known, texture)) => {
+                if *known != key {
+                    *known = key;
+                    texture.set(image(), TextureOptions::LINEAR);
+                }
+                texture.id()
+            }
+            None => {
+                let texture = ui
+                    .ctx()
+                    .load_texture("sky", image(), TextureOptions::LINEAR);
+                let id = texture.id();
+                self.sky = Some((key, texture));
+                id
+            }
+        }
+    }
+}
+
+/// A click on a body chooses it.
+fn choose_body(
+    ui: &Ui,
+    response: &Response,
+    model: &Model,
+    layout: &Layout,
+    commands: &mut Commands,
+) {
+    const REACH: f32 = 14.0;
+    let Some(pointer) = response.hover_pos() else {
+        return;
+    };
+    let near = model
+        .others
+        .iter()
+        .zip(&layout.others)
+        .filter(|(_, (at, _))| layout.camera.rect.contains(*at))
+        .map(|(mark, (at, _))| (mark.body, at.distance(pointer)))
+        .filter(|(_, distance)| *distance < REACH)
+        .min_by(|a, b| a.1.total_cmp(&b.1));
+    if let Some((body, _)) = near {
+        ui.ctx().set_cursor_icon(CursorIcon::PointingHand);
+        if response.clicked() {
+            commands.push(Command::ChooseBody(body));
+        }
+    }
+}

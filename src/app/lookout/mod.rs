@@ -1,0 +1,151 @@
+//! The work area Lookout: the half-night at one site, minute by minute.
+//!
+//! Each drawing stands in a folder of its own as model, layout and paint; [`Drawings`] holds
+//! what they keep between frames and shows them, each in the room that its `ui` has. They only
+//! record commands.
+
+mod disc;
+pub mod fade;
+pub mod horizon;
+pub mod inset;
+mod labels;
+pub mod model;
+pub mod phase;
+pub mod plot;
+mod says;
+#[cfg(test)]
+mod staged;
+#[cfg(test)]
+mod tests;
+
+use super::command::Commands;
+use super::palette::{Look, Theme};
+use super::scene::Scene;
+use crate::light::Eye;
+use crate::plan::Half;
+use crate::sky::Body;
+use eframe::egui::{Galley, Painter, Pos2, Rect, Response, Ui, Vec2, vec2};
+use model::Tracks;
+use std::sync::Arc;
+
+/// The drawings, with what they keep between frames.
+#[derive(Default)]
+pub struct Drawings {
+    tracks: Kept<HalfKey, Tracks>,
+    horizon: horizon::Horizon,
+    fade: fade::Fade,
+    plot: plot::ClearancePlot,
+    inset: inset::Inset,
+}
+
+impl Drawings {
+    /// The horizon view.
+    pub fn horizon(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        let tracks = self.tracks(scene);
+        self.horizon.show(ui, scene, &tracks, commands)
+    }
+
+    /// The time slider with the lanes.
+    pub fn fade(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        let tracks = self.tracks(scene);
+        self.fade.show(ui, scene, &tracks, commands)
+    }
+
+    /// The clearance of the bright bodies against minutes.
+    pub fn plot(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        let tracks = self.tracks(scene);
+        self.plot.show(ui, scene, &tracks, commands)
+    }
+
+    /// The plan of the orbits.
+    pub fn inset(&mut self, ui: &mut Ui, scene: &Scene<'_>) -> Response {
+        self.inset.show(ui, scene)
+    }
+
+    /// The disc as the eye and the optics show it.
+    pub fn phase(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
+        phase::show(ui, scene, commands)
+    }
+
+    fn tracks(&mut self, scene: &Scene<'_>) -> Arc<Tracks> {
+        self.tracks.get(HalfKey::of(scene), || Tracks::new(scene))
+    }
+}
+
+/// One point to every side: where letters over the sky have their dark shade.
+const AROUND: [Vec2; 4] = [
+    vec2(-1.0, 0.0),
+    vec2(1.0, 0.0),
+    vec2(0.0, -1.0),
+    vec2(0.0, 1.0),
+];
+
+/// Letters over the sky: with a dark shade around them, so that they read in every light.
+fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
+    let shade = look.colours.sky_shade.gamma_multiply(0.55);
+    if look.theme == Theme::Red {
+        // Letters and sky differ in brightness alone: a rim is not enough.
+        let ground = Rect::from_min_size(at, text.size()).expand2(vec2(3.0, 0.0));
+        painter.rect_filled(ground, 2.0, shade);
+    }
+    for aside in AROUND {
+        painter.galley_with_override_text_color(at + aside, text.clone(), shade);
+    }
+    painter.galley(at, text.clone(), look.colours.sky_text);
+}
+
+/// Something made once for a key and shared until the key changes.
+struct Kept<K, T>(Option<(K, Arc<T>)>);
+
+impl<K, T> Default for Kept<K, T> {
+    fn default() -> Self {
+        Self(None)
+    }
+}
+
+impl<K: PartialEq, T> Kept<K, T> {
+    fn get(&mut self, key: K, make: impl FnOnce() -> T) -> Arc<T> {
+        match &self.0 {
+            Some((known, value)) if *known == key => value.clone(),
+            _ => {
+                let value = Arc::new(make());
+                self.0 = Some((key, value.clone()));
+                value
+            }
+        }
+    }
+}
+
+/// What depends on the half-night alone.
+#[derive(Clone, Copy, Debug, PartialEq)]
+struct HalfKey {
+    night_count: u64,
+    half: Half,
+    eye: Eye,
+}
+
+impl HalfKey {
+    fn of(scene: &Scene<'_>) -> Self {
+        Self {
+            night_count: scene.night_count,
+            half: scene.half,
+            eye: scene.eye,
+        }
+    }
+}
+
+/// What depends on the half-night and the chosen body.
+#[derive(Clone, Copy, Debug, PartialEq)]
+struct SpanKey {
+    half: HalfKey,
+    body: Body,
+}
+
+impl SpanKey {
+    fn of(scene: &Scene<'_>) -> Self {
+        Self {
+            half: HalfKey::of(scene),
+            body: scene.body,
+        }
+    }
+}

@@ -1,0 +1,84 @@
+//! The row that chooses what is shown: site and spot, date, half, body, eye.
+
+mod date;
+
+use super::command::{Command, Commands};
+use super::palette::Look;
+use super::state::State;
+use super::widgets::{choice, command_button, name_it, text};
+use crate::plan::Half;
+use crate::sky::Body;
+use crate::words::Words;
+use eframe::egui::containers::menu::MenuButton;
+use eframe::egui::{Role, ScrollArea, Ui};
+
+/// The whole row; it wraps where there is no room.
+pub fn picker_row(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
+    ui.horizontal_wrapped(|ui| {
+        site_picker(ui, look, words, state, commands);
+        date::date_picker(ui, look, words, state, commands);
+        ui.add_space(4.0);
+        for half in [Half::Dusk, Half::Dawn] {
+            let command = Command::ChooseHalf(half);
+            let name = words.text(command.wording().unwrap_or_default());
+            if choice(ui, look, state.half() == half, &name).clicked() {
+                commands.push(command);
+            }
+        }
+        ui.add_space(4.0);
+        for body in Body::BRIGHT {
+            let name = words.body(body);
+            if choice(ui, look, state.body() == body, &name).clicked() {
+                commands.push(Command::ChooseBody(body));
+            }
+        }
+        ui.add_space(4.0);
+        let size = look.sizes.label;
+        text(ui, look, size, look.colours.lesser, &words.text("for-eye"))
+            .on_hover_text(words.text("for-eye-hint"));
+    });
+}
+
+fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
+    let site = &state.site().name;
+    let spot = &state.spot().name;
+    let shown = words.text_with::<&str>("site-and-spot", &[("site", site), ("spot", spot)]);
+    let (button, _) = MenuButton::new(format!("{shown} ▾")).ui(ui, |ui| {
+        ui.set_min_width(240.0);
+        ui.spacing_mut().button_padding.x = 8.0;
+        ScrollArea::vertical().max_height(320.0).show(ui, |ui| {
+            for (index, known) in state.sites().list().iter().enumerate() {
+                let is_chosen = index == state.site_index();
+                if ui.selectable_label(is_chosen, &known.site.name).clicked() {
+                    commands.push(Command::ChooseSite(index));
+                    ui.close();
+                }
+            }
+            if state.site().spots.len() > 1 {
+                ui.separator();
+                text(
+                    ui,
+                    look,
+                    look.sizes.label,
+                    look.colours.lesser,
+                    &words.text("spots"),
+                );
+                for (index, spot) in state.site().spots.iter().enumerate() {
+                    let is_chosen = index == state.spot_index();
+                    if ui.selectable_label(is_chosen, &spot.name).clicked() {
+                        commands.push(Command::ChooseSpot(index));
+                        ui.close();
+                    }
+                }
+            }
+        });
+        ui.separator();
+        command_button(ui, words, Command::NewSite, commands);
+        command_button(ui, words, Command::FindSiteFile, commands);
+    });
+    name_it(
+        &button,
+        Role::Button,
+        &words.text_with::<&str>("site-picker", &[("shown", &shown)]),
+    );
+}

@@ -1,0 +1,143 @@
+//! `dimmet night`: one night at one spot of a site, and the coming dusk of the demo site.
+
+mod record;
+mod rows;
+mod text;
+
+use super::arguments::{Format, NightArguments};
+use super::{Fault, Surroundings, resolve};
+use crate::light::Eye;
+use crate::measure::{Moment, TimeScales, civil};
+use crate::place::{Site, Skyline, Spot, demo_sites};
+use crate::plan::{Half, Night, NightError, NightRequest};
+use crate::sky::{Appearance, Body, Ephemeris, Observer};
+use crate::words::CivilClock;
+use chrono::{Days, NaiveDate};
+
+/// The bodies of a night, in the order in which they are listed.
+const BODIES: [Body; 8] = [
+    Body::Moon,
+    Body::Mercury,
+    Body::Venus,
+    Body::Mars,
+    Body::Jupiter,
+    Body::Saturn,
+    Body::Uranus,
+    Body::Neptune,
+];
+
+/// Dates in a row that have no dusk to come: one that is over, and one that the zone skipped.
+const DATES_AHEAD: u64 = 3;
+
+/// A planned night and where it was planned for.
+struct Planned<'a> {
+    site: &'a Site,
+    spot: &'a Spot,
+    skyline: Skyline,
+    clock: CivilClock,
+    night: Night,
+    /// The Moon as seen from the Earth's centre at the night's middle.
+    moon: Appearance,
+}
+
+pub(super) fn run(
+    arguments: &NightArguments,
+    scales: TimeScales,
+    around: &mut Surroundings<'_>,
+) -> Result<(), Fault> {
+    let words = around.words;
+    let (site, _) = resolve::site(words, &arguments.site, around.sites_folder)?;
+    let spot = site.resolve_spot(arguments.spot.as_deref())?;
+    let date = resolve::date(words, "--date", &arguments.date)?;
+    let planned = Planned::new(&site, spot, date, scales)?;
+    let output = match arguments.format.unwrap_or(Format::Text) {
+        Format::Text => text::page(words, &planned, &[Half::Dusk, Half::Dawn]).into_bytes(),
+        Format::Json => record::json(&planned)?,
+        Format::Csv => rows::csv(&planned)?,
+    };
+    if site.ignores_terrain() {
+        let site = site.name.as_str();
+        let sentence = words.text_with("terrain-ignored", &[("site", site)]);
+        writeln!(around.messages, "{sentence}")?;
+    }
+    around.output.write_all(&output)?;
+    Ok(around.output.flush()?)
+}
+
+/// Prints the coming dusk, or the one under way, at the first demo site.
+///
+/// # Errors
+/// The clock's date lies outside the supported years, or the output cannot be written.
+pub fn coming_dusk(scales: TimeScales, around: &mut Surroundings<'_>) -> Result<(), Fault> {
+    let site = &demo_sites()[0];
+    let spot = site.resolve_spot(None)?;
+    let outside = |error: crate::measure::DateOutOfRange| Fault::Input(error.to_string());
+    let now = scales.moment_from_civil(around.now).map_err(outside)?;
+    let today = civil::local_date(around.now, site.zone());
+    let mut failure = None;
+    for date in (0..DATES_AHEAD).filter_map(|days| today.checked_add_days(Days::new(days))) {
+        match Planned::new(site, spot, date, scales) {
+            Ok(planned) if planned.night.middle > now => {
+                let page = text::page(around.words, &planned, &[Half::Dusk]);
+                around.output.write_all(page.as_bytes())?;
+                return Ok(around.output.flush()?);
+            }
+            Ok(_) => {}
+            Err(error) => failure = Some(error),
+        }
+    }
+    match failure {
+        Some(error) => Err(error.into()),
+        None => Ok(()),
+    }
+}
+
+impl<'a> Planned<'a> {
+    fn new(
+        site: &'a Site,
+        spot: &'a Spot,
+        date: NaiveDate,
+        scales: TimeScales,
+    ) -> Result<Self, NightError> {
+        let ephemeris = Ephemeris::new();
+        let (observer, skyline): (Observer, Skyline) = (site.observer(), site.skyline(spot));
+        let request = NightRequest {
+            observer: &observer,
+            skyline: &skyline,
+            zone: site.zone(),
+            date,
+            scales,
+            eye: Eye::Visitor,
+            bodies: &BODIES,
+        };
+        let night = Night::plan(&ephemeris, &request)?;
+        let moon = moon_at(&ephemeris, night.middle, date)?;
+        Ok(Self {
+            site,
+            spot,
+            clock: CivilClock {
+                scales,
+                zone: site.zone(),
+            },
+            skyline,
+            night,
+            moon,
+        })
+    }
+}
+
+fn moon_at(
+    ephemeris: &Ephemeris,
+    moment: Moment,
+    date: NaiveDate,
+) -> Result<Appearance, NightError> {
+    let outside = |_| {
+        NightError::OutOfRange(crate::measure::DateOutOfRange {
+            date: date.to_string(),
+        })
+    };
+    let span = ephemeris
+        .cover(moment.tt(), moment.tt(), &[Body::Moon])
+        .map_err(outside)?;
+    Ok(span.at(moment).appearance(Body::Moon))
+}

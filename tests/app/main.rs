@@ -1,0 +1,9 @@
+//! The real window, driven without a display by what its controls are called.
+#![allow(clippy::unwrap_used)]
+
+mod cautions;
+mod desk;
+mod pictures;
+mod sites;
+mod steps;
+mod themes;

@@ -1,0 +1,12 @@
+//! The built program on its command line.
+
+#[path = "../common/mod.rs"]
+mod common;
+
+mod night;
+mod no_display;
+mod places;
+mod positions;
+mod program;
+mod refusals;
+mod table;
