@@ -71,7 +71,7 @@ impl Target {
 fn thin_crescent_mag(phase_angle_deg: f64) -> f64 {
     const THIN_DEG: f64 = 150.0;
     let a = phase_angle_deg.min(179.0);
-    if !(a > THIN_DEG) {
+    if a.is_nan() || a <= THIN_DEG {
         return 0.0;
     }
     // Lommel and Seeliger: 1 + sin(a/2) tan(a/2) ln tan(a/4).

@@ -4,6 +4,7 @@
 //! the first or the last such day. It tests extinction, the sky over the Sun, and the threshold
 //! at once.
 
+use crate::document::{assert_documented, table};
 use crate::published::sky;
 use dimmet::light::{Eye, Eyes, SkyLight, Target};
 use dimmet::measure::{Angle, TimeScales, Tt};
@@ -56,6 +57,26 @@ const MARS_EVENING_LAST: (Who, End, f64) = (Who::Planet(Body::Mars), End::Evenin
 enum Who {
     Planet(Body),
     Sirius,
+}
+
+impl Who {
+    fn name(self) -> String {
+        match self {
+            Self::Planet(body) => body.name().to_owned(),
+            Self::Sirius => "Sirius".to_owned(),
+        }
+    }
+}
+
+impl End {
+    fn name(self) -> &'static str {
+        match self {
+            Self::MorningFirst => "morning first",
+            Self::MorningLast => "morning last",
+            Self::EveningFirst => "evening first",
+            Self::EveningLast => "evening last",
+        }
+    }
 }
 
 const WHO: [Who; 6] = [
@@ -228,7 +249,7 @@ fn bodies_come_and_go_beside_the_sun_as_published() {
     let mut rows = Vec::new();
     for (who, end, published) in PUBLISHED.into_iter().chain([MARS_EVENING_LAST]) {
         let (model, count) = arcus(&nights, who, end);
-        println!("{who:?} {end:?}: {model:.1}, published {published} ({count})");
+        assert!(count >= 20, "{who:?} {end:?}: only {count} such days");
         rows.push((who, end, published, model));
     }
     let mean = |values: Vec<f64>| values.iter().sum::<f64>() / values.len() as f64;
@@ -253,7 +274,6 @@ fn bodies_come_and_go_beside_the_sun_as_published() {
         );
     }
     let signed = mean(rows.iter().map(|row| row.3 - row.2).collect());
-    println!("mean signed {signed:.2}");
     assert!(signed.abs() < 1.0, "mean signed error {signed:.2}");
     let order: Vec<f64> = WHO
         .into_iter()
@@ -264,4 +284,23 @@ fn bodies_come_and_go_beside_the_sun_as_published() {
         order.windows(2).all(|pair| pair[0] < pair[1]),
         "Venus, Jupiter, Mercury, Saturn, Mars: {order:.1?}"
     );
+    let mut table_rows: Vec<[String; 4]> = rows
+        .iter()
+        .map(|(who, end, published, model)| {
+            [
+                who.name(),
+                end.name().to_owned(),
+                format!("{model:.1}"),
+                format!("{published:.1}"),
+            ]
+        })
+        .collect();
+    table_rows.push([
+        "all".into(),
+        "mean error".into(),
+        format!("{signed:+.1}"),
+        String::new(),
+    ]);
+    let head = ["body", "day", "model", "published"];
+    assert_documented("arcus", &table(head, &table_rows));
 }

@@ -1,5 +1,6 @@
 //! The young Moon, as an extended crescent, against sightings.
 
+use crate::document::{assert_documented, table};
 use crate::published::sky;
 use dimmet::light::{Eye, Eyes, Optics, Target};
 use dimmet::measure::{Angle, TimeScales, Tt};
@@ -155,4 +156,30 @@ fn young_moons_are_seen_and_missed_as_yallop_classed_them() {
         parts.windows(2).all(|pair| pair[0] >= pair[1]),
         "classes B to E: {parts:.2?}"
     );
+    let edges = [
+        ("A", 9.0),
+        ("B", EASY),
+        ("C", -0.014),
+        ("D", -0.160),
+        ("E", -0.232),
+        ("F", INVISIBLE),
+    ];
+    let rows: Vec<[String; 5]> = (0..6)
+        .map(|i| {
+            let (name, high) = edges[i];
+            let low = edges.get(i + 1).map_or(-9.0, |(_, low)| *low);
+            let [visitor, keen, optics] = [0, 1, 2].map(|eye| class(&all, eye, low..high));
+            let seen = [visitor, keen, optics].map(|(_, seen)| seen.to_string());
+            let [visitor_seen, keen_seen, optics_seen] = seen;
+            [
+                name.to_owned(),
+                visitor.0.to_string(),
+                visitor_seen,
+                keen_seen,
+                optics_seen,
+            ]
+        })
+        .collect();
+    let head = ["class", "evenings", "visitor", "keen", "10x50"];
+    assert_documented("moon", &table(head, &rows));
 }

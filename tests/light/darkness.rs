@@ -1,6 +1,7 @@
 //! What a dark sky and twilight let an eye see at the zenith.
 
 use crate::common::assert_within;
+use crate::document::{assert_documented, table};
 use crate::published::{SUN_ALTITUDES_DEG, lowland, moonless, mountain, sky, zenith};
 use dimmet::light::{Eye, Eyes, luminance_from_mag_arcsec2};
 
@@ -12,21 +13,27 @@ const LOWLAND_LIMIT: [f64; 6] = [-0.9, 0.9, 3.4, 4.8, 5.3, 5.7];
 #[test]
 fn the_zenith_shows_stars_as_the_two_published_data_sets_say() {
     let visitor = Eyes::default().gaze(Eye::Visitor);
+    let mut rows = SUN_ALTITUDES_DEG.map(|sun| vec![format!("{sun}")]);
     for (name, site, published) in [
-        ("mountain", mountain(), MOUNTAIN_LIMIT),
         ("lowland", lowland(), LOWLAND_LIMIT),
+        ("mountain", mountain(), MOUNTAIN_LIMIT),
     ] {
-        for (sun, expected) in SUN_ALTITUDES_DEG.into_iter().zip(published) {
+        for (i, (sun, expected)) in SUN_ALTITUDES_DEG.into_iter().zip(published).enumerate() {
             let limit = visitor.limit(zenith(&moonless(&site, sun)), 0.0);
-            println!("{name} {sun} {limit:.2} {expected}");
-            assert_within(
-                limit,
-                expected,
-                0.5,
-                &format!("{name}, Sun {sun}, Koomen 1952 and T&K 1953"),
-            );
+            let what = format!("{name}, Sun {sun}, Koomen 1952 and T&K 1953");
+            assert_within(limit, expected, 0.5, &what);
+            rows[i].extend([format!("{limit:.1}"), format!("{expected:.1}")]);
         }
     }
+    let rows = rows.map(|row| <[String; 5]>::try_from(row).unwrap());
+    let head = [
+        "Sun, deg",
+        "model, lowland",
+        "published",
+        "model, mountain",
+        "published",
+    ];
+    assert_documented("limits", &table(head, &rows));
 }
 
 #[test] // the site file's own figure

@@ -9,6 +9,7 @@ mod arcus;
 mod crescent;
 mod darkness;
 mod daylight;
+mod document;
 mod input;
 mod moon;
 mod optics;

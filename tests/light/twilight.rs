@@ -24,7 +24,6 @@ fn the_zenith_stays_within_what_was_measured() {
         let darkest = published.iter().copied().fold(f64::MIN, f64::max) + WIDENED_MAG;
         for (name, site) in [("lowland", lowland()), ("mountain", mountain())] {
             let mag = zenith_mag(&site, sun);
-            println!("{sun} {name} {mag:.2} {published:.2?}");
             if !(brightest..=darkest).contains(&mag) {
                 misses.push(format!(
                     "{name}, Sun {sun}: {mag:.2} outside {brightest:.2} to {darkest:.2}"
@@ -82,7 +81,6 @@ fn a_mountain_is_darker_and_is_nearer_paranal() {
 fn the_zenith_fades_as_fast_as_measured() {
     for site in [lowland(), mountain()] {
         let slope = (zenith_mag(&site, -11.0) - zenith_mag(&site, -3.0)) / 8.0;
-        println!("slope {slope}");
         assert!((1.0..=1.25).contains(&slope), "{slope} mag per degree");
     }
 }
@@ -109,7 +107,6 @@ fn ozone_makes_the_blue_hour_blue() {
     assert!(x < 0.29 && y < 0.29, "with ozone {x} {y}");
     // Near white: within 0.03 of the Sun's own light (x 0.322, y 0.333).
     let [x, y] = zenith_chromaticity(0.0);
-    println!("without {x} {y}");
     assert_within(x, 0.322, 0.03, "x without ozone");
     assert_within(y, 0.333, 0.03, "y without ozone");
 }
