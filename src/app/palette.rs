@@ -32,7 +32,6 @@ pub struct Palette {
     room: Room,
     dark: Colours,
     light: Colours,
-    sky: Vec<SkyAt>,
 }
 
 /// Sizes of type, points.
@@ -113,23 +112,6 @@ pub struct Colours {
     pub disc_lit: Color32,
 }
 
-/// The sky's colours at one altitude of the Sun.
-#[derive(Clone, Copy, Debug, Deserialize)]
-#[serde(deny_unknown_fields)]
-pub struct SkyAt {
-    /// Airless altitude of the Sun's centre, degrees.
-    pub sun_deg: f32,
-    /// High up.
-    #[serde(deserialize_with = "hex")]
-    pub high: Color32,
-    /// Half-way.
-    #[serde(deserialize_with = "hex")]
-    pub middle: Color32,
-    /// At the horizon, on the Sun's side.
-    #[serde(deserialize_with = "hex")]
-    pub low: Color32,
-}
-
 /// The palette as one theme shows it: cheap to copy, handed to everything that draws.
 #[derive(Clone, Copy, Debug)]
 pub struct Look {
@@ -164,35 +146,6 @@ impl Palette {
             },
             sizes: self.sizes,
             room: self.room,
-        }
-    }
-
-    /// The sky's colours at an airless altitude of the Sun's centre, degrees: the same in every
-    /// theme.
-    pub fn sky(&self, sun_deg: f32) -> SkyAt {
-        let below = self
-            .sky
-            .iter()
-            .position(|row| row.sun_deg <= sun_deg)
-            .unwrap_or(self.sky.len());
-        let row = |k: usize| self.sky.get(k).copied();
-        match (below.checked_sub(1).and_then(row), row(below)) {
-            (Some(above), Some(below)) => {
-                let share = (above.sun_deg - sun_deg) / (above.sun_deg - below.sun_deg);
-                SkyAt {
-                    sun_deg,
-                    high: above.high.lerp_to_gamma(below.high, share),
-                    middle: above.middle.lerp_to_gamma(below.middle, share),
-                    low: above.low.lerp_to_gamma(below.low, share),
-                }
-            }
-            (Some(only), None) | (None, Some(only)) => SkyAt { sun_deg, ..only },
-            (None, None) => SkyAt {
-                sun_deg,
-                high: Color32::BLACK,
-                middle: Color32::BLACK,
-                low: Color32::BLACK,
-            },
         }
     }
 }
@@ -288,17 +241,6 @@ mod tests {
         let look = palette().look(Theme::Dark);
         assert_eq!(look.sizes.least, 11.0);
         assert_eq!(look.font(3.0).size, 11.0);
-    }
-
-    #[test]
-    fn the_sky_darkens_as_the_sun_sinks() {
-        let palette = palette();
-        let high = |sun_deg| u32::from(palette.sky(sun_deg).high.b());
-        for sun_deg in -25..10 {
-            let (lower, upper) = (high(sun_deg as f32), high(sun_deg as f32 + 1.0));
-            assert!(lower <= upper, "at {sun_deg} degrees");
-        }
-        assert!(high(-20.0) < high(0.0));
     }
 
     #[test]

@@ -1,7 +1,7 @@
 //! Everything that the Lookout's drawings are made from.
 
 use super::command::OpticsView;
-use super::palette::{Look, Palette};
+use super::palette::Look;
 use crate::light::Eye;
 use crate::measure::{Moment, TimeScales};
 use crate::place::{Site, Skyline, Spot};
@@ -48,8 +48,6 @@ pub struct Scene<'a> {
     pub optics_view: OpticsView,
     /// Colours and sizes in the present theme.
     pub look: Look,
-    /// The whole palette, for the sky's colours.
-    pub palette: &'a Palette,
     /// Changes whenever the plan is made anew (site, spot, date): with half, body and theme it
     /// keys what a drawing keeps between frames.
     pub night_count: u64,

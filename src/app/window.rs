@@ -145,7 +145,6 @@ impl DesktopWindow {
             words: &self.words,
             optics_view: self.state.optics_view,
             look: self.palette.look(self.state.theme),
-            palette: &self.palette,
             night_count: planned.count,
         })
     }

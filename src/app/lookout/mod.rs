@@ -102,7 +102,7 @@ const AROUND: [Vec2; 4] = [
 
 /// Letters over the sky: with a dark shade around them, so that they read in every light.
 fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
-    let shade = look.colours.sky_shade.gamma_multiply(0.55);
+    let shade = look.colours.sky_shade.gamma_multiply(0.7);
     if look.theme == Theme::Red {
         // Letters and sky differ in brightness alone: a rim is not enough.
         let ground = Rect::from_min_size(at, text.size()).expand2(vec2(3.0, 0.0));

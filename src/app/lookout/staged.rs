@@ -86,7 +86,6 @@ impl Stage {
             words: &self.words,
             optics_view: OpticsView::Mirrored,
             look: self.palette.look(Theme::Dark),
-            palette: &self.palette,
             night_count: 1,
         }
     }

@@ -76,10 +76,9 @@ fn horizon_text(scene: &Scene<'_>) -> String {
     let named: Vec<&str> = named.take(4).collect();
     writeln!(
         text,
-        "over {:?}, {} stars to {:.1}: {}",
+        "over {:?}, {} stars: {}",
         model.obstacle,
         model.stars.len(),
-        model.faintest,
         named.join(", ")
     )
     .unwrap();
@@ -119,7 +118,7 @@ mercury 3.8 up at 126.3, clear by -0.4, Blocked, 0.90 lit, limb 139
 mars 47.6 up at 212.6, clear by 41.9, Plain, 0.90 lit, limb 91
 saturn -36.8 up at 347.2, clear by -38.7, Down, 1.00 lit, limb 238
 sun -6.9 up at 116.5, clear by -11.1, Down, 1.00 lit, limb 0
-over Some(\"pavilion\"), 16 stars to 1.8: Arcturus, Vega, Capella, Procyon
+over Some(\"pavilion\"), 144 stars: Arcturus, Vega, Capella, Procyon
 ";
     assert_eq!(text, expected, "{text}");
 }

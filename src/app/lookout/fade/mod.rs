@@ -5,24 +5,25 @@ mod layout;
 pub(super) mod model;
 mod paint;
 
-use super::horizon::sky;
-use super::model::{Tracks, between};
+use super::horizon::sky::{self, Picture};
+use super::model::Tracks;
 use super::says::Says;
 use super::{Kept, SpanKey};
 use crate::app::command::{Command, Commands};
 use crate::app::palette::Theme;
 use crate::app::scene::Scene;
 use crate::measure::Angle;
+use crate::sky::Body;
 use eframe::egui::accesskit::{Action, ActionData};
 use eframe::egui::{
-    ColorImage, CursorIcon, EventFilter, Response, Role, Sense, Stroke, StrokeKind, TextureHandle,
-    TextureId, TextureOptions, Ui, WidgetInfo, lerp,
+    Color32, ColorImage, CursorIcon, EventFilter, Response, Role, Sense, Stroke, StrokeKind,
+    TextureHandle, TextureId, TextureOptions, Ui, WidgetInfo, lerp,
 };
 use layout::Layout;
 use model::Model;
 
-/// Columns and rows of the band's picture.
-const SKY_SIZE: [usize; 2] = [256, 12];
+/// Columns and rows of the band's picture: a column every few minutes, stretched smoothly.
+const SKY_SIZE: [usize; 2] = [96, 12];
 
 /// The fade and what it keeps between frames.
 #[derive(Default)]
@@ -105,29 +106,34 @@ impl Fade {
     }
 }
 
+/// Each column is the sky of its own time, exposed for itself, so the band darkens as the view
+/// above does.
 fn band_image(scene: &Scene<'_>, tracks: &Tracks, model: &Model) -> ColorImage {
-    const HIGHEST_DEG: f32 = 24.0;
+    const HIGHEST_DEG: f64 = 24.0;
+    /// The Moon's own glare would be a string of beads across its band.
+    const BESIDE_THE_MOON: Angle = Angle::from_degrees(15.0);
+    let beside = match scene.body {
+        Body::Moon => BESIDE_THE_MOON,
+        _ => Angle::ZERO,
+    };
     let [columns, rows] = SKY_SIZE;
     let samples = tracks.body(scene.body);
-    let mut pixels = Vec::with_capacity(columns * rows);
-    for row in 0..rows {
-        let altitude_deg = HIGHEST_DEG * (1.0 - (row as f32 + 0.5) / rows as f32);
-        for column in 0..columns {
-            let share = (column as f64 + 0.5) / columns as f64;
-            let at_s = lerp(model.from_s..=model.to_s, share);
-            // The nearest minute: an azimuth must not be blended across north.
-            let nearest = samples.partition_point(|sample| sample.at_s < at_s);
-            let azimuth = samples
-                .get(nearest.min(samples.len().saturating_sub(1)))
-                .map_or(Angle::ZERO, |sample| sample.azimuth);
-            let sun_azimuth = tracks
-                .sun
-                .get(nearest.min(tracks.sun.len().saturating_sub(1)))
-                .map_or(Angle::ZERO, |sample| sample.azimuth);
-            let sun_altitude = between(&tracks.sun, at_s, |sample| sample.sun_altitude);
-            let sun = (sun_altitude, sun_azimuth);
-            let colour = sky::colour(scene.palette, sun, azimuth, altitude_deg);
-            pixels.push(scene.look.texel(colour));
+    let mut pixels = vec![Color32::BLACK; columns * rows];
+    for column in 0..columns {
+        let share = (column as f64 + 0.5) / columns as f64;
+        let at_s = lerp(model.from_s..=model.to_s, share);
+        // The nearest minute: an azimuth must not be blended across north.
+        let nearest = samples.partition_point(|sample| sample.at_s < at_s);
+        let azimuth = samples
+            .get(nearest.min(samples.len().saturating_sub(1)))
+            .map_or(Angle::ZERO, |sample| sample.azimuth)
+            + beside;
+        let glow = sky::glow(scene, tracks.moment(at_s));
+        let picture = Picture::new(&glow, &scene.look);
+        for row in 0..rows {
+            let altitude_deg = HIGHEST_DEG * (1.0 - (row as f64 + 0.5) / rows as f64);
+            let altitude = Angle::from_degrees(altitude_deg);
+            pixels[row * columns + column] = picture.colour(altitude, azimuth);
         }
     }
     ColorImage::new(SKY_SIZE, pixels)

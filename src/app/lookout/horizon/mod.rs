@@ -15,16 +15,17 @@ use super::{Kept, SpanKey};
 use crate::app::command::{Command, Commands};
 use crate::app::palette::Theme;
 use crate::app::scene::Scene;
-use crate::measure::Angle;
+use crate::measure::{Angle, Moment};
 use crate::plan::Half;
 use crate::sky::Body;
 use camera::{Camera, Sector, Turn};
 use eframe::egui::{
     CursorIcon, EventFilter, Key, Modifiers, Rect, Response, Role, Sense, Stroke, StrokeKind,
-    TextureHandle, TextureOptions, Ui, WidgetInfo, pos2,
+    TextureHandle, TextureId, TextureOptions, Ui, WidgetInfo, pos2,
 };
 use layout::Layout;
 use model::Model;
+use sky::Picture;
 
 /// How fine the skyline's outline is.
 const OUTLINE_STEP: Angle = Angle::from_degrees(0.5);
@@ -43,8 +44,9 @@ pub struct Horizon {
 /// What the sky's picture depends on.
 #[derive(Clone, Copy, PartialEq)]
 struct SkyKey {
+    night_count: u64,
+    moment: Moment,
     camera: Camera,
-    sun: (Angle, Angle),
     theme: Theme,
 }
 
@@ -87,8 +89,7 @@ impl Horizon {
         let outline = self
             .outline
             .get(scene.night_count, || scene.skyline.outline(OUTLINE_STEP));
-        let sun = (model.sun.sample.sun_altitude, model.sun.sample.azimuth);
-        let sky = self.sky(ui, scene, camera, sun);
+        let sky = self.sky(ui, scene, camera);
         paint::paint(ui.painter(), &scene.look, &model, &layout, sky, &outline);
         if response.has_focus() {
             let stroke = Stroke::new(2.0, scene.look.colours.chosen);
@@ -164,20 +165,15 @@ impl Horizon {
         });
     }
 
-    /// The sky's picture, made anew only when the moment, the view or the theme changed.
-    fn sky(
-        &mut self,
-        ui: &Ui,
-        scene: &Scene<'_>,
-        camera: Camera,
-        sun: (Angle, Angle),
-    ) -> eframe::egui::TextureId {
+    /// The sky's picture, made anew only when the site, the moment, the view or the theme changed.
+    fn sky(&mut self, ui: &Ui, scene: &Scene<'_>, camera: Camera) -> TextureId {
         let key = SkyKey {
+            night_count: scene.night_count,
+            moment: scene.moment,
             camera,
-            sun,
             theme: scene.look.theme,
         };
-        let image = || sky::image(scene.palette, &scene.look, &camera, sun);
+        let image = || Picture::new(&sky::glow(scene, scene.moment), &scene.look).image(&camera);
         match &mut self.sky {
             Some((known, texture)) => {
                 if *known != key {

@@ -3,7 +3,7 @@
 use crate::app::lookout::lights::Lights;
 use crate::app::lookout::model::{Sample, Tracks};
 use crate::app::scene::Scene;
-use crate::light::Standing;
+use crate::light::{Gaze, Glow, Standing, Target};
 use crate::measure::Angle;
 use crate::sky::{Body, View, stars};
 
@@ -20,10 +20,8 @@ pub struct Model {
     pub others: Vec<Mark>,
     /// The Sun.
     pub sun: Mark,
-    /// The stars that the sky lets through, brightest first.
+    /// The stars that the scene's eye sees in that sky, from the list's brightest.
     pub stars: Vec<Star>,
-    /// The faintest star that shows, V.
-    pub faintest: f64,
 }
 
 /// A body in the sky.
@@ -56,6 +54,8 @@ pub struct Star {
     pub altitude: Angle,
     /// V.
     pub magnitude: f64,
+    /// By how much it outshines the eye's threshold, magnitudes; 0 or more.
+    pub margin_mag: f64,
 }
 
 impl Model {
@@ -82,7 +82,6 @@ impl Model {
         let mut others: Vec<Mark> = others.map(|body| mark(*body)).collect();
         let brightness = |mark: &Mark| mark.magnitude.unwrap_or(f64::INFINITY);
         others.sort_by(|a, b| brightness(a).total_cmp(&brightness(b)));
-        let faintest = super::sky::faintest_star(lights.sun_altitude);
         Self {
             skyline: scene.skyline.altitude(target.sample.azimuth),
             obstacle: scene
@@ -90,10 +89,9 @@ impl Model {
                 .label(target.sample.azimuth)
                 .map(str::to_owned),
             sun: mark(Body::Sun),
-            stars: stars_to(&view, faintest),
+            stars: seen_stars(&view, &lights.usual, &scene.sight.gaze(scene.eye)),
             target,
             others,
-            faintest,
         }
     }
 
@@ -106,20 +104,59 @@ impl Model {
     }
 }
 
-/// The stars above the horizon that are no fainter than `faintest`.
-fn stars_to(view: &View<'_>, faintest: f64) -> Vec<Star> {
+/// The stars above the horizon that an eye sees.
+fn seen_stars(view: &View<'_>, glow: &Glow<'_>, gaze: &Gaze) -> Vec<Star> {
     stars::bright_stars()
         .iter()
-        .take_while(|star| star.magnitude <= faintest)
         .filter_map(|star| {
             let place = view.horizontal(view.star(star).direction);
+            if place.altitude < Angle::from_degrees(-1.0) {
+                return None;
+            }
             let seen = view.refracted(place);
-            (place.altitude > Angle::from_degrees(-1.0)).then_some(Star {
+            let (altitude, azimuth) = (seen.altitude.radians(), seen.azimuth.radians());
+            let target = Target::point(star.magnitude, altitude, azimuth);
+            let margin_mag = glow.margin(&target, gaze).margin_mag;
+            (margin_mag >= 0.0).then_some(Star {
                 name: star.name.as_deref(),
                 azimuth: seen.azimuth,
                 altitude: seen.altitude,
                 magnitude: star.magnitude,
+                margin_mag,
             })
         })
         .collect()
+}
+
+#[cfg(test)]
+mod tests {
+    #![allow(clippy::unwrap_used)]
+    use super::Model;
+    use crate::app::lookout::model::Tracks;
+    use crate::app::lookout::staged::Stage;
+    use crate::measure::search;
+    use crate::plan::Half;
+    use crate::sky::Body;
+
+    /// Star sights are taken while the Sun is 3 to 9 degrees down (common practice): the first
+    /// of the first-magnitude stars comes out in between.
+    #[test]
+    fn a_first_magnitude_star_comes_out_when_star_sights_begin() {
+        let stage = Stage::new("Fennick Common", "2026-12-04", Half::Dusk, Body::Saturn);
+        let mut scene = stage.scene("2026-12-04T17:00:00");
+        let tracks = Tracks::new(&scene);
+        let first = search::grid(0.0, tracks.length_s, 60.0)
+            .into_iter()
+            .find_map(|at_s| {
+                scene.moment = tracks.moment(at_s);
+                let model = Model::new(&scene, &tracks);
+                let has_one = model
+                    .stars
+                    .iter()
+                    .any(|star| (0.5..1.5).contains(&star.magnitude));
+                has_one.then_some(model.sun.sample.sun_altitude.degrees())
+            });
+        let sun_deg = first.unwrap();
+        assert!((-9.0..=-3.0).contains(&sun_deg), "Sun at {sun_deg}");
+    }
 }

@@ -64,9 +64,10 @@ fn stars(painter: &Painter, look: &Look, model: &Model, layout: &Layout) {
         // None among letters.
         let is_free = at.x > ruler && layout.labels.iter().all(|label| !label.rect.contains(at));
         if layout.camera.rect.contains(at) && is_free {
-            let spare = (model.faintest - star.magnitude) as f32;
-            let radius = 0.7 + 0.28 * (4.6 - star.magnitude as f32).clamp(0.0, 5.0);
-            let share = (0.25 + 0.5 * spare).clamp(0.0, 1.0);
+            // Not by magnitude: what stands out of the sky by as much looks as bright.
+            let margin = (star.margin_mag as f32).clamp(0.0, 6.0);
+            let radius = 0.7 + 0.28 * margin;
+            let share = (0.25 + 0.5 * margin).min(1.0);
             painter.circle_filled(at, radius, look.colours.body.gamma_multiply(share));
         }
     }
@@ -131,10 +132,11 @@ fn path(painter: &Painter, look: &Look, stretch: &Stretch) {
     let colours = &look.colours;
     match stretch.standing {
         Standing::Plain => {
-            painter.add(Shape::line(
-                stretch.points.clone(),
-                Stroke::new(4.0, colours.seen),
-            ));
+            // The dark edge keeps it apart from the glow of dusk, which has the same colour.
+            let edge = Stroke::new(6.0, colours.sky_shade.gamma_multiply(0.35));
+            painter.add(Shape::line(stretch.points.clone(), edge));
+            let line = Stroke::new(4.0, colours.seen);
+            painter.add(Shape::line(stretch.points.clone(), line));
         }
         Standing::WashedOut => {
             let stroke = Stroke::new(1.8, colours.too_bright);

@@ -1,181 +1,201 @@
-//! The sky's colour: a gradient from the horizon up, warm on the Sun's side, darkening as the
-//! Sun sinks.
+//! The sky as a picture: the light model's own colours, exposed for a screen.
 
 use super::camera::Camera;
-use crate::app::palette::{Look, Palette, SkyAt};
-use crate::measure::Angle;
-use eframe::egui::{Color32, ColorImage, Rgba, lerp};
+use crate::app::palette::Look;
+use crate::app::scene::Scene;
+use crate::light::tone::Exposure;
+use crate::light::{Glow, GlowRow};
+use crate::measure::{Angle, Moment};
+use crate::plan::Lamps;
+use eframe::egui::{Color32, ColorImage, lerp};
+use std::f64::consts::TAU;
 
 /// Columns and rows of the sky's texture; it is stretched smoothly over the view.
 const SIZE: [usize; 2] = [256, 96];
 
-/// How fast the horizon's colour gives way to the middle one, degrees of altitude; and where the
-/// high one is reached.
-const LOW_DEG: f32 = 8.0;
-const HIGH_DEG: f32 = 56.0;
-
-/// How the colour runs with altitude, on the Sun's side and away from it.
-struct Gradient {
-    low: Rgba,
-    low_away: Rgba,
-    middle: Rgba,
-    middle_away: Rgba,
-    high: Rgba,
+/// The light of a scene's sky at a moment, as assumed.
+pub fn glow<'a>(scene: &Scene<'a>, moment: Moment) -> Glow<'a> {
+    let epoch = scene.span.at(moment);
+    Lamps::of(&epoch.seen_by(scene.observer)).glow(&scene.sight.sky)
 }
 
-impl Gradient {
-    fn new(sky: &SkyAt) -> Self {
-        let (low, middle, high) = (
-            Rgba::from(sky.low),
-            Rgba::from(sky.middle),
-            Rgba::from(sky.high),
-        );
+/// A sky made ready for a screen.
+pub struct Picture<'a> {
+    glow: &'a Glow<'a>,
+    look: &'a Look,
+    exposure: Exposure,
+}
+
+impl<'a> Picture<'a> {
+    /// Exposes for the whole sky, wherever the view is turned: what is looked at must not change
+    /// how dark it is, and the horizon view and the fade must agree.
+    pub fn new(glow: &'a Glow<'a>, look: &'a Look) -> Self {
         Self {
-            low,
-            low_away: mix(middle, high, 0.1),
-            middle,
-            middle_away: mix(middle, high, 0.4),
-            high,
+            glow,
+            look,
+            exposure: Exposure::for_luminance(typical_luminance(glow)),
         }
     }
 
-    /// `sunward` is 1 above the Sun and 0 on the opposite side.
-    fn colour(&self, altitude_deg: f32, sunward: f32) -> Rgba {
-        let low = mix(self.low_away, self.low, sunward);
-        let middle = mix(self.middle_away, self.middle, sunward);
-        let altitude_deg = altitude_deg.max(0.0);
-        let share = (altitude_deg / HIGH_DEG).min(1.0);
-        let above = mix(middle, self.high, share * share * (3.0 - 2.0 * share));
-        mix(above, low, (-altitude_deg / LOW_DEG).exp())
+    /// The colour in one place; below the horizon as at it.
+    pub fn colour(&self, altitude: Angle, azimuth: Angle) -> Color32 {
+        self.texel(&self.glow.along(altitude.radians()), azimuth)
     }
-}
 
-fn mix(a: Rgba, b: Rgba, share: f32) -> Rgba {
-    a * (1.0 - share) + b * share
-}
-
-/// How much of the Sun's side an azimuth has, 1 to 0.
-fn sunward(azimuth: Angle, sun_azimuth: Angle) -> f32 {
-    let from_sun = (azimuth - sun_azimuth).cos() as f32;
-    // Half at a right angle would light the whole sky; the square keeps it to the Sun's side.
-    (0.5 + 0.5 * from_sun).powi(2)
-}
-
-/// The sky's colour in one place.
-pub fn colour(
-    palette: &Palette,
-    sun: (Angle, Angle),
-    azimuth: Angle,
-    altitude_deg: f32,
-) -> Color32 {
-    let (sun_altitude, sun_azimuth) = sun;
-    let gradient = Gradient::new(&palette.sky(sun_altitude.degrees() as f32));
-    gradient
-        .colour(altitude_deg, sunward(azimuth, sun_azimuth))
-        .into()
-}
-
-/// The sky that a camera sees, as a picture to be stretched over its rectangle.
-pub fn image(palette: &Palette, look: &Look, camera: &Camera, sun: (Angle, Angle)) -> ColorImage {
-    let (sun_altitude, sun_azimuth) = sun;
-    let gradient = Gradient::new(&palette.sky(sun_altitude.degrees() as f32));
-    let [columns, rows] = SIZE;
-    let share = |k: usize, count: usize| (k as f64 + 0.5) / count as f64;
-    let sunwards: Vec<f32> = (0..columns)
-        .map(|column| {
-            let beside_deg = (share(column, columns) - 0.5) * camera.width_deg();
-            sunward(
-                Angle::from_degrees(camera.middle_deg + beside_deg),
-                sun_azimuth,
-            )
-        })
-        .collect();
-    let mut pixels = Vec::with_capacity(columns * rows);
-    for row in 0..rows {
-        let altitude_deg = lerp(camera.top_deg()..=camera.bottom_deg, share(row, rows)) as f32;
-        // Along a row the colour runs straight from the one side's to the other's; blended as
-        // the screen counts, so that only the ends need converting.
-        let towards: Color32 = gradient.colour(altitude_deg, 1.0).into();
-        let away: Color32 = gradient.colour(altitude_deg, 0.0).into();
-        let (towards, away) = (look.texel(towards), look.texel(away));
-        let blend = |share: f32, channel: usize| {
-            let (from, to) = (f32::from(away[channel]), f32::from(towards[channel]));
-            // Half a step, so that the cast rounds.
-            (from + (to - from) * share + 0.5) as u8
-        };
-        pixels.extend(
-            sunwards.iter().map(|share| {
-                Color32::from_rgb(blend(*share, 0), blend(*share, 1), blend(*share, 2))
-            }),
-        );
-    }
-    ColorImage::new(SIZE, pixels)
-}
-
-/// The faintest star that shows, V, by the Sun's airless altitude: first magnitude stars at the
-/// end of civil twilight, all of the list when it is dark. Common practice, rounded.
-pub fn faintest_star(sun_altitude: Angle) -> f64 {
-    const STEPS: [(f64, f64); 6] = [
-        (-2.0, -2.0),
-        (-4.0, -0.5),
-        (-6.0, 1.0),
-        (-9.0, 2.6),
-        (-12.0, 3.8),
-        (-16.0, 4.8),
-    ];
-    let sun_deg = sun_altitude.degrees();
-    let after = STEPS.partition_point(|(step_deg, _)| *step_deg >= sun_deg);
-    match (
-        after.checked_sub(1).and_then(|k| STEPS.get(k)),
-        STEPS.get(after),
-    ) {
-        (Some((high_deg, a)), Some((low_deg, b))) => {
-            a + (b - a) * (sun_deg - high_deg) / (low_deg - high_deg)
+    /// What a camera sees, to be stretched over its rectangle.
+    pub fn image(&self, camera: &Camera) -> ColorImage {
+        let [columns, rows] = SIZE;
+        let share = |k: usize, count: usize| (k as f64 + 0.5) / count as f64;
+        let azimuths: Vec<Angle> = (0..columns)
+            .map(|column| {
+                let beside_deg = (share(column, columns) - 0.5) * camera.width_deg();
+                Angle::from_degrees(camera.middle_deg + beside_deg)
+            })
+            .collect();
+        let mut pixels = Vec::with_capacity(columns * rows);
+        for row in 0..rows {
+            let altitude_deg = lerp(camera.top_deg()..=camera.bottom_deg, share(row, rows));
+            let along = self.glow.along(altitude_deg.to_radians());
+            pixels.extend(azimuths.iter().map(|azimuth| self.texel(&along, *azimuth)));
         }
-        (Some((_, only)), None) | (None, Some((_, only))) => *only,
-        (None, None) => f64::NEG_INFINITY,
+        ColorImage::new(SIZE, pixels)
     }
+
+    fn texel(&self, along: &GlowRow, azimuth: Angle) -> Color32 {
+        let [r, g, b] = self.exposure.srgb(along.xyz(azimuth.radians()));
+        self.look.texel(Color32::from_rgb(r, g, b))
+    }
+}
+
+/// The mean luminance over even patches of the sky, cd/m²: the glow of dusk counts for much in it,
+/// as it does for the eye.
+fn typical_luminance(glow: &Glow<'_>) -> f64 {
+    const RINGS: usize = 4;
+    const AROUND: usize = 12;
+    let mut sum = 0.0;
+    for ring in 0..RINGS {
+        // Even steps of the sine are even patches of the sphere.
+        let altitude = ((ring as f64 + 0.5) / RINGS as f64).asin();
+        let along = glow.along(altitude);
+        for step in 0..AROUND {
+            let azimuth = TAU * step as f64 / AROUND as f64;
+            sum += along.luminance(azimuth).total();
+        }
+    }
+    sum / (RINGS * AROUND) as f64
 }
 
 #[cfg(test)]
 mod tests {
     #![allow(clippy::unwrap_used)]
-    use super::{colour, faintest_star};
-    use crate::app::palette::Palette;
+    use super::{Camera, Picture};
+    use crate::app::palette::{Look, Palette, Theme};
+    use crate::light::{Conditions, Glow, SkyLight};
     use crate::measure::Angle;
+    use crate::place::Extinction;
+    use eframe::egui::{Color32, Pos2, Rect, Rgba, vec2};
 
-    fn light_of(sun_deg: f64, azimuth_deg: f64, altitude_deg: f32) -> f32 {
-        let sun = (Angle::from_degrees(sun_deg), Angle::from_degrees(250.0));
-        let palette = Palette::shipped().unwrap();
-        let colour = colour(
-            &palette,
-            sun,
-            Angle::from_degrees(azimuth_deg),
-            altitude_deg,
-        );
-        eframe::egui::Rgba::from(colour).intensity()
+    const SUN_AZIMUTH_DEG: f64 = 250.0;
+
+    /// Clear lowland air under a dark sky.
+    fn air() -> SkyLight {
+        let extinction = Extinction {
+            rayleigh_mag: 0.10,
+            ozone_mag: 0.03,
+            aerosol_mag: 0.10,
+        };
+        SkyLight::new(Conditions::new(extinction, 100.0, 21.0).unwrap())
+    }
+
+    fn sunk(air: &SkyLight, sun_deg: f64) -> Glow<'_> {
+        air.at(sun_deg.to_radians(), SUN_AZIMUTH_DEG.to_radians(), None)
+    }
+
+    fn look(theme: Theme) -> Look {
+        Palette::shipped().unwrap().look(theme)
+    }
+
+    fn colour(glow: &Glow<'_>, look: &Look, beside_sun_deg: f64, altitude_deg: f64) -> Color32 {
+        let azimuth = Angle::from_degrees(SUN_AZIMUTH_DEG + beside_sun_deg);
+        Picture::new(glow, look).colour(Angle::from_degrees(altitude_deg), azimuth)
+    }
+
+    fn light_of(colour: Color32) -> f32 {
+        Rgba::from(colour).intensity()
     }
 
     #[test]
-    fn the_sky_darkens_as_the_sun_sinks() {
-        let mut last = f32::INFINITY;
-        for sun_deg in [3.0, 0.0, -3.0, -6.0, -9.0, -12.0, -17.0] {
-            let light = light_of(sun_deg, 250.0, 5.0);
-            assert!(light < last, "Sun at {sun_deg}: {light} after {last}");
-            last = light;
+    fn the_sky_darkens_all_over_as_the_sun_sinks() {
+        let (air, look) = (air(), look(Theme::Dark));
+        for (beside_deg, altitude_deg) in [(0.0, 5.0), (90.0, 30.0), (180.0, 10.0), (0.0, 90.0)] {
+            let mut last = f32::INFINITY;
+            // Deeper, the night's own light is all that is left there, and only the eye's state
+            // still changes.
+            for sun_deg in [3.0, 0.0, -2.0, -4.0, -6.0, -9.0, -12.0] {
+                let light = light_of(colour(
+                    &sunk(&air, sun_deg),
+                    &look,
+                    beside_deg,
+                    altitude_deg,
+                ));
+                assert!(light < last, "Sun at {sun_deg}: {light} after {last}");
+                last = light;
+            }
         }
     }
 
     #[test]
-    fn twilight_is_brighter_on_the_suns_side() {
-        assert!(light_of(-8.0, 250.0, 3.0) > 1.5 * light_of(-8.0, 70.0, 3.0));
+    fn a_whole_view_darkens_without_a_gap() {
+        let (air, look) = (air(), look(Theme::Dark));
+        let camera = Camera {
+            rect: Rect::from_min_size(Pos2::ZERO, vec2(900.0, 400.0)),
+            middle_deg: 240.0,
+            bottom_deg: -4.0,
+            points_per_deg: 10.0,
+        };
+        let total = |sun_deg| {
+            let glow = sunk(&air, sun_deg);
+            let image = Picture::new(&glow, &look).image(&camera);
+            assert!(image.pixels.iter().all(|pixel| *pixel != Color32::BLACK));
+            image
+                .pixels
+                .iter()
+                .map(|pixel| light_of(*pixel))
+                .sum::<f32>()
+        };
+        let (shallow, deep) = (total(-2.0), total(-6.0));
+        assert!(deep < 0.8 * shallow, "{deep} after {shallow}");
     }
 
     #[test]
-    fn stars_come_out_as_the_sun_sinks() {
-        assert!(faintest_star(Angle::from_degrees(5.0)) < -1.5);
-        assert!((faintest_star(Angle::from_degrees(-6.0)) - 1.0).abs() < 1e-12);
-        assert!((faintest_star(Angle::from_degrees(-7.5)) - 1.8).abs() < 1e-9);
-        assert!(faintest_star(Angle::from_degrees(-30.0)) > 4.5);
+    fn dusk_is_reddish_low_over_the_sun_and_blue_at_the_zenith() {
+        let (air, look) = (air(), look(Theme::Dark));
+        for sun_deg in [-2.0, -4.0, -6.0] {
+            let glow = sunk(&air, sun_deg);
+            let low = colour(&glow, &look, 0.0, 2.0);
+            assert!(low.r() > low.g() && low.g() > low.b(), "{sun_deg}: {low:?}");
+            let high = colour(&glow, &look, 0.0, 90.0);
+            assert!(
+                high.b() > high.g() && high.b() > high.r(),
+                "{sun_deg}: {high:?}"
+            );
+        }
+    }
+
+    #[test]
+    fn the_earths_shadow_is_darker_than_the_belt_above_it() {
+        let (air, look) = (air(), look(Theme::Dark));
+        let glow = sunk(&air, -4.0);
+        let at = |altitude_deg| light_of(colour(&glow, &look, 180.0, altitude_deg));
+        let belt = (4..40).map(|deg| at(f64::from(deg))).fold(0.0, f32::max);
+        assert!(at(1.0) < 0.9 * belt, "{} under {belt}", at(1.0));
+    }
+
+    #[test]
+    fn the_red_theme_has_brightness_alone() {
+        let air = air();
+        let glow = sunk(&air, -4.0);
+        let [r, g, b, _] = colour(&glow, &look(Theme::Red), 0.0, 2.0).to_array();
+        assert!(r == g && g == b && r > 0);
     }
 }
