@@ -9,7 +9,10 @@ use crate::measure::Angle;
 use crate::plan::{Found, Half, Sighting};
 use crate::sky::{Body, refraction};
 use crate::words::Words;
-use eframe::egui::{Align, Color32, Layout, Rect, Response, Sense, Stroke, Ui, UiBuilder, vec2};
+use eframe::egui::{
+    Align, Align2, Color32, Layout, Rect, Response, Role, Sense, Stroke, Ui, UiBuilder, WidgetInfo,
+    vec2,
+};
 
 /// The sentence, at the size to be read aloud from; at the controls' size where it is long.
 pub fn sentence_card(ui: &mut Ui, look: &Look, sentence: &str, least_height: f32) {
@@ -250,12 +253,25 @@ fn sighting_ui(ui: &mut Ui, scene: &Scene<'_>, words: &Words, rect: Rect, sighti
     } else {
         look.colours.text
     };
-    let layout = Layout::left_to_right(Align::Center);
-    let mut ui = ui.new_child(UiBuilder::new().max_rect(rect).layout(layout));
-    figure(&mut ui, look.font(look.sizes.label), colour, &name);
-    ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-        figure(ui, look.bold(look.sizes.label), look.colours.text, &time);
-    });
+    let painter = ui.painter();
+    let (name_font, time_font) = (look.font(look.sizes.label), look.bold(look.sizes.label));
+    painter.text(
+        rect.left_center(),
+        Align2::LEFT_CENTER,
+        &name,
+        name_font,
+        colour,
+    );
+    painter.text(
+        rect.right_center(),
+        Align2::RIGHT_CENTER,
+        &time,
+        time_font,
+        look.colours.text,
+    );
+    // Read as one.
+    let row = ui.interact(rect, ui.id().with(&name), Sense::hover());
+    row.widget_info(|| WidgetInfo::labeled(Role::Label, true, format!("{name} {time}")));
 }
 
 /// One sentence in place of the view, when there is no night to show.
