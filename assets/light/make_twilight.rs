@@ -56,7 +56,7 @@ fn sky(haze_mag: f64, site_km: f64) -> Vec<u16> {
                 .radiance(sun, altitude, azimuth)
                 .map(|light| spectrum::xyz(&light));
             let cos_angle = altitude.sin() * sun.sin() + altitude.cos() * sun.cos() * azimuth.cos();
-            let shape = shape.at(cos_angle.clamp(-1.0, 1.0));
+            let shape = f64::from(shape.at(cos_angle.clamp(-1.0, 1.0) as f32));
             values.extend([0, 1, 2].map(|axis| stored(((once[axis] + more[axis]) / shape).ln())));
         }
     }

@@ -6,6 +6,7 @@ use super::scene::Scene;
 use super::state::Motion;
 use super::widgets::{bold, card, card_frame, figure, text};
 use crate::measure::Angle;
+use crate::plan::{Found, Half, Sighting};
 use crate::sky::{Body, refraction};
 use crate::words::Words;
 use eframe::egui::{Align, Color32, Layout, Rect, Response, Sense, Stroke, Ui, UiBuilder, vec2};
@@ -194,6 +195,66 @@ fn fact_ui(ui: &mut Ui, look: &Look, words: &Words, rect: Rect, (name, value): &
     figure(&mut ui, font, look.colours.lesser, &words.text(name));
     ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
         figure(ui, look.bold(look.sizes.control), look.colours.text, value);
+    });
+}
+
+/// In which order the chosen eye finds things at dusk, or holds them at dawn: in two columns,
+/// the first to be read down.
+pub fn appearing_card(ui: &mut Ui, scene: &Scene<'_>, words: &Words, sightings: &[Sighting]) {
+    const ROW_HEIGHT: f32 = 16.0;
+    let look = &scene.look;
+    let title = match scene.half {
+        Half::Dusk => "appearing-dusk",
+        Half::Dawn => "appearing-dawn",
+    };
+    card(ui, look, 0.0, |ui| {
+        ui.spacing_mut().item_spacing.y = 4.0;
+        let (size, lesser) = (look.sizes.label, look.colours.lesser);
+        text(ui, look, size, lesser, &words.text(title));
+        if sightings.is_empty() {
+            let none = words.text("appearing-none");
+            text(ui, look, size, look.colours.text, &none);
+        }
+        let (left, right) = sightings.split_at(sightings.len().div_ceil(2));
+        let room = vec2(ui.available_width(), ROW_HEIGHT);
+        for (k, sighting) in left.iter().enumerate() {
+            let (row, _) = ui.allocate_exact_size(room, Sense::hover());
+            let (middle, half_gap) = (row.center().x, 0.75 * look.room.inside);
+            let before = row.with_max_x(middle - half_gap);
+            sighting_ui(ui, scene, words, before, sighting);
+            if let Some(sighting) = right.get(k) {
+                let after = row.with_min_x(middle + half_gap);
+                sighting_ui(ui, scene, words, after, sighting);
+            }
+        }
+    });
+}
+
+fn sighting_ui(ui: &mut Ui, scene: &Scene<'_>, words: &Words, rect: Rect, sighting: &Sighting) {
+    let look = &scene.look;
+    let name = match sighting.found {
+        Found::Body(body) => words.body(body),
+        Found::Star(star) => star.to_string(),
+    };
+    let mut time = words.time(scene.clock(), sighting.moment);
+    if sighting.is_beyond {
+        let id = match scene.half {
+            Half::Dusk => "appearing-by",
+            Half::Dawn => "appearing-past",
+        };
+        time = words.text_with::<&str>(id, &[("time", &time)]);
+    }
+    let is_chosen = sighting.found == Found::Body(scene.body);
+    let colour = if is_chosen {
+        look.colours.chosen
+    } else {
+        look.colours.text
+    };
+    let layout = Layout::left_to_right(Align::Center);
+    let mut ui = ui.new_child(UiBuilder::new().max_rect(rect).layout(layout));
+    figure(&mut ui, look.font(look.sizes.label), colour, &name);
+    ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
+        figure(ui, look.bold(look.sizes.label), look.colours.text, &time);
     });
 }
 

@@ -1,6 +1,7 @@
 //! Every action of the user, recorded while the window is drawn and run afterwards.
 
 use super::palette::Theme;
+use crate::light::Eye;
 use crate::measure::Moment;
 use crate::plan::Half;
 use crate::sky::Body;
@@ -33,6 +34,8 @@ pub enum Command {
     RunOrStop,
     /// Chooses the body.
     ChooseBody(Body),
+    /// Chooses whose eye looks.
+    ChooseEye(Eye),
     /// Chooses a site by its place in the list.
     ChooseSite(usize),
     /// Chooses a spot of the site by its place in the site's list.
@@ -150,6 +153,10 @@ impl Command {
             Self::ChooseOpticsView(OpticsView::Erect) => "optics-erect",
             Self::ChooseOpticsView(OpticsView::Inverted) => "optics-inverted",
             Self::ChooseOpticsView(OpticsView::Mirrored) => "optics-mirrored",
+            Self::ChooseEye(Eye::PasserBy) => "eye-passer-by",
+            Self::ChooseEye(Eye::Visitor) => "eye-visitor",
+            Self::ChooseEye(Eye::Keen) => "eye-keen",
+            Self::ChooseEye(Eye::Optics) => "eye-optics",
             Self::NewSite => "new-site",
             Self::FindSiteFile => "find-site-file",
             Self::OpenSiteFile(_) => "open-site-file",

@@ -4,15 +4,19 @@
 //! the figures in a column on the right. Narrow (below [`WIDE`] points): one column that
 //! scrolls, the caution fixed above it.
 
-use super::cards::{caution_card, facts_card, instead_of_view, notice_line, sentence_card};
+use super::cards::{
+    appearing_card, caution_card, facts_card, instead_of_view, notice_line, sentence_card,
+};
 use super::command::{Command, Commands};
 use super::palette::{Look, Theme};
 use super::pickers::picker_row;
 use super::transport::transport_ui;
-use super::widgets::{bold, choice, command_button, text};
+use super::widgets::{bold, choice, command_button, figure};
 use super::window::DesktopWindow;
 use crate::measure::CivilScale;
-use eframe::egui::{Align, Layout, Rect, ScrollArea, Sense, Stroke, Ui, UiBuilder, pos2, vec2};
+use eframe::egui::{
+    Align, Label, Layout, Rect, RichText, ScrollArea, Sense, Stroke, Ui, UiBuilder, pos2, vec2,
+};
 
 /// From this width on, points, the right column stands beside the view.
 const WIDE: f32 = 1200.0;
@@ -20,10 +24,15 @@ const WIDE: f32 = 1200.0;
 const ROW_BESIDE: f32 = 1500.0;
 /// Below this width, points, inset and phase stand one below the other.
 const COLUMN: f32 = 500.0;
+/// From this height below the facts on, points, the right column holds the order of appearing
+/// with inset and phase.
+const ROOM_FOR_ORDER: f32 = 440.0;
 /// Height of inset and phase where they stand beside one another.
 const BESIDE_HEIGHT: f32 = 250.0;
 /// The sentence card's height in the right column: four lines.
 const SENTENCE_HEIGHT: f32 = 112.0;
+/// With less room than this beside the name, points, the top bar leaves the work area out.
+const ROOM_FOR_AREA: f32 = 420.0;
 /// The caution card's height where it has the column's width.
 const CAUTION_HEIGHT: f32 = 100.0;
 
@@ -93,15 +102,9 @@ impl DesktopWindow {
             ui.spacing_mut().item_spacing.x = 8.0;
             let name = self.words.text("program");
             bold(ui, look, look.sizes.name, look.colours.chosen, &name);
-            ui.add_space(look.room.inside);
-            let area = self.words.text("lookout");
-            let tab = bold(ui, look, look.sizes.sentence, look.colours.text, &area);
-            let under = tab.rect.translate(vec2(0.0, 4.0));
-            ui.painter().hline(
-                under.x_range(),
-                under.bottom(),
-                Stroke::new(2.0, look.colours.chosen),
-            );
+            if ui.available_width() > ROOM_FOR_AREA {
+                self.work_area_tab(ui, look);
+            }
             ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
                 command_button(ui, &self.words, Command::ShowHelp, commands);
                 ui.add_space(look.room.inside);
@@ -114,6 +117,19 @@ impl DesktopWindow {
                 }
             });
         });
+    }
+
+    /// The name of the work area on view.
+    fn work_area_tab(&self, ui: &mut Ui, look: &Look) {
+        ui.add_space(look.room.inside);
+        let area = self.words.text("lookout");
+        let tab = bold(ui, look, look.sizes.sentence, look.colours.text, &area);
+        let under = tab.rect.translate(vec2(0.0, 4.0));
+        ui.painter().hline(
+            under.x_range(),
+            under.bottom(),
+            Stroke::new(2.0, look.colours.chosen),
+        );
     }
 
     fn wide(&mut self, ui: &mut Ui, look: &Look, commands: &mut Commands) {
@@ -199,13 +215,20 @@ impl DesktopWindow {
         self.drawings = drawings;
     }
 
-    /// Facts, inset and phase: one below the other in a column, beside one another elsewhere.
+    /// Facts, order of appearing, inset and phase: one below the other in a column, beside one
+    /// another elsewhere. Where the column is low the order goes below the rest.
     fn figures(&mut self, ui: &mut Ui, look: &Look, commands: &mut Commands) {
         let mut drawings = std::mem::take(&mut self.drawings);
         if let Some(scene) = self.scene() {
             facts_card(ui, &scene, &self.words);
-            if ui.available_width() < COLUMN {
-                let gap = look.room.inside;
+            let sightings = drawings.appearing(&scene);
+            let gap = look.room.inside;
+            let is_column = ui.available_width() < COLUMN;
+            let has_room = !is_column || ui.available_height() > ROOM_FOR_ORDER;
+            if has_room {
+                appearing_card(ui, &scene, &self.words, &sightings);
+            }
+            if is_column {
                 let (inset, phase) = column_heights(ui.available_height() - gap);
                 place(ui, inset, |ui| {
                     drawings.inset(ui, &scene);
@@ -223,6 +246,9 @@ impl DesktopWindow {
                     });
                 });
             }
+            if !has_room {
+                appearing_card(ui, &scene, &self.words, &sightings);
+            }
         }
         self.drawings = drawings;
     }
@@ -233,16 +259,18 @@ impl DesktopWindow {
         scale == CivilScale::Ut1
     }
 
-    /// Keys on the left, the air on the right.
+    /// The air on the right, and on the left as much of the keys as there is room for.
     fn status_line(&self, ui: &mut Ui, look: &Look) {
-        let (size, colour) = (look.sizes.least, look.colours.lesser);
-        ui.horizontal(|ui| {
-            text(ui, look, size, colour, &self.words.text("status-keys"));
-            ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-                text(ui, look, size, colour, &self.words.air(self.state.site()));
-                if self.is_counted_from_ut1() {
-                    text(ui, look, size, colour, &self.words.text("clock-is-ut1"));
-                }
+        let (font, colour) = (look.font(look.sizes.least), look.colours.lesser);
+        ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
+            let air = self.words.air(self.state.site());
+            figure(ui, font.clone(), colour, &air);
+            if self.is_counted_from_ut1() {
+                figure(ui, font.clone(), colour, &self.words.text("clock-is-ut1"));
+            }
+            ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
+                let keys = RichText::new(self.words.text("status-keys"));
+                ui.add(Label::new(keys.font(font).color(colour)).truncate());
             });
         });
     }

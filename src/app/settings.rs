@@ -2,6 +2,7 @@
 
 use super::command::OpticsView;
 use super::palette::Theme;
+use crate::light::Eye;
 use crate::sky::Body;
 use serde::{Deserialize, Serialize};
 use std::io::{ErrorKind, Read, Write};
@@ -25,6 +26,8 @@ pub struct Settings {
     pub spot: Option<String>,
     /// The chosen body.
     pub body: Body,
+    /// Whose eye.
+    pub eye: Eye,
     /// The theme.
     pub theme: Theme,
     /// How the chosen optics show the disc.
@@ -45,6 +48,7 @@ impl Default for Settings {
             site_file: None,
             spot: None,
             body: Body::Venus,
+            eye: Eye::Visitor,
             theme: Theme::default(),
             optics_view: OpticsView::default(),
             zoom: 1.0,

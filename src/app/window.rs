@@ -75,6 +75,7 @@ impl DesktopWindow {
         let chosen = choose_site(&mut sites, &start, &settings);
         let mut choices = start.choices;
         choices.body = choices.body.or(Some(settings.body));
+        choices.eye = choices.eye.or(Some(settings.eye));
         let mut state = State::open(start.clock, start.scales, sites, chosen, choices);
         state.theme = settings.theme;
         state.optics_view = settings.optics_view;
@@ -244,6 +245,7 @@ impl DesktopWindow {
             site_file: known.and_then(|known| known.file.clone()),
             spot: Some(self.state.spot().name.clone()),
             body: self.state.body(),
+            eye: self.state.eye(),
             theme: self.state.theme,
             optics_view: self.state.optics_view,
             zoom,

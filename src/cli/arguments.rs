@@ -18,6 +18,14 @@ pub struct Arguments {
     pub subcommand: Option<Subcommands>,
 }
 
+/// How a page is printed that is no table.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+#[allow(missing_docs)]
+pub enum PageFormat {
+    Text,
+    Json,
+}
+
 /// What stands in for the machine's clock and for the program's own TT - UT1.
 #[derive(Args, Clone, Debug)]
 pub struct ClockArguments {
@@ -63,6 +71,7 @@ pub enum HalfName {
 pub enum Subcommands {
     Positions(PositionsArguments),
     Night(NightArguments),
+    Daylight(DaylightArguments),
     Completions { shell: Shell },
 }
 
@@ -119,6 +128,21 @@ pub struct NightArguments {
     pub spot: Option<String>,
     #[arg(long, value_name = "FORMAT")]
     pub format: Option<Format>,
+}
+
+/// `dimmet daylight`.
+#[derive(Args, Clone, Debug)]
+pub struct DaylightArguments {
+    #[arg(long, value_name = "FILE|NAME")]
+    pub site: String,
+    #[arg(long, value_name = "YYYY-MM-DD")]
+    pub date: String,
+    #[arg(long, value_name = "NAME")]
+    pub body: Option<String>,
+    #[arg(long, value_name = "NAME")]
+    pub spot: Option<String>,
+    #[arg(long, value_name = "FORMAT")]
+    pub format: Option<PageFormat>,
 }
 
 /// The command with its help texts.

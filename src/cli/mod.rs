@@ -5,6 +5,7 @@
 
 mod arguments;
 mod civil_text;
+mod daylight;
 mod fault;
 mod moment;
 mod night;
@@ -88,6 +89,7 @@ where
     match &arguments.subcommand {
         Some(Subcommands::Positions(asked)) => positions::run(asked, scales, around)?,
         Some(Subcommands::Night(asked)) => night::run(asked, scales, around)?,
+        Some(Subcommands::Daylight(asked)) => daylight::run(asked, scales, around)?,
         Some(Subcommands::Completions { shell }) => {
             let mut script = Vec::new();
             clap_complete::generate(*shell, &mut command, "dimmet", &mut script);

@@ -86,12 +86,11 @@ impl Conditions {
     /// brightens towards the horizon as its layer is seen more and more edge-on, and lamps are
     /// taken to do the same.
     ///
-    /// Source: Schaefer 1998, the layer's brightening 0.4 + 0.6 X; dimmed by the air as
-    /// Krisciunas and Schaefer 1991, eq. 1; X is theirs.
+    /// Source: Krisciunas and Schaefer 1991 (PASP 103, 1033), eq. 1.
     pub fn night_luminance(&self, altitude: f64) -> f64 {
         let x = airmass(altitude);
         let dimming = 10f64.powf(-0.4 * self.extinction.total_mag() * (x - 1.0));
-        luminance_from_mag_arcsec2(self.dark_mag_arcsec2) * (0.4 + 0.6 * x) * dimming
+        luminance_from_mag_arcsec2(self.dark_mag_arcsec2) * x * dimming
     }
     /// Part of that light that comes from lamps.
     pub(super) fn part_from_lamps(&self) -> f64 {

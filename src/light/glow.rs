@@ -1,6 +1,7 @@
 //! The light of the whole sky over a site at one instant.
 
 use super::extinction::extinction_mag;
+use super::moonlight::MoonRow;
 use super::twilight::{Dome, Row, Slice};
 use super::{Conditions, Gaze, Margin, Moonlight, Target};
 
@@ -62,11 +63,11 @@ impl SkyLight {
     }
 }
 
-/// Chromaticities with which light counts whose spectrum is not computed, as X/Y and Z/Y: of
+/// Chromaticities with which light counts whose spectrum is not computed, X, Y, Z for Y = 1: of
 /// moonlit sky (as a clear day's), of airglow, and of street lamps (from memory).
-const MOON_COLOUR: [f64; 2] = [0.96, 1.45];
-const AIRGLOW_COLOUR: [f64; 2] = [0.97, 0.90];
-const LAMP_COLOUR: [f64; 2] = [1.10, 0.55];
+const MOON_COLOUR: [f64; 3] = [0.96, 1.0, 1.45];
+const AIRGLOW_COLOUR: [f64; 3] = [0.97, 1.0, 0.90];
+const LAMP_COLOUR: [f64; 3] = [1.10, 1.0, 0.55];
 
 impl Glow<'_> {
     /// Luminance towards an altitude and azimuth (radians); below the horizon as at it.
@@ -74,15 +75,19 @@ impl Glow<'_> {
         self.along(altitude).luminance(azimuth)
     }
     /// The sky along one altitude (radians): what a painter asks for, row by row.
-    pub fn along(&self, altitude: f64) -> GlowRow<'_> {
+    pub fn along(&self, altitude: f64) -> GlowRow {
+        let conditions = &self.site.conditions;
         let altitude = altitude.clamp(0.0, std::f64::consts::FRAC_PI_2);
+        let night = conditions.night_luminance(altitude);
+        let lamps = night * conditions.part_from_lamps();
+        let airglow = night - lamps;
         GlowRow {
             row: self.slice.row(altitude),
             sun_azimuth: self.sun_azimuth,
-            moon: self.moon,
-            conditions: &self.site.conditions,
-            altitude,
-            night: self.site.conditions.night_luminance(altitude),
+            moon: self
+                .moon
+                .map(|moon| moon.along(conditions.extinction(), altitude)),
+            night_xyz: [0, 1, 2].map(|i| lamps * LAMP_COLOUR[i] + airglow * AIRGLOW_COLOUR[i]),
         }
     }
     /// By how much a target outshines an eye's threshold there, and what makes it up.
@@ -108,44 +113,37 @@ impl Glow<'_> {
 
 /// The light of the sky at one instant along one altitude.
 #[derive(Clone, Debug)]
-pub struct GlowRow<'a> {
+pub struct GlowRow {
     row: Row,
     sun_azimuth: f64,
-    moon: Option<Moonlight>,
-    conditions: &'a Conditions,
-    altitude: f64,
-    night: f64,
+    moon: Option<MoonRow>,
+    night_xyz: [f64; 3],
 }
 
-impl GlowRow<'_> {
+impl GlowRow {
     /// Luminance towards an azimuth (radians).
     pub fn luminance(&self, azimuth: f64) -> Luminance {
         Luminance {
             sun: self.row.xyz(azimuth - self.sun_azimuth)[1],
             moon: self.moonlight(azimuth),
-            night: self.night,
+            night: self.night_xyz[1],
         }
     }
     /// CIE 1931 X, Y, Z towards an azimuth (radians); Y in cd/m².
+    #[inline]
     pub fn xyz(&self, azimuth: f64) -> [f64; 3] {
         let [x, y, z] = self.row.xyz(azimuth - self.sun_azimuth);
+        let [night_x, night_y, night_z] = self.night_xyz;
         let moon = self.moonlight(azimuth);
-        let lamps = self.night * self.conditions.part_from_lamps();
-        let airglow = self.night - lamps;
-        let others = [
-            (moon, MOON_COLOUR),
-            (airglow, AIRGLOW_COLOUR),
-            (lamps, LAMP_COLOUR),
-        ];
-        others
-            .iter()
-            .fold([x, y, z], |[x, y, z], (light, [rx, rz])| {
-                [x + light * rx, y + light, z + light * rz]
-            })
+        let [moon_x, _, moon_z] = MOON_COLOUR;
+        [
+            x + night_x + moon * moon_x,
+            y + night_y + moon,
+            z + night_z + moon * moon_z,
+        ]
     }
+    #[inline]
     fn moonlight(&self, azimuth: f64) -> f64 {
-        self.moon.map_or(0.0, |moon| {
-            moon.luminance(self.conditions.extinction(), self.altitude, azimuth)
-        })
+        self.moon.map_or(0.0, |moon| moon.luminance(azimuth))
     }
 }

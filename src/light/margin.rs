@@ -36,12 +36,52 @@ impl Target {
         self.area_arcmin2 = disc * illuminated_fraction.clamp(0.0, 1.0);
         self
     }
+    /// The Moon, as a disc lit in part: V as the sky layer gives it, phase angle in degrees,
+    /// apparent diameter in arcseconds.
+    ///
+    /// V of Krisciunas and Schaefer 1991 is too bright beyond 150 deg of phase angle. There it is
+    /// made to fall as a dark, evenly scattering sphere does (Lommel and Seeliger's law; the
+    /// shadows of mountains on the thinnest crescents, from Danjon's 7 deg down, are left out).
+    pub fn moon(
+        magnitude: f64,
+        phase_angle_deg: f64,
+        diameter_arcsec: f64,
+        altitude: f64,
+        azimuth: f64,
+    ) -> Self {
+        let lit = (1.0 + phase_angle_deg.to_radians().cos()) / 2.0;
+        Self::point(
+            magnitude + thin_crescent_mag(phase_angle_deg),
+            altitude,
+            azimuth,
+        )
+        .with_disc(diameter_arcsec, lit)
+        .without_moonlight()
+    }
     /// The Moon itself, or what it covers: its own glow in the sky does not count.
     #[must_use]
     pub fn without_moonlight(mut self) -> Self {
         self.is_moonlit = false;
         self
     }
+}
+
+/// Magnitudes by which the Moon is fainter than the formula for V, from 150 deg of phase angle
+/// on.
+fn thin_crescent_mag(phase_angle_deg: f64) -> f64 {
+    const THIN_DEG: f64 = 150.0;
+    let a = phase_angle_deg.min(179.0);
+    if a.is_nan() || a <= THIN_DEG {
+        return 0.0;
+    }
+    // Lommel and Seeliger: 1 + sin(a/2) tan(a/2) ln tan(a/4).
+    let sphere = |degrees: f64| {
+        let half = (degrees / 2.0).to_radians();
+        1.0 + half.sin() * half.tan() * (half / 2.0).tan().ln()
+    };
+    let formula = |degrees: f64| 0.026 * degrees + 4e-9 * degrees.powi(4);
+    let by_sphere = -2.5 * (sphere(a) / sphere(THIN_DEG)).log10();
+    (by_sphere - (formula(a) - formula(THIN_DEG))).max(0.0)
 }
 
 /// By how much a body outshines an eye's threshold, and the parts of it.

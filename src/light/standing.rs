@@ -1,9 +1,11 @@
 //! Whose eye, and what a body is for it.
 
 use crate::measure::Angle;
+use serde::{Deserialize, Serialize};
 
 /// Whose eye.
-#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, Serialize, Deserialize)]
+#[serde(rename_all = "kebab-case")]
 pub enum Eye {
     /// Untrained, nobody points.
     PasserBy,

@@ -70,7 +70,12 @@ impl Exposure {
     }
     /// The picture's sRGB bytes of a colour X, Y, Z (Y in cd/m²).
     pub fn srgb(&self, xyz: [f64; 3]) -> [u8; 3] {
-        self.linear(xyz).map(encoded)
+        let bytes = srgb_bytes();
+        self.linear(xyz).map(|part| {
+            // Parts are within 0 to 1, so the cast is safe and short.
+            let index = ((part as f32).sqrt() * SRGB_STEPS as f32 + 0.5) as i32 as usize;
+            bytes[index.min(SRGB_STEPS)]
+        })
     }
 }
 
@@ -86,35 +91,36 @@ fn nightly(ln_y: f64) -> f64 {
 
 /// Mixes with grey of the same luminance until no part is below 0 or above 1.
 fn into_gamut(rgb: [f64; 3], luminance: f64) -> [f64; 3] {
+    let least = rgb[0].min(rgb[1]).min(rgb[2]);
+    let most = rgb[0].max(rgb[1]).max(rgb[2]);
     let mut keep: f64 = 1.0;
-    for part in rgb {
-        if part < 0.0 {
-            keep = keep.min(luminance / (luminance - part));
-        } else if part > 1.0 {
-            keep = keep.min((1.0 - luminance) / (part - luminance));
-        }
+    if least < 0.0 {
+        keep = luminance / (luminance - least);
+    }
+    if most > 1.0 {
+        keep = keep.min((1.0 - luminance) / (most - luminance));
     }
     rgb.map(|part| (luminance + (part - luminance) * keep).clamp(0.0, 1.0))
 }
 
-/// The sRGB byte of a linear value from 0 to 1, from a table fine enough for every byte.
-fn encoded(linear: f64) -> u8 {
-    const STEPS: usize = 4096;
+/// Steps of the table of [`srgb_bytes`]: by the square root of the linear value, so that the
+/// dark end is as fine as the bright.
+const SRGB_STEPS: usize = 4096;
+
+/// The sRGB byte (IEC 61966-2-1) of each linear value (i / steps)².
+fn srgb_bytes() -> &'static [u8] {
     static BYTES: OnceLock<Vec<u8>> = OnceLock::new();
-    // By the square root, so that the dark end is as fine as the bright.
-    let bytes = BYTES.get_or_init(|| {
-        (0..=STEPS)
+    BYTES.get_or_init(|| {
+        (0..=SRGB_STEPS)
             .map(|i| {
-                let value = (i as f64 / STEPS as f64).powi(2);
-                let coded = if value <= 0.003_130_8 {
-                    12.92 * value
+                let linear = (i as f64 / SRGB_STEPS as f64).powi(2);
+                let coded = if linear <= 0.003_130_8 {
+                    12.92 * linear
                 } else {
-                    1.055 * value.powf(1.0 / 2.4) - 0.055
+                    1.055 * linear.powf(1.0 / 2.4) - 0.055
                 };
                 (coded * 255.0).round() as u8
             })
             .collect()
-    });
-    let index = (linear.clamp(0.0, 1.0).sqrt() * STEPS as f64 + 0.5) as usize;
-    bytes[index.min(STEPS)]
+    })
 }

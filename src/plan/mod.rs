@@ -1,7 +1,9 @@
 //! What a night holds: from engine results to a host's questions.
 
 mod absence;
+mod appearing;
 mod coming;
+mod daylight;
 mod interval;
 mod lit;
 mod neighbours;
@@ -13,7 +15,9 @@ mod track;
 mod windows;
 
 pub use absence::Absence;
+pub use appearing::{AppearingRequest, Found, Sighting, appearing};
 pub use coming::{Coming, coming};
+pub use daylight::{Apart, Daylight, DaylightRequest, Drift, Slot, Stretch, Whereabouts};
 pub use neighbours::{Aspect, Neighbour, Neighbours, neighbours};
 pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,

@@ -34,7 +34,7 @@ pub struct NightRequest<'a> {
     pub scales: TimeScales,
     /// How the sky is lit and whose eyes look.
     pub sight: &'a Sight,
-    /// Which eyes, one at least.
+    /// Which eyes; for none, no windows are looked for.
     pub eyes: &'a [Eye],
     /// Which bodies; the Sun and the Moon are always planned.
     pub bodies: &'a [Body],
@@ -202,7 +202,7 @@ pub struct Window {
 }
 
 /// The moment to show a body at: where the lesser of two merits is greatest, the clearance
-/// counted in fists (10°) and the margin counted in magnitudes. So a body that sinks into a
+/// counted in fists (10°) and the margin counted in tens of light (2.5 magnitudes). So a body that sinks into a
 /// darkening sky is shown while it still stands clear, in a sky that has begun to deepen.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Best {

@@ -52,10 +52,9 @@ impl Sight {
     /// An instrument or a figure of the air that the light model cannot take.
     pub fn of_site(site: &Site) -> Result<Self, LightError> {
         let mut eyes = Eyes::default();
-        if let Some(instrument) = site.kit.first() {
-            if let Some(optics) = Optics::of(instrument)?.first() {
-                eyes = eyes.with_instrument(*optics);
-            }
+        let views = site.kit.first().map(Optics::of).transpose()?;
+        if let Some(optics) = views.as_ref().and_then(|views| views.first()) {
+            eyes = eyes.with_instrument(*optics);
         }
         Ok(Self::new(
             Conditions::of_site(site)?,

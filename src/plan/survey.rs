@@ -10,7 +10,7 @@ use crate::sky::{Body, Ephemeris, OutsideEphemeris, Span};
 /// The refraction that the convention for rising and setting takes at the horizon.
 const HORIZON_REFRACTION: Angle = Angle::from_arcmin(34.0);
 /// The Sun's centre at rising and setting by convention: 34' of refraction and 16' of radius.
-const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
+pub(super) const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
 
 const SECONDS_PER_HOUR: f64 = 3600.0;
 
@@ -44,7 +44,12 @@ pub(super) fn survey(
         bodies: Vec::new(),
         optics: optics::optics_times(&sun, middle, request),
     };
-    let lit = Lit::new(watch, request.sight, length_s);
+    let lit_s = if request.eyes.is_empty() {
+        0.0
+    } else {
+        length_s
+    };
+    let lit = Lit::new(watch, request.sight, lit_s);
     night.bodies = Body::ALL
         .into_iter()
         .filter(|body| *body == Body::Moon || request.bodies.contains(body))

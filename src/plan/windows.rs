@@ -4,6 +4,7 @@ use super::interval::{Interval, both, cut, holding};
 use super::lit::{Lit, Margins};
 use super::night::{Best, Cause, Edge, EyeWindows, Half, Night, SkylineEvent, Stray, Window};
 use super::sight::Luck;
+use super::survey::SUN_RISE_SET;
 use super::track::Track;
 use crate::light::{Cost, Eye};
 use crate::measure::{Angle, Moment, search};
@@ -40,8 +41,9 @@ impl Searched<'_> {
         }
         let margins = self.lit.margins(self.track.body, eyes);
         let of_eye = |(eye, margins): (&Eye, &Margins)| {
-            let plain =
-                Luck::ALL.map(|luck| both(&clear, &self.bright_enough(outer, *eye, luck, margins)));
+            let allowed = both(&clear, &self.allowed(outer, *eye));
+            let plain = Luck::ALL
+                .map(|luck| both(&allowed, &self.bright_enough(outer, *eye, luck, margins)));
             self.of_eye(*eye, &plain)
         };
         eyes.iter().zip(&margins).map(of_eye).collect()
@@ -60,6 +62,25 @@ impl Searched<'_> {
             moment: event.moment,
             cause,
         }
+    }
+
+    /// When an eye is sent looking at all: while the Sun is down, and through an instrument only
+    /// within the optics times. What shines in daylight is looked for on purpose and by other
+    /// rules, never from here.
+    fn allowed(&self, outer: Interval, eye: Eye) -> Vec<Interval> {
+        let night = self.night;
+        let is_down_at_start = night.sun.highest < SUN_RISE_SET;
+        let (from, to) = match eye {
+            Eye::Optics => (night.optics.from, night.optics.until),
+            _ => {
+                let from = night.sun.set.or(is_down_at_start.then_some(night.start));
+                (from, night.sun.rise.or(from.map(|_| night.end)))
+            }
+        };
+        let (Some(from), Some(to)) = (from, to) else {
+            return Vec::new();
+        };
+        cut(outer, from, to, Cause::Twilight).into_iter().collect()
     }
 
     /// When the body outshines the eye's threshold. What each end is due to is found later, for
@@ -190,7 +211,7 @@ impl Searched<'_> {
         let merit = |at_s: f64| {
             let clearance = watch.sample(body, at_s).clearance;
             let margin_mag = self.lit.margin_mag(body, eye, Luck::Usual, at_s);
-            (clearance.degrees() / 10.0).min(margin_mag)
+            (clearance.degrees() / 10.0).min(margin_mag / 2.5)
         };
         let from_s = interval.start.moment.seconds_since(watch.start);
         let to_s = interval.end.moment.seconds_since(watch.start);

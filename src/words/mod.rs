@@ -3,12 +3,13 @@
 //! Messages stand in `assets/words/en/*.ftl`. Numbers and times are turned into text in
 //! [`number`] and [`time`] and handed to messages as text, so that they look alike everywhere.
 
+mod daylight;
 mod night;
 mod number;
 mod time;
 
 pub use fluent_bundle::FluentValue;
-pub use night::HalfNight;
+pub use night::{HalfNight, spoken_cause};
 pub use number::decimal;
 pub use time::CivilClock;
 
@@ -17,12 +18,13 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 5] = [
+const ENGLISH: [&str; 6] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
     include_str!("../../assets/words/en/cli.ftl"),
     include_str!("../../assets/words/en/window.ftl"),
     include_str!("../../assets/words/en/lookout.ftl"),
+    include_str!("../../assets/words/en/daylight.ftl"),
 ];
 
 /// The wording of one language.

@@ -4,7 +4,7 @@ use super::{CivilClock, FluentValue, Words};
 use crate::light::Eye;
 use crate::measure::Angle;
 use crate::place::Skyline;
-use crate::plan::{Absence, BodyNight, Edge, Half, Night, Window};
+use crate::plan::{Absence, BodyNight, Cause, Edge, Half, Night, Window};
 use crate::sky::Body;
 
 /// A body in a half-night, with what is needed to speak of it.
@@ -52,7 +52,7 @@ impl Words {
                 .map(|event| event.azimuth)
         };
         let time = |edge: Edge| FluentValue::from(self.time(about.clock, edge.moment));
-        let cause = |edge: Edge| FluentValue::from(edge.cause.name());
+        let cause = |edge: Edge| FluentValue::from(spoken_cause(about.night, edge));
         let best = &window.best;
         self.text_with(
             "half-night-window",
@@ -139,5 +139,18 @@ fn room(clearance: Angle) -> &'static str {
         "close"
     } else {
         "clear"
+    }
+}
+
+/// An end's cause as the sentence tells it: where eyes are sent out and called back by the Sun
+/// itself or by the optics times, that is said in place of the sky's brightness: `sunset`,
+/// `sunrise` or `optics`, else the cause's name.
+pub fn spoken_cause(night: &Night, edge: Edge) -> &'static str {
+    let at = |moment| moment == Some(edge.moment);
+    match edge.cause {
+        Cause::Twilight if at(night.sun.set) => "sunset",
+        Cause::Twilight if at(night.sun.rise) => "sunrise",
+        Cause::Twilight if at(night.optics.from) || at(night.optics.until) => "optics",
+        cause => cause.name(),
     }
 }

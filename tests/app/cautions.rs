@@ -24,6 +24,7 @@ fn open(
         body: Some(body),
         date: date.parse().ok(),
         half: Some(half),
+        ..Choices::default()
     };
     desk.open_sized(1280.0, 800.0, start)
 }

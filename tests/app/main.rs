@@ -3,6 +3,7 @@
 
 mod cautions;
 mod desk;
+mod eyes;
 mod pictures;
 mod sites;
 mod steps;

@@ -226,6 +226,7 @@ fn a_date_outside_the_years_is_one_sentence_and_loses_nothing() {
         body: Some(Body::Mars),
         date: "2400-12-29".parse().ok(),
         half: Some(Half::Dusk),
+        ..Choices::default()
     };
     let mut harness = desk.open_sized(1280.0, 800.0, start);
     assert!(harness.state().state().planned().is_ok());

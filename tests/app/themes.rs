@@ -43,6 +43,7 @@ fn every_body_draws_in_both_halves_at_every_demo_site_through_the_year() {
                 body: Some(Body::Moon),
                 date: date.parse().ok(),
                 half: Some(Half::Dusk),
+                ..Choices::default()
             };
             let mut harness = desk.open_sized(1280.0, 800.0, start);
             for half in ["Dawn", "Dusk"] {

@@ -3,6 +3,7 @@
 #[path = "../common/mod.rs"]
 mod common;
 
+mod daylight;
 mod night;
 mod no_display;
 mod places;

@@ -5,8 +5,11 @@
 #[path = "../common/mod.rs"]
 mod common;
 
+mod arcus;
+mod crescent;
 mod darkness;
 mod daylight;
+mod document;
 mod input;
 mod moon;
 mod optics;

@@ -1,6 +1,6 @@
 //! The trade's own rules of thumb (common practice).
 
-use crate::published::{lowland, moonless, sky};
+use crate::published::{moonless, sky};
 use dimmet::light::{Eye, Eyes, Glow, SkyLight, Target};
 
 fn usual() -> SkyLight {
@@ -47,13 +47,6 @@ fn a_passer_by_finds_only_venus_and_jupiter_by_sunset() {
     };
     let at_sunset = moonless(&site, -0.83);
     let soon = moonless(&site, -3.0);
-    println!(
-        "sunset Venus {:.2} Jupiter {:.2} Vega {:.2}; at -3 Jupiter {:.2}",
-        best(&at_sunset, -4.0),
-        best(&at_sunset, -2.7),
-        best(&at_sunset, 0.0),
-        best(&soon, -2.3)
-    );
     assert!(best(&at_sunset, -4.0) > 0.0, "Venus at sunset");
     assert!(best(&at_sunset, 0.0) < 0.0, "no star at sunset");
     assert!(best(&at_sunset, -1.0) < 0.0, "nor Mercury or Mars");
@@ -107,12 +100,6 @@ fn venus_shows_by_day_in_clear_air_away_from_the_sun_and_not_in_haze_near_it() {
     };
     let clear = sky(0.06, 300.0, 21.0);
     let hazy = sky(0.46, 50.0, 21.0);
-    println!(
-        "{:.2} {:.2} {:.2}",
-        venus(&clear, 45.0),
-        venus(&lowland(), 45.0),
-        venus(&hazy, 8.0)
-    );
     assert!(venus(&clear, 45.0) > 0.5, "clear: {}", venus(&clear, 45.0));
     assert!(
         venus(&hazy, 8.0) < 0.0,

@@ -28,14 +28,26 @@ pub const PARANAL: [Option<f64>; 6] = [
 /// Darkness of the zenith that the twilight checks assume, mag/arcsec².
 pub const NATURAL_DARK: f64 = 21.7;
 
-/// Clear air at the heights of Koomen's two sites: usual lowland haze, and the little that is
-/// left of it above 2800 m (Schaefer 1998: 0.1 mag falling by e every 1.5 km).
-pub fn lowland() -> SkyLight {
-    sky(0.11, 30.0, NATURAL_DARK)
+/// Haze at sea level, magnitudes at the zenith, at half of the humidity that air can hold:
+/// Schaefer 1998, 0.1 (1 - 0.32 / ln 0.5)^1.33. It falls by e every 1.5 km.
+const USUAL_HAZE_MAG: f64 = 0.166;
+
+fn usual(elevation_m: f64) -> SkyLight {
+    sky(
+        USUAL_HAZE_MAG * (-elevation_m / 1500.0).exp(),
+        elevation_m,
+        NATURAL_DARK,
+    )
 }
 
+/// Usual air at the height of Koomen's Maryland.
+pub fn lowland() -> SkyLight {
+    usual(30.0)
+}
+
+/// Usual air at the height of Sacramento Peak.
 pub fn mountain() -> SkyLight {
-    sky(0.015, 2800.0, NATURAL_DARK)
+    usual(2800.0)
 }
 
 pub fn sky(aerosol_mag: f64, elevation_m: f64, dark_mag_arcsec2: f64) -> SkyLight {

@@ -31,7 +31,6 @@ fn the_screen_darkens_through_dusk() {
         let sun = 5.0 - 0.6 * f64::from(i);
         let [r, g, b] = shown(&site, sun, 30.0, 90.0).map(f64::from);
         let brightness = 0.2 * r + 0.7 * g + 0.1 * b;
-        println!("{sun:.1} {r} {g} {b}");
         assert!(
             brightness <= before + 1.0,
             "Sun {sun}: {brightness} after {before}"
@@ -54,11 +53,6 @@ fn the_colours_are_those_of_dusk() {
         let [r, _, b] = shown(&site, -1.5, altitude, 180.0).map(f64::from);
         r / b
     };
-    println!(
-        "{:?}",
-        [0.5, 1.0, 2.0, 4.0, 6.0, 8.0, 10.0, 12.0, 20.0, 30.0]
-            .map(|a| (a, shown(&site, -1.5, a, 180.0)))
-    );
     assert!(
         warmth(8.0) > warmth(0.5),
         "belt {} over shadow {}",

@@ -225,7 +225,8 @@ fn optics_times_err_against_the_user() {
 
 #[test]
 fn a_window_ends_with_the_cause_that_comes_first() {
-    // A wall of 30 degrees all around ends Venus' window before twilight could.
+    // At the horizon the air takes nine magnitudes: Venus comes out of the haze, not up from the
+    // horizon. A wall all around hides that; a high one hides everything.
     let site = observer(51.05, -3.42, 96.0);
     let plan = |skyline: &Skyline| {
         Night::plan(
@@ -253,7 +254,7 @@ fn a_window_ends_with_the_cause_that_comes_first() {
     };
     assert_eq!(
         (window.start.cause, window.end.cause),
-        (Cause::Horizon, Cause::Twilight)
+        (Cause::Haze, Cause::Twilight)
     );
     assert!(window.start.moment < window.best.moment && window.best.moment < window.end.moment);
     let low_wall = plan(&Skyline::measured(&[(

@@ -1,5 +1,9 @@
 //! The night's plan against reference tables and against what must hold by itself.
 
+// The figures measured are there for whoever runs with --nocapture.
+#![allow(clippy::print_stdout)]
+
+mod daylight;
 mod edges;
 mod reference;
 mod rise_set;

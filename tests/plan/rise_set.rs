@@ -2,7 +2,6 @@
 
 use crate::reference::{ReferenceSite, date, instant, number, rows, sight, sites};
 use chrono::{DateTime, NaiveDate, Utc};
-use dimmet::light::Eye;
 use dimmet::measure::{Moment, TimeScales};
 use dimmet::place::Skyline;
 use dimmet::plan::{Night, NightRequest};
@@ -32,7 +31,7 @@ fn events(
                 date: evening,
                 scales,
                 sight: sight(),
-                eyes: &[Eye::Visitor],
+                eyes: &[],
                 bodies: &Body::ALL,
             },
         )

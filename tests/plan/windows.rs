@@ -2,7 +2,6 @@
 
 use crate::reference::{date, instant, number, rows, sight, sites};
 use chrono::{DateTime, Utc};
-use dimmet::light::Eye;
 use dimmet::measure::{Angle, TimeScales};
 use dimmet::place::Skyline;
 use dimmet::plan::{Night, NightRequest};
@@ -73,7 +72,7 @@ fn skyline_crossings_match_de440() {
                     date,
                     scales,
                     sight: sight(),
-                    eyes: &[Eye::Visitor],
+                    eyes: &[],
                     bodies: &[body],
                 },
             )

@@ -259,7 +259,8 @@ fn print_the_measured_table() {
             } else {
                 "1600-1900, 2100-2400"
             };
-            let columns: [(fn(&Differences) -> f64, usize); 9] = [
+            type Column = (fn(&Differences) -> f64, usize);
+            let columns: [Column; 9] = [
                 (|off| off.geocentric_arcsec, 3),
                 (|off| off.topocentric_arcsec, 3),
                 (|off| off.horizontal_arcsec, 3),

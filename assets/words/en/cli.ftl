@@ -2,8 +2,9 @@
 
 # Help
 cli-about = Plans and runs public observing sessions of the bright planets at dusk and dawn. Without a subcommand it opens its window.
-cli-about-positions = Where bodies stand at one instant from one place, or for each row of a table
+cli-about-positions = Where bodies stand at one instant from one place, or for each row of a table, and by how many magnitudes eyes see them. Sky, extinction, limit (a visitor’s) and margins are for usual air: clear, at the place’s elevation to 50 m, with a dark sky of 20.5 mag per square arcsecond and the usual eyes; the Moon’s own glow is left out for the Moon. They are blank for the Sun, for what is below the horizon and where no magnitude is known
 cli-about-night = One night at a site: when each planet stands clear of its skyline, and when optics may be uncapped
+cli-about-daylight = A bright planet in full day, for the unaided eye from the shade of a building of the site file (Venus unless --body says otherwise). Read its cautions first
 cli-about-completions = Prints completions for a shell
 cli-arg-now = Time that stands in for the clock, for example 2026-12-05T17:40:00Z
 cli-arg-delta-t = TT − UT1 in seconds, in place of the program’s own; a table’s own column comes first
@@ -29,6 +30,13 @@ column-elongation = elongation
 column-lit = lit
 column-disc = disc
 column-magnitude = magnitude
+column-sky = sky cd/m²
+column-extinction = extinction
+column-limit = limit
+column-passer-by = passer-by
+column-visitor = visitor
+column-keen = keen
+column-optics = optics
 column-from = from
 column-until = until
 column-length = length
@@ -36,6 +44,7 @@ column-best = best
 column-clearance = clearance
 positions-title = { $time } ({ $offset }) at latitude { $latitude }, longitude { $longitude }, { $elevation } m up
 positions-note = Altitudes are refracted, in air of { $pressure } hPa and 10 °C. Elongation, lit part and magnitude are geocentric.
+positions-seen-title = By how many magnitudes eyes see what is up, in clear air under a dark sky of 20.5 mag per square arcsecond (0 and more: seen; the limit is a visitor’s)
 
 # Refusals: what, where, and what to do.
 cli-bad-number = { $place } is { $value }, but must be a number from { $low } to { $high } { $unit ->
@@ -60,3 +69,4 @@ cli-table-no-text = --format text is not for tables: choose csv or json
 cli-output-failed = cannot write the output: { $reason }
 cli-message = dimmet: { $sentence }
 no-window-built = this program was built without its window
+cli-daylight-sun = --body is the Sun, which is never looked at: write another body, such as venus

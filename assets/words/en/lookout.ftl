@@ -19,6 +19,10 @@ fade-sunrise = sunrise
 fade-civil = civil
 fade-nautical = nautical
 fade-astronomical = astronomical
+lane-sunset = sunset { $time }
+lane-sunrise = sunrise { $time }
+lane-caps-on = caps on { $time }
+lane-caps-off = caps off { $time }
 lane-too-bright-from = sky too bright { $time }
 lane-dark-enough-from = from { $time }
 lane-into-haze = into the haze { $time }
@@ -27,6 +31,11 @@ lane-moonlight-from = lost in moonlight { $time }
 lane-moonlight-until = out of the moonlight { $time }
 lane-behind-from = behind { $obstacle } { $time }
 lane-clears-at = clears { $obstacle } { $time }
+# How far the time of an end may stray as haze and eyes differ; in the harshest air the body may
+# not be seen at all.
+lane-stray = { $time } ({ $from }–{ $to })
+lane-stray-end = { $time } (to { $to } at best, or not at all)
+lane-stray-start = { $time } (from { $from } at best, or not at all)
 lane-sets = sets { $time }
 lane-rises = rises { $time }
 lane-not-up = below the horizon
@@ -78,10 +87,14 @@ phase-arcminutes = { $size }′
 phase-change = { $name }, { $note }. Press for the next way round.
 
 # The plot.
-plot-name = Clearance of the bright bodies against minutes from sunset or sunrise. The line marks the moment shown; a click sets it.
-plot-title = Clearance over the skyline
+plot-name = Margin of { $body } for each eye in magnitudes against minutes from sunset or sunrise: above 0 it is seen. The upright line marks the moment shown; a click sets it.
+plot-title = margin of each eye in magnitudes · { $minutes }
+plot-sun-up = Sun up
+plot-threshold = seen above this line
+# An eye's curve that leaves the plot at the top.
+plot-off-the-top = { $eye } ↑
 plot-minutes-sunset = minutes from sunset
 plot-minutes-sunrise = minutes from sunrise
 plot-minutes-start = minutes of the half-night
-plot-after = +{ $minutes }
-plot-before = { $minutes }
+plot-positive = +{ $number }
+plot-negative = { $number }

@@ -14,6 +14,8 @@ half-night-window = { $eye ->
     [horizon] from { $start }, when it rises,
     [haze] from about { $start }, when it is up out of the haze,
     [moonlight] from about { $start }, when the moonlight fades,
+    [sunset] from sunset at { $start }
+    [optics] from { $start }, when instruments may be uncapped,
     [half] from the middle of the night ({ $start })
     [noon] from midday on
    *[twilight] from about { $start }, as the sky darkens,
@@ -22,6 +24,8 @@ half-night-window = { $eye ->
     [horizon] until { $end }, when it sets.
     [haze] until about { $end }, when it fades into the haze.
     [moonlight] until about { $end }, when the moonlight drowns it.
+    [sunrise] until sunrise at { $end }.
+    [optics] until { $end }, when every instrument is capped.
     [half] until the middle of the night ({ $end }) and beyond.
     [noon] until midday.
    *[twilight] until about { $end }, when the sky gets too bright.

@@ -31,8 +31,16 @@ previous-day = Day before
 next-day = Day after
 half-dusk = Dusk
 half-dawn = Dawn
-for-eye = for a visitor
-for-eye-hint = An untrained eye that is pointed to the place
+for-eye = for
+eye-picker = Whose eye: { $eye }
+eye-passer-by = passer-by
+eye-passer-by-hint = An untrained eye that nobody points to the place
+eye-visitor = visitor
+eye-visitor-hint = An untrained eye that is pointed to the place
+eye-keen = keen
+eye-keen-hint = A practised eye that knows exactly where to look
+eye-optics = optics
+eye-optics-hint = A visitor at the first instrument of the site’s kit, at its lowest power
 
 # The moment
 back-ten-minutes = Ten minutes back
@@ -98,6 +106,13 @@ fact-elongation = elongation
 fact-lit = lit
 fact-disc = disc
 fact-magnitude = magnitude
+
+# In which order the chosen eye finds things at dusk, or loses them at dawn
+appearing-dusk = Order of appearing
+appearing-dawn = Order of vanishing, the last first
+appearing-none = Nothing comes out between sunset and the end of twilight.
+appearing-by = by { $time }
+appearing-past = past { $time }
 
 # Cautions
 cautions = Cautions

@@ -23,7 +23,7 @@ use super::command::Commands;
 use super::palette::{Look, Theme};
 use super::scene::Scene;
 use crate::light::Eye;
-use crate::plan::Half;
+use crate::plan::{AppearingRequest, Half, Sighting, appearing};
 use crate::sky::Body;
 use eframe::egui::{Galley, Painter, Pos2, Rect, Response, Ui, Vec2, vec2};
 use model::Tracks;
@@ -35,8 +35,9 @@ pub struct Drawings {
     tracks: Kept<HalfKey, Tracks>,
     horizon: horizon::Horizon,
     fade: fade::Fade,
-    plot: plot::ClearancePlot,
+    plot: plot::MarginPlot,
     inset: inset::Inset,
+    appearing: Kept<HalfKey, Vec<Sighting>>,
 }
 
 impl Drawings {
@@ -52,7 +53,7 @@ impl Drawings {
         self.fade.show(ui, scene, &tracks, commands)
     }
 
-    /// The clearance of the bright bodies against minutes.
+    /// The chosen body's margin for each eye against minutes.
     pub fn plot(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
         let tracks = self.tracks(scene);
         self.plot.show(ui, scene, &tracks, commands)
@@ -66,6 +67,24 @@ impl Drawings {
     /// The disc as the eye and the optics show it.
     pub fn phase(&mut self, ui: &mut Ui, scene: &Scene<'_>, commands: &mut Commands) -> Response {
         phase::show(ui, scene, commands)
+    }
+
+    /// What the chosen eye finds first in this dusk, or holds last in this dawn.
+    pub fn appearing(&mut self, scene: &Scene<'_>) -> Arc<Vec<Sighting>> {
+        /// As many as a card has room for.
+        const MOST: usize = 8;
+        self.appearing.get(HalfKey::of(scene), || {
+            let request = AppearingRequest {
+                night: scene.night,
+                half: scene.half,
+                eye: scene.eye,
+                span: scene.span,
+                observer: scene.observer,
+                skyline: scene.skyline,
+                sight: scene.sight,
+            };
+            appearing(&request, MOST)
+        })
     }
 
     fn tracks(&mut self, scene: &Scene<'_>) -> Arc<Tracks> {

@@ -10,6 +10,9 @@ use crate::sky::{Body, Epoch, Observer, refraction};
 use chrono::Timelike;
 use chrono_tz::Tz;
 
+/// The Sun's centre at rising and setting by convention.
+pub const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
+
 /// Seconds between samples.
 const STEP_S: f64 = 60.0;
 
@@ -131,7 +134,11 @@ impl Sample {
         let clearance = counting - scene.skyline.altitude(place.azimuth);
         let (margins_mag, spread_mag) = lights.margins(&view, body);
         let of_eye = Eye::ALL.iter().position(|eye| *eye == scene.eye);
-        let margin_mag = of_eye.map_or(0.0, |number| margins_mag[number]);
+        // Nobody is sent looking while the Sun is up, whatever shines then.
+        let margin_mag = match of_eye {
+            Some(number) if lights.sun_altitude < SUN_RISE_SET => margins_mag[number],
+            _ => f64::NEG_INFINITY,
+        };
         Self {
             at_s,
             azimuth: place.azimuth,

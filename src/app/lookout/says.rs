@@ -1,8 +1,10 @@
 //! What the drawings say, by the scene's wording and on the site's clock.
 
+use crate::app::command::Command;
 use crate::app::scene::Scene;
+use crate::light::Eye;
 use crate::measure::{Angle, Moment};
-use crate::plan::{Aspect, Cause};
+use crate::plan::Aspect;
 use crate::sky::Body;
 use crate::words::{CivilClock, FluentValue, Words, decimal};
 
@@ -59,14 +61,19 @@ impl<'a> Says<'a> {
     pub fn arcsec(&self, angle: Angle) -> String {
         self.words.disc(angle)
     }
-    /// A whole number of minutes with its sign.
-    pub fn signed_minutes(&self, minutes: f64) -> String {
-        let id = if minutes > 0.5 {
-            "plot-after"
+    /// A whole number with its sign.
+    pub fn signed(&self, number: f64) -> String {
+        let id = if number > 0.5 {
+            "plot-positive"
         } else {
-            "plot-before"
+            "plot-negative"
         };
-        self.text(id, &[("minutes", &decimal(minutes, 0))])
+        self.text(id, &[("number", &decimal(number, 0))])
+    }
+    /// An eye's name.
+    pub fn eye(&self, eye: Eye) -> String {
+        let id = Command::ChooseEye(eye).wording();
+        self.words.text(id.unwrap_or_default())
     }
     /// The name of one of the eight compass points, clockwise from north.
     pub fn compass(&self, point: usize) -> String {
@@ -80,26 +87,31 @@ impl<'a> Says<'a> {
             None => self.words.text("the-skyline"),
         }
     }
-    /// Why a window ends (or starts), with the time; nothing where only the half-night does.
+    /// Why a window ends (or starts), by its [`spoken_cause`](crate::words::spoken_cause), with
+    /// the time; nothing where only the half-night does.
     pub fn edge(
         &self,
-        cause: Cause,
+        cause: &str,
         is_end: bool,
         obstacle: Option<&str>,
         time: &str,
     ) -> Option<String> {
         let id = match (cause, is_end) {
-            (Cause::Twilight, true) => "lane-too-bright-from",
-            (Cause::Twilight, false) => "lane-dark-enough-from",
-            (Cause::Haze, true) => "lane-into-haze",
-            (Cause::Haze, false) => "lane-out-of-haze",
-            (Cause::Moonlight, true) => "lane-moonlight-from",
-            (Cause::Moonlight, false) => "lane-moonlight-until",
-            (Cause::Skyline, true) => "lane-behind-from",
-            (Cause::Skyline, false) => "lane-clears-at",
-            (Cause::Horizon, true) => "lane-sets",
-            (Cause::Horizon, false) => "lane-rises",
-            (Cause::Half | Cause::Noon, _) => return None,
+            ("sunset", _) => "lane-sunset",
+            ("sunrise", _) => "lane-sunrise",
+            ("optics", true) => "lane-caps-on",
+            ("optics", false) => "lane-caps-off",
+            ("twilight", true) => "lane-too-bright-from",
+            ("twilight", false) => "lane-dark-enough-from",
+            ("haze", true) => "lane-into-haze",
+            ("haze", false) => "lane-out-of-haze",
+            ("moonlight", true) => "lane-moonlight-from",
+            ("moonlight", false) => "lane-moonlight-until",
+            ("skyline", true) => "lane-behind-from",
+            ("skyline", false) => "lane-clears-at",
+            ("horizon", true) => "lane-sets",
+            ("horizon", false) => "lane-rises",
+            _ => return None,
         };
         let obstacle = self.obstacle(obstacle);
         Some(self.text(id, &[("time", time), ("obstacle", &obstacle)]))

@@ -8,7 +8,7 @@ use super::{Drawings, fade, horizon, inset, phase, plot};
 use crate::app::command::{Command, Commands};
 use crate::app::scene::Scene;
 use crate::app::theme::install_fonts;
-use crate::light::Standing;
+use crate::light::{Eye, Standing};
 use crate::plan::{Half, neighbours};
 use crate::sky::Body;
 use eframe::egui::accesskit::Role;
@@ -33,9 +33,15 @@ fn fade_text(scene: &Scene<'_>) -> String {
             let obstacle = end.obstacle.as_deref().unwrap_or("-");
             write!(
                 text,
-                " {word} {} {} {obstacle};",
+                " {word} {} {}{} {obstacle};",
                 time(end.at_s),
-                end.cause.name()
+                end.spoken,
+                match end.stray {
+                    None => String::new(),
+                    Some(fade::model::Stray::Between(from, to)) =>
+                        format!(" {}-{}", time(from), time(to)),
+                    Some(fade::model::Stray::OrNotAtAll(at)) => format!(" {} or not", time(at)),
+                }
             )
             .unwrap();
         }
@@ -90,12 +96,12 @@ fn fade_of_a_december_dawn() {
 6:39 Nautical
 7:21 Civil
 8:00 Sunrise
-venus: from 4:34 skyline -; to 7:59 twilight -;
-mercury: from 7:13 skyline -; to 7:21 twilight -;
-mars: to 7:21 twilight -;
-jupiter: to 7:43 twilight -;
+venus: from 4:34 skyline -; to 8:00 sunrise -;
+mercury: WashedOut
+mars: to 7:44 twilight 7:38-7:49 -;
+jupiter: to 8:00 sunrise -;
 saturn: Down
-moon: from 5:01 skyline -; to 8:07 twilight -;
+moon: from 5:01 skyline -; to 8:00 sunrise -;
 ";
     assert_eq!(text, expected, "{text}");
 }
@@ -126,12 +132,12 @@ fn fade_of_a_june_dusk_behind_the_oak() {
 21:32 Sunset
 22:19 Civil
 23:30 Nautical
-venus: from 21:33 twilight -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
-mercury: from 22:19 twilight -; to 22:30 skyline hedge;
+venus: from 21:32 sunset -; to 21:36 skyline oak; from 22:36 skyline oak; to 23:27 skyline hedge;
+mercury: WashedOut
 mars: Down
-jupiter: from 21:51 twilight -; to 22:47 skyline hedge;
+jupiter: from 21:55 twilight 21:44-22:15 -; to 22:47 skyline hedge;
 saturn: Down
-moon: from 21:25 twilight -; to 0:18 skyline hedge;
+moon: from 21:32 sunset -; to 0:18 skyline hedge;
 ";
     assert_eq!(text, expected, "{text}");
 }
@@ -257,13 +263,44 @@ fn the_plot_counts_minutes_from_the_suns_own_event() {
     let rise = scene.night.sun.rise.unwrap();
     assert!((model.origin_s - rise.seconds_since(tracks.start)).abs() < 1e-6);
     assert!((model.to_min - 60.0).abs() < 1e-6, "{}", model.to_min);
-    assert_eq!(model.curves[0].body, Body::Venus);
-    let plain = tracks
+    let eyes: Vec<Eye> = model.curves.iter().map(|curve| curve.eye).collect();
+    assert_eq!(eyes, Eye::ALL);
+    let up = tracks
         .body(Body::Venus)
         .iter()
         .filter(|sample| sample.standing != Standing::Down);
-    let drawn: usize = model.curves[0].pieces.iter().map(Vec::len).sum();
-    assert!(drawn > 200 && drawn <= plain.count(), "{drawn}");
+    let drawn: usize = model.curves[1].pieces.iter().map(Vec::len).sum();
+    assert!(drawn > 200 && drawn <= up.count(), "{drawn}");
+}
+
+#[test]
+fn the_plots_curves_cross_zero_where_the_windows_end() {
+    // Mars is lost before sunrise by every unaided eye.
+    let stage = Stage::new("Fennick Common", "2026-12-04", Half::Dawn, Body::Mars);
+    let scene = stage.scene("2026-12-05T07:02:00");
+    let tracks = Tracks::new(&scene);
+    let model = plot::model::Model::new(&scene, &tracks);
+    for curve in &model.curves[..3] {
+        let night = scene.night.body(Body::Mars).unwrap();
+        let window = night.windows_in(curve.eye, Half::Dawn).last().unwrap();
+        let end_s = window.end.moment.seconds_since(tracks.start);
+        let end_min = (end_s - model.origin_s) / 60.0;
+        let points = curve.pieces.last().unwrap();
+        let last = points.iter().rfind(|[_, mag]| *mag >= 0.0).unwrap();
+        let off_min = end_min - last[0];
+        assert!((0.0..=1.02).contains(&off_min), "{:?} {off_min}", curve.eye);
+    }
+    // The chosen eye's own margin lies within its spread.
+    let within = model.curves[1].pieces.iter().flatten();
+    for ([_, mag], [_, least, greatest]) in within.zip(model.spread.iter().flatten()) {
+        assert!(least < mag && mag < greatest, "{least} {mag} {greatest}");
+    }
+    // Nothing is said of optics once they must be capped.
+    let until = scene.night.optics.until.unwrap();
+    let until_min = (until.seconds_since(tracks.start) - model.origin_s) / 60.0;
+    let last = model.curves[3].pieces.last().and_then(|piece| piece.last());
+    let short_min = until_min - last.unwrap()[0];
+    assert!((0.0..=1.02).contains(&short_min), "{short_min}");
 }
 
 /// The drawings in a window of their own, with what they asked for.
@@ -409,7 +446,7 @@ fn plot_and_inset_say_what_they_are() {
     let harness = shown(|drawings, ui, scene, commands| {
         drawings.plot(ui, scene, commands);
     });
-    harness.get_by_label_contains("Clearance of the bright bodies");
+    harness.get_by_label_contains("Margin of Venus for each eye");
     let harness = shown(|drawings, ui, scene, _| {
         drawings.inset(ui, scene);
     });

@@ -5,12 +5,13 @@ mod date;
 use super::command::{Command, Commands};
 use super::palette::Look;
 use super::state::State;
-use super::widgets::{choice, command_button, name_it, text};
+use super::widgets::{choice, command_button, figure, name_it, text};
+use crate::light::Eye;
 use crate::plan::Half;
 use crate::sky::Body;
 use crate::words::Words;
 use eframe::egui::containers::menu::MenuButton;
-use eframe::egui::{Role, ScrollArea, Ui};
+use eframe::egui::{Button, Role, ScrollArea, Stroke, Ui};
 
 /// The whole row; it wraps where there is no room.
 pub fn picker_row(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
@@ -33,10 +34,36 @@ pub fn picker_row(ui: &mut Ui, look: &Look, words: &Words, state: &State, comman
             }
         }
         ui.add_space(4.0);
-        let size = look.sizes.label;
-        text(ui, look, size, look.colours.lesser, &words.text("for-eye"))
-            .on_hover_text(words.text("for-eye-hint"));
+        eye_picker(ui, look, words, state, commands);
     });
+}
+
+/// Whose eye: a menu with a word on each. The button carries the word before it in its name.
+fn eye_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
+    let name = |eye| words.text(Command::ChooseEye(eye).wording().unwrap_or_default());
+    let shown = name(state.eye());
+    let font = look.font(look.sizes.label);
+    figure(ui, font, look.colours.lesser, &words.text("for-eye"));
+    let button = Button::new(format!("{shown} ▾")).stroke(Stroke::new(1.5, look.colours.chosen));
+    let (button, _) = MenuButton::from_button(button).ui(ui, |ui| {
+        ui.set_min_width(300.0);
+        ui.spacing_mut().button_padding.x = 8.0;
+        for eye in Eye::ALL {
+            let command = Command::ChooseEye(eye);
+            let hint = words.text(&format!("{}-hint", command.wording().unwrap_or_default()));
+            let response = ui.selectable_label(eye == state.eye(), name(eye));
+            text(ui, look, look.sizes.label, look.colours.lesser, &hint);
+            if response.on_hover_text(&hint).clicked() {
+                commands.push(command);
+                ui.close();
+            }
+        }
+    });
+    name_it(
+        &button,
+        Role::Button,
+        &words.text_with::<&str>("eye-picker", &[("eye", &shown)]),
+    );
 }
 
 fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {

@@ -36,6 +36,8 @@ pub enum Motion {
 pub struct Choices {
     /// A body, else Venus.
     pub body: Option<Body>,
+    /// Whose eye, else a visitor's.
+    pub eye: Option<Eye>,
     /// An evening's date, else the coming night in which the body stands best.
     pub date: Option<NaiveDate>,
     /// A half of that night, else the one in which the body stands better.
@@ -87,7 +89,7 @@ impl State {
             date: now.date_naive(),
             half: Half::Dusk,
             body: choices.body.unwrap_or(Body::Venus),
-            eye: Eye::Visitor,
+            eye: choices.eye.unwrap_or(Eye::Visitor),
             moment: scales.moment_from_ut1(Ut1::from_days_since_j2000(0.0)),
             wanted: now.naive_utc(),
             planned: Err(NightError::OutOfRange(DateOutOfRange {
@@ -215,6 +217,7 @@ impl State {
                 };
             }
             Command::ChooseBody(body) => self.body = body,
+            Command::ChooseEye(eye) => self.eye = eye,
             Command::ChooseSite(index) => self.choose_site(index),
             Command::ChooseSpot(index) => {
                 self.spot = index;

@@ -3,6 +3,7 @@
 //! Numbers are written by hand with a fixed count of decimals, since tables hold millions.
 
 use super::row::Row;
+use crate::light::Eye;
 use crate::sky::Body;
 
 /// A column that holds a number.
@@ -30,8 +31,8 @@ const fn turn(name: &'static str) -> Column {
     }
 }
 
-/// The columns after `body`, in order.
-pub(super) const COLUMNS: [Column; 19] = [
+/// The columns after `body`, in order, up to the margins.
+pub(super) const COLUMNS: [Column; 22] = [
     column("jd_tt", 9),
     column("delta_t_s", 4),
     column("alt_deg", 7),
@@ -51,7 +52,22 @@ pub(super) const COLUMNS: [Column; 19] = [
     column("topo_diameter_arcsec", 4),
     column("topo_illuminated_fraction", 6),
     turn("topo_bright_limb_deg"),
+    column("sky_cd_m2", 7),
+    column("extinction_mag", 4),
+    column("limit_mag", 4),
 ];
+
+/// The margins for each of [`Eye::ALL`]: members of one object in JSON, columns whose names begin
+/// with its name in CSV.
+const MARGINS: [Column; Eye::ALL.len()] = [
+    column("passer_by", 4),
+    column("visitor", 4),
+    column("keen", 4),
+    column("optics", 4),
+];
+
+/// The name of the margins' object.
+const MARGIN: &str = "margin_mag";
 
 /// Added to the days since 2000 as whole numbers: nine decimals of a Julian date are more than
 /// an `f64` holds.
@@ -59,7 +75,7 @@ const J2000_JULIAN_DATE: i64 = 2_451_545;
 
 impl Row {
     /// The values of [`COLUMNS`], the Julian date from J2000; `None` where one is not defined:
-    /// the Sun has no phase, and a magnitude formula may say nothing.
+    /// the Sun has no phase, a magnitude formula may say nothing, and what is down is not seen.
     fn values(&self) -> [Option<f64>; COLUMNS.len()] {
         let (geocentric, topocentric) = (&self.geocentric, &self.topocentric);
         let (from_centre, from_site) = (&self.appearance, &self.topo_appearance);
@@ -84,7 +100,18 @@ impl Row {
             Some(from_site.diameter.arcsec()),
             of_phase(from_site.illuminated_fraction),
             of_phase(from_site.bright_limb.degrees()),
+            self.seen.map(|seen| seen.sky_cd_m2),
+            self.seen.map(|seen| seen.extinction_mag),
+            self.seen.map(|seen| seen.limit_mag),
         ]
+    }
+
+    /// The values of [`MARGINS`].
+    fn margins(&self) -> [Option<f64>; MARGINS.len()] {
+        match &self.seen {
+            Some(seen) => seen.margins_mag.map(Some),
+            None => [None; MARGINS.len()],
+        }
     }
 
     /// Each column in turn: what `start` writes, then the number if it is defined.
@@ -107,6 +134,10 @@ impl Row {
     pub fn write_csv(&self, out: &mut Vec<u8>) {
         out.extend_from_slice(self.body.name().as_bytes());
         self.write_each(out, |out, _, _| out.push(b','));
+        for (column, value) in MARGINS.into_iter().zip(self.margins()) {
+            out.push(b',');
+            write_rounded(out, column, value);
+        }
         out.push(b'\n');
     }
 
@@ -116,13 +147,35 @@ impl Row {
             out.extend_from_slice(part.as_bytes());
         }
         self.write_each(out, |out, column, is_defined| {
-            for part in [",\"", column.name, "\":"] {
-                out.extend_from_slice(part.as_bytes());
-            }
-            if !is_defined {
-                out.extend_from_slice(b"null");
-            }
+            write_member(out, b",", column.name, is_defined);
         });
+        write_member(out, b",", MARGIN, true);
+        let mut start: &[u8] = b"{";
+        for (column, value) in MARGINS.into_iter().zip(self.margins()) {
+            write_member(out, start, column.name, value.is_some());
+            write_rounded(out, column, value);
+            start = b",";
+        }
+        out.push(b'}');
+    }
+}
+
+/// The start of a member of a JSON object, and its whole where it is not defined.
+fn write_member(out: &mut Vec<u8>, start: &[u8], name: &str, is_defined: bool) {
+    out.extend_from_slice(start);
+    for part in ["\"", name, "\":"] {
+        out.extend_from_slice(part.as_bytes());
+    }
+    if !is_defined {
+        out.extend_from_slice(b"null");
+    }
+}
+
+/// A number with its column's decimals; nothing where it is not defined.
+fn write_rounded(out: &mut Vec<u8>, column: Column, value: Option<f64>) {
+    if let Some(value) = value {
+        let scale = 10_i64.pow(column.decimals);
+        write_decimal(out, (value * scale as f64).round() as i64, column.decimals);
     }
 }
 
@@ -132,6 +185,11 @@ pub(super) fn write_csv_header(out: &mut Vec<u8>) {
     for column in COLUMNS {
         out.push(b',');
         out.extend_from_slice(column.name.as_bytes());
+    }
+    for column in MARGINS {
+        for part in [",", MARGIN, "_", column.name] {
+            out.extend_from_slice(part.as_bytes());
+        }
     }
     out.push(b'\n');
 }

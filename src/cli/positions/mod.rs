@@ -2,6 +2,7 @@
 
 mod columns;
 mod row;
+mod seen;
 mod spans;
 mod table;
 mod text;
@@ -15,6 +16,7 @@ use crate::measure::{CivilScale, Moment, TimeScales};
 use crate::sky::{Body, Ephemeris, Observer};
 use chrono::{DateTime, FixedOffset};
 use row::Row;
+use seen::Skies;
 use serde::Serialize;
 
 /// What is asked for, all of it valid.
@@ -46,13 +48,15 @@ pub(super) fn run(
     }
     let request = resolve_request(arguments, scales, around)?;
     let tt = request.moment.tt();
+    let bodies: Vec<Body> = request.bodies.iter().copied().chain([Body::Moon]).collect();
     let span = Ephemeris::new()
-        .cover(tt, tt, &request.bodies)
+        .cover(tt, tt, &bodies)
         .map_err(|error| Fault::Input(error.to_string()))?;
+    let mut skies = Skies::default();
     let rows: Vec<Row> = request
         .bodies
         .iter()
-        .map(|body| Row::new(&span, request.moment, &request.observer, *body))
+        .map(|body| Row::new(&span, request.moment, &request.observer, *body, &mut skies))
         .collect();
     let mut out = Vec::new();
     match arguments.format.unwrap_or(Format::Text) {

@@ -1,7 +1,9 @@
 //! What is told of one body at one instant from one place.
 
+use super::seen::{Seen, Skies};
 use crate::measure::{Angle, Moment};
 use crate::place::standard_pressure_hpa;
+use crate::plan::target;
 use crate::sky::refraction::refracted;
 use crate::sky::{Air, Apparent, Appearance, Body, Horizontal, Observer, Span};
 
@@ -16,24 +18,40 @@ pub(super) struct Row {
     pub geocentric: Apparent,
     pub appearance: Appearance,
     pub topo_appearance: Appearance,
+    /// `None` for the Sun, below the horizon, and where no brightness is known.
+    pub seen: Option<Seen>,
 }
 
 impl Row {
-    /// Works the row out; the span holds the body.
-    pub fn new(span: &Span, moment: Moment, observer: &Observer, body: Body) -> Self {
+    /// Works the row out; the span holds the body and the Moon.
+    pub fn new(
+        span: &Span,
+        moment: Moment,
+        observer: &Observer,
+        body: Body,
+        skies: &mut Skies,
+    ) -> Self {
         let epoch = span.at(moment);
         let view = epoch.seen_by(observer);
         let topocentric = view.topocentric(body);
         let place = view.horizontal(topocentric.direction);
+        let refracted_altitude = refracted(place.altitude, &observer.air);
+        let topo_appearance = view.appearance(body);
+        let is_sought = body != Body::Sun && refracted_altitude >= Angle::ZERO;
+        let seen = is_sought
+            .then(|| target(&view, body))
+            .flatten()
+            .and_then(|target| skies.seen(&view, moment, observer, &target));
         Self {
             body,
             moment,
             place,
-            refracted_altitude: refracted(place.altitude, &observer.air),
+            refracted_altitude,
             topocentric,
             geocentric: epoch.geocentric(body),
             appearance: epoch.appearance(body),
-            topo_appearance: view.appearance(body),
+            topo_appearance,
+            seen,
         }
     }
 }

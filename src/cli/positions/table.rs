@@ -2,6 +2,7 @@
 //! row. The rows before a bad one have been written when it is refused.
 
 use super::row::{Row, observer};
+use super::seen::Skies;
 use super::spans::Spans;
 use super::writer::RowWriter;
 use crate::cli::Surroundings;
@@ -46,6 +47,7 @@ pub(super) fn run(
         columns: Columns::find(words, name, header)?,
         scales,
         spans: Spans::default(),
+        skies: Skies::default(),
     };
     let mut writer = RowWriter::new(is_json, &mut *around.output);
     let mut record = ByteRecord::new();
@@ -156,6 +158,7 @@ struct Table<'a> {
     columns: Columns,
     scales: TimeScales,
     spans: Spans,
+    skies: Skies,
 }
 
 impl Table<'_> {
@@ -178,7 +181,7 @@ impl Table<'_> {
         let body = self.body(record)?;
         let observer = observer(latitude_deg, longitude_deg, elevation_m);
         match self.spans.covering(moment.tt(), body) {
-            Ok(span) => Ok(Row::new(span, moment, &observer, body)),
+            Ok(span) => Ok(Row::new(span, moment, &observer, body, &mut self.skies)),
             Err(error) => Err(Fault::Input(error.to_string())),
         }
     }

@@ -32,6 +32,11 @@ const HAZE_SCALE_KM: f64 = 1.5;
 const UPPER_HAZE_DEPTH: f64 = 0.006;
 const UPPER_HAZE_SCALE_KM: f64 = 7.0;
 
+/// Where the upper haze ends: above the stratosphere's sulphate layer it thins out by e every
+/// 2.5 km (from memory of satellite occultation profiles).
+const UPPER_HAZE_TOP_KM: f64 = 22.0;
+const UPPER_HAZE_TOP_SCALE_KM: f64 = 2.5;
+
 /// Heights at which densities are kept, km apart.
 const DENSITY_STEP_KM: f64 = 0.2;
 
@@ -122,8 +127,9 @@ impl Atmosphere {
         }
         depth
     }
-    /// Optical depth towards the Sun from a height where it stands at a zenith distance of given
-    /// cosine, and how much of its disc shows over the Earth's edge (0 to 1).
+    /// Optical depth towards the Sun from a height where it stands at a true zenith distance of
+    /// given cosine, and the part of its light that comes as far: what shows of its disc over
+    /// the Earth's edge, less what refraction spreads.
     #[inline(always)]
     pub fn sunward(&self, height_km: f64, cos_zenith: f64) -> (Spectrum, f32) {
         let (column, shown) = self.sunward.at(height_km, cos_zenith);
@@ -155,7 +161,9 @@ fn densities(ingredients: &Ingredients) -> Vec<Mix> {
         let above = h - ingredients.site_km;
         // Below a mountain the haze thickens, but not without end.
         lower / HAZE_SCALE_KM * (-above / HAZE_SCALE_KM).min(1.0).exp()
-            + upper / UPPER_HAZE_SCALE_KM * (-above.max(0.0) / UPPER_HAZE_SCALE_KM).exp()
+            + upper / UPPER_HAZE_SCALE_KM
+                * (-above.max(0.0) / UPPER_HAZE_SCALE_KM).exp()
+                * (-(h - UPPER_HAZE_TOP_KM).max(0.0) / UPPER_HAZE_TOP_SCALE_KM).exp()
     };
     heights
         .clone()
@@ -174,10 +182,29 @@ fn density_at(densities: &[Mix], height_km: f64) -> Mix {
     densities[i].towards(densities[i + 1], (x - i as f64) as f32)
 }
 
-/// Logarithms of the columns towards the Sun, by height and by the Sun's place between the
-/// zenith and the edge of the Earth.
+/// What stands between each height and the Sun, by the Sun's true place between the zenith and
+/// where refraction lets it go behind the edge of the Earth.
 struct SunwardColumns {
-    ln: Vec<Mix>,
+    /// Cosine of the true zenith distance at which the Sun's centre goes behind the edge.
+    cos_edge: Vec<f64>,
+    nodes: Vec<Sunward>,
+}
+
+/// Logarithms of the columns, and of how much refraction spreads the light.
+#[derive(Clone, Copy)]
+struct Sunward {
+    ln_column: Mix,
+    ln_focus: f32,
+}
+
+impl Sunward {
+    #[inline(always)]
+    fn towards(self, other: Self, part: f32) -> Self {
+        Self {
+            ln_column: self.ln_column.towards(other.ln_column, part),
+            ln_focus: self.ln_focus + (other.ln_focus - self.ln_focus) * part,
+        }
+    }
 }
 
 const HEIGHTS: usize = 72;
@@ -186,35 +213,86 @@ const ANGLES: usize = 160;
 /// Angular diameter of the Sun, radians.
 const SUN_DIAMETER: f64 = 0.0093;
 
+/// Refraction at the horizon at sea level, radians (34').
+const HORIZON_REFRACTION: f64 = 0.0099;
+
+/// How far refraction has bent a sunbeam on its way to a height where it arrives from an
+/// apparent zenith distance (radians). Taken in proportion to the air's density at the lowest
+/// point of the beam; above the horizon it falls with altitude as at sea level, to 5 % of itself.
+fn bending(densities: &[Mix], height_km: f64, zenith: f64) -> f64 {
+    let part =
+        |height: f64| f64::from(density_at(densities, height).air / density_at(densities, 0.0).air);
+    let altitude_deg = 90.0 - zenith.to_degrees();
+    if altitude_deg >= 0.0 {
+        HORIZON_REFRACTION * part(height_km) / (1.0 + altitude_deg / 2.0)
+    } else {
+        // In to the lowest point and out again, less what lies above the height.
+        let lowest_km = ((EARTH_KM + height_km) * zenith.sin() - EARTH_KM).max(0.0);
+        HORIZON_REFRACTION * (2.0 * part(lowest_km) - part(height_km))
+    }
+}
+
 impl SunwardColumns {
     fn new(densities: &[Mix]) -> Self {
-        let mut ln = Vec::with_capacity(HEIGHTS * ANGLES);
+        let mut columns = Self {
+            cos_edge: Vec::new(),
+            nodes: Vec::new(),
+        };
         for i in 0..HEIGHTS {
             let height = TOP_KM * (i as f64 / (HEIGHTS - 1) as f64).powi(2);
-            let edge = cos_edge(height);
+            let true_zenith = |apparent: f64| apparent + bending(densities, height, apparent);
+            let lowest = cos_edge(height).acos();
+            let edge = true_zenith(lowest).cos();
+            columns.cos_edge.push(edge);
             for j in 0..ANGLES {
                 let w = j as f64 / (ANGLES - 1) as f64;
-                let mut column = Mix::default();
-                for step in Path::clear(height, edge + (1.0 - edge) * w * w, 60).steps() {
-                    let length = step.length_km as f32;
-                    column =
-                        column.with(density_at(densities, step.height_km), |a, b| a + b * length);
+                let zenith = (edge + (1.0 - edge) * w * w).min(1.0).acos();
+                // True zenith distance grows with the apparent one: halve the interval.
+                let (mut low, mut high) = (0.0, lowest);
+                for _ in 0..40 {
+                    let middle = (low + high) / 2.0;
+                    if true_zenith(middle) < zenith {
+                        low = middle;
+                    } else {
+                        high = middle;
+                    }
                 }
-                ln.push(column.with(column, |value, _| value.max(1e-30).ln()));
+                const APART: f64 = 1e-4;
+                let spread = (true_zenith(low) - true_zenith(low - APART)) / APART;
+                columns.nodes.push(Sunward {
+                    ln_column: ln_column(densities, height, low.cos()),
+                    ln_focus: -(spread.max(0.1).ln()) as f32,
+                });
             }
         }
-        Self { ln }
+        columns
     }
+    /// The column, and the part of the Sun's light that comes as far, its absorption apart.
     #[inline(always)]
     fn at(&self, height_km: f64, cos_zenith: f64) -> (Mix, f32) {
-        let edge = cos_edge(height_km);
-        let shown = ((cos_zenith - edge) / SUN_DIAMETER + 0.5).clamp(0.0, 1.0);
         let x = (height_km / TOP_KM).clamp(0.0, 1.0).sqrt() * (HEIGHTS - 1) as f64;
+        let i = (x as usize).min(HEIGHTS - 2);
+        let s = x - i as f64;
+        let edge = self.cos_edge[i] + (self.cos_edge[i + 1] - self.cos_edge[i]) * s;
+        let shown = ((cos_zenith - edge) / SUN_DIAMETER + 0.5).clamp(0.0, 1.0);
         let y = ((cos_zenith - edge) / (1.0 - edge)).clamp(0.0, 1.0).sqrt() * (ANGLES - 1) as f64;
-        let (i, j) = ((x as usize).min(HEIGHTS - 2), (y as usize).min(ANGLES - 2));
-        let (s, t) = ((x - i as f64) as f32, (y - j as f64) as f32);
-        let row = |i: usize| self.ln[i * ANGLES + j].towards(self.ln[i * ANGLES + j + 1], t);
-        let ln = row(i).towards(row(i + 1), s);
-        (ln.with(ln, |value, _| spectrum::exp(value)), shown as f32)
+        let j = (y as usize).min(ANGLES - 2);
+        let t = (y - j as f64) as f32;
+        let row = |i: usize| self.nodes[i * ANGLES + j].towards(self.nodes[i * ANGLES + j + 1], t);
+        let node = row(i).towards(row(i + 1), s as f32);
+        let column = node
+            .ln_column
+            .with(node.ln_column, |value, _| spectrum::exp(value));
+        (column, shown as f32 * spectrum::exp(node.ln_focus))
     }
+}
+
+/// Logarithm of the column from a height outwards, along a direction that misses the Earth.
+fn ln_column(densities: &[Mix], height_km: f64, cos_zenith: f64) -> Mix {
+    let mut column = Mix::default();
+    for step in Path::clear(height_km, cos_zenith, 60).steps() {
+        let length = step.length_km as f32;
+        column = column.with(density_at(densities, step.height_km), |a, b| a + b * length);
+    }
+    column.with(column, |value, _| value.max(1e-30).ln())
 }

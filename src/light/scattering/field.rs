@@ -3,7 +3,8 @@
 //! The first scattering keeps its direction. Later ones are taken as equal in all directions,
 //! so that their light depends on height and on the Sun's zenith distance alone: it is gathered
 //! at the nodes of that grid, pass after pass, each from the light of the pass before.
-//! Polarisation and refraction are left out; the Sun's disc counts only at the Earth's edge.
+//! Sunbeams are bent and spread by refraction, lines of sight are straight; polarisation is left
+//! out; the Sun's disc counts only at the Earth's edge.
 
 use super::atmosphere::{Atmosphere, EARTH_KM, Mix, TOP_KM};
 use super::path::{Path, Step, cos_edge};

@@ -102,6 +102,7 @@ pub fn exp(x: f32) -> f32 {
     let power = f32::from_bits((rounded.to_bits() << 23).wrapping_add(0x3f80_0000));
     let series = 1.0
         + f * (1.0
-            + f * (0.5 + f * (1.0 / 6.0 + f * (1.0 / 24.0 + f * (1.0 / 120.0 + f / 720.0)))));
+            + f * (0.5
+                + f * (1.0 / 6.0 + f * (1.0 / 24.0 + f * (1.0 / 120.0 + f * (1.0 / 720.0))))));
     power * series
 }

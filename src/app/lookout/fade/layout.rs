@@ -1,6 +1,6 @@
 //! Where everything of the fade goes.
 
-use super::model::{Absence, End, Lane, Mark, MarkKind, Model};
+use super::model::{Absence, End, Lane, Mark, MarkKind, Model, Stray};
 use crate::app::lookout::model::{Tick, Tracks};
 use crate::app::lookout::says::Says;
 use crate::app::palette::Look;
@@ -282,8 +282,8 @@ impl Builder<'_> {
                 .ends
                 .get(k + 1)
                 .map_or(rect.right(), |end| layout.x(end.at_s));
-            // Outside its window the whole text, else the time alone; at the rim an end's text
-            // stands inside its own window rather than nowhere.
+            // Outside its window the whole text, else as much of it as there is room for; at the
+            // rim an end's text stands inside its own window rather than nowhere.
             let words = self.end(end);
             let outside = words.iter().map(|words| (words, end.is_end));
             let inside = words
@@ -314,14 +314,38 @@ impl Builder<'_> {
         placed
     }
 
-    /// What is said of a window's end: the cause with the time or, where that finds no room, the
-    /// time.
+    /// What is said of a window's end, the longest first: the cause with the time and how far it
+    /// may stray, the cause with the time, the time with how far it may stray, the time.
     fn end(&self, end: &End) -> Vec<String> {
         let time = self.says.time(self.tracks.moment(end.at_s));
-        let words = self
-            .says
-            .edge(end.cause, end.is_end, end.obstacle.as_deref(), &time);
-        words.map_or_else(Vec::new, |words| vec![words, time])
+        let strayed = end
+            .stray
+            .map(|stray| self.strayed(&time, stray, end.is_end));
+        let words = |time: &str| {
+            let obstacle = end.obstacle.as_deref();
+            self.says.edge(end.spoken, end.is_end, obstacle, time)
+        };
+        let Some(plain) = words(&time) else {
+            return Vec::new();
+        };
+        let full = strayed.as_deref().and_then(words);
+        full.into_iter()
+            .chain([plain])
+            .chain(strayed)
+            .chain([time])
+            .collect()
+    }
+
+    /// A time with how far it may stray.
+    fn strayed(&self, time: &str, stray: Stray, is_end: bool) -> String {
+        let told = |at_s| self.says.time(self.tracks.moment(at_s));
+        let (id, from, to) = match stray {
+            Stray::Between(from_s, to_s) => ("lane-stray", told(from_s), told(to_s)),
+            Stray::OrNotAtAll(to_s) if is_end => ("lane-stray-end", String::new(), told(to_s)),
+            Stray::OrNotAtAll(from_s) => ("lane-stray-start", told(from_s), String::new()),
+        };
+        let arguments = [("time", time), ("from", &from), ("to", &to)];
+        self.says.text(id, &arguments)
     }
 }
 

@@ -4,8 +4,9 @@ use crate::app::lookout::model::{Sample, Tick, Tracks, shown_span, ticks};
 use crate::app::scene::Scene;
 use crate::light::Standing;
 use crate::measure::Moment;
-use crate::plan::{BodyNight, Cause, Edge, Half};
+use crate::plan::{BodyNight, Cause, Edge, Half, Window};
 use crate::sky::Body;
+use crate::words::spoken_cause;
 
 /// The fade of one half-night. Times are seconds after its start.
 #[derive(Clone, Debug, PartialEq)]
@@ -75,10 +76,50 @@ pub struct End {
     pub at_s: f64,
     /// Why.
     pub cause: Cause,
+    /// The same as it is told: see [`spoken_cause`].
+    pub spoken: &'static str,
     /// Whether the window ends there, or else starts.
     pub is_end: bool,
+    /// How far it may stray, where the sky's light or the air is the cause.
+    pub stray: Option<Stray>,
     /// What stands there, where the skyline is the cause and what stands there has a name.
     pub obstacle: Option<String>,
+}
+
+/// How far an end that the light decides may stray as haze and eyes differ.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Stray {
+    /// Between two times.
+    Between(f64, f64),
+    /// As far as this time in the kindest air; in the harshest the body is not seen at all.
+    OrNotAtAll(f64),
+}
+
+impl Stray {
+    /// `None` for what the light does not decide, and for a minute or less.
+    fn of(window: &Window, is_end: bool, at_s: impl Fn(Moment) -> f64) -> Option<Self> {
+        const TOLD_FROM_S: f64 = 60.0;
+        let (edge, stray) = if is_end {
+            (window.end, window.end_stray)
+        } else {
+            (window.start, window.start_stray)
+        };
+        match edge.cause {
+            Cause::Twilight | Cause::Haze | Cause::Moonlight => {}
+            Cause::Skyline | Cause::Horizon | Cause::Half | Cause::Noon => return None,
+        }
+        let (kindest, harshest) = if is_end {
+            (stray.latest, stray.earliest)
+        } else {
+            (stray.earliest, stray.latest)
+        };
+        let kindest_s = at_s(kindest?);
+        let Some(harshest_s) = harshest.map(at_s) else {
+            return Some(Self::OrNotAtAll(kindest_s));
+        };
+        let (from_s, to_s) = (kindest_s.min(harshest_s), kindest_s.max(harshest_s));
+        (to_s - from_s > TOLD_FROM_S).then_some(Self::Between(from_s, to_s))
+    }
 }
 
 /// Why a body is not seen in the shown span.
@@ -131,14 +172,19 @@ impl Lane {
         let windows = night.map_or(&[][..], |night| night.windows_in(scene.eye, scene.half));
         let ends: Vec<End> = windows
             .iter()
-            .flat_map(|window| [(window.start, false), (window.end, true)])
-            .filter_map(|(edge, is_end)| {
-                let at_s = edge.moment.seconds_since(tracks.start);
+            .flat_map(|window| [(window, window.start, false), (window, window.end, true)])
+            .filter_map(|(window, edge, is_end)| {
+                let since_start = |moment: Moment| moment.seconds_since(tracks.start);
+                let at_s = since_start(edge.moment);
+                let spoken = spoken_cause(scene.night, edge);
                 let is_within = at_s >= from_s - 1.0 && at_s <= to_s + 1.0;
                 is_within.then(|| End {
                     at_s,
                     cause: edge.cause,
+                    spoken,
                     is_end,
+                    stray: Stray::of(window, is_end, since_start)
+                        .filter(|_| spoken == edge.cause.name()),
                     obstacle: night.and_then(|night| obstacle(scene, night, edge)),
                 })
             })

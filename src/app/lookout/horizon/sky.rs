@@ -61,7 +61,7 @@ impl<'a> Picture<'a> {
         ColorImage::new(SIZE, pixels)
     }
 
-    fn texel(&self, along: &GlowRow<'_>, azimuth: Angle) -> Color32 {
+    fn texel(&self, along: &GlowRow, azimuth: Angle) -> Color32 {
         let [r, g, b] = self.exposure.srgb(along.xyz(azimuth.radians()));
         self.look.texel(Color32::from_rgb(r, g, b))
     }

@@ -1,26 +1,30 @@
-//! The plot: the bright bodies' clearance against minutes from sunset or sunrise.
+//! The plot: the chosen body's margin for each eye against minutes from sunset or sunrise.
 
 pub(super) mod model;
+mod names;
 
 use super::model::Tracks;
 use super::says::Says;
 use super::{Kept, SpanKey};
 use crate::app::command::{Command, Commands};
+use crate::app::palette::Look;
 use crate::app::scene::Scene;
+use crate::light::Eye;
+use eframe::egui::epaint::Mesh;
 use eframe::egui::{
-    Align2, CursorIcon, Pos2, Rect, Response, RichText, Role, Sense, Stroke, StrokeKind, Ui,
-    UiBuilder, WidgetInfo, pos2, vec2,
+    Color32, CursorIcon, Pos2, Rangef, Rect, Response, RichText, Role, Sense, Shape, Stroke,
+    StrokeKind, Ui, UiBuilder, WidgetInfo, pos2, vec2,
 };
 use egui_plot::{AxisHints, GridInput, GridMark, HLine, Line, LineStyle, Plot, PlotPoint, VLine};
 use model::{Model, Origin};
 
 /// The plot and what it keeps between frames.
 #[derive(Default)]
-pub struct ClearancePlot {
+pub struct MarginPlot {
     model: Kept<SpanKey, Model>,
 }
 
-impl ClearancePlot {
+impl MarginPlot {
     /// Draws the plot into the room that `ui` has.
     pub fn show(
         &mut self,
@@ -39,27 +43,37 @@ impl ClearancePlot {
             .rect_filled(card, look.room.corner, look.colours.card);
         ui.painter()
             .rect_stroke(card, look.room.corner, line, StrokeKind::Inside);
-        // Room on the right for the half of the last number that stands beyond the frame.
+        // Room on the right for the eyes' names.
         let inner = card
             .shrink2(vec2(look.room.inside, 6.0))
-            .with_max_x(card.right() - 22.0);
+            .with_max_x(card.right() - names::room(ui, look, says));
         let mut child = ui.new_child(UiBuilder::new().max_rect(inner));
         let now_min = (tracks.at_s(scene.moment) - model.origin_s) / 60.0;
+        let below = child.painter().add(Shape::Noop);
         let plot = frame(scene, says, &model).show(&mut child, |plot| {
             plot.set_plot_bounds_x(model.from_min..=model.to_min);
-            plot.set_plot_bounds_y(lowest_deg(&model)..=1.3 * model.highest_deg);
+            plot.set_plot_bounds_y(model.lowest_mag..=model.highest_mag);
             curves(plot, scene, says, &model);
             if (model.from_min..=model.to_min).contains(&now_min) {
                 let cursor = Stroke::new(2.0, look.colours.text);
                 plot.vline(VLine::new("", now_min).stroke(cursor).allow_hover(false));
             }
         });
-        let names = plot.transform.frame();
-        let screen = |point: PlotPoint| plot.transform.position_from_point(&point);
-        self::names(ui, scene, says, &model, *names, screen);
+        let frame = *plot.transform.frame();
+        let screen = |[minutes, mag]: [f64; 2]| {
+            let point = PlotPoint::new(minutes, mag);
+            plot.transform.position_from_point(&point)
+        };
+        let grounds = vec![
+            daylight(&model, look, frame, screen),
+            spread(&model, colour(look, scene.eye), frame, screen),
+        ];
+        child.painter().set(below, Shape::Vec(grounds));
+        names::paint(ui, scene, says, &model, frame, screen);
         let response = plot.response;
-        response
-            .widget_info(|| WidgetInfo::labeled(Role::Canvas, true, says.text("plot-name", &[])));
+        let body = says.body(scene.body);
+        let name = says.text("plot-name", &[("body", &body)]);
+        response.widget_info(|| WidgetInfo::labeled(Role::Canvas, true, &name));
         if response.hovered() || response.dragged() {
             ui.ctx().set_cursor_icon(CursorIcon::ResizeHorizontal);
         }
@@ -76,10 +90,6 @@ impl ClearancePlot {
     }
 }
 
-fn lowest_deg(model: &Model) -> f64 {
-    -0.1 * model.highest_deg
-}
-
 /// The plot without anything in it: nothing that it shows can be moved, so nothing offers to.
 fn frame<'a>(scene: &'a Scene<'a>, says: Says<'a>, model: &'a Model) -> Plot<'a> {
     let look = &scene.look;
@@ -91,7 +101,8 @@ fn frame<'a>(scene: &'a Scene<'a>, says: Says<'a>, model: &'a Model) -> Plot<'a>
         Origin::Start => "plot-minutes-start",
     };
     let hint = |axis: AxisHints<'a>| axis.tick_label_color(colour).tick_label_font(font.clone());
-    let name = RichText::new(says.text(axis_name, &[]))
+    let minutes = says.text(axis_name, &[]);
+    let name = RichText::new(says.text("plot-title", &[("minutes", &minutes)]))
         .font(font.clone())
         .color(colour);
     let span_min = model.to_min - model.from_min;
@@ -99,15 +110,19 @@ fn frame<'a>(scene: &'a Scene<'a>, says: Says<'a>, model: &'a Model) -> Plot<'a>
         .into_iter()
         .find(|step| span_min / step <= 14.0)
         .unwrap_or(480.0);
-    let y_step = if model.highest_deg > 40.0 { 20.0 } else { 10.0 };
-    Plot::new("clearance")
+    let span_mag = model.highest_mag - model.lowest_mag;
+    let y_step = if span_mag > 7.0 { 4.0 } else { 2.0 };
+    Plot::new("margin")
         .custom_x_axes(vec![
             hint(AxisHints::new_x())
                 .label(name)
-                .formatter(move |mark, _| says.signed_minutes(mark.value)),
+                .formatter(move |mark, _| says.signed(mark.value)),
         ])
         .custom_y_axes(vec![
-            hint(AxisHints::new_y()).formatter(move |mark, _| says.degrees(mark.value as i32)),
+            hint(AxisHints::new_y())
+                // Shown in a low plot too.
+                .label_spacing(Rangef::new(6.0, 12.0))
+                .formatter(move |mark, _| says.signed(mark.value)),
         ])
         .x_grid_spacer(move |input| marks(&input, x_step))
         .y_grid_spacer(move |input| marks(&input, y_step))
@@ -137,93 +152,65 @@ fn marks(input: &GridInput, step: f64) -> Vec<GridMark> {
         .collect()
 }
 
-/// The others in grey, the skyline dashed, the chosen body in amber over all.
+/// The colour of an eye's curve and name.
+fn colour(look: &Look, eye: Eye) -> Color32 {
+    match eye {
+        Eye::PasserBy => look.colours.passer_by,
+        Eye::Visitor => look.colours.chosen,
+        Eye::Keen => look.colours.keen,
+        Eye::Optics => look.colours.lesser,
+    }
+}
+
+/// The threshold dashed, the chosen eye's curve the broadest and over all.
 fn curves<'a>(plot: &mut egui_plot::PlotUi<'a>, scene: &Scene<'_>, says: Says<'_>, model: &Model) {
-    let colours = &scene.look.colours;
-    let skyline = Stroke::new(1.0, colours.lesser);
+    let look = &scene.look;
     plot.hline(
         HLine::new("", 0.0)
-            .stroke(skyline)
+            .stroke(Stroke::new(1.0, look.colours.lesser))
             .style(LineStyle::dashed_loose())
             .allow_hover(false),
     );
-    for (k, curve) in model.curves.iter().enumerate().rev() {
-        let stroke = match k {
-            0 => Stroke::new(2.6, colours.chosen),
-            _ => Stroke::new(1.2, colours.lesser.gamma_multiply(0.8)),
-        };
+    let is_chosen = |curve: &&model::Curve| curve.eye == scene.eye;
+    let others = model.curves.iter().filter(|curve| !is_chosen(curve));
+    for curve in others.chain(model.curves.iter().filter(is_chosen)) {
+        let width = if curve.eye == scene.eye { 2.6 } else { 1.4 };
+        let stroke = Stroke::new(width, colour(look, curve.eye));
         for piece in &curve.pieces {
-            let line = Line::new(says.body(curve.body), piece.clone()).stroke(stroke);
+            let line = Line::new(says.eye(curve.eye), piece.clone()).stroke(stroke);
             plot.line(line.allow_hover(false));
         }
     }
 }
 
-/// Each curve's name at the first of its points where it touches neither a curve nor another
-/// name, the chosen body's first; one that finds no place is left out.
-fn names(
-    ui: &Ui,
-    scene: &Scene<'_>,
-    says: Says<'_>,
-    model: &Model,
-    frame: Rect,
-    screen: impl Fn(PlotPoint) -> Pos2,
-) {
-    /// Points of a curve between places that are tried.
-    const APART: usize = 6;
-    let look = &scene.look;
-    let painter = ui.painter().with_clip_rect(frame);
-    let font = look.font(look.sizes.least);
-    let title = painter.layout_no_wrap(
-        says.text("plot-title", &[]),
-        look.font(look.sizes.label),
-        look.colours.lesser,
-    );
-    let title_at = Align2::RIGHT_TOP.anchor_size(frame.right_top() + vec2(-6.0, 0.0), title.size());
-    painter.galley(title_at.min, title, look.colours.lesser);
-    let on_screen: Vec<Vec<Pos2>> = model
-        .curves
-        .iter()
-        .map(|curve| {
-            let points = curve.pieces.iter().flatten();
-            points
-                .map(|[minutes, degrees]| screen(PlotPoint::new(*minutes, *degrees)))
-                .collect()
-        })
-        .collect();
-    let skyline_y = screen(PlotPoint::new(0.0, 0.0)).y;
-    let mut taken = vec![title_at];
-    for (k, curve) in model.curves.iter().enumerate() {
-        let (colour, font) = match k {
-            0 => (look.colours.chosen, look.bold(look.sizes.least)),
-            _ => (look.colours.lesser, font.clone()),
-        };
-        let text = painter.layout_no_wrap(says.body(curve.body), font, colour);
-        let size = text.size();
-        let is_free = |rect: &Rect| {
-            frame.contains_rect(*rect)
-                && !rect.y_range().contains(skyline_y)
-                && taken
-                    .iter()
-                    .all(|other| !other.expand(2.0).intersects(*rect))
-                && on_screen
-                    .iter()
-                    .flatten()
-                    .all(|point| !rect.contains(*point))
-        };
-        // From the end backwards: there the curves have drawn apart, and nothing is written yet.
-        let place = on_screen[k]
-            .iter()
-            .rev()
-            .step_by(APART)
-            .flat_map(|at| {
-                [-size.y - 3.0, 4.0]
-                    .map(|below| Rect::from_min_size(pos2(at.x - 0.5 * size.x, at.y + below), size))
-            })
-            .find(is_free);
-        if let Some(place) = place {
-            painter.galley(place.min, text, colour);
-            taken.push(place);
+/// The ground of the part in which the Sun is up.
+fn daylight(model: &Model, look: &Look, frame: Rect, screen: impl Fn([f64; 2]) -> Pos2) -> Shape {
+    let Some((from, to)) = model.daylight_min else {
+        return Shape::Noop;
+    };
+    let [from, to] = [from, to].map(|minutes| screen([minutes, 0.0]).x);
+    let ground = Rect::from_x_y_ranges(from..=to, frame.y_range());
+    Shape::rect_filled(ground, 0.0, look.colours.line.gamma_multiply(0.6))
+}
+
+/// The chosen eye's spread as a band, cut off at the frame.
+fn spread(model: &Model, colour: Color32, frame: Rect, screen: impl Fn([f64; 2]) -> Pos2) -> Shape {
+    const SHADE: f32 = 0.22;
+    let colour = colour.gamma_multiply(SHADE);
+    let mut mesh = Mesh::default();
+    for piece in &model.spread {
+        for (k, [minutes, least, greatest]) in piece.iter().enumerate() {
+            let first = mesh.vertices.len() as u32;
+            for mag in [*least, *greatest] {
+                let at = screen([*minutes, mag]);
+                let held = pos2(at.x, at.y.clamp(frame.top(), frame.bottom()));
+                mesh.colored_vertex(held, colour);
+            }
+            if k > 0 {
+                mesh.add_triangle(first - 2, first - 1, first);
+                mesh.add_triangle(first - 1, first, first + 1);
+            }
         }
     }
+    Shape::mesh(mesh)
 }
