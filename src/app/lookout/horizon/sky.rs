@@ -186,9 +186,18 @@ mod tests {
     fn the_earths_shadow_is_darker_than_the_belt_above_it() {
         let (air, look) = (air(), look(Theme::Dark));
         let glow = sunk(&air, -4.0);
-        let at = |altitude_deg| light_of(colour(&glow, &look, 180.0, altitude_deg));
-        let belt = (4..40).map(|deg| at(f64::from(deg))).fold(0.0, f32::max);
-        assert!(at(1.0) < 0.9 * belt, "{} under {belt}", at(1.0));
+        let light = |beside_deg, altitude_deg| {
+            light_of(colour(&glow, &look, beside_deg, f64::from(altitude_deg)))
+        };
+        // The brightest of a stretch of sky, opposite the Sun and over it.
+        let belt = |beside_deg| {
+            (10..40)
+                .map(|deg| light(beside_deg, deg))
+                .fold(0.0, f32::max)
+        };
+        let (shadow, belt_over_it) = (light(180.0, 6), belt(180.0));
+        assert!(shadow < 0.8 * belt_over_it, "{shadow} under {belt_over_it}");
+        assert!(light(0.0, 4) > belt(0.0), "no shadow over the Sun");
     }
 
     #[test]
