@@ -202,7 +202,7 @@ pub struct Window {
 }
 
 /// The moment to show a body at: where the lesser of two merits is greatest, the clearance
-/// counted in fists (10°) and the margin counted in tens of light (2.5 magnitudes). So a body that sinks into a
+/// counted in fists (10°) and the margin counted in hundreds of light (5 magnitudes). So a body that sinks into a
 /// darkening sky is shown while it still stands clear, in a sky that has begun to deepen.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Best {

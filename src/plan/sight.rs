@@ -124,17 +124,15 @@ impl Lamps {
 pub fn target(view: &View<'_>, body: Body) -> Option<Target> {
     let appearance = view.appearance(body);
     let place = view.refracted_place(body);
-    let target = Target::point(
-        appearance.magnitude.value()?,
-        place.altitude.radians(),
-        place.azimuth.radians(),
-    )
-    .with_disc(
-        appearance.diameter.arcsec(),
-        appearance.illuminated_fraction,
-    );
+    let (altitude, azimuth) = (place.altitude.radians(), place.azimuth.radians());
+    let magnitude = appearance.magnitude.value()?;
+    let diameter_arcsec = appearance.diameter.arcsec();
     Some(match body {
-        Body::Moon => target.without_moonlight(),
-        _ => target,
+        Body::Moon => {
+            let phase_angle_deg = appearance.phase_angle.degrees();
+            Target::moon(magnitude, phase_angle_deg, diameter_arcsec, altitude, azimuth)
+        }
+        _ => Target::point(magnitude, altitude, azimuth)
+            .with_disc(diameter_arcsec, appearance.illuminated_fraction),
     })
 }

@@ -211,7 +211,7 @@ impl Searched<'_> {
         let merit = |at_s: f64| {
             let clearance = watch.sample(body, at_s).clearance;
             let margin_mag = self.lit.margin_mag(body, eye, Luck::Usual, at_s);
-            (clearance.degrees() / 10.0).min(margin_mag / 2.5)
+            (clearance.degrees() / 10.0).min(margin_mag / 5.0)
         };
         let from_s = interval.start.moment.seconds_since(watch.start);
         let to_s = interval.end.moment.seconds_since(watch.start);

@@ -9,7 +9,7 @@ use std::path::{Path, PathBuf};
 
 fn docs(name: &str) -> PathBuf {
     Path::new(env!("CARGO_MANIFEST_DIR"))
-        .join("docs")
+        .join("assets/light")
         .join(name)
 }
 
@@ -28,10 +28,10 @@ pub fn table<const N: usize>(head: [&str; N], rows: &[[String; N]]) -> String {
     text
 }
 
-/// Fails unless a section of `docs/light.md` is this text.
+/// Fails unless a section of `assets/light/measured.md` is this text.
 #[track_caller]
 pub fn assert_documented(section: &str, text: &str) {
-    let path = docs("light.md");
+    let path = docs("measured.md");
     let document = std::fs::read_to_string(&path).unwrap();
     let mark = format!("<!-- {section} -->\n");
     let start = document.find(&mark).unwrap() + mark.len();
@@ -43,7 +43,7 @@ pub fn assert_documented(section: &str, text: &str) {
         assert_eq!(
             &document[start..end],
             text,
-            "docs/light.md, section {section}"
+            "assets/light/measured.md, section {section}"
         );
     }
 }
@@ -171,9 +171,9 @@ fn the_zenith_is_plotted() {
     }
     svg += "</svg>\n";
     if is_update() {
-        std::fs::write(docs("light-zenith.svg"), svg).unwrap();
+        std::fs::write(docs("zenith.svg"), svg).unwrap();
     } else {
-        let kept = std::fs::read_to_string(docs("light-zenith.svg")).unwrap();
-        assert_eq!(kept, svg, "docs/light-zenith.svg");
+        let kept = std::fs::read_to_string(docs("zenith.svg")).unwrap();
+        assert_eq!(kept, svg, "assets/light/zenith.svg");
     }
 }
