@@ -270,7 +270,7 @@ fn sighting_ui(ui: &mut Ui, scene: &Scene<'_>, words: &Words, rect: Rect, sighti
         look.colours.text,
     );
     // Read as one.
-    let row = ui.interact(rect, ui.id().with(&name), Sense::hover());
+    let row = ui.interact(rect, ui.scope_id().with(&name), Sense::hover());
     row.widget_info(|| WidgetInfo::labeled(Role::Label, true, format!("{name} {time}")));
 }
 

@@ -25,7 +25,9 @@ fn every_size_and_zoom_draws_in_every_theme() {
             // A message that the wording lacks shows its name in brackets.
             assert_eq!(harness.query_all_by_label_contains("[").count(), 0);
             assert!(
-                harness.query_by_label_contains("optics until").is_some(),
+                harness
+                    .query_by_label_contains("Cap every instrument by")
+                    .is_some(),
                 "the caution is in sight at {width}x{height}, zoom {zoom}"
             );
         }
