@@ -122,7 +122,7 @@ impl Search<'_> {
         self.bright_end.plus_seconds(self.towards_dark * into_s)
     }
 
-    fn into_s(&self, moment: Moment) -> f64 {
+    fn past_bright_end_s(&self, moment: Moment) -> f64 {
         self.towards_dark * moment.seconds_since(self.bright_end)
     }
 
@@ -136,8 +136,8 @@ impl Search<'_> {
                 .iter()
                 .filter_map(|window| {
                     let (a, b) = (
-                        self.into_s(window.start.moment),
-                        self.into_s(window.end.moment),
+                        self.past_bright_end_s(window.start.moment),
+                        self.past_bright_end_s(window.end.moment),
                     );
                     (a.max(b) > 0.0).then_some(a.min(b).max(0.0))
                 })
@@ -163,7 +163,7 @@ impl Search<'_> {
                     let is_plain = self.is_plain(star, view, glow);
                     if is_plain {
                         let first_s = self.first_between(star, before_s, into_s);
-                        found.push((first_s, Found::Star(*star)));
+                        found.push((first_s, Found::Star(star)));
                     }
                     !is_plain
                 });

@@ -130,7 +130,13 @@ pub fn target(view: &View<'_>, body: Body) -> Option<Target> {
     Some(match body {
         Body::Moon => {
             let phase_angle_deg = appearance.phase_angle.degrees();
-            Target::moon(magnitude, phase_angle_deg, diameter_arcsec, altitude, azimuth)
+            Target::moon(
+                magnitude,
+                phase_angle_deg,
+                diameter_arcsec,
+                altitude,
+                azimuth,
+            )
         }
         _ => Target::point(magnitude, altitude, azimuth)
             .with_disc(diameter_arcsec, appearance.illuminated_fraction),

@@ -26,7 +26,7 @@ fn every_size_and_zoom_draws_in_every_theme() {
             assert_eq!(harness.query_all_by_label_contains("[").count(), 0);
             assert!(
                 harness
-                    .query_by_label_contains("Cap every instrument by")
+                    .query_by_label_contains("The Sun is down: optics until")
                     .is_some(),
                 "the caution is in sight at {width}x{height}, zoom {zoom}"
             );
