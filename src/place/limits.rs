@@ -79,6 +79,10 @@ limits! {
     apparent_field_deg: 5.0 to 150.0, "degrees";
     magnification: 1.0 to 1000.0, "times";
     field_deg: 0.05 to 90.0, "degrees";
+    passer_by: 0.5 to 50.0, "times the laboratory observers' light";
+    visitor: 0.5 to 50.0, "times the laboratory observers' light";
+    keen: 0.5 to 50.0, "times the laboratory observers' light";
+    optics: 0.5 to 50.0, "times the laboratory observers' light";
 }
 
 /// The same checks for numbers that may be left out.
@@ -103,6 +107,10 @@ pub(super) mod optional {
         pressure_hpa by "super::pressure_hpa";
         extinction_mag by "super::extinction_mag";
         ridge_m by "super::ridge_m";
+        passer_by by "super::passer_by";
+        visitor by "super::visitor";
+        keen by "super::keen";
+        optics by "super::optics";
     }
 }
 

@@ -7,6 +7,7 @@
 mod air;
 mod check;
 mod demo;
+mod eyes;
 mod file;
 mod kit;
 mod limits;
@@ -21,6 +22,7 @@ pub mod zone;
 
 pub use air::{Extinction, Haze, SiteAir, SiteSky, standard_pressure_hpa};
 pub use demo::{demo_site, demo_sites, slug};
+pub use eyes::SiteEyes;
 pub use file::LARGEST_FILE_BYTES;
 pub use kit::{Eyepiece, Instrument, Orientation};
 pub use measured::{SkylinePoint, read_skyline_table, skyline_from_table};

@@ -1,7 +1,7 @@
 //! A site and its spots.
 
 use super::obstacle::PlanPoint;
-use super::{Extinction, Instrument, Obstacle, SiteAir, SiteSky, Skyline, SkylinePoint};
+use super::{Extinction, Instrument, Obstacle, SiteAir, SiteEyes, SiteSky, Skyline, SkylinePoint};
 use super::{limits, measured, silhouette, zone};
 use crate::measure::Angle;
 use crate::sky::Observer;
@@ -64,6 +64,9 @@ pub struct Site {
     /// skyline does not look at terrain yet ([`Site::ignores_terrain`]).
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub terrain: Option<PathBuf>,
+    /// How much light the people here need, where that is known to differ.
+    #[serde(default, skip_serializing_if = "SiteEyes::is_usual")]
+    pub eyes: SiteEyes,
     /// Instruments that visitors look through.
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     pub kit: Vec<Instrument>,
@@ -146,6 +149,7 @@ impl Site {
             skyline: Vec::new(),
             obstacles: Vec::new(),
             terrain: None,
+            eyes: SiteEyes::default(),
             kit: Vec::new(),
         };
         site.check()?;

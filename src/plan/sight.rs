@@ -46,12 +46,23 @@ impl Sight {
         }
     }
 
-    /// A site's sky, with the usual eyes and the first instrument of its kit at its lowest power.
+    /// A site's sky, with its people's eyes and the first instrument of its kit at its lowest power.
     ///
     /// # Errors
     /// An instrument or a figure of the air that the light model cannot take.
     pub fn of_site(site: &Site) -> Result<Self, LightError> {
         let mut eyes = Eyes::default();
+        let stated = &site.eyes;
+        for (eye, factor) in [
+            (Eye::PasserBy, stated.passer_by),
+            (Eye::Visitor, stated.visitor),
+            (Eye::Keen, stated.keen),
+            (Eye::Optics, stated.optics),
+        ] {
+            if let Some(factor) = factor {
+                eyes = eyes.with_factor(eye, factor)?;
+            }
+        }
         let views = site.kit.first().map(Optics::of).transpose()?;
         if let Some(optics) = views.as_ref().and_then(|views| views.first()) {
             eyes = eyes.with_instrument(*optics);

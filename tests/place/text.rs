@@ -88,6 +88,23 @@ fn every_field_of_the_full_file_is_read() {
 }
 
 #[test]
+fn eyes_may_be_stated_and_are_kept_within_their_range() {
+    let site = Site::from_ron(&with("eyes: Eyes(visitor: 3.1, keen: 1.2),")).expect("a valid site");
+    assert_eq!(site.eyes.visitor, Some(3.1));
+    assert_eq!(site.eyes.passer_by, None);
+    let again = Site::from_ron(&site.to_ron().expect("written")).expect("read back");
+    assert_eq!(again, site);
+    for factor in ["0.0", "-2.4", "51.0", "NaN", "inf"] {
+        let text = with(&format!("eyes: Eyes(visitor: {factor}),"));
+        let error = Site::from_ron(&text).expect_err(factor).to_string();
+        assert!(
+            error.contains("visitor") && error.contains("0.5 and 50"),
+            "{factor}: {error}"
+        );
+    }
+}
+
+#[test]
 fn clean_air_takes_what_schaefer_gives_and_haze_words_add_to_it() {
     let at = |fields: &str| {
         Site::from_ron(&with(fields))

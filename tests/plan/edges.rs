@@ -5,8 +5,8 @@ use chrono::NaiveDate;
 use chrono_tz::Tz;
 use dimmet::light::Eye;
 use dimmet::measure::{Angle, Moment, TimeScales};
-use dimmet::place::Skyline;
-use dimmet::plan::{Cause, Half, Night, NightError, NightRequest};
+use dimmet::place::{Skyline, demo_site};
+use dimmet::plan::{Cause, Half, Night, NightError, NightRequest, Sight};
 use dimmet::sky::{Air, Body, Ephemeris, Observer, refraction};
 
 fn observer(latitude_deg: f64, longitude_deg: f64, elevation_m: f64) -> Observer {
@@ -282,5 +282,37 @@ fn a_window_ends_with_the_cause_that_comes_first() {
             .expect("asked for")
             .windows(Eye::Visitor)
             .is_empty()
+    );
+}
+
+#[test]
+fn duller_eyes_see_for_a_shorter_time() {
+    let visitor_minutes = |factor: Option<f64>| {
+        let mut site = demo_site("fennick-common").expect("a demo site").clone();
+        site.eyes.visitor = factor;
+        let night = Night::plan(
+            &Ephemeris::new(),
+            &NightRequest {
+                observer: &site.observer(),
+                skyline: &Skyline::open(),
+                zone: site.zone(),
+                date: NaiveDate::from_ymd_opt(2026, 12, 4).expect("a date"),
+                scales: TimeScales::new(),
+                sight: &Sight::of_site(&site).expect("factors within range"),
+                eyes: &[Eye::Visitor],
+                bodies: &[Body::Mars],
+            },
+        )
+        .expect("the night can be planned");
+        let mars = night.body(Body::Mars).expect("asked for");
+        let windows = mars.windows(Eye::Visitor).iter();
+        windows
+            .map(|window| window.end.moment.seconds_since(window.start.moment) / 60.0)
+            .sum::<f64>()
+    };
+    let (dull, usual) = (visitor_minutes(Some(9.0)), visitor_minutes(None));
+    assert!(
+        dull > 60.0 && dull < usual - 5.0,
+        "{dull} and {usual} minutes"
     );
 }
