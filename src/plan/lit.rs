@@ -2,9 +2,10 @@
 
 use super::sight::{Lamps, Luck, Sight, target};
 use super::track::Watch;
-use crate::light::{Eye, Glow, Margin, Target};
+use crate::light::{Eye, Glow, Margin};
 use crate::measure::search;
 use crate::sky::Body;
+use std::ops::Range;
 
 /// Seconds between samples. Margins turn over tens of minutes (the sky falls by 0.3 mag a
 /// minute at its fastest, steadily), so a step of five minutes holds at most one turn.
@@ -13,31 +14,29 @@ const STEP_S: f64 = 300.0;
 /// What stands for the margin of a body whose brightness is not known: never seen.
 const UNKNOWN_MAG: f64 = -99.0;
 
-/// The sky's light through a night.
+/// The sky's light through the part of a night in which eyes are sent looking.
 pub(super) struct Lit<'a> {
     pub watch: Watch<'a>,
-    pub sight: &'a Sight,
+    sight: &'a Sight,
     /// Seconds after the night's start, ascending.
     pub times_s: Vec<f64>,
     /// The sky at each of them, with each [`Luck`] in the air.
     glows: Vec<[Glow<'a>; Luck::ALL.len()]>,
 }
 
-/// One body's margins at the samples, for one eye with each luck.
+/// One body's margins at some of the samples, for one eye with each luck.
 pub(super) type Margins = [Vec<f64>; Luck::ALL.len()];
 
 impl<'a> Lit<'a> {
-    /// Samples the sky over `[0, length_s]`.
-    pub fn new(watch: Watch<'a>, sight: &'a Sight, length_s: f64) -> Self {
-        let times_s = search::grid(0.0, length_s, STEP_S);
-        let glows = times_s
-            .iter()
-            .map(|at_s| {
-                let epoch = watch.span.at(watch.moment(*at_s));
-                let lamps = Lamps::of(&epoch.seen_by(watch.observer));
-                Luck::ALL.map(|luck| lamps.glow(sight.sky_with(luck)))
-            })
-            .collect();
+    /// Samples the sky over a part of the night, seconds after its start.
+    pub fn new(watch: Watch<'a>, sight: &'a Sight, part_s: Range<f64>) -> Self {
+        let times_s = search::grid(part_s.start, part_s.end, STEP_S);
+        let glow_at = |at_s: &f64| {
+            let epoch = watch.span.at(watch.moment(*at_s));
+            let lamps = Lamps::of(&epoch.seen_by(watch.observer));
+            Luck::ALL.map(|luck| lamps.glow(sight.sky_with(luck)))
+        };
+        let glows = times_s.iter().map(glow_at).collect();
         Self {
             watch,
             sight,
@@ -46,12 +45,20 @@ impl<'a> Lit<'a> {
         }
     }
 
-    /// A body's margins at every sample, for each of the eyes.
-    pub fn margins(&self, body: Body, eyes: &[Eye]) -> Vec<Margins> {
+    /// The samples within an interval and the ones just outside it.
+    pub fn around(&self, from_s: f64, to_s: f64) -> Range<usize> {
+        let first = self.times_s.partition_point(|at_s| *at_s <= from_s);
+        let past = self.times_s.partition_point(|at_s| *at_s < to_s);
+        first.saturating_sub(1)..(past + 1).min(self.times_s.len())
+    }
+
+    /// A body's margins at the samples of a range, for each of the eyes.
+    pub fn margins(&self, body: Body, eyes: &[Eye], samples: Range<usize>) -> Vec<Margins> {
         let mut margins: Vec<Margins> = eyes.iter().map(|_| Margins::default()).collect();
-        for (at_s, glows) in self.times_s.iter().zip(&self.glows) {
-            let target = self.target(body, *at_s);
-            for (luck, glow) in Luck::ALL.into_iter().zip(glows) {
+        for sample in samples {
+            let epoch = self.watch.span.at(self.watch.moment(self.times_s[sample]));
+            let target = target(&epoch.seen_by(self.watch.observer), body);
+            for (luck, glow) in Luck::ALL.into_iter().zip(&self.glows[sample]) {
                 let mut first: Option<Margin> = None;
                 for (eye, margins) in eyes.iter().zip(&mut margins) {
                     let margin = target.map(|target| {
@@ -83,10 +90,5 @@ impl<'a> Lit<'a> {
     pub fn margin_mag(&self, body: Body, eye: Eye, luck: Luck, at_s: f64) -> f64 {
         self.margin(body, eye, luck, at_s)
             .map_or(UNKNOWN_MAG, |margin| margin.margin_mag)
-    }
-
-    fn target(&self, body: Body, at_s: f64) -> Option<Target> {
-        let epoch = self.watch.span.at(self.watch.moment(at_s));
-        target(&epoch.seen_by(self.watch.observer), body)
     }
 }

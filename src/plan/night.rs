@@ -106,17 +106,6 @@ pub(super) struct EyeWindows {
     pub dawn: Vec<Window>,
 }
 
-impl EyeWindows {
-    pub fn none(eye: Eye) -> Self {
-        Self {
-            eye,
-            night: Vec::new(),
-            dusk: Vec::new(),
-            dawn: Vec::new(),
-        }
-    }
-}
-
 /// A body clearing the skyline or going behind it.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct SkylineEvent {

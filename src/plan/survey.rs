@@ -44,12 +44,7 @@ pub(super) fn survey(
         bodies: Vec::new(),
         optics: optics::optics_times(&sun, middle, request),
     };
-    let lit_s = if request.eyes.is_empty() {
-        0.0
-    } else {
-        length_s
-    };
-    let lit = Lit::new(watch, request.sight, lit_s);
+    let lit = Lit::new(watch, request.sight, dark_part_s(&night, request));
     night.bodies = Body::ALL
         .into_iter()
         .filter(|body| *body == Body::Moon || request.bodies.contains(body))
@@ -172,6 +167,24 @@ fn sun_times(sun: &Track<'_>, middle: Moment) -> SunTimes {
         highest: altitude_at(sun.watch.start),
         lowest: altitude_at(middle),
     }
+}
+
+/// The part of a night in which eyes are sent looking, seconds after its start: while the Sun is
+/// down, and a little beyond.
+fn dark_part_s(night: &Night, request: &NightRequest<'_>) -> std::ops::Range<f64> {
+    const BEYOND_S: f64 = 600.0;
+    let length_s = night.end.seconds_since(night.start);
+    let at_s = |moment: Moment| moment.seconds_since(night.start);
+    let sun_stays_up = night.sun.set.is_none() && night.sun.highest >= SUN_RISE_SET;
+    if request.eyes.is_empty() || sun_stays_up {
+        return 0.0..0.0;
+    }
+    let from_s = night.sun.set.map_or(0.0, |set| at_s(set) - BEYOND_S);
+    let to_s = night
+        .sun
+        .rise
+        .map_or(length_s, |rise| at_s(rise) + BEYOND_S);
+    from_s.max(0.0)..to_s.min(length_s)
 }
 
 fn body_night(

@@ -1,4 +1,4 @@
-//! How long a night's plan takes: budgets are 5 ms with the spans kept, 30 ms from nothing.
+//! How long a night's plan takes: with the light for four eyes and its spread, and without.
 
 use chrono::NaiveDate;
 use dimmet::light::Eye;
@@ -12,7 +12,7 @@ fn main() {
     divan::main();
 }
 
-fn plan(ephemeris: &Ephemeris) -> Night {
+fn plan(ephemeris: &Ephemeris, eyes: &[Eye]) -> Night {
     static SIGHT: LazyLock<Sight> =
         LazyLock::new(|| Sight::of_site(&demo_sites()[0]).expect("the demo site's air"));
     let (site, sight) = (&demo_sites()[0], &*SIGHT);
@@ -25,7 +25,7 @@ fn plan(ephemeris: &Ephemeris) -> Night {
             date: NaiveDate::from_ymd_opt(2026, 12, 4).expect("a date"),
             scales: TimeScales::new(),
             sight,
-            eyes: &Eye::ALL,
+            eyes,
             bodies: &Body::ALL,
         },
     )
@@ -35,13 +35,21 @@ fn plan(ephemeris: &Ephemeris) -> Night {
 #[divan::bench]
 fn night_with_spans_kept(bencher: divan::Bencher) {
     let ephemeris = Ephemeris::new();
-    plan(&ephemeris);
-    bencher.bench(|| plan(&ephemeris));
+    plan(&ephemeris, &Eye::ALL);
+    bencher.bench(|| plan(&ephemeris, &Eye::ALL));
+}
+
+/// Risings, settings, skyline moments and optics times alone.
+#[divan::bench]
+fn night_without_eyes(bencher: divan::Bencher) {
+    let ephemeris = Ephemeris::new();
+    plan(&ephemeris, &[]);
+    bencher.bench(|| plan(&ephemeris, &[]));
 }
 
 /// The series themselves are read once a process; the spans are fitted anew.
 #[divan::bench]
 fn night_with_nothing_fitted(bencher: divan::Bencher) {
-    plan(&Ephemeris::new());
-    bencher.bench(|| plan(&Ephemeris::new()));
+    plan(&Ephemeris::new(), &Eye::ALL);
+    bencher.bench(|| plan(&Ephemeris::new(), &Eye::ALL));
 }

@@ -11,7 +11,7 @@ use eframe::egui::{Color32, ColorImage, lerp};
 use std::f64::consts::TAU;
 
 /// Columns and rows of the sky's texture; it is stretched smoothly over the view.
-const SIZE: [usize; 2] = [256, 96];
+const SIZE: [usize; 2] = [224, 84];
 
 /// The light of a scene's sky at a moment, as assumed.
 pub fn glow<'a>(scene: &Scene<'a>, moment: Moment) -> Glow<'a> {
