@@ -166,6 +166,12 @@ fn described(command: Command, words: &Words) -> Command {
     });
     names.into_iter().fold(command, |command, name| {
         let about = words.text(&format!("cli-about-{name}"));
-        command.mut_subcommand(name, |sub| described(sub.about(about), words))
+        let more = format!("cli-more-{name}");
+        let long = words
+            .has(&more)
+            .then(|| [about.clone(), words.text(&more)].join(".\n\n"));
+        command.mut_subcommand(name, |sub| {
+            described(sub.about(about).long_about(long), words)
+        })
     })
 }

@@ -159,6 +159,7 @@ mod tests {
             "month-",
             "cli-about-",
             "cli-arg-",
+            "cli-more-",
         ];
         for file in ENGLISH {
             for line in file.lines() {

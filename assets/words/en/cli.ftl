@@ -2,7 +2,8 @@
 
 # Help
 cli-about = Plans and runs public observing sessions of the bright planets at dusk and dawn. Without a subcommand it opens its window.
-cli-about-positions = Where bodies stand at one instant from one place, or for each row of a table, and by how many magnitudes eyes see them. Sky, extinction, limit (a visitor’s) and margins are for usual air: clear, at the place’s elevation to 50 m, with a dark sky of 20.5 mag per square arcsecond and the usual eyes; the Moon’s own glow is left out for the Moon. They are blank for the Sun, for what is below the horizon and where no magnitude is known
+cli-about-positions = Where bodies stand at one instant from one place, or for each row of a table, and by how many magnitudes eyes see them
+cli-more-positions = Sky, extinction, limit (a visitor’s) and margins are for usual air: clear, at the place’s elevation to 50 m, with a dark sky of 20.5 mag per square arcsecond and the usual eyes; the Moon’s own glow is left out for the Moon. They are blank for the Sun, for what is below the horizon and where no magnitude is known.
 cli-about-night = One night at a site: when each planet stands clear of its skyline, and when optics may be uncapped
 cli-about-daylight = A bright planet in full day, for the unaided eye from the shade of a building of the site file (Venus unless --body says otherwise). Read its cautions first
 cli-about-completions = Prints completions for a shell
