@@ -167,11 +167,13 @@ fn described(command: Command, words: &Words) -> Command {
     names.into_iter().fold(command, |command, name| {
         let about = words.text(&format!("cli-about-{name}"));
         let more = format!("cli-more-{name}");
-        let long = words
-            .has(&more)
-            .then(|| [about.clone(), words.text(&more)].join(".\n\n"));
         command.mut_subcommand(name, |sub| {
-            described(sub.about(about).long_about(long), words)
+            let sub = if words.has(&more) {
+                sub.long_about([about.clone(), words.text(&more)].join(".\n\n"))
+            } else {
+                sub
+            };
+            described(sub.about(about), words)
         })
     })
 }
