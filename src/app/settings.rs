@@ -1,6 +1,5 @@
 //! What the window remembers from one time to the next, in a small RON file of its own.
 
-use super::command::OpticsView;
 use super::palette::Theme;
 use crate::light::Eye;
 use crate::sky::Body;
@@ -30,8 +29,6 @@ pub struct Settings {
     pub eye: Eye,
     /// The theme.
     pub theme: Theme,
-    /// How the chosen optics show the disc.
-    pub optics_view: OpticsView,
     /// Size of everything, 1 being usual.
     pub zoom: f32,
     /// Width and height of the window, points at zoom 1.
@@ -50,7 +47,6 @@ impl Default for Settings {
             body: Body::Venus,
             eye: Eye::Visitor,
             theme: Theme::default(),
-            optics_view: OpticsView::default(),
             zoom: 1.0,
             window: (1280.0, 800.0),
             is_maximized: false,

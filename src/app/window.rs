@@ -78,7 +78,6 @@ impl DesktopWindow {
         choices.eye = choices.eye.or(Some(settings.eye));
         let mut state = State::open(start.clock, start.scales, sites, chosen, choices);
         state.theme = settings.theme;
-        state.optics_view = settings.optics_view;
 
         let ctx = &cc.egui_ctx;
         theme::install_fonts(ctx);
@@ -247,7 +246,6 @@ impl DesktopWindow {
             body: self.state.body(),
             eye: self.state.eye(),
             theme: self.state.theme,
-            optics_view: self.state.optics_view,
             zoom,
             window,
             is_maximized,

@@ -28,6 +28,7 @@ impl State {
         self.motion = Motion::Still;
         self.site = index.min(self.sites.len().saturating_sub(1));
         self.spot = 0;
+        self.optics_view = self.view_of_kit();
         self.show_night(self.date, Goal::Best(self.half));
     }
 

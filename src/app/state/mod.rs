@@ -9,7 +9,7 @@ use super::planned::Planned;
 use super::sites::Sites;
 use crate::light::Eye;
 use crate::measure::{DateOutOfRange, Moment, TimeScales, Ut1};
-use crate::place::{Site, Spot};
+use crate::place::{Instrument, Orientation, Site, Spot};
 use crate::plan::{Half, NightError, Window};
 use crate::sky::{Body, Ephemeris};
 use chrono::{DateTime, NaiveDate, NaiveDateTime, Utc};
@@ -102,6 +102,7 @@ impl State {
             theme: Theme::default(),
             clock,
         };
+        state.optics_view = state.view_of_kit();
         match choices.date {
             Some(date) => {
                 state.show_night(date, Goal::Best(Half::Dusk));
@@ -111,6 +112,19 @@ impl State {
             None => state.show_coming(),
         }
         state
+    }
+
+    /// The way round in which the first telescope of the site's kit shows the sky; erect where
+    /// there is none.
+    fn view_of_kit(&self) -> OpticsView {
+        let is_telescope =
+            |instrument: &&Instrument| matches!(instrument, Instrument::Telescope { .. });
+        let first = self.site().kit.iter().find(is_telescope);
+        match first.map(Instrument::orientation) {
+            Some(Orientation::Inverted) => OpticsView::Inverted,
+            Some(Orientation::Mirrored) => OpticsView::Mirrored,
+            Some(Orientation::Erect) | None => OpticsView::Erect,
+        }
     }
 
     /// The site.
