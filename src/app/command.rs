@@ -3,6 +3,7 @@
 use super::palette::Theme;
 use crate::light::Eye;
 use crate::measure::Moment;
+use crate::place::Haze;
 use crate::plan::Half;
 use crate::sky::Body;
 use chrono::NaiveDate;
@@ -40,6 +41,8 @@ pub enum Command {
     ChooseSite(usize),
     /// Chooses a spot of the site by its place in the site's list.
     ChooseSpot(usize),
+    /// Chooses how hazy the air is; `None`: as the site file says.
+    ChooseHaze(Option<Haze>),
     /// Chooses how the optics show the disc.
     ChooseOpticsView(OpticsView),
     /// Colours the window.
@@ -157,6 +160,11 @@ impl Command {
             Self::ChooseEye(Eye::Visitor) => "eye-visitor",
             Self::ChooseEye(Eye::Keen) => "eye-keen",
             Self::ChooseEye(Eye::Optics) => "eye-optics",
+            Self::ChooseHaze(None) => "air-as-stated",
+            Self::ChooseHaze(Some(Haze::VeryClear)) => "air-very-clear",
+            Self::ChooseHaze(Some(Haze::Clear)) => "air-clear",
+            Self::ChooseHaze(Some(Haze::Hazy)) => "air-hazy",
+            Self::ChooseHaze(Some(Haze::Murky)) => "air-murky",
             Self::NewSite => "new-site",
             Self::FindSiteFile => "find-site-file",
             Self::OpenSiteFile(_) => "open-site-file",

@@ -263,7 +263,7 @@ impl DesktopWindow {
     fn status_line(&self, ui: &mut Ui, look: &Look) {
         let (font, colour) = (look.font(look.sizes.least), look.colours.lesser);
         ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-            let air = self.words.air(self.state.site());
+            let air = self.words.air(self.state.site_in_air());
             figure(ui, font.clone(), colour, &air);
             if self.is_counted_from_ut1() {
                 figure(ui, font.clone(), colour, &self.words.text("clock-is-ut1"));

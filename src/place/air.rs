@@ -46,6 +46,11 @@ pub enum Haze {
     Murky,
 }
 
+impl Haze {
+    /// All of them, from clear to thick.
+    pub const ALL: [Self; 4] = [Self::VeryClear, Self::Clear, Self::Hazy, Self::Murky];
+}
+
 /// What each part of the air takes at the zenith in the V band, magnitudes.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Extinction {

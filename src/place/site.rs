@@ -1,7 +1,9 @@
 //! A site and its spots.
 
 use super::obstacle::PlanPoint;
-use super::{Extinction, Instrument, Obstacle, SiteAir, SiteEyes, SiteSky, Skyline, SkylinePoint};
+use super::{
+    Extinction, Haze, Instrument, Obstacle, SiteAir, SiteEyes, SiteSky, Skyline, SkylinePoint,
+};
 use super::{limits, measured, silhouette, zone};
 use crate::measure::Angle;
 use crate::sky::Observer;
@@ -164,6 +166,15 @@ impl Site {
             elevation_m: self.elevation_m,
             air: self.air.at_elevation(self.elevation_m),
         }
+    }
+
+    /// The same site with its haze in a word, in place of what its file says of the extinction.
+    #[must_use]
+    pub fn with_haze(&self, haze: Haze) -> Self {
+        let mut site = self.clone();
+        site.air.extinction_mag = None;
+        site.air.haze = Some(haze);
+        site
     }
 
     /// The civil zone.

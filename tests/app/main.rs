@@ -1,6 +1,7 @@
 //! The real window, driven without a display by what its controls are called.
 #![allow(clippy::unwrap_used)]
 
+mod air;
 mod cautions;
 mod desk;
 mod eyes;

@@ -42,6 +42,16 @@ eye-keen-hint = A practised eye that knows exactly where to look
 eye-optics = optics
 eye-optics-hint = A visitor at the first instrument of the site’s kit, at its lowest power
 
+# The air
+in-air = in
+air-picker = Air: { $air }
+air-as-stated = the site’s air
+air-very-clear = very clear air
+air-clear = clear air
+air-hazy = hazy air
+air-murky = murky air
+air-line = { $word }: { $extinction } mag
+
 # The moment
 back-ten-minutes = Ten minutes back
 back-one-minute = One minute back

@@ -1,4 +1,4 @@
-//! The row that chooses what is shown: site and spot, date, half, body, eye.
+//! The row that chooses what is shown: site and spot, date, half, body, eye, air.
 
 mod date;
 
@@ -7,9 +7,10 @@ use super::palette::Look;
 use super::state::State;
 use super::widgets::{choice, command_button, figure, name_it, text};
 use crate::light::Eye;
+use crate::place::Haze;
 use crate::plan::Half;
 use crate::sky::Body;
-use crate::words::Words;
+use crate::words::{Words, decimal};
 use eframe::egui::containers::menu::MenuButton;
 use eframe::egui::{Button, Role, ScrollArea, Stroke, Ui};
 
@@ -35,6 +36,7 @@ pub fn picker_row(ui: &mut Ui, look: &Look, words: &Words, state: &State, comman
         }
         ui.add_space(4.0);
         eye_picker(ui, look, words, state, commands);
+        air_picker(ui, look, words, state, commands);
     });
 }
 
@@ -63,6 +65,39 @@ fn eye_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: 
         &button,
         Role::Button,
         &words.text_with::<&str>("eye-picker", &[("eye", &shown)]),
+    );
+}
+
+/// How hazy the air is: a menu with the extinction that each word stands for at this site.
+fn air_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
+    let name = |haze| words.text(Command::ChooseHaze(haze).wording().unwrap_or_default());
+    let shown = name(state.haze());
+    let font = look.font(look.sizes.label);
+    figure(ui, font, look.colours.lesser, &words.text("in-air"));
+    let (button, _) = MenuButton::new(format!("{shown} ▾")).ui(ui, |ui| {
+        ui.set_min_width(220.0);
+        ui.spacing_mut().button_padding.x = 8.0;
+        let words_of_haze = Haze::ALL.into_iter().map(Some);
+        for haze in std::iter::once(None).chain(words_of_haze) {
+            let site = haze.map(|haze| state.site().with_haze(haze));
+            let extinction = site.as_ref().unwrap_or_else(|| state.site()).extinction();
+            let line = words.text_with::<&str>(
+                "air-line",
+                &[
+                    ("word", &name(haze)),
+                    ("extinction", &decimal(extinction.total_mag(), 2)),
+                ],
+            );
+            if ui.selectable_label(haze == state.haze(), line).clicked() {
+                commands.push(Command::ChooseHaze(haze));
+                ui.close();
+            }
+        }
+    });
+    name_it(
+        &button,
+        Role::Button,
+        &words.text_with::<&str>("air-picker", &[("air", &shown)]),
     );
 }
 

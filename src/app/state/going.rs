@@ -5,6 +5,7 @@ use super::super::planned::Planned;
 use super::{Motion, State};
 use crate::app::planned::Standpoint;
 use crate::measure::{Moment, civil};
+use crate::place::Haze;
 use crate::plan::{self, Half, NightError};
 use chrono::{Days, DurationRound, NaiveDate, NaiveDateTime, TimeDelta};
 
@@ -28,8 +29,14 @@ impl State {
         self.motion = Motion::Still;
         self.site = index.min(self.sites.len().saturating_sub(1));
         self.spot = 0;
+        self.choose_haze(None);
         self.optics_view = self.view_of_kit();
         self.show_night(self.date, Goal::Best(self.half));
+    }
+
+    pub(super) fn choose_haze(&mut self, haze: Option<Haze>) {
+        self.haze = haze;
+        self.site_in_haze = haze.map(|haze| self.site().with_haze(haze));
     }
 
     pub(super) fn step_minutes(&mut self, minutes: i32) {
@@ -96,7 +103,7 @@ impl State {
     }
 
     fn coming(&self, date: NaiveDate, now: Moment) -> Result<Option<plan::Coming>, NightError> {
-        let standpoint = Standpoint::new(self.site(), self.spot())?;
+        let standpoint = Standpoint::new(self.site_in_air(), self.spot())?;
         let request = plan::NightRequest {
             bodies: &[self.body],
             eyes: &[self.eye],
@@ -114,7 +121,7 @@ impl State {
 
     fn plan(&mut self, date: NaiveDate) -> Result<Planned, NightError> {
         self.plan_count += 1;
-        let standpoint = Standpoint::new(self.site(), self.spot())?;
+        let standpoint = Standpoint::new(self.site_in_air(), self.spot())?;
         standpoint.plan(&self.ephemeris, (date, self.scales), self.plan_count)
     }
 

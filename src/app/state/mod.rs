@@ -9,7 +9,7 @@ use super::planned::Planned;
 use super::sites::Sites;
 use crate::light::Eye;
 use crate::measure::{DateOutOfRange, Moment, TimeScales, Ut1};
-use crate::place::{Instrument, Orientation, Site, Spot};
+use crate::place::{Haze, Instrument, Orientation, Site, Spot};
 use crate::plan::{Half, NightError, Window};
 use crate::sky::{Body, Ephemeris};
 use chrono::{DateTime, NaiveDate, NaiveDateTime, Utc};
@@ -56,6 +56,9 @@ pub struct State {
     half: Half,
     body: Body,
     eye: Eye,
+    haze: Option<Haze>,
+    /// The site in the chosen haze, where one is chosen.
+    site_in_haze: Option<Site>,
     moment: Moment,
     /// The civil time wanted, on the site's clock: that of the moment wherever the night could
     /// be planned, and what was asked for where it could not.
@@ -98,6 +101,8 @@ impl State {
             plan_count: 0,
             motion: Motion::Still,
             speed: Speed::default(),
+            haze: None,
+            site_in_haze: None,
             optics_view: OpticsView::default(),
             theme: Theme::default(),
             clock,
@@ -160,6 +165,14 @@ impl State {
     /// The chosen body.
     pub fn body(&self) -> Body {
         self.body
+    }
+    /// The site in the air that the night is planned for: the chosen haze, or the file's own.
+    pub fn site_in_air(&self) -> &Site {
+        self.site_in_haze.as_ref().unwrap_or_else(|| self.site())
+    }
+    /// The chosen haze; `None`: as the site file says.
+    pub fn haze(&self) -> Option<Haze> {
+        self.haze
     }
     /// Whose eye.
     pub fn eye(&self) -> Eye {
@@ -235,6 +248,10 @@ impl State {
             Command::ChooseSite(index) => self.choose_site(index),
             Command::ChooseSpot(index) => {
                 self.spot = index;
+                self.show_night(self.date, Goal::Local(self.half, self.wanted));
+            }
+            Command::ChooseHaze(haze) => {
+                self.choose_haze(haze);
                 self.show_night(self.date, Goal::Local(self.half, self.wanted));
             }
             Command::ChooseOpticsView(view) => self.optics_view = view,
