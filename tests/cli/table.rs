@@ -180,6 +180,19 @@ fn tables_that_are_none() {
 }
 
 #[test]
+fn a_row_without_end_is_refused_and_not_read_into_memory() {
+    let folder = tempfile::tempdir().expect("a folder");
+    let endless = "0".repeat(3_000_000);
+    let open_quote = format!("\"{}", format!("{ROW}\n").repeat(60_000));
+    for (name, rows) in [("endless.csv", endless), ("quote.csv", open_quote)] {
+        let path = folder.path().join(name);
+        std::fs::write(&path, format!("{HEADER}\n{rows}")).expect("written");
+        let path = path.to_str().expect("a plain path");
+        run(&["positions", "--table", path]).refused(&[name, "longer than 1048576 bytes"]);
+    }
+}
+
+#[test]
 fn a_reader_that_has_had_enough_is_no_failure() {
     let home = tempfile::tempdir().expect("a folder");
     let file = home.path().join("many.csv");

@@ -1,5 +1,6 @@
 //! `dimmet positions`: bodies at one instant from one place, or a table of such rows.
 
+mod bounded;
 mod columns;
 mod row;
 mod seen;

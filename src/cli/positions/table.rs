@@ -1,6 +1,7 @@
 //! A table of positions: read, worked out and written row by row, in order, in the memory of one
 //! row. The rows before a bad one have been written when it is refused.
 
+use super::bounded::{Bounded, RowMark};
 use super::row::{Row, observer};
 use super::seen::Skies;
 use super::spans::Spans;
@@ -35,9 +36,10 @@ pub(super) fn run(
         "-" => ("stdin", Box::new(&mut *around.input)),
         _ => (file, Box::new(open(words, file)?)),
     };
+    let row_mark = RowMark::default();
     let mut reader = csv::ReaderBuilder::new()
         .buffer_capacity(64 * 1024)
-        .from_reader(input);
+        .from_reader(Bounded::new(input, row_mark.clone()));
     let header = reader
         .byte_headers()
         .map_err(|error| unreadable(words, name, &error))?;
@@ -57,6 +59,7 @@ pub(super) fn run(
             Ok(true) => {}
             Err(error) => break Err(unreadable(words, name, &error)),
         }
+        row_mark.row();
         match table.row(&record) {
             Ok(row) => writer.row(field(&record, table.columns.id), &row)?,
             Err(fault) => break Err(fault),
