@@ -14,6 +14,8 @@ pub enum Absence {
     SunStaysUp,
     /// It is below the horizon all the time.
     Down,
+    /// It is above the horizon only while the Sun is.
+    UpWithTheSun,
     /// It is up, but never clear of the skyline.
     Blocked,
     /// It is clear of the skyline only while the sky is too bright.
@@ -32,6 +34,10 @@ impl BodyNight {
             .iter()
             .map(|at| (*at, true))
             .chain(self.set.iter().map(|at| (*at, false)));
+        let (dark_from, dark_to) = match half {
+            Half::Dusk => (night.sun.set.unwrap_or(from), to),
+            Half::Dawn => (from, night.sun.rise.unwrap_or(to)),
+        };
         let clear = self
             .skyline_events
             .iter()
@@ -41,8 +47,10 @@ impl BodyNight {
             Absence::NotForEyes
         } else if sun_stays_up {
             Absence::SunStaysUp
-        } else if !holds_within(self.is_up_at_start, up, from, to) {
+        } else if !holds_within(self.is_up_at_start, up.clone(), from, to) {
             Absence::Down
+        } else if !holds_within(self.is_up_at_start, up, dark_from, dark_to) {
+            Absence::UpWithTheSun
         } else if !holds_within(self.is_clear_at_start, clear, from, to) {
             Absence::Blocked
         } else {

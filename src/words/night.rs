@@ -109,6 +109,7 @@ impl Words {
             Absence::NotForEyes => "half-night-not-for-eyes",
             Absence::SunStaysUp => "half-night-sun-up",
             Absence::Down => "half-night-down",
+            Absence::UpWithTheSun => "half-night-up-with-sun",
             Absence::Blocked => "half-night-blocked",
             Absence::TooBright => "half-night-too-bright",
         };

@@ -6,7 +6,7 @@ use chrono_tz::Tz;
 use dimmet::light::Eye;
 use dimmet::measure::{Angle, Moment, TimeScales};
 use dimmet::place::{Skyline, demo_site};
-use dimmet::plan::{Cause, Half, Night, NightError, NightRequest, Sight};
+use dimmet::plan::{Absence, Cause, Half, Night, NightError, NightRequest, Sight};
 use dimmet::sky::{Air, Body, Ephemeris, Observer, refraction};
 
 fn observer(latitude_deg: f64, longitude_deg: f64, elevation_m: f64) -> Observer {
@@ -314,5 +314,21 @@ fn duller_eyes_see_for_a_shorter_time() {
     assert!(
         dull > 60.0 && dull < usual - 5.0,
         "{dull} and {usual} minutes"
+    );
+}
+
+#[test]
+fn a_body_that_sets_before_the_sun_is_up_with_the_sun() {
+    // Six weeks after its inferior conjunction of 24 October 2026 Venus leads the Sun.
+    let night = night(
+        &observer(51.05, -3.42, 96.0),
+        Tz::Europe__London,
+        (2026, 12, 4),
+    );
+    let venus = night.body(Body::Venus).expect("asked for");
+    assert!(venus.set[0] < night.sun.set.expect("the Sun sets"));
+    assert_eq!(
+        venus.absence(&night, Eye::Visitor, Half::Dusk),
+        Absence::UpWithTheSun
     );
 }

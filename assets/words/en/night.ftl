@@ -35,6 +35,7 @@ half-night-window-again = It is plain again from { $start } until { $end }, best
 # No window, and why.
 half-night-sun-up = The Sun does not set tonight, so the sky stays too bright for { $body }.
 half-night-down = { $body } is below the horizon all through { $half }.
+half-night-up-with-sun = { $body } is up only while the Sun is too.
 half-night-blocked = { $body } stays behind { $obstacle } all through { $half }: another spot may do better.
 half-night-too-bright = { $body } is clear of the skyline only while the sky is too bright for it.
 half-night-not-for-eyes = { $body } is too faint for the unaided eye.
