@@ -1,7 +1,8 @@
 //! Worked examples of Meeus, *Astronomical Algorithms*, 2nd edition.
 //!
 //! The book works in the FK5 with the IAU 1976 precession and the IAU 1980 nutation; that and
-//! its shorter theories, not the printed digits, set most tolerances here.
+//! its shorter theories, not the printed digits, set most tolerances here. The printed values are
+//! quoted from memory.
 
 use crate::common::assert_within;
 use dimmet::measure::{Angle, Moment, Tt, Ut1, Vector};

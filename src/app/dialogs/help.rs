@@ -60,6 +60,14 @@ pub fn show(ui: &mut Ui, look: &Look, words: &Words) {
             figure(ui, look.bold(size), colours.text, &words.text("zoom-keys"));
             figure(ui, look.font(size), colours.text, &words.text("zoom"));
             ui.end_row();
+            for (keys, what) in [
+                ("turn-view-keys", "turn-view"),
+                ("widen-view-keys", "widen-view"),
+            ] {
+                figure(ui, look.bold(size), colours.text, &words.text(keys));
+                figure(ui, look.font(size), colours.text, &words.text(what));
+                ui.end_row();
+            }
         });
     ui.add_space(look.room.inside);
     let notice = crate::place::zone::BORDERS_NOTICE;

@@ -25,7 +25,10 @@ use super::scene::Scene;
 use crate::light::Eye;
 use crate::plan::{AppearingRequest, Half, Sighting, appearing};
 use crate::sky::Body;
-use eframe::egui::{Galley, Painter, Pos2, Rect, Response, Ui, Vec2, vec2};
+use eframe::egui::{
+    ColorImage, Galley, Painter, Pos2, Rect, Response, TextureHandle, TextureId, TextureOptions,
+    Ui, Vec2, vec2,
+};
 use model::Tracks;
 use std::sync::Arc;
 
@@ -131,6 +134,37 @@ impl<K: PartialEq, T> Kept<K, T> {
                 let value = Arc::new(make());
                 self.0 = Some((key, value.clone()));
                 value
+            }
+        }
+    }
+}
+
+/// A texture painted for a key, and again only when the key changes.
+struct KeptTexture<K>(Option<(K, TextureHandle)>);
+
+impl<K> Default for KeptTexture<K> {
+    fn default() -> Self {
+        Self(None)
+    }
+}
+
+impl<K: PartialEq> KeptTexture<K> {
+    fn get(&mut self, ui: &Ui, key: K, image: impl FnOnce() -> ColorImage) -> TextureId {
+        match &mut self.0 {
+            Some((known, texture)) => {
+                if *known != key {
+                    *known = key;
+                    texture.set(image(), TextureOptions::LINEAR);
+                }
+                texture.id()
+            }
+            None => {
+                let texture = ui
+                    .ctx()
+                    .load_texture("sky", image(), TextureOptions::LINEAR);
+                let id = texture.id();
+                self.0 = Some((key, texture));
+                id
             }
         }
     }

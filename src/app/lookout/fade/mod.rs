@@ -8,7 +8,7 @@ mod paint;
 use super::horizon::sky::{self, Picture};
 use super::model::Tracks;
 use super::says::Says;
-use super::{Kept, SpanKey};
+use super::{Kept, KeptTexture, SpanKey};
 use crate::app::command::{Command, Commands};
 use crate::app::palette::Theme;
 use crate::app::scene::Scene;
@@ -17,7 +17,7 @@ use crate::sky::Body;
 use eframe::egui::accesskit::{Action, ActionData};
 use eframe::egui::{
     Color32, ColorImage, CursorIcon, EventFilter, Response, Role, Sense, Stroke, StrokeKind,
-    TextureHandle, TextureId, TextureOptions, Ui, WidgetInfo, lerp,
+    TextureId, Ui, WidgetInfo, lerp,
 };
 use layout::Layout;
 use model::Model;
@@ -29,7 +29,7 @@ const SKY_SIZE: [usize; 2] = [96, 12];
 #[derive(Default)]
 pub struct Fade {
     model: Kept<SpanKey, Model>,
-    sky: Option<((SpanKey, Theme), TextureHandle)>,
+    sky: KeptTexture<(SpanKey, Theme)>,
 }
 
 impl Fade {
@@ -86,23 +86,7 @@ impl Fade {
     fn sky(&mut self, ui: &Ui, scene: &Scene<'_>, tracks: &Tracks, model: &Model) -> TextureId {
         let key = (SpanKey::of(scene), scene.look.theme);
         let image = || band_image(scene, tracks, model);
-        match &mut self.sky {
-            Some((known, texture)) => {
-                if *known != key {
-                    *known = key;
-                    texture.set(image(), TextureOptions::LINEAR);
-                }
-                texture.id()
-            }
-            None => {
-                let texture = ui
-                    .ctx()
-                    .load_texture("fade", image(), TextureOptions::LINEAR);
-                let id = texture.id();
-                self.sky = Some((key, texture));
-                id
-            }
-        }
+        self.sky.get(ui, key, image)
     }
 }
 

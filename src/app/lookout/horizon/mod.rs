@@ -11,7 +11,7 @@ pub mod sky;
 
 use super::model::{Tracks, ticks};
 use super::says::Says;
-use super::{Kept, SpanKey};
+use super::{Kept, KeptTexture, SpanKey};
 use crate::app::command::{Command, Commands};
 use crate::app::palette::Theme;
 use crate::app::scene::Scene;
@@ -21,7 +21,7 @@ use crate::sky::Body;
 use camera::{Camera, Sector, Turn};
 use eframe::egui::{
     CursorIcon, EventFilter, Key, Modifiers, Rect, Response, Role, Sense, Stroke, StrokeKind,
-    TextureHandle, TextureId, TextureOptions, Ui, WidgetInfo, pos2,
+    TextureId, Ui, WidgetInfo, pos2,
 };
 use layout::Layout;
 use model::Model;
@@ -38,7 +38,7 @@ pub struct Horizon {
     turned_for: Option<(Half, Body)>,
     sector: Kept<SpanKey, (Sector, Vec<super::model::Tick>)>,
     outline: Kept<u64, Vec<(Angle, Angle)>>,
-    sky: Option<(SkyKey, TextureHandle)>,
+    sky: KeptTexture<SkyKey>,
 }
 
 /// What the sky's picture depends on.
@@ -174,23 +174,7 @@ impl Horizon {
             theme: scene.look.theme,
         };
         let image = || Picture::new(&sky::glow(scene, scene.moment), &scene.look).image(&camera);
-        match &mut self.sky {
-            Some((known, texture)) => {
-                if *known != key {
-                    *known = key;
-                    texture.set(image(), TextureOptions::LINEAR);
-                }
-                texture.id()
-            }
-            None => {
-                let texture = ui
-                    .ctx()
-                    .load_texture("sky", image(), TextureOptions::LINEAR);
-                let id = texture.id();
-                self.sky = Some((key, texture));
-                id
-            }
-        }
+        self.sky.get(ui, key, image)
     }
 }
 
