@@ -87,7 +87,7 @@ fn spots_within(site: &Site) -> Option<Flaw> {
         let around = site
             .obstacles
             .iter()
-            .find(|obstacle| obstacle.surrounds(spot))?;
+            .find(|obstacle| obstacle.surrounds(spot.plan_point()))?;
         Some(Flaw {
             sentence: format!(
                 "the spot {:?} stands inside the obstacle {:?}: move one of them",
