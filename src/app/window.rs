@@ -78,6 +78,7 @@ impl DesktopWindow {
         let mut choices = start.choices;
         choices.body = choices.body.or(Some(settings.body));
         choices.eye = choices.eye.or(Some(settings.eye));
+        choices.stature = choices.stature.or(Some(settings.stature));
         let mut state = State::open(start.clock, start.scales, sites, chosen, choices);
         state.theme = settings.theme;
         state.area = settings.area;
@@ -299,6 +300,7 @@ impl DesktopWindow {
             spot: Some(self.state.spot().name.clone()),
             body: self.state.body(),
             eye: self.state.eye(),
+            stature: self.state.stature(),
             theme: self.state.theme,
             area: self.state.area,
             zoom,
