@@ -19,3 +19,4 @@ measured-nothing = Nothing is measured from here yet: double-click in the drawin
 measured-nowhere = Nothing was measured from here: the skyline is that of the obstacles alone.
 measured-elsewhere = The skyline measured from the mark does not hold here: none of it is marked as far.
 measured-far-only = Measured from the mark: only the far parts of it hold here.
+measured-point = Chosen point: { $azimuth }, { $altitude }. Ctrl and arrows move it by 0.1°, Delete takes it away.

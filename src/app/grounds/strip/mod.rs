@@ -68,7 +68,7 @@ impl Strip {
             let said = reading::reading(desk, scene, &ways, &response, &frame);
             let line = text(ui, look, look.sizes.label, look.colours.text, &said);
             line.widget_info(|| WidgetInfo::labeled(Role::Label, true, &said));
-            let measured = reading::measured(desk);
+            let measured = reading::measured(desk, &self.handles);
             text(ui, look, look.sizes.label, look.colours.lesser, &measured);
         });
     }

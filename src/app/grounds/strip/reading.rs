@@ -3,7 +3,7 @@
 use super::frame::Frame;
 use super::ways::{self, Ways};
 use crate::app::grounds::Desk;
-use crate::app::measured::{Owned, Place};
+use crate::app::measured::{Handles, Owned, Place};
 use crate::app::scene::Scene;
 use crate::measure::Angle;
 use eframe::egui::Response;
@@ -65,10 +65,22 @@ fn at(
     )
 }
 
-/// Which measured skyline holds at the chosen spot.
-pub fn measured(desk: &Desk<'_>) -> String {
+/// Which measured skyline holds at the chosen spot; while one of its points is chosen, that point.
+pub fn measured(desk: &Desk<'_>, handles: &Handles) -> String {
     let site = desk.state.site();
-    let id = match Owned::at(site, desk.state.spot_index()) {
+    let owned = Owned::at(site, desk.state.spot_index());
+    if let Some(point) = owned.and_then(|owned| handles.chosen(&owned)) {
+        let azimuth = Angle::from_degrees(point.azimuth_deg);
+        let altitude = Angle::from_degrees(point.altitude_deg);
+        return desk.words.text_with(
+            "measured-point",
+            &[
+                ("azimuth", desk.words.azimuth(azimuth)),
+                ("altitude", desk.words.degrees(altitude, 1)),
+            ],
+        );
+    }
+    let id = match owned {
         Some(owned) if owned.points().is_empty() => "measured-nothing",
         Some(_) => "measured-here",
         None if site.skyline.is_empty() => "measured-nowhere",
