@@ -2,13 +2,17 @@
 
 mod absence;
 mod appearing;
+mod bright;
 mod coming;
 mod daylight;
 mod interval;
 mod lit;
 mod neighbours;
 mod night;
+mod night_sky;
 mod optics;
+mod passage;
+mod path;
 mod sight;
 mod survey;
 mod track;
@@ -23,4 +27,5 @@ pub use night::{
     Best, BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, OpticsTimes, SkylineEvent,
     Stray, SunTimes, Window,
 };
+pub use night_sky::NightSky;
 pub use sight::{Lamps, Luck, Sight, target};
