@@ -20,3 +20,38 @@ measured-nowhere = Nothing was measured from here: the skyline is that of the ob
 measured-elsewhere = The skyline measured from the mark does not hold here: none of it is marked as far.
 measured-far-only = Measured from the mark: only the far parts of it hold here.
 measured-point = Chosen point: { $azimuth }, { $altitude }. Ctrl and arrows move it by 0.1°, Delete takes it away.
+
+# The standing map
+standing-title = Where to stand
+standing-map = Map
+standing-place = Stand where I click
+standing-nights = { $nights ->
+    [1] This night
+   *[other] { $nights } nights
+}
+standing-sum = All together
+standing-least = The worst of them
+standing-progress = How far the standing map has come
+standing-cancel = Cancel
+standing-stopped = Stopped: the map is as far as it came.
+standing-again = Go on
+standing-legend = Legend: from { $least } min in night blue to { $most } min in amber
+standing-minutes = { $minutes } min
+standing-whereabouts = { $east }, { $north }
+metres-east = { $metres } m east
+metres-west = { $metres } m west
+metres-north = { $metres } m north
+metres-south = { $metres } m south
+standing-times = { $start } to { $end }, { $minutes } min: { $why }
+standing-times-open = { $start } to { $end }, { $minutes } min
+standing-not-seen = not seen from there
+standing-best = { $number }  { $where }: { $times }
+standing-stand-here = Stand here
+standing-stand-here-named = Stand at best place { $number }
+standing-cost = At { $spot }: { $minutes } min, { $fewer } fewer than at the best place.
+standing-gain = Ten minutes more: { $metres } m to the { $direction }.
+standing-no-gain = Nowhere on the grounds gives ten minutes more.
+standing-nowhere = Nobody can stand anywhere on these grounds: everything is built over or left out.
+standing-pointed = There, { $where }: { $times }
+standing-point-at = Point at the map to read a square metre.
+new-spot-name = spot { $number }
