@@ -2,8 +2,8 @@
 
 use super::bright::EyeSky;
 use super::interval::Interval;
-use super::night::{BodyNight, Cause, Edge, Half, Night, NightError, NightRequest, SkylineEvent};
-use super::passage::Passage;
+use super::night::{BodyNight, Cause, Edge, Night, NightError, NightRequest, SkylineEvent};
+use super::passage::{Passage, Way};
 use super::path::Path;
 use super::sight::Sight;
 use super::survey;
@@ -145,19 +145,6 @@ impl Night {
         Interval {
             start: edge(self.start),
             end: edge(self.end),
-        }
-    }
-
-    /// One half of it, as an interval.
-    pub(super) fn half_interval(&self, half: Half) -> Interval {
-        let (from, to) = self.half(half);
-        let edge = |moment| Edge {
-            moment,
-            cause: Cause::Half,
-        };
-        Interval {
-            start: edge(from),
-            end: edge(to),
         }
     }
 }

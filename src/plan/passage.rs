@@ -1,12 +1,21 @@
 //! Where a body goes behind a skyline and comes out of it.
 
-use super::path::Path;
+use super::path::Seen;
 use crate::measure::{Angle, search};
 use crate::place::Skyline;
 
+/// A body's way across the sky for a time.
+pub(super) trait Way {
+    /// Instants, ascending, from the first to the last: at most 300 s apart, so that between two
+    /// of them altitude and azimuth turn at most once. Seconds after the night's start.
+    fn times_s(&self) -> impl Iterator<Item = f64>;
+    /// Where the body is seen at any instant between the first and the last.
+    fn at(&self, at_s: f64) -> Seen;
+}
+
 /// A body's way past one skyline, sampled closely enough that nothing of it is stepped over.
-pub(super) struct Passage<'a> {
-    path: &'a Path,
+pub(super) struct Passage<'a, W> {
+    way: &'a W,
     skyline: &'a Skyline,
     /// Seconds after the night's start, ascending.
     times_s: Vec<f64>,
@@ -22,11 +31,11 @@ const BESIDE_S: f64 = 0.5;
 /// goes out of it there without passing a break. In this time it moves by 5 arcmin.
 const OPENING_STEP_S: f64 = 20.0;
 
-impl<'a> Passage<'a> {
+impl<'a, W: Way> Passage<'a, W> {
     /// A body's samples, with those that the skyline needs beside them.
-    pub fn new(path: &'a Path, skyline: &'a Skyline) -> Self {
+    pub fn new(way: &'a W, skyline: &'a Skyline) -> Self {
         let mut passage = Self {
-            path,
+            way,
             skyline,
             times_s: Vec::new(),
             clearances: Vec::new(),
@@ -35,8 +44,8 @@ impl<'a> Passage<'a> {
         let lowest = Angle::from_degrees(-1.0);
         let reaches = |altitude: Angle| altitude < highest && altitude > lowest;
         let mut before = None;
-        for at_s in path.times_s() {
-            let seen = path.at(at_s);
+        for at_s in way.times_s() {
+            let seen = way.at(at_s);
             if let Some((before_s, azimuth, altitude)) = before
                 && (reaches(seen.altitude) || reaches(altitude))
             {
@@ -55,7 +64,7 @@ impl<'a> Passage<'a> {
 
     /// The body's clearance at any instant.
     pub fn clearance(&self, at_s: f64) -> Angle {
-        let seen = self.path.at(at_s);
+        let seen = self.way.at(at_s);
         self.skyline.clearance(seen.azimuth, seen.altitude)
     }
 
@@ -69,7 +78,7 @@ impl<'a> Passage<'a> {
                 let share = (edge - a).signed() / turned;
                 // One secant step from the straight-line guess leaves milliseconds.
                 let guess_s = a_s + share * (b_s - a_s);
-                let missed = (edge - self.path.at(guess_s).azimuth).signed();
+                let missed = (edge - self.way.at(guess_s).azimuth).signed();
                 guess_s + missed / turned * (b_s - a_s)
             })
             .collect();
@@ -95,7 +104,7 @@ impl<'a> Passage<'a> {
         if to_s - from_s <= 2.0 * BESIDE_S {
             return;
         }
-        let middle = self.path.at(0.5 * (from_s + to_s));
+        let middle = self.way.at(0.5 * (from_s + to_s));
         if self.skyline.openings(middle.azimuth).is_empty() {
             return;
         }

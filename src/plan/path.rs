@@ -1,5 +1,6 @@
 //! One body's way across a site's sky, kept so that any instant of it costs next to nothing.
 
+use super::passage::Way;
 use super::track::{Sample, Track};
 use crate::measure::{Angle, Vector};
 use crate::sky::{Air, refraction};
@@ -45,14 +46,14 @@ impl Path {
             air: track.watch.observer.air,
         }
     }
+}
 
-    /// The samples' times, seconds after the night's start.
-    pub fn times_s(&self) -> impl Iterator<Item = f64> + '_ {
+impl Way for Path {
+    fn times_s(&self) -> impl Iterator<Item = f64> {
         (0..self.directions.len()).map(|k| k as f64 * self.step_s)
     }
 
-    /// Where the body is seen, seconds after the night's start.
-    pub fn at(&self, at_s: f64) -> Seen {
+    fn at(&self, at_s: f64) -> Seen {
         let weights = Cubic::at(at_s / self.step_s, self.directions.len());
         let direction = weights.of(|k| self.directions[k]);
         let limb = if self.limbs.is_empty() {

@@ -5,7 +5,8 @@ use super::interval::{Interval, both, cut, holding};
 use super::lit;
 use super::night::{Best, Cause, Edge, EyeWindows, Half, SkylineEvent, Stray, Window};
 use super::night_sky::{BodySky, NightSky};
-use super::passage::Passage;
+use super::passage::{Passage, Way};
+use super::path::Path;
 use super::sight::Luck;
 use crate::light::{Cost, Margin};
 use crate::measure::{Angle, Moment, search};
@@ -15,7 +16,7 @@ use crate::place::Skyline;
 pub(super) struct Searched<'a> {
     pub night: &'a NightSky,
     pub body: &'a BodySky,
-    pub passage: &'a Passage<'a>,
+    pub passage: &'a Passage<'a, Path>,
     pub skyline: &'a Skyline,
 }
 
