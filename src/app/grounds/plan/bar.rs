@@ -9,6 +9,7 @@ use eframe::egui::{Role, Ui};
 impl Plan {
     /// Tools first, then what changes the view and takes changes back.
     pub(super) fn bar(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
+        ui.spacing_mut().item_spacing.y = BAR_GAP.y;
         ui.horizontal_wrapped(|ui| {
             ui.spacing_mut().item_spacing = BAR_GAP;
             for tool in Tool::ALL {
@@ -23,7 +24,9 @@ impl Plan {
                     self.take(tool);
                 }
             }
-            ui.add_space(6.0);
+        });
+        ui.horizontal_wrapped(|ui| {
+            ui.spacing_mut().item_spacing = BAR_GAP;
             for (command, is_possible) in [
                 (Command::Undo, desk.state.can_undo()),
                 (Command::Redo, desk.state.can_redo()),

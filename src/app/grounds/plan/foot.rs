@@ -127,6 +127,10 @@ impl Plan {
             (Takes::Pair | Takes::Line, []) => (self.drawn_from?, next?),
             _ => return None,
         };
+        let is_one = from.distance_m(to) < 0.005;
+        if is_one {
+            return None;
+        }
         let distance = decimal(from.distance_m(to), 2);
         let bearing = desk.words.azimuth(from.bearing(to));
         Some(desk.words.text_with::<&str>(

@@ -70,7 +70,11 @@ pub fn labels(
         };
         let beside = vec2(half.x + 5.0, 0.0);
         let below = vec2(0.0, half.y + 3.0);
-        let places = if is_inside {
+        let shows_trunk =
+            matches!(thing.figure, Figure::Crown { .. }) && half.y >= super::paint::TRUNK_FROM;
+        let places = if is_inside && shows_trunk {
+            vec![Align2::CENTER_TOP.anchor_size(middle + vec2(0.0, 4.0), size)]
+        } else if is_inside {
             vec![Align2::CENTER_CENTER.anchor_size(middle, size)]
         } else {
             vec![
@@ -85,11 +89,12 @@ pub fn labels(
                 && placed.iter().all(|label| !label.rect.intersects(*rect))
         });
         if let Some(rect) = free {
+            let is_ground = matches!(thing.figure, Figure::Excluded(_));
             placed.push(Label {
                 galley,
                 rect,
                 colour,
-                is_outside: !is_inside,
+                is_outside: !is_inside || is_ground,
             });
         }
     }

@@ -29,7 +29,9 @@ use crate::place::{PlanPoint, Site};
 use backdrop::Underlay;
 use camera::{Camera, View};
 use drag::Drag;
-use eframe::egui::{Painter, Pos2, Rect, Role, Sense, Stroke, StrokeKind, Ui, WidgetInfo, vec2};
+use eframe::egui::{
+    Painter, Pos2, Rect, Role, Sense, Stroke, StrokeKind, Ui, Vec2, WidgetInfo, vec2,
+};
 use model::{Figure, Model, Thing};
 use snap::{Snap, Snapped};
 use things::Extent;
@@ -38,8 +40,11 @@ pub use tools::Tool;
 
 /// What it keeps between frames.
 pub struct Plan {
-    /// The part shown; `None`: everything.
+    /// The part shown; `None`: everything, to be fitted anew.
     view: Option<View>,
+    /// The size for which everything was fitted, and the view that came of it: while that one is
+    /// shown, another size fits everything anew.
+    fitted: Option<(Vec2, View)>,
     /// The site that this was for: another begins anew.
     site: Option<(String, f64, f64)>,
     tool: Tool,
@@ -66,6 +71,7 @@ impl Default for Plan {
     fn default() -> Self {
         Self {
             view: None,
+            fitted: None,
             site: None,
             tool: Tool::Select,
             points: Vec::new(),
@@ -156,9 +162,18 @@ impl Plan {
 
     /// What is shown in a rectangle of the screen.
     fn camera(&mut self, site: &Site, rect: Rect) -> Camera {
-        let view = *self
-            .view
-            .get_or_insert_with(|| View::of_everything(&Extent::of(site), rect));
+        let is_for_another_size = self
+            .fitted
+            .is_some_and(|(size, view)| size != rect.size() && self.view == Some(view));
+        let view = match self.view {
+            Some(view) if !is_for_another_size => view,
+            _ => {
+                let view = View::of_everything(&Extent::of(site), rect);
+                self.fitted = Some((rect.size(), view));
+                view
+            }
+        };
+        self.view = Some(view);
         Camera { rect, view }
     }
 

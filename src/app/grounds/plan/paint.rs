@@ -10,6 +10,9 @@ use crate::app::palette::Look;
 use crate::place::PlanPoint;
 use eframe::egui::{Color32, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, vec2};
 
+/// A crown of this radius on the screen shows its trunk, points.
+pub const TRUNK_FROM: f32 = 24.0;
+
 /// The things, in the model's order, the selected one in amber.
 pub fn things(
     painter: &Painter,
@@ -84,7 +87,7 @@ fn figure(painter: &Painter, look: &Look, camera: Camera, thing: &Thing, rim: St
             } else {
                 painter.circle_stroke(centre, radius, rim);
             }
-            if radius > 8.0 {
+            if radius >= TRUNK_FROM {
                 let trunk = camera.points(*trunk_m).max(1.5);
                 painter.circle_filled(centre, trunk, colours.skyline_name.gamma_multiply(0.6));
             }
@@ -145,13 +148,16 @@ fn figure(painter: &Painter, look: &Look, camera: Camera, thing: &Thing, rim: St
     }
 }
 
-/// The names; those on the ground over a hem of its colour.
+/// The names, each over a hem of the colour that it stands on.
 pub fn labels(painter: &Painter, look: &Look, labels: &[Label]) {
     for label in labels {
-        if label.is_outside {
-            let hem = label.rect.expand2(vec2(2.0, 0.0));
-            painter.rect_filled(hem, 3.0, look.colours.card.gamma_multiply(0.75));
-        }
+        let ground = if label.is_outside {
+            look.colours.card.gamma_multiply(0.75)
+        } else {
+            look.colours.skyline
+        };
+        let hem = label.rect.expand2(vec2(2.0, 0.0));
+        painter.rect_filled(hem, 3.0, ground);
         painter.galley_with_override_text_color(label.rect.min, label.galley.clone(), label.colour);
     }
 }

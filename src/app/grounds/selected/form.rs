@@ -24,6 +24,19 @@ pub struct Field<'a> {
     pub label: &'a str,
     /// What it belongs to: another thing's field of the same name is another field.
     pub of: &'a str,
+    /// In a table the label stands once above; each field is still read with its point.
+    pub point: Option<usize>,
+}
+
+impl<'a> Field<'a> {
+    /// A field under its label.
+    pub const fn new(label: &'a str, of: &'a str) -> Self {
+        Self {
+            label,
+            of,
+            point: None,
+        }
+    }
 }
 
 impl Form {
@@ -123,24 +136,36 @@ impl Form {
         instead: &str,
     ) -> Option<(Id, String)> {
         let look = desk.look;
-        let id = Id::unique(("site field", field.label, field.of));
+        let id = Id::unique(("site field", field.label, field.of, field.point));
         ui.spacing_mut().item_spacing.y = 3.0;
-        let label = RichText::new(desk.words.text(field.label))
-            .font(look.font(look.sizes.label))
-            .color(look.colours.lesser);
-        let label = ui.label(label);
+        let name = desk.words.text(field.label);
         let mut text = match &self.writing {
             Some((writing, text)) if *writing == id => text.clone(),
             _ => shown.to_owned(),
         };
-        let response = ui
-            .add(
-                line(&mut text)
-                    .id(id)
-                    .hint_text(instead)
-                    .desired_width(f32::INFINITY),
-            )
-            .labelled_by(label.id);
+        let edit = line(&mut text)
+            .id(id)
+            .hint_text(instead)
+            .desired_width(f32::INFINITY);
+        let response = match field.point {
+            None => {
+                let label = RichText::new(name)
+                    .font(look.font(look.sizes.label))
+                    .color(look.colours.lesser);
+                let label = ui.label(label);
+                ui.add(edit).labelled_by(label.id)
+            }
+            Some(point) => {
+                let number = point.to_string();
+                let named = desk
+                    .words
+                    .text_with::<&str>("field-of-point", &[("field", &name), ("number", &number)]);
+                let response = ui.add(edit);
+                ui.ctx()
+                    .accesskit_node_builder(response.id, |node| node.set_label(named));
+                response
+            }
+        };
         let flaw = self.flaw.as_ref().filter(|(of, _)| *of == id);
         error_line(ui, look, flaw.map(|(_, flaw)| flaw.as_str()));
         if response.changed() {
@@ -152,8 +177,6 @@ impl Form {
         let is_mine = self.writing.as_ref().is_some_and(|(of, _)| *of == id);
         if is_mine {
             self.writing = None;
-        }
-        if flaw.is_some() {
             self.flaw = None;
         }
         let is_given_up = ui.input(|input| input.key_pressed(Key::Escape));

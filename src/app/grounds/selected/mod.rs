@@ -42,19 +42,16 @@ impl Selected {
                     site::show(ui, desk, &mut self.form, plan, commands);
                 }
                 Some(thing @ Selection::Spot(index)) => {
-                    self.place.show(ui, desk, &mut self.form, thing, commands);
                     spot::show(ui, desk, &mut self.form, index, commands);
+                    self.place.show(ui, desk, &mut self.form, thing, commands);
                 }
                 Some(thing @ Selection::Obstacle(index)) => {
-                    self.place.show(ui, desk, &mut self.form, thing, commands);
                     obstacle::show(ui, desk, &mut self.form, index, commands);
+                    self.place.show(ui, desk, &mut self.form, thing, commands);
                 }
                 Some(thing @ Selection::Exclusion(index)) => {
                     let of = format!("excluded {index}");
-                    let field = Field {
-                        label: "field-label",
-                        of: &of,
-                    };
+                    let field = Field::new("field-label", &of);
                     let label = thing.label(site).unwrap_or_default();
                     let change = |site: &mut Site, label: String| {
                         if let Some(area) = site.excluded.get_mut(index) {

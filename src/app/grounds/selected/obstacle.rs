@@ -28,10 +28,7 @@ pub fn show(ui: &mut Ui, desk: &Desk<'_>, form: &mut Form, index: usize, command
         return;
     };
     let of = format!("obstacle {index}");
-    let label = Field {
-        label: "field-label",
-        of: &of,
-    };
+    let label = Field::new("field-label", &of);
     let shown = obstacle.label();
     form.read(
         ui,
@@ -102,7 +99,7 @@ impl Fields<'_> {
         let Some(value) = measure_of(&mut shown, measure).copied() else {
             return;
         };
-        let (index, field) = (self.index, Field { label, of: self.of });
+        let (index, field) = (self.index, Field::new(label, self.of));
         self.form
             .number(ui, self.desk, self.commands, field, value, |site, value| {
                 if let Some(old) = at(site, index).and_then(|o| measure_of(o, measure)) {
@@ -117,7 +114,7 @@ impl Fields<'_> {
             return;
         };
         let instead = self.desk.words.text(instead);
-        let (index, field) = (self.index, Field { label, of: self.of });
+        let (index, field) = (self.index, Field::new(label, self.of));
         let desk = self.desk;
         self.form.optional(
             ui,
@@ -154,7 +151,7 @@ impl Fields<'_> {
         }
         let Some(leafless) = leafless else { return };
         let (form, commands) = (&mut *self.form, &mut *self.commands);
-        let field = |label| Field { label, of: self.of };
+        let field = |label| Field::new(label, self.of);
         row::<3>(ui, |column, ui| {
             let (label, shown) = match column {
                 0 => ("field-leafless-from", leafless.from),

@@ -4,15 +4,18 @@ use super::{Field, Form, exists, row};
 use crate::app::command::Commands;
 use crate::app::grounds::plan::things::Form as Stands;
 use crate::app::grounds::{Desk, Selection};
-use crate::app::widgets::{choice, text};
+use crate::app::widgets::{choice, figure, text};
 use crate::place::{PlanPoint, Site};
-use eframe::egui::{ScrollArea, Ui};
+use eframe::egui::{ScrollArea, Ui, vec2};
 
 /// How positions are shown.
 #[derive(Default)]
 pub struct Shown {
     from: From,
 }
+
+/// Room for a point's number, points of the screen.
+const NUMBER_WIDTH: f32 = 18.0;
 
 /// From where positions count.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -49,8 +52,7 @@ impl Shown {
                 (From::Mark, "from-mark"),
                 (From::Spot, "from-spot"),
             ] {
-                let name = desk.state.spot().name.as_str();
-                let name = desk.words.text_with::<&str>(id, &[("spot", name)]);
+                let name = desk.words.text(id);
                 if choice(ui, desk.look, self.from == from, &name).clicked() {
                     self.from = from;
                 }
@@ -58,17 +60,26 @@ impl Shown {
         });
         let points = thing.points(site);
         let is_one = thing.form(site) == Stands::Point;
+        if !is_one {
+            self.heads(ui, desk);
+        }
         let fields = |ui: &mut Ui, form: &mut Form, commands: &mut Commands| {
             for (index, at) in points.iter().enumerate() {
-                if !is_one {
-                    let number = (index + 1).to_string();
-                    let corner = desk
-                        .words
-                        .text_with::<&str>("corner-number", &[("number", &number)]);
-                    let look = desk.look;
-                    text(ui, look, look.sizes.least, look.colours.lesser, &corner);
+                if is_one {
+                    self.point(ui, desk, form, (thing, index, *at), commands);
+                    continue;
                 }
-                self.point(ui, desk, form, (thing, index, *at), commands);
+                ui.horizontal_top(|ui| {
+                    let number = (index + 1).to_string();
+                    let (size, colour) = (desk.look.sizes.label, desk.look.colours.lesser);
+                    ui.allocate_ui(vec2(NUMBER_WIDTH, ui.spacing().interact_size.y), |ui| {
+                        ui.set_min_width(NUMBER_WIDTH);
+                        figure(ui, desk.look.font(size), colour, &number);
+                    });
+                    ui.vertical(|ui| {
+                        self.point(ui, desk, form, (thing, index, *at), commands);
+                    });
+                });
             }
         };
         if points.len() > 4 {
@@ -81,6 +92,24 @@ impl Shown {
         }
     }
 
+    /// What the two columns of the points are.
+    fn heads(&self, ui: &mut Ui, desk: &Desk<'_>) {
+        let labels = match self.from {
+            From::EastNorth => ["field-east", "field-north"],
+            From::Mark | From::Spot => ["field-distance", "field-bearing"],
+        };
+        ui.horizontal(|ui| {
+            ui.add_space(NUMBER_WIDTH + ui.spacing().item_spacing.x);
+            ui.vertical(|ui| {
+                row::<2>(ui, |column, ui| {
+                    let look = desk.look;
+                    let label = desk.words.text(labels[column]);
+                    text(ui, look, look.sizes.label, look.colours.lesser, &label);
+                });
+            });
+        });
+    }
+
     fn point(
         &self,
         ui: &mut Ui,
@@ -89,7 +118,14 @@ impl Shown {
         (thing, index, at): (Selection, usize, PlanPoint),
         commands: &mut Commands,
     ) {
-        let of = format!("{thing:?} {index} {:?}", self.from);
+        let of = format!("{thing:?} {:?}", self.from);
+        let is_one = thing.form(desk.state.site()) == Stands::Point;
+        let point = (!is_one).then_some(index + 1);
+        let field = |label| Field {
+            label,
+            of: &of,
+            point,
+        };
         let origin = match self.from {
             From::EastNorth | From::Mark => PlanPoint::new(0.0, 0.0),
             From::Spot => desk.state.spot().plan_point(),
@@ -104,37 +140,25 @@ impl Shown {
         let (distance_m, bearing_deg) = (origin.distance_m(at), origin.bearing(at).degrees());
         row::<2>(ui, |column, ui| match (self.from, column) {
             (From::EastNorth, 0) => {
-                let field = Field {
-                    label: "field-east",
-                    of: &of,
-                };
+                let field = field("field-east");
                 form.number(ui, desk, commands, field, at.east_m, |site, east_m| {
                     put(site, PlanPoint::new(east_m, at.north_m));
                 });
             }
             (From::EastNorth, _) => {
-                let field = Field {
-                    label: "field-north",
-                    of: &of,
-                };
+                let field = field("field-north");
                 form.number(ui, desk, commands, field, at.north_m, |site, north_m| {
                     put(site, PlanPoint::new(at.east_m, north_m));
                 });
             }
             (_, 0) => {
-                let field = Field {
-                    label: "field-distance",
-                    of: &of,
-                };
+                let field = field("field-distance");
                 form.number(ui, desk, commands, field, distance_m, |site, to_m| {
                     put(site, away(origin, to_m, bearing_deg));
                 });
             }
             _ => {
-                let field = Field {
-                    label: "field-bearing",
-                    of: &of,
-                };
+                let field = field("field-bearing");
                 form.number(ui, desk, commands, field, bearing_deg, |site, to_deg| {
                     put(site, away(origin, distance_m, to_deg));
                 });

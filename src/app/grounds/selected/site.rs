@@ -13,7 +13,7 @@ use std::path::PathBuf;
 const OF: &str = "site";
 
 fn field(label: &str) -> Field<'_> {
-    Field { label, of: OF }
+    Field::new(label, OF)
 }
 
 pub fn show(
@@ -178,18 +178,12 @@ fn known_point(
     };
     row::<2>(ui, |column, ui| {
         if column == 0 {
-            let field = Field {
-                label: "field-east",
-                of,
-            };
+            let field = Field::new("field-east", of);
             form.number(ui, desk, commands, field, at.east_m, |site, east_m| {
                 put(site, &|point| point.at.east_m = east_m);
             });
         } else {
-            let field = Field {
-                label: "field-north",
-                of,
-            };
+            let field = Field::new("field-north", of);
             form.number(ui, desk, commands, field, at.north_m, |site, north_m| {
                 put(site, &|point| point.at.north_m = north_m);
             });

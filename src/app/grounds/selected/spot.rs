@@ -13,7 +13,7 @@ pub fn show(ui: &mut Ui, desk: &Desk<'_>, form: &mut Form, index: usize, command
         return;
     };
     let of = format!("spot {index}");
-    let field = |label| Field { label, of: &of };
+    let field = |label| Field::new(label, &of);
     form.read(
         ui,
         desk,
