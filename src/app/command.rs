@@ -68,6 +68,10 @@ pub enum Command {
     FindSiteFile,
     /// Reads a site file and chooses it.
     OpenSiteFile(PathBuf),
+    /// Opens the path to a picture for under the plan.
+    FindBackdrop,
+    /// Puts a picture under the plan.
+    OpenBackdrop(PathBuf),
     /// Saves the new site being described, and chooses it.
     SaveNewSite,
     /// Shows keys and cautions.
@@ -195,6 +199,8 @@ impl Command {
             Self::NewSite => "new-site",
             Self::FindSiteFile => "find-site-file",
             Self::OpenSiteFile(_) => "open-site-file",
+            Self::FindBackdrop => "find-backdrop",
+            Self::OpenBackdrop(_) => "open-backdrop",
             Self::SaveNewSite => "save-new-site",
             Self::ShowHelp => "help",
             Self::CloseDialog => "close",

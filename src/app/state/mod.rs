@@ -166,6 +166,15 @@ impl State {
     pub fn site_index(&self) -> usize {
         self.site
     }
+    /// The folder from which relative paths in the chosen site's file count: of a demo site the one
+    /// that its copy will go to.
+    pub fn site_folder(&self) -> Option<&std::path::Path> {
+        let known = self.sites.list().get(self.site)?;
+        match &known.file {
+            Some(file) => file.parent(),
+            None => self.sites.folder(),
+        }
+    }
     /// The half of the night.
     pub fn half(&self) -> Half {
         self.half
@@ -276,7 +285,11 @@ impl State {
             }
             Command::ChooseOpticsView(view) => self.optics_view = view,
             Command::SetTheme(theme) => self.theme = theme,
-            Command::ShowArea(area) => self.area = area,
+            Command::ShowArea(area) => {
+                // What was being dragged is out of sight: it stays where it is, and is saved.
+                self.end_drag();
+                self.area = area;
+            }
             Command::DragSite(site) => self.drag_site(*site),
             Command::EndDrag => self.end_drag(),
             Command::EditSite(site) => self.edit_site(*site),

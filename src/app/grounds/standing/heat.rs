@@ -1,7 +1,7 @@
 //! The map's colours, its picture and its legend.
 
-use super::field::Field;
 use crate::app::palette::{Colours, Look};
+use crate::plan::standing::StandingMap;
 use eframe::egui::{Color32, ColorImage, lerp};
 
 /// How much of the plan under the map still shows through.
@@ -26,39 +26,62 @@ pub fn colour(colours: &Colours, share: f32) -> Color32 {
     }
 }
 
+/// Fewest and most minutes of what is known; `None` where nobody stands anywhere.
+pub fn range(map: &StandingMap) -> Option<(f64, f64)> {
+    map.stays().fold(None, |range, (_, stay)| match range {
+        None => Some((stay.minutes, stay.minutes)),
+        Some((least, most)) => Some((stay.minutes.min(least), stay.minutes.max(most))),
+    })
+}
+
+/// Round minutes to draw lines at: a handful within a range.
+pub fn levels((least, most): (f64, f64)) -> Vec<f64> {
+    const MOST_LINES: f64 = 6.0;
+    const STEPS: [f64; 10] = [
+        1.0, 2.0, 5.0, 10.0, 15.0, 20.0, 30.0, 60.0, 120.0, 240.0,
+    ];
+    let step = STEPS
+        .into_iter()
+        .find(|step| (most - least) / step <= MOST_LINES)
+        .unwrap_or(480.0);
+    let first = (least / step).floor() as i32 + 1;
+    (first..)
+        .map(|count| f64::from(count) * step)
+        .take_while(|level| *level < most)
+        .collect()
+}
+
 /// The share of a range that a number of minutes stands at; where all is one, at the top.
-pub fn share((least, most): (f32, f32), minutes: f32) -> f32 {
+pub fn share((least, most): (f64, f64), minutes: f64) -> f32 {
     if most > least {
-        (minutes - least) / (most - least)
+        ((minutes - least) / (most - least)) as f32
     } else {
         1.0
     }
 }
 
-/// One pixel to a square, the northern row first; clear where nobody stands.
-pub fn image(field: &Field, look: &Look) -> ColorImage {
-    let (columns, rows) = (field.columns, field.rows());
-    let range = field.range().unwrap_or_default();
+/// One pixel to a square, the northern row first; clear where nobody stands. A square that waits
+/// has the colour of the coarser one that stands for it.
+pub fn image(map: &StandingMap, range: (f64, f64), look: &Look) -> ColorImage {
+    let (columns, rows) = (map.raster.columns, map.raster.rows);
+    let pixel = |row: usize, column: usize| match map.shown(column, row).stay() {
+        Some(stay) => look
+            .texel(colour(&look.colours, share(range, stay.minutes)))
+            .gamma_multiply(OPACITY),
+        None => Color32::TRANSPARENT,
+    };
     let pixels = (0..rows)
         .rev()
-        .flat_map(|row| &field.minutes[row * columns..(row + 1) * columns])
-        .map(|minutes| match minutes {
-            Some(minutes) => look
-                .texel(colour(&look.colours, share(range, *minutes)))
-                .gamma_multiply(OPACITY),
-            None => Color32::TRANSPARENT,
-        })
+        .flat_map(|row| (0..columns).map(move |column| pixel(row, column)))
         .collect();
     ColorImage::new([columns, rows], pixels)
 }
 
 #[cfg(test)]
 mod tests {
-    use super::{colour, image};
-    use crate::app::grounds::standing::field::Field;
+    use super::{colour, levels, share};
     use crate::app::palette::{Palette, Theme};
-    use crate::place::PlanPoint;
-    use eframe::egui::{Color32, Rgba};
+    use eframe::egui::Rgba;
 
     #[test]
     fn more_minutes_are_always_brighter() {
@@ -73,20 +96,16 @@ mod tests {
     }
 
     #[test]
-    fn the_picture_has_north_above_and_nothing_where_nobody_stands() {
-        let look = Palette::shipped()
-            .expect("the shipped palette reads")
-            .look(Theme::Dark);
-        let field = Field {
-            corner: PlanPoint::new(0.0, 0.0),
-            step_m: 1.0,
-            columns: 2,
-            minutes: vec![Some(10.0), None, Some(20.0), Some(30.0)],
-        };
-        let image = image(&field, &look);
-        assert_eq!(image.size, [2, 2]);
-        assert_eq!(image.pixels[3], Color32::TRANSPARENT, "the south-eastern");
-        let light = |k: usize| Rgba::from(image.pixels[k]).intensity();
-        assert!(light(1) > light(0) && light(0) > light(2));
+    fn lines_are_round_minutes_inside_the_range() {
+        assert_eq!(levels((3.2, 8.9)), [4.0, 5.0, 6.0, 7.0, 8.0]);
+        assert_eq!(levels((0.0, 95.0)), [20.0, 40.0, 60.0, 80.0]);
+        assert_eq!(levels((5.0, 5.0)), [] as [f64; 0], "all is one");
+        for (least, most) in [(0.0, 3000.0), (11.0, 47.0), (0.3, 0.9)] {
+            let levels = levels((least, most));
+            assert!(levels.len() <= 7, "{levels:?}");
+            assert!(levels.iter().all(|level| *level > least && *level < most));
+        }
+        assert_eq!(share((10.0, 20.0), 15.0), 0.5);
+        assert_eq!(share((10.0, 10.0), 10.0), 1.0);
     }
 }

@@ -1,15 +1,22 @@
 //! The map's work: what is asked, and what the worker's thread answers in parts.
 
-use super::field::Field;
+use super::heat;
 use crate::app::planned::Standpoint;
 use crate::app::worker::Telling;
 use crate::light::Eye;
 use crate::measure::TimeScales;
-use crate::place::{Grounds, PlanPoint, Site, Stature};
-use crate::plan::{Half, NightError, NightSky};
+use crate::place::{PlanPoint, Site, Spot, Stature};
+use crate::plan::standing::{Contour, Raster, Standing, StandingMap, StandingRequest, Stay};
+use crate::plan::{Half, NightError, NightRequest, NightSky, Patch, patch};
 use crate::sky::{Body, Ephemeris};
 use chrono::{Days, NaiveDate};
+use std::num::NonZeroUsize;
 use std::sync::Arc;
+
+/// Side of a square, m.
+const FINEST_M: f64 = 1.0;
+/// How many places are marked, and how far apart they are, m.
+const BEST: (usize, f64) = (3, 10.0);
 
 /// How several nights make one figure.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -44,24 +51,93 @@ pub struct Asked {
     pub scales: TimeScales,
 }
 
-/// What is known of it so far.
+/// What is known so far. Minutes are already the figure that was asked for, be it the sum or the
+/// least.
 #[derive(Clone, Debug)]
 pub struct Found {
     /// The minutes.
-    pub field: Field,
-    /// Middles of the best squares, the best first, well apart.
-    pub best: Vec<PlanPoint>,
-    /// The shown night, for asking about single points.
-    pub sky: Arc<NightSky>,
-    /// Whether all of it is known.
-    pub is_whole: bool,
+    pub map: StandingMap,
+    /// What the chosen spot and every other gives, in the site's order.
+    pub spots: Arc<[AtSpot]>,
+    /// The best places, the best first, well apart.
+    pub best: Vec<(PlanPoint, Stay)>,
+    /// Lines of equal minutes; none until the map is whole.
+    pub contours: Vec<Contour>,
 }
 
+/// What one of the site's spots gives.
+#[derive(Clone, Copy, Debug)]
+pub struct AtSpot {
+    /// Somebody of the stature asked for.
+    pub stay: Stay,
+    /// The crowd on its patch, where it has one.
+    pub patch: Option<Patch>,
+}
+
+/// What the worker tells.
+pub type News = Result<Found, NightError>;
+
 impl Asked {
+    /// Works it out, telling what is known so far. The shown night is given: it has been gone
+    /// through already.
+    pub fn work(&self, shown: &Arc<NightSky>, ephemeris: &Ephemeris, telling: &Telling<News>) {
+        if let Err(error) = self.tell_all(shown, ephemeris, telling) {
+            telling.tell(Err(error));
+        }
+    }
+
+    fn tell_all(
+        &self,
+        shown: &Arc<NightSky>,
+        ephemeris: &Ephemeris,
+        telling: &Telling<News>,
+    ) -> Result<(), NightError> {
+        let further = self.further(ephemeris, telling)?;
+        let nights: Vec<&NightSky> = std::iter::once(&**shown).chain(&further).collect();
+        let standing = Standing::new(StandingRequest {
+            site: &self.site,
+            nights: &nights,
+            body: self.body,
+            eye: self.eye,
+            half: self.half,
+            stature: self.stature,
+        });
+        let spots: Arc<[AtSpot]> = self
+            .site
+            .spots
+            .iter()
+            .map(|spot| self.at_spot(&standing, spot))
+            .collect();
+        let raster = Raster::of_site(&self.site, FINEST_M);
+        let threads = std::thread::available_parallelism().unwrap_or(NonZeroUsize::MIN);
+        let whole = standing.map(raster, threads, &telling.progress, |map| {
+            telling.tell(Ok(self.found(map, &spots, false)));
+        });
+        if let Some(map) = whole {
+            telling.tell(Ok(self.found(&map, &spots, true)));
+        }
+        Ok(())
+    }
+
+    /// The nights after the shown one.
+    fn further(
+        &self,
+        ephemeris: &Ephemeris,
+        telling: &Telling<News>,
+    ) -> Result<Vec<NightSky>, NightError> {
+        (1..u64::from(self.nights))
+            .filter_map(|days| self.date.checked_add_days(Days::new(days)))
+            .take_while(|_| !telling.progress.is_cancelled())
+            .map(|date| self.sky(ephemeris, date))
+            // A date that the zone skipped is no night.
+            .filter(|sky| !matches!(sky, Err(NightError::NoSuchDate { .. })))
+            .collect()
+    }
+
     fn sky(&self, ephemeris: &Ephemeris, date: NaiveDate) -> Result<NightSky, NightError> {
-        let spot = crate::place::Spot::mark();
-        let standpoint = Standpoint::new(&self.site, &spot, self.stature, date)?;
-        let request = crate::plan::NightRequest {
+        // The sky is one for all spots.
+        let standpoint = Standpoint::new(&self.site, &Spot::mark(), self.stature, date)?;
+        let request = NightRequest {
             eyes: &[self.eye],
             bodies: &[self.body],
             ..standpoint.request(date, self.scales)
@@ -69,70 +145,33 @@ impl Asked {
         NightSky::new(ephemeris, &request)
     }
 
-    /// Works it out, telling each finer grid.
-    pub fn work(&self, ephemeris: &Ephemeris, telling: &Telling<Result<Found, NightError>>) {
-        if let Err(error) = self.tell_all(ephemeris, telling) {
-            telling.tell(Err(error));
+    fn at_spot(&self, standing: &Standing<'_>, spot: &Spot) -> AtSpot {
+        let stay = standing.stay_at_spot(spot, self.stature);
+        AtSpot {
+            stay: match self.summing {
+                Summing::Sum => stay,
+                Summing::Least => stay.by_least(),
+            },
+            patch: spot.radius_m.and_then(|_| patch(standing, spot)),
         }
     }
 
-    fn tell_all(
-        &self,
-        ephemeris: &Ephemeris,
-        telling: &Telling<Result<Found, NightError>>,
-    ) -> Result<(), NightError> {
-        const SIDE_M: f64 = 50.0;
-        let dates = (0..u64::from(self.nights)).filter_map(|k| self.date.checked_add_days(Days::new(k)));
-        let skies: Vec<NightSky> = dates
-            .map(|date| self.sky(ephemeris, date))
-            .collect::<Result<_, _>>()?;
-        let shown = Arc::new(skies[0].clone());
-        let grounds = Grounds::new(&self.site, Some(self.date));
-        let steps = [8.0, 4.0, 2.0, 1.0];
-        telling
-            .progress
-            .set_total(steps.iter().map(|s: &f64| ((100.0 / s).ceil() as u64).pow(2)).sum());
-        for step_m in steps {
-            let columns = (2.0 * SIDE_M / step_m).ceil() as usize;
-            let corner = PlanPoint::new(-SIDE_M, -SIDE_M);
-            let mut minutes = Vec::new();
-            for k in 0..columns * columns {
-                if telling.progress.is_cancelled() {
-                    return Ok(());
-                }
-                let middle = |k: usize| (k as f64 + 0.5) * step_m - SIDE_M;
-                let at = PlanPoint::new(middle(k % columns), middle(k / columns));
-                telling.progress.advance(1);
-                let is_out = grounds.around(at).is_some()
-                    || self.site.excluded.iter().any(|area| area.holds(at));
-                minutes.push((!is_out).then(|| {
-                    let skyline = grounds.skyline_from(self.site.viewpoint_at(at, self.stature));
-                    let of_night = skies.iter().map(|sky| {
-                        let night = sky.body_night(self.body, &skyline);
-                        let windows = night.as_ref().map_or(&[][..], |n| n.windows_in(self.eye, self.half));
-                        let s: f64 = windows.iter().map(|w| w.end.moment.seconds_since(w.start.moment)).sum();
-                        (s / 60.0) as f32
-                    });
-                    match self.summing {
-                        Summing::Sum => of_night.sum(),
-                        Summing::Least => of_night.fold(f32::INFINITY, f32::min),
-                    }
-                }));
-            }
-            let field = Field { corner, step_m, columns, minutes };
-            let mut order: Vec<usize> = (0..field.minutes.len()).filter(|k| field.minutes[*k].is_some()).collect();
-            order.sort_by(|a, b| field.minutes[*b].partial_cmp(&field.minutes[*a]).unwrap_or(std::cmp::Ordering::Equal));
-            let mut best: Vec<PlanPoint> = Vec::new();
-            for k in order {
-                let at = PlanPoint::new(
-                    corner.east_m + (k % columns) as f64 * step_m + 0.5 * step_m,
-                    corner.north_m + (k / columns) as f64 * step_m + 0.5 * step_m,
-                );
-                if best.iter().all(|b| b.distance_m(at) > 10.0) { best.push(at); }
-                if best.len() == 3 { break; }
-            }
-            telling.tell(Ok(Found { field, best, sky: shown.clone(), is_whole: step_m == 1.0 }));
+    fn found(&self, map: &StandingMap, spots: &Arc<[AtSpot]>, is_whole: bool) -> Found {
+        let map = match self.summing {
+            Summing::Sum => map.clone(),
+            Summing::Least => map.by_least(),
+        };
+        let levels = heat::levels(heat::range(&map).unwrap_or_default());
+        let (count, apart_m) = BEST;
+        Found {
+            spots: spots.clone(),
+            best: map.best_places(count, apart_m),
+            contours: if is_whole {
+                map.contours(&levels)
+            } else {
+                Vec::new()
+            },
+            map,
         }
-        Ok(())
     }
 }

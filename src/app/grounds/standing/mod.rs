@@ -3,7 +3,6 @@
 //! The work runs on a thread of its own ([`job`]) and answers in parts, which are shown at once:
 //! under the plan as colours with lines of equal minutes, and in a card as the best places.
 
-mod field;
 mod heat;
 mod job;
 mod paint;
@@ -16,16 +15,16 @@ use crate::app::scene::Scene;
 use crate::app::widgets::{bold, card, choice, name_it, text};
 use crate::app::worker::Worker;
 use crate::place::{PlanPoint, Spot};
-use crate::plan::{Half, NightError};
+use crate::plan::Half;
+use crate::plan::standing::Contour;
 use crate::words::{Words, decimal};
 use crate::{light::Eye, sky::Body};
 use eframe::egui::{
-    Color32, Context, Painter, ProgressBar, Role, Sense, TextureHandle, TextureOptions, Ui,
+    Context, Painter, ProgressBar, Role, Sense, TextureHandle, TextureOptions, Ui,
     WidgetInfo, vec2,
 };
-use field::Contour;
-use job::{Asked, Found, Summing};
-use reading::Here;
+use job::{Asked, Found, News, Summing};
+use paint::Line;
 use std::cell::Cell;
 use std::sync::Arc;
 
@@ -39,7 +38,7 @@ pub struct Standing {
     is_on: bool,
     nights: u32,
     summing: Summing,
-    worker: Worker<Result<Found, NightError>>,
+    worker: Worker<News>,
     /// What the present map was asked for, and by which choices.
     asked: Option<(Key, Asked)>,
     map: Option<Map>,
@@ -67,7 +66,9 @@ struct Key {
 /// What is drawn of the answer.
 struct Map {
     found: Found,
-    contours: Vec<Contour>,
+    /// Fewest and most minutes.
+    range: (f64, f64),
+    lines: Vec<Line>,
     texture: TextureHandle,
     theme: Theme,
 }
@@ -90,10 +91,19 @@ impl Default for Standing {
 }
 
 impl Map {
-    fn new(ctx: &Context, look: &Look, found: Found) -> Self {
-        let image = heat::image(&found.field, look);
+    fn new(ctx: &Context, look: &Look, words: &Words, found: Found) -> Self {
+        let range = heat::range(&found.map).unwrap_or_default();
+        let image = heat::image(&found.map, range, look);
+        let line = |contour: &Contour| Line {
+            text: words.text_with(
+                "standing-minutes",
+                &[("minutes", decimal(contour.minutes, 0))],
+            ),
+            points: contour.line.clone(),
+        };
         Self {
-            contours: found.field.contours(),
+            range,
+            lines: found.contours.iter().map(line).collect(),
             texture: ctx.load_texture("standing", image, TextureOptions::NEAREST),
             theme: look.theme,
             found,
@@ -103,19 +113,13 @@ impl Map {
 
 impl Standing {
     /// Paints the map under the plan.
-    pub fn paint_under(
-        &self,
-        painter: &Painter,
-        to_screen: ToScreen<'_>,
-        look: &Look,
-        words: &Words,
-    ) {
+    pub fn paint_under(&self, painter: &Painter, to_screen: ToScreen<'_>, look: &Look) {
         let Some(map) = self.map.as_ref().filter(|_| self.is_on) else {
             self.pointed.set(None);
             return;
         };
-        paint::squares(painter, to_screen, &map.found.field, map.texture.id());
-        paint::contours(painter, to_screen, look, words, &map.contours);
+        paint::squares(painter, to_screen, &map.found.map.raster, map.texture.id());
+        paint::contours(painter, to_screen, look, &map.lines);
         paint::places(painter, to_screen, look, &map.found.best);
         self.pointed.set(pointed(painter, to_screen, map));
     }
@@ -127,7 +131,7 @@ impl Standing {
             self.map = None;
             return;
         };
-        self.take_news(ui.ctx(), desk.look);
+        self.take_news(ui.ctx(), desk);
         self.ask(ui.ctx(), desk);
         card(ui, desk.look, 0.0, |ui| {
             ui.spacing_mut().item_spacing = vec2(8.0, 8.0);
@@ -145,10 +149,11 @@ impl Standing {
     }
 
     /// Takes in what the worker has told.
-    fn take_news(&mut self, ctx: &Context, look: &Look) {
+    fn take_news(&mut self, ctx: &Context, desk: &Desk<'_>) {
+        let look = desk.look;
         match self.worker.news() {
             Some(Ok(found)) => {
-                self.map = Some(Map::new(ctx, look, found));
+                self.map = Some(Map::new(ctx, look, desk.words, found));
                 self.error = None;
                 // The plan was painted before it in this frame.
                 ctx.request_repaint();
@@ -162,7 +167,7 @@ impl Standing {
         if let Some(map) = &mut self.map
             && map.theme != look.theme
         {
-            let image = heat::image(&map.found.field, look);
+            let image = heat::image(&map.found.map, map.range, look);
             map.texture.set(image, TextureOptions::NEAREST);
             map.theme = look.theme;
         }
@@ -210,15 +215,16 @@ impl Standing {
     }
 
     fn start(&mut self, ctx: &Context, desk: &Desk<'_>) {
-        let Some((_, asked)) = &self.asked else {
+        let (Some((_, asked)), Ok(planned)) = (&self.asked, desk.state.planned()) else {
             return;
         };
         self.is_stopped = false;
         let (asked, ephemeris) = (asked.clone(), desk.state.ephemeris().clone());
+        let shown = planned.night_sky.clone();
         let started = self
             .worker
             .start(ctx, "standing map", move |telling| {
-                asked.work(&ephemeris, telling);
+                asked.work(&shown, &ephemeris, telling);
             });
         self.error = started.err().map(|error| error.to_string());
     }
@@ -304,13 +310,13 @@ impl Standing {
                 let size = vec2(ui.available_width(), 26.0);
                 let (rect, response) = ui.allocate_exact_size(size, Sense::hover());
                 if let Some(map) = &self.map {
-                    paint::legend(ui.painter(), rect, look, words, &map.found.field);
-                    let (least, most) = map.found.field.range().unwrap_or_default();
+                    paint::legend(ui.painter(), rect, look, words, map.range);
+                    let (least, most) = map.range;
                     let name = words.text_with(
                         "standing-legend",
                         &[
-                            ("least", decimal(f64::from(least), 0)),
-                            ("most", decimal(f64::from(most), 0)),
+                            ("least", decimal(least, 0)),
+                            ("most", decimal(most, 0)),
                         ],
                     );
                     response.widget_info(|| WidgetInfo::labeled(Role::Canvas, true, &name));
@@ -326,51 +332,24 @@ impl Standing {
         scene: &Scene<'_>,
         commands: &mut Commands,
     ) {
-        let (Some(map), Some((_, asked))) = (&self.map, &self.asked) else {
+        let (Some(map), Some((_, asked)), Ok(planned)) =
+            (&self.map, &self.asked, desk.state.planned())
+        else {
             return;
         };
+        let sky = &planned.night_sky;
         let look = desk.look;
         let (size, colour) = (look.sizes.label, look.colours.text);
-        for (index, at) in map.found.best.iter().enumerate() {
-            let Some(here) = Here::at(asked, &map.found, *at) else {
-                continue;
-            };
-            let line = desk.words.text_with(
-                "standing-best",
-                &[
-                    ("number", (index + 1).to_string()),
-                    ("where", reading::whereabouts(desk, *at)),
-                    ("times", reading::times(desk, scene, &here)),
-                ],
-            );
-            ui.horizontal(|ui| {
-                let name = desk.words.text_with(
-                    "standing-stand-here-named",
-                    &[("number", (index + 1).to_string())],
-                );
-                let button = ui.button(desk.words.text("standing-stand-here"));
-                name_it(&button, Role::Button, &name);
-                if button.clicked() {
-                    stand(desk, *at, commands);
-                }
-                text(ui, look, size, colour, &line);
-            });
+        for (index, (at, stay)) in map.found.best.iter().enumerate() {
+            let said = reading::place(desk, scene, (asked, sky), (*at, stay));
+            best_ui(ui, desk, (index + 1, *at), &said, commands);
         }
-        for line in costs(desk, scene, map) {
+        for line in reading::costs(desk, &map.found) {
             text(ui, look, size, colour, &line);
         }
         let pointed = self.pointed.get();
         let line = match pointed {
-            Some((at, _)) => match Here::at(asked, &map.found, at) {
-                Some(here) => desk.words.text_with(
-                    "standing-pointed",
-                    &[
-                        ("where", reading::whereabouts(desk, at)),
-                        ("times", reading::times(desk, scene, &here)),
-                    ],
-                ),
-                None => String::new(),
-            },
+            Some((at, _)) => reading::pointed(desk, scene, (asked, sky), &map.found, at),
             None => desk.words.text("standing-point-at"),
         };
         text(ui, look, size, look.colours.lesser, &line);
@@ -383,60 +362,44 @@ impl Standing {
     }
 }
 
-/// What the chosen spot gives, what the best place would give more, and how far it is to ten
-/// minutes more.
-fn costs(desk: &Desk<'_>, scene: &Scene<'_>, map: &Map) -> Vec<String> {
-    const GAIN_MIN: f64 = 10.0;
-    let Some((_, most)) = map.found.field.range() else {
-        return vec![desk.words.text("standing-nowhere")];
-    };
-    let spot = scene.spot;
-    let windows = scene
-        .night
-        .body(scene.body)
-        .map_or(&[][..], |night| night.windows_in(scene.eye, scene.half));
-    let here = reading::minutes(windows);
-    let mut lines = vec![desk.words.text_with(
-        "standing-cost",
-        &[
-            ("spot", spot.name.clone()),
-            ("minutes", decimal(here, 0)),
-            ("fewer", decimal((f64::from(most) - here).max(0.0), 0)),
-        ],
-    )];
-    let from = spot.plan_point();
-    let field = &map.found.field;
-    let nearer = (0..field.minutes.len())
-        .filter(|square| {
-            field.minutes[*square].is_some_and(|minutes| f64::from(minutes) >= here + GAIN_MIN)
-        })
-        .map(|square| field.middle(square))
-        .min_by(|a, b| a.distance_m(from).total_cmp(&b.distance_m(from)));
-    lines.push(match nearer {
-        Some(at) => desk.words.text_with(
-            "standing-gain",
-            &[
-                ("metres", decimal(at.distance_m(from).ceil(), 0)),
-                ("direction", desk.words.direction(from.bearing(at))),
-            ],
-        ),
-        None => desk.words.text("standing-no-gain"),
+/// One of the best places, with its button.
+fn best_ui(
+    ui: &mut Ui,
+    desk: &Desk<'_>,
+    (number, at): (usize, PlanPoint),
+    said: &str,
+    commands: &mut Commands,
+) {
+    let look = desk.look;
+    ui.horizontal(|ui| {
+        let name = desk.words.text_with(
+            "standing-stand-here-named",
+            &[("number", number.to_string())],
+        );
+        let button = ui.button(desk.words.text("standing-stand-here"));
+        name_it(&button, Role::Button, &name);
+        if button.clicked() {
+            stand(desk, at, commands);
+        }
+        let line = desk.words.text_with(
+            "standing-best",
+            &[("number", number.to_string()), ("said", said.to_owned())],
+        );
+        text(ui, look, look.sizes.label, look.colours.text, &line);
     });
-    lines
 }
 
 /// The point of the map under the pointer, and whether it is clicked.
 fn pointed(painter: &Painter, to_screen: ToScreen<'_>, map: &Map) -> Option<(PlanPoint, bool)> {
     let ctx = painter.ctx();
-    let (pointer, is_clicked) = ctx.input(|input| {
-        (input.pointer.hover_pos(), input.pointer.primary_clicked())
-    });
+    let (pointer, is_clicked) =
+        ctx.input(|input| (input.pointer.hover_pos(), input.pointer.primary_clicked()));
     let pointer = pointer.filter(|at| painter.clip_rect().contains(*at))?;
     if ctx.layer_id_at(pointer) != Some(painter.layer_id()) {
         return None;
     }
     // North is up and both scales are one: two points tell everything.
-    let (near, far) = (map.found.field.corner, map.found.field.far_corner());
+    let [near, far] = paint::corners(&map.found.map.raster);
     let (from, to) = (to_screen(near), to_screen(far));
     let east = f64::from((pointer.x - from.x) / (to.x - from.x));
     let north = f64::from((pointer.y - from.y) / (to.y - from.y));
@@ -444,8 +407,8 @@ fn pointed(painter: &Painter, to_screen: ToScreen<'_>, map: &Map) -> Option<(Pla
         near.east_m + east * (far.east_m - near.east_m),
         near.north_m + north * (far.north_m - near.north_m),
     );
-    let square = map.found.field.square(at)?;
-    map.found.field.minutes[square].map(|_| (at, is_clicked))
+    map.found.map.raster.square(at)?;
+    Some((at, is_clicked))
 }
 
 /// Makes a spot at a point and chooses it.

@@ -1,12 +1,14 @@
 //! What is said of single points of the map.
 
-use super::job::{Asked, Found};
+use super::job::{Asked, Found, Summing};
+use crate::app::command::Command;
 use crate::app::grounds::Desk;
 use crate::app::lookout::says::Says;
 use crate::app::scene::Scene;
 use crate::measure::Angle;
 use crate::place::{Grounds, PlanPoint, Skyline};
-use crate::plan::{BodyNight, Edge, Window};
+use crate::plan::standing::{Cell, Stay, WhyLeftOut};
+use crate::plan::{BodyNight, Edge, NightSky, Patch, PatchStay, Window};
 use crate::words::{decimal, spoken_cause};
 
 /// Somebody at a point, in the shown half-night.
@@ -21,10 +23,10 @@ pub struct Here {
 
 impl Here {
     /// At any point of the grounds.
-    pub fn at(asked: &Asked, found: &Found, at: PlanPoint) -> Option<Self> {
+    pub fn at(asked: &Asked, sky: &NightSky, at: PlanPoint) -> Option<Self> {
         let grounds = Grounds::new(&asked.site, Some(asked.date));
         let skyline = grounds.skyline_from(asked.site.viewpoint_at(at, asked.stature));
-        let body = found.sky.body_night(asked.body, &skyline)?;
+        let body = sky.body_night(asked.body, &skyline)?;
         let windows = body.windows_in(asked.eye, asked.half).to_vec();
         Some(Self {
             skyline,
@@ -85,6 +87,118 @@ pub fn times(desk: &Desk<'_>, scene: &Scene<'_>, here: &Here) -> String {
             ("minutes", decimal(here.minutes(), 0)),
             ("why", end.unwrap_or_default()),
         ],
+    )
+}
+
+/// A place of the map: where, its minutes over the nights where there are several, and the shown
+/// night's times.
+pub fn place(
+    desk: &Desk<'_>,
+    scene: &Scene<'_>,
+    (asked, sky): (&Asked, &NightSky),
+    (at, stay): (PlanPoint, &Stay),
+) -> String {
+    let times = match Here::at(asked, sky, at) {
+        Some(here) => times(desk, scene, &here),
+        None => desk.words.text("standing-not-seen"),
+    };
+    let id = match (asked.nights, asked.summing) {
+        (1, _) => "standing-place-one",
+        (_, Summing::Sum) => "standing-place-sum",
+        (_, Summing::Least) => "standing-place-least",
+    };
+    desk.words.text_with(
+        id,
+        &[
+            ("where", whereabouts(desk, at)),
+            ("minutes", decimal(stay.minutes, 0)),
+            ("nights", asked.nights.to_string()),
+            ("times", times),
+        ],
+    )
+}
+
+/// The point of the map under the pointer.
+pub fn pointed(
+    desk: &Desk<'_>,
+    scene: &Scene<'_>,
+    asked_of: (&Asked, &NightSky),
+    found: &Found,
+    at: PlanPoint,
+) -> String {
+    let Some((column, row)) = found.map.raster.square(at) else {
+        return desk.words.text("standing-point-at");
+    };
+    match found.map.shown(column, row) {
+        Cell::Stay(stay) => {
+            let said = place(desk, scene, asked_of, (at, &stay));
+            desk.words.text_with("standing-pointed", &[("said", said)])
+        }
+        Cell::LeftOut(why) => desk.words.text(match why {
+            WhyLeftOut::Outside => "standing-outside",
+            WhyLeftOut::Excluded => "standing-excluded",
+            WhyLeftOut::InObstacle => "standing-in-obstacle",
+        }),
+        Cell::Waiting => desk.words.text("standing-point-at"),
+    }
+}
+
+/// What the chosen spot gives, what the best place would give more, how far it is to ten minutes
+/// more, and what a crowd on its patch has.
+pub fn costs(desk: &Desk<'_>, found: &Found) -> Vec<String> {
+    const GAIN_MIN: f64 = 10.0;
+    let (words, spot) = (desk.words, desk.state.spot());
+    if found.map.stays().next().is_none() {
+        return vec![words.text("standing-nowhere")];
+    }
+    let Some(here) = found.spots.get(desk.state.spot_index()) else {
+        return Vec::new();
+    };
+    let mut lines = vec![words.text_with(
+        "standing-cost",
+        &[
+            ("spot", spot.name.clone()),
+            ("minutes", decimal(here.stay.minutes, 0)),
+            ("fewer", decimal(found.map.cost_of(&here.stay), 0)),
+        ],
+    )];
+    let gain = found.map.gain(spot.plan_point(), &here.stay, GAIN_MIN);
+    lines.push(match gain {
+        Some(gain) => words.text_with(
+            "standing-gain",
+            &[
+                ("metres", decimal(gain.distance_m.ceil(), 0)),
+                ("direction", words.direction(gain.bearing)),
+            ],
+        ),
+        None => words.text("standing-no-gain"),
+    });
+    if let Some(patch) = &here.patch {
+        lines.push(crowd(desk, patch));
+    }
+    lines
+}
+
+/// What a crowd has: the worst off and the one in the middle.
+fn crowd(desk: &Desk<'_>, patch: &Patch) -> String {
+    let words = desk.words;
+    let one = |one: &PatchStay| {
+        let height_m = desk.state.site().people.eye_height_m(one.stature);
+        let id = Command::ChooseStature(one.stature).wording();
+        let height = decimal(height_m, 2);
+        let who = words.text_with(id.unwrap_or_default(), &[("height", height)]);
+        words.text_with(
+            "standing-one",
+            &[
+                ("minutes", decimal(one.stay.minutes, 0)),
+                ("who", who),
+                ("where", whereabouts(desk, one.at)),
+            ],
+        )
+    };
+    words.text_with(
+        "standing-crowd",
+        &[("worst", one(&patch.worst)), ("median", one(&patch.median))],
     )
 }
 
