@@ -8,5 +8,6 @@ mod disk;
 mod measured;
 mod obstacles;
 mod skyline;
+mod terrain;
 mod text;
 mod zones;
