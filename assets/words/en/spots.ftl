@@ -63,3 +63,16 @@ standing-nowhere = Nobody can stand anywhere on these grounds: everything is bui
 standing-pointed = There, { $said }
 standing-point-at = Point at the map to read a square metre.
 new-spot-name = spot { $number }
+
+# The spots side by side
+compare-title = The spots side by side
+compare-about = { $body } at { $half } for { $eye }; the longest time in amber figures. Press a spot to choose it.
+compare-times = { $start }–{ $end }  { $minutes } min
+compare-best = best { $time }
+compare-not-seen = not seen
+compare-too-faint = too faint for the unaided eye
+compare-row = { $spot }: { $times }, { $best }, { $why }. { $kit }
+kit-stands = Kit
+kit-nowhere = wherever people stand
+kit-at = { $instrument }: { $spot }
+kit-menu = Put { $instrument } at a spot, now { $spot }

@@ -273,11 +273,11 @@ impl State {
             Command::ChooseSite(index) => self.choose_site(index),
             Command::ChooseSpot(index) => {
                 self.spot = index;
-                self.show_night(self.date, Goal::Local(self.half, self.wanted));
+                self.show_behind();
             }
             Command::ChooseStature(stature) => {
                 self.stature = stature;
-                self.show_night(self.date, Goal::Local(self.half, self.wanted));
+                self.show_behind();
             }
             Command::ChooseHaze(haze) => {
                 self.choose_haze(haze);

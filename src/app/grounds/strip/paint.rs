@@ -254,7 +254,12 @@ pub fn ruler(painter: &Painter, desk: &Desk<'_>, frame: &Frame, ruler: Rect) {
     let look = desk.look;
     let mut taken: Vec<Rect> = Vec::new();
     // Whole quarters first, then eighths, then the finer marks that find room.
-    for (step_deg, is_point) in [(90, true), (45, true), (10, false), (5, false), (1, false)] {
+    let finer = [(10, 4.0), (5, 8.0), (1, 40.0)]
+        .into_iter()
+        .filter(|(_, least)| frame.points_per_deg() > *least)
+        .map(|(step_deg, _)| (step_deg, false));
+    let coarse = [(90, true), (45, true), (30, false)];
+    for (step_deg, is_point) in coarse.into_iter().chain(finer) {
         for azimuth_deg in (0..360).step_by(step_deg) {
             let azimuth = Angle::from_degrees(azimuth_deg as f64);
             let beside_deg = frame.beside_deg(azimuth);
