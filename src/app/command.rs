@@ -68,6 +68,8 @@ pub enum Command {
     OpenSiteFile(PathBuf),
     /// Saves the new site being described, and chooses it.
     SaveNewSite,
+    /// Opens the ways to measure the skyline.
+    Measure,
     /// Shows keys and cautions.
     ShowHelp,
     /// Closes whatever dialog is open.
@@ -191,6 +193,7 @@ impl Command {
             Self::FindSiteFile => "find-site-file",
             Self::OpenSiteFile(_) => "open-site-file",
             Self::SaveNewSite => "save-new-site",
+            Self::Measure => "measure",
             Self::ShowHelp => "help",
             Self::CloseDialog => "close",
             Self::DismissNotice => "dismiss-notice",

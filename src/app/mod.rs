@@ -15,6 +15,7 @@ mod keys;
 pub mod lookout;
 pub mod palette;
 mod pickers;
+mod picture;
 mod planned;
 pub mod scene;
 mod settings;

@@ -9,15 +9,17 @@
 //! [`Command::DragSite`]: super::command::Command::DragSite
 
 mod compare;
+pub mod measure;
 mod plan;
 mod selected;
 mod standing;
 mod strip;
 
-use super::command::Commands;
+use super::command::{Command, Commands};
 use super::palette::Look;
 use super::scene::Scene;
 use super::state::State;
+use super::widgets::command_button;
 use super::window::DesktopWindow;
 use crate::words::Words;
 use eframe::egui::{ScrollArea, Ui, UiBuilder, vec2};
@@ -79,6 +81,9 @@ impl DesktopWindow {
 impl GroundsArea {
     fn show(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
         super::pickers::picker_row(ui, desk.look, desk.words, desk.state, commands);
+        ui.horizontal(|ui| {
+            command_button(ui, desk.words, Command::Measure, commands);
+        });
         let whole = ui.available_rect_before_wrap();
         let column = (0.42 * whole.width()).clamp(380.0, 720.0);
         let divide = whole.right() - column;
