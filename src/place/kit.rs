@@ -24,6 +24,9 @@ pub enum Instrument {
         eyepieces: Vec<Eyepiece>,
         /// How it turns the picture.
         view: Orientation,
+        /// The spot that it stands at, by name; left out, wherever people stand.
+        #[serde(default, skip_serializing_if = "Option::is_none")]
+        spot: Option<String>,
     },
     /// With a fixed magnification; always erect.
     Binocular {
@@ -39,6 +42,9 @@ pub enum Instrument {
         /// True field, degrees.
         #[serde(deserialize_with = "limits::field_deg")]
         field_deg: f64,
+        /// The spot that it stands at, by name; left out, wherever people stand.
+        #[serde(default, skip_serializing_if = "Option::is_none")]
+        spot: Option<String>,
     },
 }
 
@@ -91,6 +97,20 @@ impl Instrument {
     pub fn label(&self) -> &str {
         match self {
             Self::Telescope { label, .. } | Self::Binocular { label, .. } => label,
+        }
+    }
+
+    /// The spot that it stands at, by name.
+    pub fn spot(&self) -> Option<&str> {
+        match self {
+            Self::Telescope { spot, .. } | Self::Binocular { spot, .. } => spot.as_deref(),
+        }
+    }
+
+    /// Puts it at a spot, or nowhere in particular.
+    pub fn set_spot(&mut self, name: Option<String>) {
+        match self {
+            Self::Telescope { spot, .. } | Self::Binocular { spot, .. } => *spot = name,
         }
     }
 

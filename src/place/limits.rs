@@ -69,6 +69,14 @@ limits! {
     azimuth_deg: 0.0 to 360.0 open true, "degrees";
     altitude_deg: -10.0 to 90.0, "degrees";
     base_m: -1000.0 to 1000.0, "metres";
+    radius_m: 0.0 to 500.0, "metres";
+    gap_m: 0.1 to 1000.0, "metres";
+    trunk_m: 0.01 to 100.0, "metres";
+    slope_percent: -100.0 to 100.0, "per cent";
+    see_through: 0.0 to 1.0, "(0: nothing, 1: all)";
+    blocking_density: 0.0 to 1.0, "(0: every twig blocks, 1: only what is opaque)";
+    terrain_k: -1.0 to 0.9, "(0.13 is usual)";
+    backdrop_pixel: -100000.0 to 100000.0, "pixels";
     height_m: 0.01 to 1000.0, "metres";
     width_m: 0.01 to 1000.0, "metres";
     eaves_m: 0.01 to 1000.0, "metres";
@@ -107,6 +115,10 @@ pub(super) mod optional {
         pressure_hpa by "super::pressure_hpa";
         extinction_mag by "super::extinction_mag";
         ridge_m by "super::ridge_m";
+        base_m by "super::base_m";
+        radius_m by "super::radius_m";
+        gap_m by "super::gap_m";
+        trunk_m by "super::trunk_m";
         passer_by by "super::passer_by";
         visitor by "super::visitor";
         keen by "super::keen";

@@ -5,15 +5,20 @@
 //! north, and a site's plan is flat: east and north of its mark in metres.
 
 mod air;
+mod areas;
 mod check;
 mod demo;
 mod eyes;
 mod file;
+mod ground;
+mod grounds;
 mod kit;
+mod leafless;
 mod limits;
 mod locate;
 mod measured;
 mod obstacle;
+mod plan_point;
 mod silhouette;
 mod site;
 mod skyline;
@@ -22,11 +27,16 @@ pub mod survey;
 pub mod zone;
 
 pub use air::{Extinction, Haze, SiteAir, SiteSky, standard_pressure_hpa};
+pub use areas::{Backdrop, Exclusion, PicturePoint, Sector};
 pub use demo::{demo_site, demo_sites, slug};
 pub use eyes::SiteEyes;
 pub use file::LARGEST_FILE_BYTES;
+pub use ground::{People, Slope, Stature, Viewpoint};
+pub use grounds::Grounds;
 pub use kit::{Eyepiece, Instrument, Orientation};
+pub use leafless::{Leafless, YearDay};
 pub use measured::{SkylinePoint, read_skyline_table, skyline_from_table};
-pub use obstacle::{Obstacle, PlanPoint};
+pub use obstacle::Obstacle;
+pub use plan_point::PlanPoint;
 pub use site::{Site, SiteError, Spot};
 pub use skyline::{Feature, Skyline};

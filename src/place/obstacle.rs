@@ -1,10 +1,13 @@
-//! Trees, buildings and walls in metres.
+//! Trees, buildings, walls, poles and other shapes in metres.
 
-use super::{Spot, limits};
+use super::plan_point::{PlanPoint, distance_to_side_m, footprint_flaw, is_within, sides};
+use super::{Leafless, limits};
 use serde::{Deserialize, Serialize};
 
-/// Something that blocks the view. Lengths in metres; heights count from `base_m`, which is the
-/// height of its own ground over the ground at the site's mark.
+/// Something that blocks the view. Lengths in metres; heights count from its own ground, which
+/// is `base_m` over the ground at the site's mark, or, where that is left out, the ground there as
+/// the site slopes ([`super::Slope`]). A building's and a shape's ground is that at the mean of its
+/// corners; a wall follows the slope from point to point.
 #[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub enum Obstacle {
@@ -20,15 +23,81 @@ pub enum Obstacle {
         /// Its axis north of the mark, m.
         #[serde(deserialize_with = "limits::north_m")]
         north_m: f64,
-        /// Height of its ground over the mark's, m.
-        #[serde(default, deserialize_with = "limits::base_m")]
-        base_m: f64,
+        /// Height of its ground over the mark's, m; left out, the ground as the site slopes.
+        #[serde(
+            default,
+            deserialize_with = "limits::optional::base_m",
+            skip_serializing_if = "Option::is_none"
+        )]
+        base_m: Option<f64>,
         /// Height of its top over its ground, m.
         #[serde(deserialize_with = "limits::height_m")]
         height_m: f64,
         /// Diameter of the crown, m.
         #[serde(deserialize_with = "limits::width_m")]
         width_m: f64,
+        /// Height of the crown's underside over its ground, m, where one can look through beneath
+        /// it on both sides of the trunk; left out, the crown reaches the ground.
+        #[serde(
+            default,
+            deserialize_with = "limits::optional::gap_m",
+            skip_serializing_if = "Option::is_none"
+        )]
+        gap_m: Option<f64>,
+        /// Diameter of the trunk under the crown, m; left out, a twentieth of the crown's.
+        #[serde(
+            default,
+            deserialize_with = "limits::optional::trunk_m",
+            skip_serializing_if = "Option::is_none"
+        )]
+        trunk_m: Option<f64>,
+        /// When it stands without leaves, and how much shows through it then.
+        #[serde(default, skip_serializing_if = "Option::is_none")]
+        leafless: Option<Leafless>,
+    },
+    /// A lamp post, a flagpole, a mast: upright, of one width from the ground to its top.
+    Pole {
+        /// What people call it.
+        #[serde(deserialize_with = "limits::name")]
+        label: String,
+        /// Its axis east of the mark, m.
+        #[serde(deserialize_with = "limits::east_m")]
+        east_m: f64,
+        /// Its axis north of the mark, m.
+        #[serde(deserialize_with = "limits::north_m")]
+        north_m: f64,
+        /// Height of its ground over the mark's, m; left out, the ground as the site slopes.
+        #[serde(
+            default,
+            deserialize_with = "limits::optional::base_m",
+            skip_serializing_if = "Option::is_none"
+        )]
+        base_m: Option<f64>,
+        /// Height of its top over its ground, m.
+        #[serde(deserialize_with = "limits::height_m")]
+        height_m: f64,
+        /// Its diameter, m.
+        #[serde(deserialize_with = "limits::width_m")]
+        width_m: f64,
+    },
+    /// Anything else upright with a level top: a footprint and its height.
+    Shape {
+        /// What people call it.
+        #[serde(deserialize_with = "limits::name")]
+        label: String,
+        /// Corners of the footprint in order, either way round.
+        corners_m: Vec<PlanPoint>,
+        /// Height of its ground over the mark's, m; left out, the ground as the site slopes, at
+        /// the mean of its corners.
+        #[serde(
+            default,
+            deserialize_with = "limits::optional::base_m",
+            skip_serializing_if = "Option::is_none"
+        )]
+        base_m: Option<f64>,
+        /// Height of its top over its ground, m.
+        #[serde(deserialize_with = "limits::height_m")]
+        height_m: f64,
     },
     /// Upright walls over a plan up to the eaves, under a gable roof: one straight ridge along
     /// the longer axis of the smallest rectangle around the plan, cut off where it leaves the
@@ -40,9 +109,13 @@ pub enum Obstacle {
         label: String,
         /// Corners of the plan in order, either way round.
         corners_m: Vec<PlanPoint>,
-        /// Height of its ground over the mark's, m.
-        #[serde(default, deserialize_with = "limits::base_m")]
-        base_m: f64,
+        /// Height of its ground over the mark's, m; left out, the ground as the site slopes.
+        #[serde(
+            default,
+            deserialize_with = "limits::optional::base_m",
+            skip_serializing_if = "Option::is_none"
+        )]
+        base_m: Option<f64>,
         /// Height of the eaves over its ground, m.
         #[serde(deserialize_with = "limits::eaves_m")]
         eaves_m: f64,
@@ -61,66 +134,17 @@ pub enum Obstacle {
         label: String,
         /// The line that it follows.
         line_m: Vec<PlanPoint>,
-        /// Height of its ground over the mark's, m.
-        #[serde(default, deserialize_with = "limits::base_m")]
-        base_m: f64,
+        /// Height of its ground over the mark's, m; left out, the ground as the site slopes.
+        #[serde(
+            default,
+            deserialize_with = "limits::optional::base_m",
+            skip_serializing_if = "Option::is_none"
+        )]
+        base_m: Option<f64>,
         /// Height of its top over its ground, m.
         #[serde(deserialize_with = "limits::height_m")]
         height_m: f64,
     },
-}
-
-/// A point of a site's plan; the file writes it `(east, north)`, metres from the mark.
-#[derive(Clone, Copy, Debug, PartialEq, Serialize, Deserialize)]
-#[serde(from = "PlanPointInFile", into = "(f64, f64)")]
-pub struct PlanPoint {
-    /// East of the mark, m.
-    pub east_m: f64,
-    /// North of the mark, m.
-    pub north_m: f64,
-}
-
-#[derive(Deserialize)]
-struct PlanPointInFile(
-    #[serde(deserialize_with = "limits::east_m")] f64,
-    #[serde(deserialize_with = "limits::north_m")] f64,
-);
-
-impl From<PlanPointInFile> for PlanPoint {
-    fn from(PlanPointInFile(east_m, north_m): PlanPointInFile) -> Self {
-        Self { east_m, north_m }
-    }
-}
-
-impl From<PlanPoint> for (f64, f64) {
-    fn from(point: PlanPoint) -> Self {
-        (point.east_m, point.north_m)
-    }
-}
-
-impl PlanPoint {
-    pub(super) fn minus(self, other: Self) -> Self {
-        Self {
-            east_m: self.east_m - other.east_m,
-            north_m: self.north_m - other.north_m,
-        }
-    }
-    pub(super) fn plus(self, other: Self, factor: f64) -> Self {
-        Self {
-            east_m: self.east_m + factor * other.east_m,
-            north_m: self.north_m + factor * other.north_m,
-        }
-    }
-    pub(super) fn dot(self, other: Self) -> f64 {
-        self.east_m * other.east_m + self.north_m * other.north_m
-    }
-    /// Positive where `other` lies clockwise of this one, seen from above (azimuth grows).
-    pub(super) fn cross(self, other: Self) -> f64 {
-        self.north_m * other.east_m - self.east_m * other.north_m
-    }
-    pub(super) fn length_m(self) -> f64 {
-        self.east_m.hypot(self.north_m)
-    }
 }
 
 /// Nearer than this to a wall's line, nobody stands in front of it or behind it.
@@ -130,119 +154,127 @@ impl Obstacle {
     /// What people call it.
     pub fn label(&self) -> &str {
         match self {
-            Self::Tree { label, .. } | Self::Building { label, .. } | Self::Wall { label, .. } => {
-                label
-            }
+            Self::Tree { label, .. }
+            | Self::Building { label, .. }
+            | Self::Wall { label, .. }
+            | Self::Pole { label, .. }
+            | Self::Shape { label, .. } => label,
         }
     }
 
-    /// Whether a spot lies within its plan, where nothing can be said of the view.
-    pub fn surrounds(&self, spot: &Spot) -> bool {
-        let at = spot.plan_point();
+    /// The same, to be changed.
+    pub fn label_mut(&mut self) -> &mut String {
+        match self {
+            Self::Tree { label, .. }
+            | Self::Building { label, .. }
+            | Self::Wall { label, .. }
+            | Self::Pole { label, .. }
+            | Self::Shape { label, .. } => label,
+        }
+    }
+
+    /// Height of its ground over the mark's as stated, m.
+    pub fn base_mut(&mut self) -> &mut Option<f64> {
+        match self {
+            Self::Tree { base_m, .. }
+            | Self::Building { base_m, .. }
+            | Self::Wall { base_m, .. }
+            | Self::Pole { base_m, .. }
+            | Self::Shape { base_m, .. } => base_m,
+        }
+    }
+
+    /// The points that it stands on: the axis of a tree or a pole, the corners of a footprint, a
+    /// wall's line.
+    pub fn points(&self) -> Vec<PlanPoint> {
         match self {
             Self::Tree {
-                east_m,
-                north_m,
-                width_m,
-                ..
-            } => {
-                let axis = PlanPoint {
-                    east_m: *east_m,
-                    north_m: *north_m,
-                };
-                axis.minus(at).length_m() <= 0.5 * width_m
+                east_m, north_m, ..
             }
-            Self::Building { corners_m, .. } => {
+            | Self::Pole {
+                east_m, north_m, ..
+            } => vec![PlanPoint::new(*east_m, *north_m)],
+            Self::Building { corners_m, .. } | Self::Shape { corners_m, .. } => corners_m.clone(),
+            Self::Wall { line_m, .. } => line_m.clone(),
+        }
+    }
+
+    /// Puts its points anew; of a tree or a pole the first counts, and none changes nothing.
+    pub fn set_points(&mut self, points: &[PlanPoint]) {
+        match self {
+            Self::Tree {
+                east_m, north_m, ..
+            }
+            | Self::Pole {
+                east_m, north_m, ..
+            } => {
+                if let Some(axis) = points.first() {
+                    (*east_m, *north_m) = (axis.east_m, axis.north_m);
+                }
+            }
+            Self::Building { corners_m, .. } | Self::Shape { corners_m, .. } => {
+                *corners_m = points.to_vec();
+            }
+            Self::Wall { line_m, .. } => *line_m = points.to_vec(),
+        }
+    }
+
+    /// Whether a point lies within its plan, where nothing can be said of the view: inside a
+    /// footprint, under a crown, nearer than 0.1 m to a wall.
+    pub fn surrounds(&self, at: PlanPoint) -> bool {
+        match self {
+            Self::Tree { width_m, .. } | Self::Pole { width_m, .. } => self
+                .points()
+                .iter()
+                .any(|axis| axis.distance_m(at) <= 0.5 * width_m),
+            Self::Building { corners_m, .. } | Self::Shape { corners_m, .. } => {
                 is_within(at, corners_m)
-                    || sides(corners_m).any(|(a, b)| distance_m(at, a, b) < WALL_REACH_M)
+                    || sides(corners_m).any(|(a, b)| distance_to_side_m(at, a, b) < WALL_REACH_M)
             }
             Self::Wall { line_m, .. } => line_m
                 .windows(2)
-                .any(|ends| distance_m(at, ends[0], ends[1]) < WALL_REACH_M),
+                .any(|ends| distance_to_side_m(at, ends[0], ends[1]) < WALL_REACH_M),
         }
     }
 
     /// Why its shape cannot be, if it cannot.
     pub(super) fn flaw(&self) -> Option<String> {
         match self {
-            Self::Tree { .. } => None,
+            Self::Tree {
+                height_m,
+                width_m,
+                gap_m,
+                trunk_m,
+                ..
+            } => {
+                if let Some(gap_m) = gap_m.filter(|gap_m| gap_m >= height_m) {
+                    return Some(format!("its gap_m {gap_m} reaches its height_m {height_m}"));
+                }
+                let trunk_m = trunk_m.filter(|trunk_m| trunk_m > width_m)?;
+                Some(format!(
+                    "its trunk_m {trunk_m} exceeds its width_m {width_m}"
+                ))
+            }
+            Self::Pole { .. } => None,
             Self::Wall { line_m, .. } => {
                 let length_m: f64 = line_m
                     .windows(2)
-                    .map(|ends| ends[1].minus(ends[0]).length_m())
+                    .map(|ends| ends[1].distance_m(ends[0]))
                     .sum();
                 (length_m < 0.01).then(|| "its line_m needs at least two points apart".into())
             }
+            Self::Shape { corners_m, .. } => footprint_flaw(corners_m),
             Self::Building {
                 corners_m,
                 eaves_m,
                 ridge_m,
                 ..
-            } => building_flaw(corners_m, *eaves_m, *ridge_m),
+            } => match ridge_m.filter(|ridge_m| ridge_m < eaves_m) {
+                Some(ridge_m) => Some(format!(
+                    "its ridge_m {ridge_m} lies below its eaves_m {eaves_m}"
+                )),
+                None => footprint_flaw(corners_m),
+            },
         }
     }
-}
-
-fn building_flaw(corners_m: &[PlanPoint], eaves_m: f64, ridge_m: Option<f64>) -> Option<String> {
-    const MOST_CORNERS: usize = 100;
-    if let Some(ridge_m) = ridge_m.filter(|ridge_m| *ridge_m < eaves_m) {
-        return Some(format!(
-            "its ridge_m {ridge_m} lies below its eaves_m {eaves_m}"
-        ));
-    }
-    if corners_m.len() > MOST_CORNERS {
-        return Some(format!(
-            "it has {} corners, but may have at most {MOST_CORNERS}",
-            corners_m.len()
-        ));
-    }
-    let doubled_area: f64 = sides(corners_m).map(|(a, b)| a.cross(b)).sum();
-    if corners_m.len() < 3 || doubled_area.abs() < 0.02 {
-        return Some("its corners_m need at least three corners that enclose an area".into());
-    }
-    let walls: Vec<_> = sides(corners_m).collect();
-    let crosses = |k: usize| {
-        walls[k + 1..]
-            .iter()
-            .any(|wall| is_crossing(walls[k], *wall))
-    };
-    (0..walls.len())
-        .any(crosses)
-        .then(|| "its walls cross each other: list the corners in order".into())
-}
-
-/// The sides of a closed plan.
-pub(super) fn sides(corners: &[PlanPoint]) -> impl Iterator<Item = (PlanPoint, PlanPoint)> + '_ {
-    let next = corners.iter().cycle().skip(1);
-    corners.iter().zip(next).map(|(a, b)| (*a, *b))
-}
-
-/// Even-odd rule on a ray to the north.
-fn is_within(at: PlanPoint, corners: &[PlanPoint]) -> bool {
-    let crossed = sides(corners).filter(|(a, b)| {
-        (a.east_m <= at.east_m) != (b.east_m <= at.east_m) && {
-            let share = (at.east_m - a.east_m) / (b.east_m - a.east_m);
-            a.north_m + share * (b.north_m - a.north_m) > at.north_m
-        }
-    });
-    crossed.count() % 2 == 1
-}
-
-fn distance_m(at: PlanPoint, a: PlanPoint, b: PlanPoint) -> f64 {
-    let (along, from_a) = (b.minus(a), at.minus(a));
-    let length_squared = along.dot(along);
-    let share = if length_squared > 0.0 {
-        (from_a.dot(along) / length_squared).clamp(0.0, 1.0)
-    } else {
-        0.0
-    };
-    from_a.plus(along, -share).length_m()
-}
-
-/// Whether two sides cross within both; sides that share a corner do not.
-fn is_crossing((a, b): (PlanPoint, PlanPoint), (c, d): (PlanPoint, PlanPoint)) -> bool {
-    let (ab, cd) = (b.minus(a), d.minus(c));
-    let on_both_sides_of_ab = ab.cross(c.minus(a)) * ab.cross(d.minus(a)) < 0.0;
-    let on_both_sides_of_cd = cd.cross(a.minus(c)) * cd.cross(b.minus(c)) < 0.0;
-    on_both_sides_of_ab && on_both_sides_of_cd
 }

@@ -5,8 +5,8 @@
 //! from the eye is a corner, and a corner lies on one of the solid's edges. The highest of all
 //! edges is therefore the exact outline; none of it is sampled.
 
-use super::obstacle::{PlanPoint, sides};
-use super::{Obstacle, Spot};
+use super::plan_point::sides;
+use super::{Obstacle, PlanPoint, Slope, Viewpoint};
 use std::f64::consts::PI;
 
 /// A straight edge in space, seen from the eye.
@@ -62,11 +62,11 @@ impl Edge {
     }
 }
 
-/// The edges of an obstacle that a spot does not stand in.
-pub(super) fn edges(obstacle: &Obstacle, spot: &Spot) -> Vec<Edge> {
+/// The edges of an obstacle that the eye does not stand in.
+pub(super) fn edges(obstacle: &Obstacle, slope: &Slope, viewpoint: &Viewpoint) -> Vec<Edge> {
     let eye = Eye {
-        plan: spot.plan_point(),
-        height_m: spot.eye_height_m,
+        plan: viewpoint.at,
+        height_m: viewpoint.height_m,
     };
     match obstacle {
         Obstacle::Tree {
@@ -77,11 +77,32 @@ pub(super) fn edges(obstacle: &Obstacle, spot: &Spot) -> Vec<Edge> {
             width_m,
             ..
         } => {
-            let axis = PlanPoint {
-                east_m: *east_m,
-                north_m: *north_m,
-            };
-            eye.crown(axis, *base_m, *height_m, *width_m)
+            let axis = PlanPoint::new(*east_m, *north_m);
+            let base_m = base_m.unwrap_or_else(|| slope.height_m(axis));
+            eye.crown(axis, base_m, *height_m, *width_m)
+        }
+        Obstacle::Pole {
+            east_m,
+            north_m,
+            base_m,
+            height_m,
+            width_m,
+            ..
+        } => {
+            let axis = PlanPoint::new(*east_m, *north_m);
+            let base_m = base_m.unwrap_or_else(|| slope.height_m(axis));
+            eye.pole(axis, base_m + height_m, *width_m)
+        }
+        Obstacle::Shape {
+            corners_m,
+            base_m,
+            height_m,
+            ..
+        } => {
+            let base_m = base_m.unwrap_or_else(|| slope.height_m(mean(corners_m)));
+            sides(corners_m)
+                .map(|(a, b)| eye.level_edge(a, b, base_m + height_m))
+                .collect()
         }
         Obstacle::Wall {
             line_m,
@@ -90,7 +111,15 @@ pub(super) fn edges(obstacle: &Obstacle, spot: &Spot) -> Vec<Edge> {
             ..
         } => line_m
             .windows(2)
-            .map(|ends| eye.level_edge(ends[0], ends[1], base_m + height_m))
+            .map(|ends| {
+                let top = |at: PlanPoint| {
+                    eye.point(at, base_m.unwrap_or_else(|| slope.height_m(at)) + height_m)
+                };
+                Edge {
+                    start: top(ends[0]),
+                    end: top(ends[1]),
+                }
+            })
             .collect(),
         Obstacle::Building {
             corners_m,
@@ -99,6 +128,7 @@ pub(super) fn edges(obstacle: &Obstacle, spot: &Spot) -> Vec<Edge> {
             ridge_m,
             ..
         } => {
+            let base_m = base_m.unwrap_or_else(|| slope.height_m(mean(corners_m)));
             let eaves = sides(corners_m).map(|(a, b)| eye.level_edge(a, b, base_m + eaves_m));
             let roof = ridge_m.map_or_else(Vec::new, |ridge_m| {
                 eye.roof(corners_m, base_m + eaves_m, base_m + ridge_m)
@@ -106,6 +136,14 @@ pub(super) fn edges(obstacle: &Obstacle, spot: &Spot) -> Vec<Edge> {
             eaves.chain(roof).collect()
         }
     }
+}
+
+fn mean(corners: &[PlanPoint]) -> PlanPoint {
+    let share = 1.0 / corners.len() as f64;
+    let origin = PlanPoint::new(0.0, 0.0);
+    corners
+        .iter()
+        .fold(origin, |sum, corner| sum.plus(*corner, share))
 }
 
 /// The eye, with heights over the mark's ground.
@@ -129,19 +167,30 @@ impl Eye {
         }
     }
 
+    /// A flat strip through the axis, turned to the eye.
+    fn pole(&self, axis: PlanPoint, top_m: f64, width_m: f64) -> Vec<Edge> {
+        let across = self.across(axis);
+        vec![self.level_edge(
+            axis.plus(across, -0.5 * width_m),
+            axis.plus(across, 0.5 * width_m),
+            top_m,
+        )]
+    }
+
+    /// Across the line of sight to an axis, clockwise as azimuth grows; of length one.
+    fn across(&self, axis: PlanPoint) -> PlanPoint {
+        let towards = axis.minus(self.plan);
+        let distance_m = towards.length_m();
+        PlanPoint::new(towards.north_m / distance_m, -towards.east_m / distance_m)
+    }
+
     /// The flat crown through a trunk's axis, turned to the eye.
     fn crown(&self, axis: PlanPoint, base_m: f64, height_m: f64, width_m: f64) -> Vec<Edge> {
         /// Where the shoulders begin, of the height.
         const SHOULDER: f64 = 0.6;
         /// How wide the top is, of the width.
         const TOP: f64 = 0.5;
-        let towards = axis.minus(self.plan);
-        let distance_m = towards.length_m();
-        // A quarter turn clockwise, as azimuth grows.
-        let across = PlanPoint {
-            east_m: towards.north_m / distance_m,
-            north_m: -towards.east_m / distance_m,
-        };
+        let across = self.across(axis);
         let half_m = 0.5 * width_m;
         let outline = [
             (-half_m, SHOULDER),

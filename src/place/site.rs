@@ -1,10 +1,10 @@
 //! A site and its spots.
 
-use super::obstacle::PlanPoint;
 use super::{
-    Extinction, Haze, Instrument, Obstacle, SiteAir, SiteEyes, SiteSky, Skyline, SkylinePoint,
+    Backdrop, Exclusion, Extinction, Haze, Instrument, Obstacle, People, PlanPoint, Sector,
+    SiteAir, SiteEyes, SiteSky, SkylinePoint, Slope,
 };
-use super::{limits, measured, silhouette, zone};
+use super::{limits, measured, zone};
 use crate::measure::Angle;
 use crate::sky::Observer;
 use chrono_tz::Tz;
@@ -12,7 +12,6 @@ use serde::de::Error;
 use serde::{Deserialize, Deserializer, Serialize};
 use std::fmt;
 use std::path::PathBuf;
-use std::sync::Arc;
 
 /// A place with coordinates, elevation, time zone, sky quality and haze. Its fields are those of
 /// the site file; name, coordinates and time zone must be given, the rest may be left out there.
@@ -51,21 +50,54 @@ pub struct Site {
     /// Standing positions; never empty, the first is the mark unless the file says otherwise.
     #[serde(default)]
     pub spots: Vec<Spot>,
-    /// The skyline as measured from the mark, in ascending azimuth. The other spots use it
-    /// unchanged, so it should hold what is far away; what is near belongs to `obstacles`.
+    /// How the ground rises away from the mark.
+    #[serde(default, skip_serializing_if = "Slope::is_level")]
+    pub slope: Slope,
+    /// How high the eyes of different people are.
+    #[serde(default, skip_serializing_if = "People::is_usual")]
+    pub people: People,
+    /// The skyline as measured from the mark, in ascending azimuth. It holds for the mark; other
+    /// spots use only those parts of it that are marked far.
     #[serde(
         default,
         deserialize_with = "measured::ascending",
         skip_serializing_if = "Vec::is_empty"
     )]
     pub skyline: Vec<SkylinePoint>,
+    /// Where the measured skyline is far away (a ridge, a church a mile off), and so is the same
+    /// from every spot.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub skyline_far: Vec<Sector>,
     /// What stands on and around the grounds.
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     pub obstacles: Vec<Obstacle>,
-    /// Path of an elevation tile. Kept when a file is read and written, but **not used**: the
-    /// skyline does not look at terrain yet ([`Site::ignores_terrain`]).
+    /// A bare crown counts as blocking when more than this part of it is opaque.
+    #[serde(
+        default = "usual_blocking_density",
+        deserialize_with = "limits::blocking_density",
+        skip_serializing_if = "is_usual_blocking_density"
+    )]
+    pub blocking_density: f64,
+    /// Parts of the grounds where nobody is to stand.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub excluded: Vec<Exclusion>,
+    /// Corners of the grounds that people may stand on; left out, a square around the mark.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub outline_m: Vec<PlanPoint>,
+    /// Path of an elevation tile, or of a folder of them; a relative path counts from the site
+    /// file's folder.
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub terrain: Option<PathBuf>,
+    /// Terrestrial refraction for the terrain, as a part of the Earth's curvature.
+    #[serde(
+        default = "usual_terrain_k",
+        deserialize_with = "limits::terrain_k",
+        skip_serializing_if = "is_usual_terrain_k"
+    )]
+    pub terrain_k: f64,
+    /// A picture of the site under its plan.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub backdrop: Option<Backdrop>,
     /// How much light the people here need, where that is known to differ.
     #[serde(default, skip_serializing_if = "SiteEyes::is_usual")]
     pub eyes: SiteEyes,
@@ -74,7 +106,7 @@ pub struct Site {
     pub kit: Vec<Instrument>,
 }
 
-/// A named standing position. Its ground is level with the mark's.
+/// A named standing position.
 #[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub struct Spot {
@@ -87,12 +119,37 @@ pub struct Spot {
     /// North of the mark, m.
     #[serde(default, deserialize_with = "limits::north_m")]
     pub north_m: f64,
-    /// Height of the eye over the ground, m; 1.6 where it is left out.
+    /// Height of its ground over the mark's, m; left out, the ground as the site slopes.
+    #[serde(
+        default,
+        deserialize_with = "limits::optional::base_m",
+        skip_serializing_if = "Option::is_none"
+    )]
+    pub base_m: Option<f64>,
+    /// Height of a standing adult's eye over the ground, m, a terrace counted in; 1.6 where it is
+    /// left out.
     #[serde(
         default = "usual_eye_height_m",
         deserialize_with = "limits::eye_height_m"
     )]
     pub eye_height_m: f64,
+    /// Radius of the patch that a crowd takes, m; left out, one person stands there.
+    #[serde(
+        default,
+        deserialize_with = "limits::optional::radius_m",
+        skip_serializing_if = "Option::is_none"
+    )]
+    pub radius_m: Option<f64>,
+    /// The skyline as measured from here, in ascending azimuth; used in place of the mark's.
+    #[serde(
+        default,
+        deserialize_with = "measured::ascending",
+        skip_serializing_if = "Vec::is_empty"
+    )]
+    pub skyline: Vec<SkylinePoint>,
+    /// Where that skyline is far away, and so is the same from every spot.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub skyline_far: Vec<Sector>,
 }
 
 /// Why a site, its file or a table is refused: one sentence with the file, line and column where
@@ -111,15 +168,25 @@ impl std::error::Error for SiteError {}
 impl Spot {
     /// The site's mark, at a standing adult's eye height.
     pub fn mark() -> Self {
+        Self::at("mark", PlanPoint::new(0.0, 0.0))
+    }
+
+    /// A spot on the ground at a point, at a standing adult's eye height.
+    pub fn at(name: &str, at: PlanPoint) -> Self {
         Self {
-            name: "mark".into(),
-            east_m: 0.0,
-            north_m: 0.0,
+            name: name.into(),
+            east_m: at.east_m,
+            north_m: at.north_m,
+            base_m: None,
             eye_height_m: usual_eye_height_m(),
+            radius_m: None,
+            skyline: Vec::new(),
+            skyline_far: Vec::new(),
         }
     }
 
-    pub(super) fn plan_point(&self) -> PlanPoint {
+    /// Where it lies in the plan.
+    pub fn plan_point(&self) -> PlanPoint {
         PlanPoint {
             east_m: self.east_m,
             north_m: self.north_m,
@@ -148,9 +215,17 @@ impl Site {
             air: SiteAir::default(),
             sky: SiteSky::default(),
             spots: vec![Spot::mark()],
+            slope: Slope::default(),
+            people: People::default(),
             skyline: Vec::new(),
+            skyline_far: Vec::new(),
             obstacles: Vec::new(),
+            blocking_density: usual_blocking_density(),
+            excluded: Vec::new(),
+            outline_m: Vec::new(),
             terrain: None,
+            terrain_k: usual_terrain_k(),
+            backdrop: None,
             eyes: SiteEyes::default(),
             kit: Vec::new(),
         };
@@ -211,35 +286,6 @@ impl Site {
         })
     }
 
-    /// The skyline seen from a spot: the highest of the measured skyline and the obstacles.
-    ///
-    /// The measured skyline is used as it is from every spot. An obstacle that the spot stands
-    /// in is left out; [`Site::check`] refuses such spots of the site's own, and
-    /// [`Obstacle::surrounds`] asks for any other.
-    pub fn skyline(&self, spot: &Spot) -> Skyline {
-        let points: Vec<(Angle, Angle)> = self
-            .skyline
-            .iter()
-            .map(|point| {
-                (
-                    Angle::from_degrees(point.azimuth_deg),
-                    Angle::from_degrees(point.altitude_deg),
-                )
-            })
-            .collect();
-        let mut edges = Vec::new();
-        for obstacle in self
-            .obstacles
-            .iter()
-            .filter(|obstacle| !obstacle.surrounds(spot))
-        {
-            let label: Arc<str> = obstacle.label().into();
-            let outline = silhouette::edges(obstacle, spot);
-            edges.extend(outline.into_iter().map(|edge| (edge, label.clone())));
-        }
-        Skyline::with_edges(&points, &edges)
-    }
-
     /// Whether the file names an elevation tile, which is not used yet and should be said.
     pub fn ignores_terrain(&self) -> bool {
         self.terrain.is_some()
@@ -248,6 +294,22 @@ impl Site {
 
 fn usual_eye_height_m() -> f64 {
     1.6
+}
+
+fn usual_blocking_density() -> f64 {
+    0.5
+}
+
+fn is_usual_blocking_density(density: &f64) -> bool {
+    *density == usual_blocking_density()
+}
+
+fn usual_terrain_k() -> f64 {
+    0.13
+}
+
+fn is_usual_terrain_k(k: &f64) -> bool {
+    *k == usual_terrain_k()
 }
 
 fn known_version<'de, D: Deserializer<'de>>(from: D) -> Result<Option<u32>, D::Error> {

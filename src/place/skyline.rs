@@ -112,6 +112,24 @@ impl Skyline {
         Angle::from_radians(self.piece(at).shape.altitude(at).max(0.0))
     }
 
+    /// How far a point of the sky stands from what blocks: its altitude above the skyline, or in
+    /// an opening beneath a crown the lesser distance to the opening's floor and ceiling;
+    /// negative where it is blocked, by how far it is from the nearest open sky above or below.
+    pub fn clearance(&self, azimuth: Angle, altitude: Angle) -> Angle {
+        altitude - self.altitude(azimuth)
+    }
+
+    /// What blocks a point of the sky, by its label: `None` where nothing does; the inner `None`
+    /// where it is the measured skyline, terrain or the level horizon.
+    pub fn blocked_by(&self, azimuth: Angle, altitude: Angle) -> Option<Option<&str>> {
+        (self.clearance(azimuth, altitude) <= Angle::ZERO).then(|| self.label(azimuth))
+    }
+
+    /// The open sky beneath crowns at an azimuth: (floor, ceiling) from low to high.
+    pub fn openings(&self, _azimuth: Angle) -> Vec<(Angle, Angle)> {
+        Vec::new()
+    }
+
     /// The highest altitude that it reaches anywhere.
     pub fn highest(&self) -> Angle {
         self.highest

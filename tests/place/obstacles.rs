@@ -15,10 +15,8 @@ fn at(east_m: f64, north_m: f64) -> PlanPoint {
 }
 fn spot(east_m: f64, north_m: f64) -> Spot {
     Spot {
-        name: "here".into(),
-        east_m,
-        north_m,
         eye_height_m: EYE_M,
+        ..Spot::at("here", at(east_m, north_m))
     }
 }
 fn skyline(obstacles: &[Obstacle], spot: &Spot) -> Skyline {
@@ -31,16 +29,19 @@ fn tree(east_m: f64, north_m: f64, height_m: f64, width_m: f64) -> Obstacle {
         label: "tree".into(),
         east_m,
         north_m,
-        base_m: 0.0,
+        base_m: None,
         height_m,
         width_m,
+        gap_m: None,
+        trunk_m: None,
+        leafless: None,
     }
 }
 fn wall(line_m: &[PlanPoint], height_m: f64) -> Obstacle {
     Obstacle::Wall {
         label: "wall".into(),
         line_m: line_m.to_vec(),
-        base_m: 0.0,
+        base_m: None,
         height_m,
     }
 }
@@ -143,7 +144,7 @@ fn a_gabled_hall_shows_its_ridge_its_gable_and_its_eaves() {
         corners_m: (0..4)
             .map(|k| at(corners[(k + turn) % 4].0, corners[(k + turn) % 4].1))
             .collect(),
-        base_m: 0.0,
+        base_m: None,
         eaves_m: 5.5,
         ridge_m: Some(8.0),
     };
@@ -194,7 +195,7 @@ fn a_flat_roof_is_its_eaves_and_ground_and_eye_heights_count() {
     let block = |base_m: f64| Obstacle::Building {
         label: "block".into(),
         corners_m: vec![at(-5.0, 20.0), at(5.0, 20.0), at(5.0, 30.0), at(-5.0, 30.0)],
-        base_m,
+        base_m: Some(base_m),
         eaves_m: 6.0,
         ridge_m: None,
     };
@@ -271,11 +272,11 @@ fn what_stands_across_north_is_one_thing() {
 #[test]
 fn an_obstacle_around_the_spot_is_left_out_and_told_of() {
     let oak = tree(1.0, 0.0, 9.0, 4.0);
-    assert!(oak.surrounds(&spot(0.0, 0.0)) && !oak.surrounds(&spot(-1.5, 0.0)));
+    assert!(oak.surrounds(at(0.0, 0.0)) && !oak.surrounds(at(-1.5, 0.0)));
     assert_eq!(skyline(&[oak], &spot(0.0, 0.0)), Skyline::open());
     let fence = wall(&[at(-5.0, 0.0), at(5.0, 0.0)], 2.0);
-    assert!(fence.surrounds(&spot(2.0, 0.05)) && !fence.surrounds(&spot(2.0, 0.2)));
-    assert!(!fence.surrounds(&spot(9.0, 0.0)), "beyond its end");
+    assert!(fence.surrounds(at(2.0, 0.05)) && !fence.surrounds(at(2.0, 0.2)));
+    assert!(!fence.surrounds(at(9.0, 0.0)), "beyond its end");
     // Seen end-on it covers no azimuth.
     assert_eq!(skyline(&[fence], &spot(9.0, 0.0)), Skyline::open());
 }
@@ -330,12 +331,33 @@ fn shot_deg(obstacle: &Obstacle, from: &Spot, azimuth_deg: f64) -> f64 {
             ];
             outline.array_windows().map(|[a, b]| edge(*a, *b)).collect()
         }
+        Obstacle::Pole {
+            east_m,
+            north_m,
+            height_m,
+            width_m,
+            ..
+        } => {
+            let (de, dn) = (east_m - from.east_m, north_m - from.north_m);
+            let aside = 0.5 * width_m / de.hypot(dn);
+            vec![edge(
+                (at(east_m - aside * dn, north_m + aside * de), *height_m),
+                (at(east_m + aside * dn, north_m - aside * de), *height_m),
+            )]
+        }
         Obstacle::Building {
-            corners_m, eaves_m, ..
+            corners_m,
+            eaves_m: top_m,
+            ..
+        }
+        | Obstacle::Shape {
+            corners_m,
+            height_m: top_m,
+            ..
         } => (0..corners_m.len())
             .map(|k| {
                 let next = corners_m[(k + 1) % corners_m.len()];
-                edge((corners_m[k], *eaves_m), (next, *eaves_m))
+                edge((corners_m[k], *top_m), (next, *top_m))
             })
             .collect(),
     };
@@ -354,7 +376,7 @@ fn any_block() -> impl Strategy<Value = Obstacle> {
         Obstacle::Building {
             label: "block".into(),
             corners_m: vec![at(e, n), at(e + w, n), at(e + w, n + d), at(e, n + d)],
-            base_m: 0.0,
+            base_m: None,
             eaves_m,
             ridge_m: None,
         }
@@ -363,14 +385,17 @@ fn any_block() -> impl Strategy<Value = Obstacle> {
 fn any_obstacles() -> impl Strategy<Value = Vec<Obstacle>> {
     let any = prop_oneof![any_tree(), any_wall(), any_block()];
     prop::collection::vec(any, 1..8).prop_map(|obstacles| {
-        let is_clear = |obstacle: &Obstacle| !obstacle.surrounds(&spot(0.0, 0.0));
+        let is_clear = |obstacle: &Obstacle| !obstacle.surrounds(at(0.0, 0.0));
         obstacles.into_iter().filter(is_clear).collect()
     })
 }
 fn raised(obstacle: &Obstacle, by_m: f64) -> Obstacle {
     let mut higher = obstacle.clone();
     match &mut higher {
-        Obstacle::Tree { height_m, .. } | Obstacle::Wall { height_m, .. } => *height_m += by_m,
+        Obstacle::Tree { height_m, .. }
+        | Obstacle::Wall { height_m, .. }
+        | Obstacle::Pole { height_m, .. }
+        | Obstacle::Shape { height_m, .. } => *height_m += by_m,
         Obstacle::Building { eaves_m, .. } => *eaves_m += by_m,
     }
     higher

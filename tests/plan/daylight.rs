@@ -45,7 +45,7 @@ fn hall(side: f64) -> Obstacle {
             (side * 40.0, far),
             (side, far),
         ]),
-        base_m: 0.0,
+        base_m: None,
         eaves_m: EAVES_M,
         ridge_m: None,
     }
@@ -123,7 +123,7 @@ fn nothing_but_a_building_gives_shade() {
     let wall = |label: &str| Obstacle::Wall {
         label: label.into(),
         line_m: plan(&[(west, near), (east, near)]),
-        base_m: 0.0,
+        base_m: None,
         height_m: EAVES_M,
     };
     // Crowns side by side where the hall stands, wider than they are apart.
@@ -132,9 +132,12 @@ fn nothing_but_a_building_gives_shade() {
             label: "limes".into(),
             east_m: 5.0 + 5.0 * f64::from(index),
             north_m: near - 2.0,
-            base_m: 0.0,
+            base_m: None,
             height_m: EAVES_M,
             width_m: 8.0,
+            gap_m: None,
+            trunk_m: None,
+            leafless: None,
         })
         .collect();
     let mut measured = yard(Vec::new());
@@ -169,9 +172,12 @@ fn a_tree_does_not_lengthen_a_buildings_shade() {
         label: "lime".into(),
         east_m: 1.0,
         north_m: -12.0,
-        base_m: 0.0,
+        base_m: None,
         height_m: 9.0,
         width_m: 3.0,
+        gap_m: None,
+        trunk_m: None,
+        leafless: None,
     };
     let site = yard(vec![hall(1.0), tree]);
     let with_tree = find(&site, VENUS_WEST, Body::Venus);

@@ -196,6 +196,7 @@ mod tests {
             focal_length_mm: 900.0,
             eyepieces: vec![eyepiece(10.0), eyepiece(25.0)],
             view: Orientation::Mirrored,
+            spot: None,
         }];
         assert_eq!(
             telescope(&kit, OpticsView::Mirrored),
