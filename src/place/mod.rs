@@ -23,6 +23,7 @@ mod silhouette;
 mod site;
 mod skyline;
 mod stretch;
+pub mod survey;
 pub mod zone;
 
 pub use air::{Extinction, Haze, SiteAir, SiteSky, standard_pressure_hpa};

@@ -3,10 +3,14 @@
 #[path = "../common/mod.rs"]
 mod common;
 
+mod compass;
 mod demo;
 mod disk;
+mod heights;
 mod measured;
 mod obstacles;
+mod photo;
 mod skyline;
 mod text;
+mod timed;
 mod zones;
