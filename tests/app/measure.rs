@@ -32,8 +32,16 @@ fn readings_from_magnetic_north_become_skyline_points() {
         .enumerate()
     {
         let number = number + 1;
-        write(&mut harness, &format!("Bearing of reading {number}"), bearing_deg);
-        write(&mut harness, &format!("Altitude of reading {number}"), altitude_deg);
+        write(
+            &mut harness,
+            &format!("Bearing of reading {number}"),
+            bearing_deg,
+        );
+        write(
+            &mut harness,
+            &format!("Altitude of reading {number}"),
+            altitude_deg,
+        );
     }
     click(&mut harness, "Put into the skyline");
     let site = harness.state().state().site().clone();

@@ -5,7 +5,7 @@ use super::Photo;
 use crate::app::widgets::{figure, name_it};
 use crate::place::survey::photo::PhotoFit;
 use crate::words::decimal;
-use eframe::egui::{DragValue, Grid, Role, Ui, vec2};
+use eframe::egui::{DragValue, Grid, Role, Ui, WidgetInfo, vec2};
 
 impl Photo {
     /// Draws it, with how far the fit misses each.
@@ -57,7 +57,11 @@ impl Photo {
                     name_it(&menu.response, Role::Button, &named("mark-from-plan-of"));
                     ui.horizontal(|ui| {
                         let known = ui.checkbox(&mut mark.is_altitude_known, "");
-                        name_it(&known, Role::CheckBox, &named("mark-altitude-known-of"));
+                        let name = named("mark-altitude-known-of");
+                        let is_known = mark.is_altitude_known;
+                        known.widget_info(|| {
+                            WidgetInfo::selected(Role::CheckBox, true, is_known, &name)
+                        });
                         ui.add_enabled_ui(mark.is_altitude_known, |ui| {
                             let altitude = ui.add(
                                 DragValue::new(&mut mark.altitude_deg)

@@ -14,6 +14,9 @@ use eframe::egui::{
 /// Nearer than this to a point, points, it is that point which is dragged.
 const REACH: f32 = 10.0;
 
+/// What the form's other parts take of the window's height, points.
+const ROOM_FOR_FORM: f32 = 600.0;
+
 /// Which part of the picture is on view.
 #[derive(Clone, Copy, Debug)]
 pub(super) struct View {
@@ -67,7 +70,7 @@ impl Photo {
     pub(super) fn picture_ui(&mut self, ui: &mut Ui, desk: &Desk<'_>, fitted: Option<&PhotoFit>) {
         let Some(picture) = &self.picture else { return };
         let size = vec2(picture.size.0 as f32, picture.size.1 as f32);
-        let height = (ui.ctx().content_rect().height() - 420.0).clamp(200.0, 720.0);
+        let height = (ui.ctx().content_rect().height() - ROOM_FOR_FORM).clamp(200.0, 720.0);
         let area = vec2(ui.available_width(), height);
         let (area, response) = ui.allocate_exact_size(area, Sense::click_and_drag());
         let name = desk.words.text("photo-canvas");
