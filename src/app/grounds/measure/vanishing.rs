@@ -19,7 +19,6 @@ use eframe::egui::Ui;
 pub struct Vanishing {
     body: Option<Body>,
     at: NotedTime,
-    is_far: bool,
     obstacle: usize,
 }
 
@@ -74,7 +73,6 @@ impl Vanishing {
             ],
         );
         text(ui, look, look.sizes.control, look.colours.text, &line);
-        ui.checkbox(&mut self.is_far, words.text("readings-far"));
         let into = ui.button(words.text("put-into-skyline")).clicked();
         let into = into.then(|| match point.skyline_point() {
             Ok(skyline_point) => put(
@@ -82,7 +80,7 @@ impl Vanishing {
                 NewPoints {
                     points: vec![skyline_point],
                     sweep: Sweep::Points,
-                    is_far: self.is_far,
+                    is_far: false,
                 },
                 commands,
             ),

@@ -142,6 +142,8 @@ impl Photo {
         self.marks_table(ui, desk, fitted.as_ref().ok());
         match fitted {
             Ok(fitted) => self.finish(ui, desk, &fitted, commands),
+            // Nobody has gone wrong who has not marked anything yet: the hint says what to do.
+            Err(_) if self.marks.len() < 2 => None,
             Err(error) => {
                 error_line(ui, desk.look, Some(&error.to_string()));
                 None
