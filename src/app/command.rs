@@ -70,6 +70,8 @@ pub enum Command {
     SaveNewSite,
     /// Opens the ways to measure the skyline.
     Measure,
+    /// Opens bringing files in and handing them out.
+    Exchange,
     /// Shows keys and cautions.
     ShowHelp,
     /// Closes whatever dialog is open.
@@ -194,6 +196,7 @@ impl Command {
             Self::OpenSiteFile(_) => "open-site-file",
             Self::SaveNewSite => "save-new-site",
             Self::Measure => "measure",
+            Self::Exchange => "exchange",
             Self::ShowHelp => "help",
             Self::CloseDialog => "close",
             Self::DismissNotice => "dismiss-notice",

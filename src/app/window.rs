@@ -214,6 +214,7 @@ impl DesktopWindow {
             },
             Command::SaveNewSite => self.save_new_site(),
             Command::Measure => self.dialog = Some(Dialog::Measure),
+            Command::Exchange => self.dialog = Some(Dialog::Exchange(Box::default())),
             Command::ShowHelp => self.dialog = Some(Dialog::Help),
             Command::CloseDialog => self.dialog = None,
             Command::DismissNotice => {

@@ -9,6 +9,7 @@ pub use new_site::NewSite;
 
 use super::command::{Command, Commands};
 use super::grounds::Desk;
+use super::grounds::exchange::Exchange;
 use super::widgets::{card_frame, command_button};
 use super::window::DesktopWindow;
 use eframe::egui::{Context, Id, Modal, ScrollArea, Ui};
@@ -22,6 +23,8 @@ pub enum Dialog {
     FindFile(FindFile),
     /// The ways to measure; what is written there is kept in the window.
     Measure,
+    /// Bringing files in and handing them out.
+    Exchange(Box<Exchange>),
     /// Keys and cautions.
     Help,
 }
@@ -53,9 +56,11 @@ impl DesktopWindow {
             look: &look,
         };
         let words = &self.words;
-        let widest = match dialog {
-            Dialog::Measure if measure.is_large() => 1400.0,
-            Dialog::Measure => 820.0,
+        let is_measure = matches!(dialog, Dialog::Measure);
+        let is_large = is_measure && measure.is_large();
+        let widest = match (is_measure, is_large) {
+            (_, true) => 1400.0,
+            (true, _) => 820.0,
             _ => 620.0,
         };
         let screen = ctx.content_rect();
@@ -68,17 +73,24 @@ impl DesktopWindow {
                 ScrollArea::vertical()
                     .max_height(most)
                     .min_scrolled_height(most)
-                    .show(ui, |ui| match &mut dialog {
-                        Dialog::NewSite(form) => form.show(ui, &look, words),
-                        Dialog::FindFile(find) => find.show(ui, &look, words, commands),
-                        Dialog::Measure => measure.show(ui, &desk, commands),
-                        Dialog::Help => help::show(ui, &look, words),
+                    .show(ui, |ui| {
+                        if is_large {
+                            // So that it does not move while marks are added.
+                            ui.set_min_height(most);
+                        }
+                        match &mut dialog {
+                            Dialog::NewSite(form) => form.show(ui, &look, words),
+                            Dialog::FindFile(find) => find.show(ui, &look, words, commands),
+                            Dialog::Measure => measure.show(ui, &desk, commands),
+                            Dialog::Exchange(form) => form.show(ui, &desk, commands),
+                            Dialog::Help => help::show(ui, &look, words),
+                        }
                     });
                 ui.horizontal(|ui| {
                     let act = match &dialog {
                         Dialog::NewSite(_) => Some(Command::SaveNewSite),
                         Dialog::FindFile(find) => Some(Command::OpenSiteFile(find.path())),
-                        Dialog::Measure | Dialog::Help => None,
+                        Dialog::Measure | Dialog::Exchange(_) | Dialog::Help => None,
                     };
                     if let Some(act) = act {
                         command_button(ui, words, act, commands);

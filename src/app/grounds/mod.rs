@@ -9,6 +9,7 @@
 //! [`Command::DragSite`]: super::command::Command::DragSite
 
 mod compare;
+pub mod exchange;
 pub mod measure;
 mod plan;
 mod selected;
@@ -83,6 +84,7 @@ impl GroundsArea {
         super::pickers::picker_row(ui, desk.look, desk.words, desk.state, commands);
         ui.horizontal(|ui| {
             command_button(ui, desk.words, Command::Measure, commands);
+            command_button(ui, desk.words, Command::Exchange, commands);
         });
         let whole = ui.available_rect_before_wrap();
         let column = (0.42 * whole.width()).clamp(380.0, 720.0);

@@ -53,7 +53,7 @@ fn sector(sweep: Sweep) -> Option<Sector> {
 
 /// The measured skyline that belongs to a spot, and where it is far: the site's own at the mark,
 /// the spot's elsewhere.
-fn measured_of(site: &mut Site, spot: usize) -> (&mut Vec<SkylinePoint>, &mut Vec<Sector>) {
+pub fn measured_of(site: &mut Site, spot: usize) -> (&mut Vec<SkylinePoint>, &mut Vec<Sector>) {
     let is_at_mark = site.spots.get(spot).is_none_or(|spot| {
         spot.skyline.is_empty()
             && spot

@@ -12,8 +12,11 @@ mod readings;
 mod shadow;
 mod vanishing;
 
+pub(super) use into_skyline::measured_of;
+
 use super::Desk;
 use crate::app::command::{Command, Commands};
+use crate::app::palette::Look;
 use crate::app::widgets::{bold, choice, error_line, text};
 use crate::measure::Angle;
 use crate::place::survey::SurveyError;
@@ -74,9 +77,21 @@ pub struct Measure {
 }
 
 /// What came of a button.
-enum Outcome {
+pub(super) enum Outcome {
     Done(String),
     Refused(String),
+}
+
+impl Outcome {
+    /// Says it.
+    pub(super) fn show(&self, ui: &mut Ui, look: &Look) {
+        match self {
+            Self::Done(said) => {
+                text(ui, look, look.sizes.control, look.colours.chosen, said);
+            }
+            Self::Refused(why) => error_line(ui, look, Some(why)),
+        }
+    }
 }
 
 /// The north that bearings are counted from.
@@ -134,18 +149,14 @@ impl Measure {
         if outcome.is_some() {
             self.outcome = outcome;
         }
-        match &self.outcome {
-            Some(Outcome::Done(said)) => {
-                text(ui, look, look.sizes.control, look.colours.chosen, said);
-            }
-            Some(Outcome::Refused(why)) => error_line(ui, look, Some(why)),
-            None => {}
+        if let Some(outcome) = &self.outcome {
+            outcome.show(ui, look);
         }
     }
 }
 
 /// A changed site put into use, and what to say of it.
-fn done(site: crate::place::Site, said: String, commands: &mut Commands) -> Outcome {
+pub(super) fn done(site: crate::place::Site, said: String, commands: &mut Commands) -> Outcome {
     match site.check() {
         Ok(()) => {
             commands.push(Command::EditSite(Box::new(site)));
