@@ -34,8 +34,8 @@ impl Picture {
     /// The skyline along an outline that was drawn over the picture from point to point.
     ///
     /// Where the outline overhangs, the highest counts. Points that lie within `tolerance` of
-    /// the line between their neighbours are left out; the whole is off by no more than twice
-    /// that. What leaves [-10°, 90°] is taken to those limits.
+    /// the line between their neighbours are left out; the whole keeps within twice that of the
+    /// outline, measured across it. What leaves [-10°, 90°] is taken to those limits.
     ///
     /// # Errors
     /// Fewer than two points, too many, no numbers, an outline that only goes up and down, or a
