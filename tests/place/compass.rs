@@ -93,8 +93,8 @@ fn errors_of_reading_become_errors_of_the_point() {
     let steep = reading(Tilt::Percent(100.0)).error(North::True, &error);
     assert_within(
         steep.altitude.degrees(),
-        0.287_906,
-        1e-5,
+        0.287_916,
+        1e-6,
         "1 % at 45 degrees",
     );
 }

@@ -258,7 +258,10 @@ fn mapping_data_comes_in_with_what_was_assumed() {
             feature(LINE, r#""highway": "footway", "name": "Mill Lane""#),
             feature(AREA, r#""amenity": "parking""#),
             feature(LINE, r#""name": "old line""#),
-            feature(POINT, r#""name": "mark""#),
+            feature(
+                r#"{"type": "Point", "coordinates": [-3.418, 51.0497, 102.5]}"#,
+                r#""name": "mark""#,
+            ),
             feature("null", r#""name": "nowhere""#),
         ]
         .join(","),
@@ -327,10 +330,10 @@ fn mapping_data_comes_in_with_what_was_assumed() {
         imported.spots[0].name, "mark 2",
         "the site has a mark already"
     );
-    // By hand: 0.0005 degrees of longitude at 51.05 N are 0.0005 * 111320 * cos 51.05 * 1.002 =
-    // 35.06 m (common practice, to a few cm), 0.0003 degrees of latitude 0.0003 * 111260 = 33.4.
-    assert_within(imported.spots[0].east_m, 35.06, 0.1, "east");
-    assert_within(imported.spots[0].north_m, 33.38, 0.1, "north");
+    // By hand, from the ellipsoid's radii of curvature at 51.05 N (6391.09 km across, 6374.11 km
+    // along the meridian): a degree of longitude is 70.123 km, one of latitude 111.249 km.
+    assert_within(imported.spots[0].east_m, 140.246, 0.01, "east");
+    assert_within(imported.spots[0].north_m, -33.375, 0.01, "north");
     imported.added_to(&site()).unwrap();
 }
 
@@ -378,10 +381,6 @@ fn what_cannot_be_is_refused_in_a_sentence() {
         (
             one(POINT, r#""kind": "tree", "height_m": "tall", "width_m": 3"#),
             "feature 1: its height_m is \"tall\", not a number of metres",
-        ),
-        (
-            one(POINT, r#""kind": "tree", "width_m": 3"#),
-            "feature 1: missing field `height_m`",
         ),
         (
             one(
@@ -446,11 +445,84 @@ fn what_cannot_be_is_refused_in_a_sentence() {
             "{text}: {sentence}"
         );
     }
-    let many = collection(&vec![feature(POINT, ""); 5001].join(","));
+    let many = collection(&vec![feature(POINT, ""); 2501].join(","));
     assert_eq!(
         refusal(&many),
-        "there are 5001 features, but may be at most 5000: cut out the grounds first"
+        "there are 2501 features, but may be at most 2500: cut out the grounds first"
     );
+}
+
+#[test]
+fn a_kind_without_its_measures_gets_the_usual_ones() {
+    let text = collection(
+        &[
+            feature(POINT, r#""kind": "tree", "width_m": 3, "gap_m": 2"#),
+            feature(AREA, r#""kind": "building", "height": 9, "label": "barn""#),
+            feature(
+                AREA,
+                r#""kind": "building", "eaves_m": 4, "ridge_m": 7, "height": 9"#,
+            ),
+        ]
+        .join(","),
+    );
+    let imported = from_geojson(&text, &site()).unwrap();
+    let remarks: Vec<(usize, &str, Remark)> = imported
+        .remarks
+        .iter()
+        .map(|remarked| {
+            (
+                remarked.feature,
+                remarked.label.as_str(),
+                remarked.remark.clone(),
+            )
+        })
+        .collect();
+    assert_eq!(
+        remarks,
+        [
+            (1, "tree 1", Remark::HeightAssumed { height_m: 8.0 }),
+            (2, "barn", Remark::RoofTakenAsFlat),
+        ]
+    );
+    assert!(matches!(
+        imported.obstacles[0],
+        Obstacle::Tree {
+            height_m: 8.0,
+            width_m: 3.0,
+            gap_m: Some(2.0),
+            ..
+        }
+    ));
+    assert!(matches!(
+        imported.obstacles[1],
+        Obstacle::Building {
+            eaves_m: 9.0,
+            ridge_m: None,
+            ..
+        }
+    ));
+    assert!(matches!(
+        imported.obstacles[2],
+        Obstacle::Building {
+            eaves_m: 4.0,
+            ridge_m: Some(7.0),
+            ..
+        }
+    ));
+}
+
+#[test]
+fn many_spots_of_one_name_are_told_apart() {
+    let text = collection(&vec![feature(POINT, r#""name": "here""#); 2500].join(","));
+    let imported = from_geojson(&text, &site()).unwrap();
+    let names: std::collections::HashSet<&str> = imported
+        .spots
+        .iter()
+        .map(|spot| spot.name.as_str())
+        .collect();
+    assert_eq!(names.len(), 2500);
+    let refused = imported.added_to(&site()).unwrap_err().to_string();
+    assert!(refused.contains("2501 spots"), "{refused}");
 }
 
 #[test]

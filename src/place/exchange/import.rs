@@ -1,6 +1,6 @@
 //! GeoJSON to spots, obstacles and excluded areas.
 
-use super::plain::{self, Form, length_m};
+use super::plain::{self, Form, Reading, length_m};
 use super::tangent::TangentPlane;
 use crate::measure::Angle;
 use crate::place::file::read_text;
@@ -8,10 +8,13 @@ use crate::place::plan_point::footprint_flaw;
 use crate::place::{Exclusion, Obstacle, PlanPoint, Site, SiteError, Spot};
 use geojson::{Feature, GeoJson, GeometryValue, JsonObject, JsonValue, Position};
 use serde::de::DeserializeOwned;
+use std::collections::HashSet;
 use std::path::Path;
 
 /// Most features that a file may hold.
-const MOST_FEATURES: usize = 5000;
+const MOST_FEATURES: usize = 2500;
+/// Most positions of one line.
+const MOST_POSITIONS: usize = 2000;
 /// Longest name that a site file takes, characters.
 const LONGEST_NAME: usize = 80;
 /// Nothing of a site is farther from its mark, m.
@@ -179,7 +182,7 @@ fn check_system(crs: Option<&JsonValue>) -> Result<(), SiteError> {
 struct Import {
     plane: TangentPlane,
     /// Names of spots that are taken.
-    names: Vec<String>,
+    names: HashSet<String>,
     imported: Imported,
 }
 
@@ -193,32 +196,28 @@ struct Outline {
 impl Import {
     fn add(&mut self, number: usize, feature: Feature) -> Result<(), SiteError> {
         let properties = feature.properties.unwrap_or_default();
-        let mut remarks = Vec::new();
         let given = text_of(&properties, "label").or_else(|| text_of(&properties, "name"));
         let Some(geometry) = feature.geometry else {
             self.remark(number, given.unwrap_or_default(), [Remark::NoGeometry]);
             return Ok(());
         };
         let (form, rings) = rings(geometry.value)?;
-        let (kind, fields) = match text_of(&properties, "kind") {
-            Some(kind) => own(kind, &properties, form)?,
-            None => match plain::read(&properties, form) {
-                Some(reading) => {
-                    remarks.extend(reading.remarks);
-                    (reading.kind, reading.fields)
-                }
-                None => {
-                    self.remark(number, given.unwrap_or_default(), [Remark::PassedOver]);
-                    return Ok(());
-                }
-            },
+        let reading = match text_of(&properties, "kind") {
+            Some(kind) => Some(own(kind, &properties, form)?),
+            None => plain::read(&properties, form),
         };
+        let Some(reading) = reading else {
+            self.remark(number, given.unwrap_or_default(), [Remark::PassedOver]);
+            return Ok(());
+        };
+        let kind = reading.kind;
+        let mut remarks = reading.remarks;
         let outline = self.outline(form, rings)?;
         if outline.has_holes {
             remarks.push(Remark::HolesLeftOut);
         }
         let label = self.label(kind, number, given, &mut remarks);
-        self.put(kind, fields, &label, &outline)?;
+        self.put(kind, reading.fields, &label, &outline)?;
         self.remark(number, &label, remarks);
         Ok(())
     }
@@ -262,7 +261,7 @@ impl Import {
                     .find(|name| !is_taken(name));
                 label = free.unwrap_or(label);
             }
-            self.names.push(label.clone());
+            self.names.insert(label.clone());
         }
         if given.is_some_and(|given| given != label) {
             remarks.push(Remark::Renamed);
@@ -330,6 +329,12 @@ impl Import {
     fn outline(&self, form: Form, rings: Vec<Vec<Position>>) -> Result<Outline, SiteError> {
         let has_holes = form == Form::Area && rings.len() > 1;
         let ring = rings.into_iter().next().unwrap_or_default();
+        if ring.len() > MOST_POSITIONS {
+            return Err(SiteError(format!(
+                "its line has {} points, but may have at most {MOST_POSITIONS}: simplify it",
+                ring.len()
+            )));
+        }
         let mut points = ring
             .iter()
             .map(|position| self.plan_point(position))
@@ -427,11 +432,7 @@ fn rings(value: GeometryValue) -> Result<(Form, Vec<Vec<Position>>), SiteError> 
 }
 
 /// A feature with a kind of its own: what fields it may have, and which geometry it needs.
-fn own(
-    kind: &str,
-    properties: &JsonObject,
-    form: Form,
-) -> Result<(&'static str, JsonObject), SiteError> {
+fn own(kind: &str, properties: &JsonObject, form: Form) -> Result<Reading, SiteError> {
     const KINDS: [(&str, Form, &[&str]); 7] = [
         ("spot", Form::Point, &["base_m", "eye_height_m", "radius_m"]),
         (
@@ -481,5 +482,5 @@ fn own(
         };
         fields.insert((*name).into(), value);
     }
-    Ok((kind, fields))
+    Ok(plain::completed(kind, fields, properties))
 }

@@ -98,10 +98,31 @@ pub(super) fn read(properties: &JsonObject, form: Form) -> Option<Reading> {
     if is_assumed {
         reading.remarks.push(Remark::KindAssumed);
     }
-    if !matches!(kind, "spot" | "excluded") {
-        reading.measure(properties, assumed_m);
-    }
+    reading.measure(properties, assumed_m);
     Some(reading)
+}
+
+/// Completes a feature that says its kind: measures that it lacks are read from the common
+/// properties or assumed.
+pub(super) fn completed(
+    kind: &'static str,
+    fields: JsonObject,
+    properties: &JsonObject,
+) -> Reading {
+    let assumed_m = match kind {
+        "tree" => 8.0,
+        "pole" => 5.0,
+        "building" => 6.0,
+        "shape" => 3.0,
+        _ => 2.0,
+    };
+    let mut reading = Reading {
+        kind,
+        fields,
+        remarks: Vec::new(),
+    };
+    reading.measure(properties, assumed_m);
+    reading
 }
 
 impl Reading {
@@ -109,10 +130,15 @@ impl Reading {
         self.fields.insert(field.into(), value_m.into());
     }
 
+    /// Fills in the measures that its kind must have and that it lacks.
     fn measure(&mut self, properties: &JsonObject, assumed_m: f64) {
-        let height_m = self.height_m(properties, assumed_m);
         match self.kind {
+            "spot" | "excluded" => {}
             "building" => {
+                if self.fields.contains_key("eaves_m") {
+                    return;
+                }
+                let height_m = self.height_m(properties, assumed_m);
                 let roof_m = self.length_m(properties, "roof:height");
                 if let Some(roof_m) = roof_m.filter(|roof_m| *roof_m > 0.0 && *roof_m < height_m) {
                     self.put("eaves_m", height_m - roof_m);
@@ -123,7 +149,10 @@ impl Reading {
                 }
             }
             "tree" | "pole" => {
-                self.put("height_m", height_m);
+                self.put_height(properties, assumed_m);
+                if self.fields.contains_key("width_m") {
+                    return;
+                }
                 let (key, width_m) = match self.kind {
                     "tree" => ("diameter_crown", CROWN_M),
                     _ => ("diameter", POST_M),
@@ -134,7 +163,14 @@ impl Reading {
                 }
                 self.put("width_m", given_m.unwrap_or(width_m));
             }
-            _ => self.put("height_m", height_m),
+            _ => self.put_height(properties, assumed_m),
+        }
+    }
+
+    fn put_height(&mut self, properties: &JsonObject, assumed_m: f64) {
+        if !self.fields.contains_key("height_m") {
+            let height_m = self.height_m(properties, assumed_m);
+            self.put("height_m", height_m);
         }
     }
 

@@ -7,9 +7,9 @@ use crate::measure::Angle;
 use crate::place::SkylinePoint;
 
 /// Most points that an outline may have.
-const MOST_POINTS: usize = 20_000;
+const MOST_POINTS: usize = 4000;
 /// Most stretches that it is cut into so that its straight lines stay straight in the picture.
-const MOST_STRETCHES: usize = 400_000;
+const MOST_STRETCHES: usize = 60_000;
 /// Narrower stretches are upright, degrees.
 const UPRIGHT_DEG: f64 = 1e-5;
 /// So far beside a jump its lower side stands, degrees.
