@@ -8,6 +8,7 @@ mod air;
 mod areas;
 mod check;
 mod demo;
+pub mod exchange;
 mod eyes;
 mod file;
 mod ground;

@@ -30,8 +30,8 @@ fn angle_and_distance() {
     assert_within(tree.length_m, 15.604_151, 1e-6, "height");
     assert_within(tree.by_distance_m, 0.350_104, 1e-6, "half a metre");
     assert_within(tree.by_angle_m, 0.526_700, 1e-6, "one degree");
-    // The root of 0.350104^2 + 0.526700^2 = 0.399986.
-    assert_within(tree.combined_m(), 0.632_445, 1e-6, "both");
+    // The root of 0.350104^2 + 0.526700^2 = 0.399985.
+    assert_within(tree.combined_m(), 0.632_444, 1e-6, "both");
 }
 
 #[test]
@@ -40,9 +40,9 @@ fn a_stick_held_before_the_eye() {
     let spire = by_held_stick(30.0, 0.6, 0.7, 1.6, &slips()).unwrap();
     assert_within(spire.length_m, 25.714_286, 1e-6, "height");
     assert_within(spire.by_distance_m, 0.428_571, 1e-6, "half a metre");
-    // The top stands (25.714286 - 1.6) / 30 = 0.8038095 up, 38.791829 degrees; a degree more is
-    // tan 39.791829 = 0.8329185, that is 30 * 0.029109.
-    assert_within(spire.by_angle_m, 0.873_27, 2e-4, "one degree");
+    // The top stands (25.714286 - 1.6) / 30 = 0.8038095 up, 38.792652 degrees; a degree more is
+    // tan 39.792652 = 0.8329514, that is 30 * 0.0291418.
+    assert_within(spire.by_angle_m, 0.874_255, 1e-6, "one degree");
 }
 
 #[test]
@@ -59,8 +59,8 @@ fn two_shadows_of_one_minute() {
     let mast = by_shadow(14.2, 1.0, 1.25, &slips()).unwrap();
     assert_within(mast.length_m, 11.36, 1e-9, "height");
     assert_within(mast.by_distance_m, 0.4, 1e-9, "half a metre of shadow");
-    // atan 0.8 = 38.659808; tan 39.659808 = 0.8290307, that is 14.2 * 0.0290307.
-    assert_within(mast.by_angle_m, 0.412_24, 1e-4, "the stick leans a degree");
+    // atan 0.8 = 38.659808; tan 39.659808 = 0.8290317, that is 14.2 * 0.0290317.
+    assert_within(mast.by_angle_m, 0.412_250, 1e-6, "the stick leans a degree");
 }
 
 #[test]
@@ -76,9 +76,9 @@ fn two_angles_where_the_foot_cannot_be_reached() {
         1e-6,
         "half a metre of the line",
     );
-    // Far at 21: 20 sin 21 sin 30 / sin 9 = 22.908380, 3.212225 more; near at 29:
-    // 20 sin 20 sin 29 / sin 9 = 21.199146, 1.502991 more; the root of the squares is 3.546443.
-    assert_within(tower.height.by_angle_m, 3.546_44, 1e-4, "one degree each");
+    // Far at 21: 20 sin 21 sin 30 / sin 9 = 22.908504, 3.212348 more; near at 29:
+    // 20 sin 20 sin 29 / sin 9 = 21.199249, 1.503094 more; the root of the squares is 3.546614.
+    assert_within(tower.height.by_angle_m, 3.546_614, 1e-6, "one degree each");
 }
 
 #[test]
@@ -108,12 +108,12 @@ fn a_place_from_bearing_and_distance() {
     assert_within(oak.along_m, 0.5, 1e-12, "along");
     assert_within(oak.across_m, 0.698_203, 1e-6, "across");
     // The root of 0.25 + 0.487487.
-    assert_within(oak.combined_m(), 0.858_771, 1e-5, "both");
-    // 80 tan 5 = 6.999093; half a metre: tan 5; a degree: 80 (tan 5.5 - tan 5) = 0.703941.
+    assert_within(oak.combined_m(), 0.858_771, 1e-6, "both");
+    // 80 tan 5 = 6.999093; half a metre: tan 5; a degree: 80 (tan 5.5 - tan 5) = 0.704031.
     let crown = width(40.0, degrees(10.0), &slips()).unwrap();
     assert_within(crown.length_m, 6.999_093, 1e-6, "width");
     assert_within(crown.by_distance_m, 0.087_489, 1e-6, "half a metre");
-    assert_within(crown.by_angle_m, 0.703_94, 1e-4, "one degree");
+    assert_within(crown.by_angle_m, 0.704_031, 1e-6, "one degree");
 }
 
 #[test]

@@ -6,6 +6,7 @@ mod common;
 mod compass;
 mod demo;
 mod disk;
+mod geojson;
 mod heights;
 mod measured;
 mod obstacles;

@@ -62,7 +62,7 @@ fn assert_same(fitted: Picture, made: Picture, what: &str) {
 
 // Worked by hand: 60 degrees wide, 4000 pixels: f = 2000 / tan 30 = 3464.1016. Looking level
 // due south, 1000 pixels right of the middle is atan(1000 / 3464.1016) = 16.102114 degrees west
-// of south; 1000 pixels above it is atan(1000 / hypot(1000, 3464.1016)) = 15.502315 degrees up.
+// of south; 1000 pixels above it is atan(1000 / hypot(1000, 3464.1016)) = 15.501360 degrees up.
 #[test]
 fn a_level_camera_by_hand() {
     let made = Picture::Single(camera(180.0, 0.0, 0.0, 60.0));
@@ -71,7 +71,7 @@ fn a_level_camera_by_hand() {
         y: 500.0,
     });
     assert_within(seen.azimuth.degrees(), 196.102_114, 1e-6, "azimuth");
-    assert_within(seen.altitude.degrees(), 15.501_36, 2e-3, "altitude");
+    assert_within(seen.altitude.degrees(), 15.501_360, 1e-6, "altitude");
     // Turned clockwise by 10 degrees, the level rises to the right.
     let turned = Picture::Single(camera(180.0, 0.0, 10.0, 60.0));
     let level = turned
@@ -198,13 +198,13 @@ fn a_level_picture_without_altitudes_has_its_level_in_the_middle() {
     let kind = PictureKind::Panorama(Projection::Cylindrical);
     let fitted = fit(kind, SIZE, &marks, &Level::Picture).unwrap();
     // By hand: 100 degrees over 4000 pixels, 400 pixels up: 10 degrees = 0.17453293 of rise,
-    // which on a cylinder is atan(0.17453293) = 9.900247 degrees.
+    // which on a cylinder is atan(0.17453293) = 9.900277 degrees.
     let seen = fitted.picture.direction(Pixel {
         x: 1000.0,
         y: 1100.0,
     });
     assert_within(seen.azimuth.degrees(), 205.0, 1e-9, "azimuth");
-    assert_within(seen.altitude.degrees(), 9.900_247, 1e-5, "altitude");
+    assert_within(seen.altitude.degrees(), 9.900_277, 1e-6, "altitude");
 }
 
 #[test]
@@ -271,7 +271,25 @@ fn marks_that_cannot_be_are_refused() {
         altitude: None,
     };
     let sentence = refusal(PictureKind::Single, &[left, near], Level::Picture);
-    assert!(sentence.contains("degrees wide"), "{sentence}");
+    assert!(
+        sentence.starts_with("no camera fits these marks"),
+        "{sentence}"
+    );
+    let wide = [
+        PhotoMark {
+            azimuth: degrees(155.0),
+            ..left
+        },
+        PhotoMark {
+            azimuth: degrees(300.0),
+            ..right
+        },
+    ];
+    let sentence = refusal(PictureKind::Single, &wide, Level::Picture);
+    assert!(
+        sentence.contains("degrees wide, but a single one shows at most 150"),
+        "{sentence}"
+    );
 }
 
 fn level_panorama() -> Picture {
@@ -369,7 +387,7 @@ fn an_outline_that_cannot_be_is_refused() {
     };
     assert_eq!(
         refusal(&[(1.0, 1.0)], 0.05),
-        "the outline has 1 points, but must have between 2 and 20000"
+        "the outline has 1 points, but must have between 2 and 4000"
     );
     assert_eq!(
         refusal(&[(1.0, 1.0), (1.0, 900.0)], 0.05),
@@ -459,8 +477,9 @@ proptest! {
         prop_assert_eq!(fitted.spare, 2);
     }
 
-    // The outline's own directions, sampled finely, are the check: the skyline is never more
-    // than twice the tolerance from the highest of them, and never below any.
+    // The outline's own directions, sampled finely, are the check: the skyline lies below none
+    // of them by more than the tolerance (0.05 degrees along the sky makes up to three times
+    // that in altitude where the outline is steep), and is as high as the highest.
     #[test]
     fn a_traced_skyline_keeps_to_its_outline(
         ys in prop::collection::vec(200.0..1600.0f64, 3..12),
@@ -476,8 +495,10 @@ proptest! {
             .collect();
         let pixels: Vec<(f64, f64)> = outline.iter().map(|at| (at.x, at.y)).collect();
         let result = traced(made, &pixels);
+        let mut highest_deg = f64::MIN;
         for ends in outline.windows(2) {
-            for share in [0.05, 0.3, 0.5, 0.77, 0.95] {
+            for step in 0..=100 {
+                let share = f64::from(step) / 100.0;
                 let at = Pixel {
                     x: ends[0].x + share * (ends[1].x - ends[0].x),
                     y: ends[0].y + share * (ends[1].y - ends[0].y),
@@ -485,14 +506,12 @@ proptest! {
                 let seen = made.direction(at);
                 let slack_deg = altitude_deg(&result, seen.azimuth.degrees())
                     - seen.altitude.degrees().max(0.0);
-                prop_assert!(slack_deg > -0.15, "below by {slack_deg} at {at:?}");
+                highest_deg = highest_deg.max(seen.altitude.degrees());
+                let is_end = (at.x - 200.0).abs() < 1.0 || (at.x - 3800.0).abs() < 1.0;
+                prop_assert!(is_end || slack_deg > -0.15, "below by {slack_deg} at {at:?}");
             }
         }
         let top_deg = result.points.iter().map(|point| point.altitude_deg).fold(-90.0, f64::max);
-        let highest_deg = outline
-            .iter()
-            .map(|at| made.direction(*at).altitude.degrees())
-            .fold(-90.0, f64::max);
-        prop_assert!((top_deg - highest_deg).abs() < 0.5, "{top_deg} {highest_deg}");
+        prop_assert!((top_deg - highest_deg).abs() < 0.1, "{top_deg} {highest_deg}");
     }
 }

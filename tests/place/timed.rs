@@ -142,7 +142,7 @@ fn the_uncertainty_becomes_the_motion_in_it() {
     let turned_deg = 360.985_647 / 86_400.0 * uncertainty_s;
     let mut compared = 0;
     for (row, observer) in rows(Body::Venus) {
-        if row.alt_deg > 40.0 {
+        if !(10.0..40.0).contains(&row.alt_deg) {
             continue;
         }
         let note = noted(&row, uncertainty_s);
@@ -152,8 +152,9 @@ fn the_uncertainty_becomes_the_motion_in_it() {
         let azimuth_deg =
             turned_deg * (latitude.sin() - latitude.cos() * azimuth.cos() * tan_altitude).abs();
         let altitude_deg = turned_deg * (latitude.cos() * azimuth.sin()).abs();
-        // Its own motion is at most 1.3 degrees a day, refraction flattens the rest.
-        assert_within(point.azimuth_error.degrees(), azimuth_deg, 0.003, "azimuth");
+        // Its own motion of at most 1.3 degrees a day makes 0.0005, refraction above 10 degrees
+        // flattens the rise by less than 0.9 percent.
+        assert_within(point.azimuth_error.degrees(), azimuth_deg, 0.001, "azimuth");
         assert_within(
             point.altitude_error.degrees(),
             altitude_deg,
@@ -242,7 +243,10 @@ fn what_cannot_be_is_refused_in_a_sentence() {
         .next()
         .expect("the Moon is down for some hours")
         .to_string();
-    assert!(below.starts_with("moon stood"), "{below}");
+    assert!(
+        below.starts_with("the body stood") && below.ends_with("moon"),
+        "{below}"
+    );
     let long = Noted {
         uncertainty_s: 4000.0,
         ..later(0.0)

@@ -54,8 +54,8 @@ pub fn met_skyline(
     let lowest = Angle::from_degrees(-3.0);
     if at.altitude < lowest {
         return Err(SurveyError(format!(
-            "{body} stood {:.1} degrees below the level then: check the date, the time and the \
-             body",
+            "the body stood {:.1} degrees below the level then: check the date, the time and \
+             whether it was {body}",
             -at.altitude.degrees()
         )));
     }

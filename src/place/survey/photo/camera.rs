@@ -153,7 +153,10 @@ impl Fit<'_> {
         };
         let solved = START_FIELDS_DEG.iter().filter_map(start);
         let best = solved.min_by(|a, b| self.cost(a).total_cmp(&self.cost(b)))?;
-        Some(camera(self.middle, &best))
+        // Without a fact to spare the marks must be met: if they are not, they cannot be.
+        let missed = self.missed(&best);
+        let is_met = missed.iter().all(|miss| miss.abs() < 1e-3);
+        (is_met || missed.len() > self.free).then(|| camera(self.middle, &best))
     }
 
     /// A start for a focal length: the level from its points, the heading from the marks.

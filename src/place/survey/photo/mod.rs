@@ -15,7 +15,7 @@ use super::{SurveyError, within};
 use crate::measure::Angle;
 
 /// Most marks and most points of the level that a fit takes.
-const MOST_MARKS: usize = 1000;
+const MOST_MARKS: usize = 100;
 
 /// A place in a picture; it need not lie inside.
 #[derive(Clone, Copy, Debug, PartialEq)]

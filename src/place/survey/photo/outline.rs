@@ -7,9 +7,9 @@ use crate::measure::Angle;
 use crate::place::SkylinePoint;
 
 /// Most points that an outline may have.
-const MOST_POINTS: usize = 20_000;
+const MOST_POINTS: usize = 4000;
 /// Most stretches that it is cut into so that its straight lines stay straight in the picture.
-const MOST_STRETCHES: usize = 400_000;
+const MOST_STRETCHES: usize = 60_000;
 /// Narrower stretches are upright, degrees.
 const UPRIGHT_DEG: f64 = 1e-5;
 /// So far beside a jump its lower side stands, degrees.
@@ -34,8 +34,8 @@ impl Picture {
     /// The skyline along an outline that was drawn over the picture from point to point.
     ///
     /// Where the outline overhangs, the highest counts. Points that lie within `tolerance` of
-    /// the line between their neighbours are left out; the whole is off by no more than twice
-    /// that. What leaves [-10°, 90°] is taken to those limits.
+    /// the line between their neighbours are left out; the whole keeps within twice that of the
+    /// outline, measured across it. What leaves [-10°, 90°] is taken to those limits.
     ///
     /// # Errors
     /// Fewer than two points, too many, no numbers, an outline that only goes up and down, or a
