@@ -72,7 +72,9 @@ impl Photo {
                             name_it(&altitude, Role::SpinButton, &named("mark-altitude-of"));
                         });
                     });
+                    // With nothing to spare every mark fits, whatever is written.
                     let missed = fitted
+                        .filter(|fitted| fitted.spare > 0)
                         .and_then(|fitted| fitted.residuals.get(index))
                         .map_or_else(
                             || "–".to_owned(),
