@@ -23,6 +23,7 @@ mod silhouette;
 mod site;
 mod skyline;
 mod stretch;
+mod terrain;
 pub mod zone;
 
 pub use air::{Extinction, Haze, SiteAir, SiteSky, standard_pressure_hpa};
@@ -39,3 +40,7 @@ pub use obstacle::Obstacle;
 pub use plan_point::PlanPoint;
 pub use site::{Site, SiteError, Spot};
 pub use skyline::{Feature, Skyline};
+pub use terrain::{
+    FarSkyline, LARGEST_RADIUS_M, Relief, Terrain, TerrainRequest, USUAL_REFRACTION_K, cache_path,
+    far_skyline_cached, terrain_path,
+};
