@@ -1,9 +1,10 @@
 //! Every action of the user, recorded while the window is drawn and run afterwards.
 
+use super::area::Area;
 use super::palette::Theme;
 use crate::light::Eye;
 use crate::measure::Moment;
-use crate::place::Haze;
+use crate::place::{Haze, Site};
 use crate::plan::Half;
 use crate::sky::Body;
 use chrono::NaiveDate;
@@ -45,6 +46,18 @@ pub enum Command {
     ChooseHaze(Option<Haze>),
     /// Chooses how the optics show the disc.
     ChooseOpticsView(OpticsView),
+    /// Shows a work area.
+    ShowArea(Area),
+    /// Puts a changed site in place of the chosen one, as one step that can be undone.
+    EditSite(Box<Site>),
+    /// The same while the change goes on, as while something is dragged.
+    DragSite(Box<Site>),
+    /// Ends such a change.
+    EndDrag,
+    /// Undoes the last change of the site.
+    Undo,
+    /// Does it again.
+    Redo,
     /// Colours the window.
     SetTheme(Theme),
     /// Opens the short path to a new site.
@@ -112,8 +125,9 @@ pub type Commands = Vec<Command>;
 
 /// The keys that work while no text is being written. Held as one table, so that the help
 /// cannot say anything else than what happens.
-pub fn keys() -> [(KeyboardShortcut, Command); 12] {
+pub fn keys() -> [(KeyboardShortcut, Command); 16] {
     let plain = |key| KeyboardShortcut::new(Modifiers::NONE, key);
+    let control = |key| KeyboardShortcut::new(Modifiers::COMMAND, key);
     let shift = |key| KeyboardShortcut::new(Modifiers::SHIFT, key);
     [
         (shift(Key::ArrowLeft), Command::StepMinutes(-10)),
@@ -127,6 +141,10 @@ pub fn keys() -> [(KeyboardShortcut, Command); 12] {
         (plain(Key::T), Command::ThisMinute),
         (plain(Key::N), Command::NewSite),
         (plain(Key::O), Command::FindSiteFile),
+        (plain(Key::L), Command::ShowArea(Area::Lookout)),
+        (plain(Key::G), Command::ShowArea(Area::Grounds)),
+        (control(Key::Z), Command::Undo),
+        (control(Key::Y), Command::Redo),
         (plain(Key::F1), Command::ShowHelp),
     ]
 }
@@ -150,6 +168,10 @@ impl Command {
             Self::ThisMinute => "this-minute",
             Self::LetItRun(_) | Self::RunOrStop => "let-it-run",
             Self::Stop => "stop",
+            Self::ShowArea(Area::Lookout) => "lookout",
+            Self::ShowArea(Area::Grounds) => "grounds",
+            Self::Undo => "undo",
+            Self::Redo => "redo",
             Self::SetTheme(Theme::Dark) => "theme-dark",
             Self::SetTheme(Theme::Light) => "theme-light",
             Self::SetTheme(Theme::Red) => "theme-red",
@@ -176,7 +198,10 @@ impl Command {
             | Self::ChooseDate(_)
             | Self::ChooseBody(_)
             | Self::ChooseSite(_)
-            | Self::ChooseSpot(_) => return None,
+            | Self::ChooseSpot(_)
+            | Self::EditSite(_)
+            | Self::DragSite(_)
+            | Self::EndDrag => return None,
         })
     }
 }

@@ -4,6 +4,7 @@
 //! the figures in a column on the right. Narrow (below [`WIDE`] points): one column that
 //! scrolls, the caution fixed above it.
 
+use super::area::Area;
 use super::cards::{
     appearing_card, caution_card, facts_card, instead_of_view, notice_line, sentence_card,
 };
@@ -15,7 +16,8 @@ use super::widgets::{bold, choice, command_button, figure};
 use super::window::DesktopWindow;
 use crate::measure::CivilScale;
 use eframe::egui::{
-    Align, Label, Layout, Rect, RichText, ScrollArea, Sense, Stroke, Ui, UiBuilder, pos2, vec2,
+    Align, Button, Label, Layout, Rect, RichText, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder,
+    WidgetInfo, pos2, vec2,
 };
 
 /// From this width on, points, the right column stands beside the view.
@@ -31,8 +33,6 @@ const ROOM_FOR_ORDER: f32 = 440.0;
 const BESIDE_HEIGHT: f32 = 250.0;
 /// The sentence card's height in the right column: four lines.
 const SENTENCE_HEIGHT: f32 = 112.0;
-/// With less room than this beside the name, points, the top bar leaves the work area out.
-const ROOM_FOR_AREA: f32 = 420.0;
 /// The caution card's height where it has the column's width.
 const CAUTION_HEIGHT: f32 = 100.0;
 
@@ -86,7 +86,9 @@ impl DesktopWindow {
                     command_button(ui, &self.words, Command::DismissNotice, commands);
                 });
             }
-            if is_wide {
+            if self.state.area == Area::Grounds {
+                self.grounds_ui(ui, commands);
+            } else if is_wide {
                 self.wide(ui, &look, commands);
             } else {
                 self.narrow(ui, &look, commands);
@@ -102,8 +104,9 @@ impl DesktopWindow {
             ui.spacing_mut().item_spacing.x = 8.0;
             let name = self.words.text("program");
             bold(ui, look, look.sizes.name, look.colours.chosen, &name);
-            if ui.available_width() > ROOM_FOR_AREA {
-                self.work_area_tab(ui, look);
+            ui.add_space(look.room.inside);
+            for area in Area::ALL {
+                self.area_tab(ui, look, area, commands);
             }
             ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
                 command_button(ui, &self.words, Command::ShowHelp, commands);
@@ -119,17 +122,32 @@ impl DesktopWindow {
         });
     }
 
-    /// The name of the work area on view.
-    fn work_area_tab(&self, ui: &mut Ui, look: &Look) {
-        ui.add_space(look.room.inside);
-        let area = self.words.text("lookout");
-        let tab = bold(ui, look, look.sizes.sentence, look.colours.text, &area);
-        let under = tab.rect.translate(vec2(0.0, 4.0));
-        ui.painter().hline(
-            under.x_range(),
-            under.bottom(),
-            Stroke::new(2.0, look.colours.chosen),
-        );
+    /// A work area's tab, underlined while it is on view.
+    fn area_tab(&self, ui: &mut Ui, look: &Look, area: Area, commands: &mut Commands) {
+        let command = Command::ShowArea(area);
+        let name = self.words.text(command.wording().unwrap_or_default());
+        let is_shown = self.state.area == area;
+        let colour = if is_shown {
+            look.colours.text
+        } else {
+            look.colours.lesser
+        };
+        let text = RichText::new(&name)
+            .font(look.bold(look.sizes.sentence))
+            .color(colour);
+        let tab = ui.add(Button::new(text).frame(false));
+        tab.widget_info(|| WidgetInfo::selected(Role::Tab, true, is_shown, &name));
+        if is_shown {
+            let under = tab.rect.translate(vec2(0.0, 2.0));
+            ui.painter().hline(
+                under.x_range(),
+                under.bottom(),
+                Stroke::new(2.0, look.colours.chosen),
+            );
+        }
+        if tab.clicked() {
+            commands.push(command);
+        }
     }
 
     fn wide(&mut self, ui: &mut Ui, look: &Look, commands: &mut Commands) {

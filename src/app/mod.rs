@@ -4,11 +4,13 @@
 //! ([`state::State::pass`]), the frame is drawn and only records [`command::Command`]s, and
 //! these are run at its end. Planning happens in [`state`], when site, spot or date change.
 
+pub mod area;
 mod cards;
 mod caution;
 pub mod command;
 mod dialogs;
 mod frame;
+pub mod grounds;
 mod keys;
 pub mod lookout;
 pub mod palette;

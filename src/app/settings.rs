@@ -1,5 +1,6 @@
 //! What the window remembers from one time to the next, in a small RON file of its own.
 
+use super::area::Area;
 use super::palette::Theme;
 use crate::light::Eye;
 use crate::sky::Body;
@@ -29,6 +30,8 @@ pub struct Settings {
     pub eye: Eye,
     /// The theme.
     pub theme: Theme,
+    /// The work area on view.
+    pub area: Area,
     /// Size of everything, 1 being usual.
     pub zoom: f32,
     /// Width and height of the window, points at zoom 1.
@@ -47,6 +50,7 @@ impl Default for Settings {
             body: Body::Venus,
             eye: Eye::Visitor,
             theme: Theme::default(),
+            area: Area::default(),
             zoom: 1.0,
             window: (1280.0, 800.0),
             is_maximized: false,

@@ -79,6 +79,25 @@ impl Sites {
             .iter()
             .position(|k| k.file.as_deref() == file && (file.is_some() || k.site.name == name))
     }
+    /// Puts a changed site in place of one of them; past the end, nothing happens.
+    pub fn replace(&mut self, index: usize, site: Site) {
+        if let Some(known) = self.known.get_mut(index) {
+            known.site = site;
+        }
+    }
+    /// Gives one of them a file; of a demo site a copy gets it, and the demo site is put back as
+    /// it ships. Returns the place of what has the file.
+    pub fn copy_to(&mut self, index: usize, file: PathBuf) -> usize {
+        let site = self.site(index).clone();
+        let demo = demo_sites().get(index).filter(|_| {
+            let known = self.known.get(index);
+            known.is_some_and(|known| known.file.is_none())
+        });
+        if let Some(demo) = demo {
+            self.replace(index, demo.clone());
+        }
+        self.add(site, file)
+    }
     /// Takes a site in, in place of what came from the same file before; returns its place.
     pub fn add(&mut self, site: Site, file: PathBuf) -> usize {
         let same = self

@@ -2,6 +2,7 @@
 
 use super::command::{Command, Commands};
 use super::dialogs::Dialog;
+use super::grounds::GroundsArea;
 use super::keys::TakeKeys;
 use super::lookout::Drawings;
 use super::palette::{Palette, Theme};
@@ -11,7 +12,7 @@ use super::sites::Sites;
 use super::start::Start;
 use super::state::{Motion, State};
 use super::theme;
-use crate::place::Site;
+use crate::place::{Site, SiteError};
 use crate::words::Words;
 use eframe::egui::{self, Context};
 use std::path::PathBuf;
@@ -35,6 +36,7 @@ pub struct DesktopWindow {
     /// What went wrong beside the view, oldest first; one is shown at a time.
     pub(super) notices: Vec<String>,
     pub(super) drawings: Drawings,
+    pub(super) grounds: GroundsArea,
     /// The half-night's sentence, made when it changes.
     sentence: Option<(SceneKey, String)>,
     applied_theme: Option<Theme>,
@@ -78,6 +80,7 @@ impl DesktopWindow {
         choices.eye = choices.eye.or(Some(settings.eye));
         let mut state = State::open(start.clock, start.scales, sites, chosen, choices);
         state.theme = settings.theme;
+        state.area = settings.area;
 
         let ctx = &cc.egui_ctx;
         theme::install_fonts(ctx);
@@ -99,6 +102,7 @@ impl DesktopWindow {
             dialog: None,
             notices,
             drawings: Drawings::default(),
+            grounds: GroundsArea::default(),
             sentence: None,
             applied_theme: None,
             is_red,
@@ -170,7 +174,9 @@ impl DesktopWindow {
         if let Some(command) = self.state.run(command) {
             self.run_in_window(command);
         }
-        if self.state.site_index() != site {
+        if self.state.take_unsaved() {
+            self.save_site();
+        } else if self.state.site_index() != site {
             self.warn_of_terrain();
         }
     }
@@ -213,6 +219,54 @@ impl DesktopWindow {
         }
     }
 
+    /// Writes the changed site to its file; a demo site's changes go to a copy in the sites
+    /// folder.
+    fn save_site(&mut self) {
+        let known = self.state.sites().list().get(self.state.site_index());
+        let file = known.and_then(|known| known.file.clone());
+        let is_copy = file.is_none();
+        let Some(file) = file.or_else(|| self.file_for_copy()) else {
+            return;
+        };
+        let saved = make_folder(&file).and_then(|()| self.state.site().save(&file));
+        match saved {
+            Ok(()) if is_copy => {
+                let text = self.words.text_with::<&str>(
+                    "demo-site-copied",
+                    &[
+                        ("site", self.state.site().name.as_str()),
+                        ("file", &file.to_string_lossy()),
+                    ],
+                );
+                self.state.give_file(file);
+                self.notices.push(text);
+            }
+            Ok(()) => {}
+            Err(error) => {
+                self.state.still_unsaved();
+                let reason = error.to_string();
+                let text = self
+                    .words
+                    .text_with::<&str>("site-not-saved", &[("reason", &reason)]);
+                if self.notices.last() != Some(&text) {
+                    self.notices.push(text);
+                }
+            }
+        }
+    }
+
+    /// A file in the sites folder that is not there yet.
+    fn file_for_copy(&self) -> Option<PathBuf> {
+        let folder = self.state.sites().folder()?;
+        let name = &self.state.site().name;
+        (1..1000)
+            .map(|number| match number {
+                1 => folder.join(super::sites::file_name(name)),
+                _ => folder.join(super::sites::file_name(&format!("{name} {number}"))),
+            })
+            .find(|file| !file.exists())
+    }
+
     fn save_new_site(&mut self) {
         let Some(Dialog::NewSite(form)) = &mut self.dialog else {
             return;
@@ -246,6 +300,7 @@ impl DesktopWindow {
             body: self.state.body(),
             eye: self.state.eye(),
             theme: self.state.theme,
+            area: self.state.area,
             zoom,
             window,
             is_maximized,
@@ -283,6 +338,14 @@ impl DesktopWindow {
         self.is_red.store(is_red, Ordering::Relaxed);
         self.applied_theme = Some(self.state.theme);
     }
+}
+
+fn make_folder(file: &std::path::Path) -> Result<(), SiteError> {
+    let Some(folder) = file.parent() else {
+        return Ok(());
+    };
+    std::fs::create_dir_all(folder)
+        .map_err(|error| SiteError(format!("cannot make {}: {error}", folder.display())))
 }
 
 /// The site and spot asked for, or else those remembered, or else the first.

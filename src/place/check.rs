@@ -22,6 +22,20 @@ impl Site {
     }
 }
 
+impl Site {
+    /// The rules between fields alone, quickly: for a site of which every number is known to be
+    /// in range, as while something is dragged. [`Site::check`] looks at everything.
+    ///
+    /// # Errors
+    /// The first rule that is broken; one sentence.
+    pub fn check_rules(&self) -> Result<(), SiteError> {
+        match flaw(self) {
+            None => Ok(()),
+            Some(flaw) => Err(SiteError(flaw.sentence)),
+        }
+    }
+}
+
 /// The first rule that a site breaks.
 pub(super) fn flaw(site: &Site) -> Option<Flaw> {
     air(site)

@@ -29,6 +29,7 @@ impl State {
         self.motion = Motion::Still;
         self.site = index.min(self.sites.len().saturating_sub(1));
         self.spot = 0;
+        self.forget_history();
         self.choose_haze(None);
         self.optics_view = self.view_of_kit();
         self.show_night(self.date, Goal::Best(self.half));
@@ -133,6 +134,11 @@ impl State {
         self.date = date;
         self.planned = self.plan(date);
         self.go(goal);
+    }
+
+    /// Plans the shown night anew after a change of the site, and stays at the moment shown.
+    pub(super) fn show_edited(&mut self) {
+        self.show_night(self.date, Goal::Local(self.half, self.wanted));
     }
 
     /// Goes to a goal; to another night where the goal is an instant outside the present one.

@@ -1,8 +1,10 @@
 //! What is chosen and what is shown. Knows nothing of windows: commands change it, the frame
 //! reads it, tests drive it either way.
 
+mod editing;
 mod going;
 
+use super::area::Area;
 use super::command::{Command, OpticsView, Speed};
 use super::palette::Theme;
 use super::planned::Planned;
@@ -13,6 +15,7 @@ use crate::place::{Haze, Instrument, Orientation, Site, Spot};
 use crate::plan::{Half, NightError, Window};
 use crate::sky::{Body, Ephemeris};
 use chrono::{DateTime, NaiveDate, NaiveDateTime, Utc};
+use editing::History;
 use going::Goal;
 use std::sync::Arc;
 
@@ -67,6 +70,9 @@ pub struct State {
     plan_count: u64,
     motion: Motion,
     speed: Speed,
+    history: History,
+    /// The work area on view.
+    pub area: Area,
     /// How the chosen optics show the disc.
     pub optics_view: OpticsView,
     /// How the window is coloured.
@@ -101,6 +107,8 @@ impl State {
             plan_count: 0,
             motion: Motion::Still,
             speed: Speed::default(),
+            history: History::default(),
+            area: Area::default(),
             haze: None,
             site_in_haze: None,
             optics_view: OpticsView::default(),
@@ -256,6 +264,12 @@ impl State {
             }
             Command::ChooseOpticsView(view) => self.optics_view = view,
             Command::SetTheme(theme) => self.theme = theme,
+            Command::ShowArea(area) => self.area = area,
+            Command::DragSite(site) => self.drag_site(*site),
+            Command::EndDrag => self.end_drag(),
+            Command::EditSite(site) => self.edit_site(*site),
+            Command::Undo => self.undo(),
+            Command::Redo => self.redo(),
             other => return Some(other),
         }
         None
@@ -277,6 +291,12 @@ impl State {
                 self.set_moment(next);
             }
         }
+    }
+
+    /// Gives the chosen site a file of its own: a demo site's changes are kept in a copy, and the
+    /// demo site itself is put back.
+    pub fn give_file(&mut self, file: std::path::PathBuf) {
+        self.site = self.sites.copy_to(self.site, file);
     }
 
     /// Takes a site in, or anew, and chooses it.

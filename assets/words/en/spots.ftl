@@ -1,0 +1,1 @@
+# The skyline from a spot, the spots side by side, where to stand.
