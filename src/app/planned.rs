@@ -4,16 +4,19 @@
 use crate::light::Eye;
 use crate::measure::TimeScales;
 use crate::place::{Site, Skyline, Spot};
-use crate::plan::{Night, NightError, NightRequest, Sight};
+use crate::plan::{Night, NightError, NightRequest, NightSky, Sight};
 use crate::sky::{Body, Ephemeris, Observer, Span};
 use chrono::NaiveDate;
 use chrono_tz::Tz;
+use std::sync::Arc;
 
 /// A planned night.
 #[derive(Clone, Debug)]
 pub struct Planned {
     /// The plan for the bright bodies.
     pub night: Night,
+    /// The same night whatever stands in the way: what every spot of the site shares.
+    pub night_sky: Arc<NightSky>,
     /// All bodies over the night.
     pub span: Span,
     /// Place and air.
@@ -74,7 +77,8 @@ impl Standpoint {
         (date, scales): (NaiveDate, TimeScales),
         count: u64,
     ) -> Result<Planned, NightError> {
-        let night = Night::plan(ephemeris, &self.request(date, scales))?;
+        let night_sky = NightSky::new(ephemeris, &self.request(date, scales))?;
+        let night = night_sky.behind(&self.skyline);
         let span = ephemeris
             .cover(night.start.tt(), night.end.tt(), &Body::ALL)
             .map_err(|_| {
@@ -84,6 +88,7 @@ impl Standpoint {
             })?;
         Ok(Planned {
             night,
+            night_sky: Arc::new(night_sky),
             span,
             observer: self.observer,
             skyline: self.skyline,
@@ -91,5 +96,19 @@ impl Standpoint {
             sight: self.sight,
             count,
         })
+    }
+}
+
+impl Planned {
+    /// The same night seen from behind another skyline of the same site; `count` is the new
+    /// plan's own. A matter of milliseconds.
+    #[must_use]
+    pub fn behind(&self, skyline: Skyline, count: u64) -> Self {
+        Self {
+            night: self.night_sky.behind(&skyline),
+            skyline,
+            count,
+            ..self.clone()
+        }
     }
 }
