@@ -1,9 +1,9 @@
 //! The window as the window library sees it: passes time, draws, runs commands, remembers.
 
 use super::command::{Command, Commands};
-use super::dialogs::Dialog;
-use super::grounds::GroundsArea;
+use super::dialogs::{Dialog, Wanted};
 use super::grounds::measure::Measure;
+use super::grounds::{GroundsArea, backdrop};
 use super::keys::TakeKeys;
 use super::lookout::Drawings;
 use super::palette::{Palette, Theme};
@@ -80,6 +80,7 @@ impl DesktopWindow {
         let mut choices = start.choices;
         choices.body = choices.body.or(Some(settings.body));
         choices.eye = choices.eye.or(Some(settings.eye));
+        choices.stature = choices.stature.or(Some(settings.stature));
         let mut state = State::open(start.clock, start.scales, sites, chosen, choices);
         state.theme = settings.theme;
         state.area = settings.area;
@@ -200,8 +201,13 @@ impl DesktopWindow {
         match command {
             Command::NewSite => self.dialog = Some(Dialog::new_site()),
             Command::FindSiteFile => {
-                self.dialog = Some(Dialog::find_file(self.state.sites().folder()));
+                self.dialog = Some(Dialog::find_file(Wanted::Site, self.state.sites().folder()));
             }
+            Command::FindBackdrop => {
+                let folder = self.state.site_folder();
+                self.dialog = Some(Dialog::find_file(Wanted::Backdrop, folder));
+            }
+            Command::OpenBackdrop(file) => self.open_backdrop(file),
             Command::OpenSiteFile(file) => match Site::read(&file) {
                 Ok(site) => {
                     self.state.add_site(site, file);
@@ -221,6 +227,29 @@ impl DesktopWindow {
                 self.notices.drain(..self.notices.len().min(1));
             }
             _ => {}
+        }
+    }
+
+    /// Puts a picture under the plan of the chosen site, by a relative path where it lies in the
+    /// site file's folder.
+    fn open_backdrop(&mut self, file: PathBuf) {
+        match backdrop::size_px(&file) {
+            Ok(size_px) => {
+                let folder = self.state.site_folder();
+                let relative = folder.and_then(|folder| file.strip_prefix(folder).ok());
+                let picture = relative.map_or_else(|| file.clone(), ToOwned::to_owned);
+                let mut site = self.state.site().clone();
+                site.backdrop = Some(backdrop::placed(picture, size_px));
+                self.dialog = None;
+                self.state.run(Command::EditSite(Box::new(site)));
+            }
+            Err(flaw) => {
+                let sentence = flaw.sentence(&self.words, &file);
+                match &mut self.dialog {
+                    Some(Dialog::FindFile(find)) => find.error = Some(sentence),
+                    _ => self.notices.push(sentence),
+                }
+            }
         }
     }
 
@@ -304,6 +333,7 @@ impl DesktopWindow {
             spot: Some(self.state.spot().name.clone()),
             body: self.state.body(),
             eye: self.state.eye(),
+            stature: self.state.stature(),
             theme: self.state.theme,
             area: self.state.area,
             zoom,

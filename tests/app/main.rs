@@ -5,6 +5,7 @@ mod air;
 mod cautions;
 mod desk;
 mod eyes;
+mod grounds;
 mod measure;
 mod pictures;
 mod sites;

@@ -12,6 +12,7 @@ mod measured;
 mod obstacles;
 mod photo;
 mod skyline;
+mod terrain;
 mod text;
 mod timed;
 mod zones;

@@ -4,7 +4,7 @@ mod find_file;
 mod help;
 mod new_site;
 
-pub use find_file::FindFile;
+pub use find_file::{FindFile, Wanted};
 pub use new_site::NewSite;
 
 use super::command::{Command, Commands};
@@ -35,8 +35,8 @@ impl Dialog {
         Self::NewSite(Box::new(NewSite::new()))
     }
     /// Finding a file, from a folder on.
-    pub fn find_file(folder: Option<&Path>) -> Self {
-        Self::FindFile(FindFile::new(folder))
+    pub fn find_file(wanted: Wanted, folder: Option<&Path>) -> Self {
+        Self::FindFile(FindFile::new(wanted, folder))
     }
 }
 
@@ -89,7 +89,7 @@ impl DesktopWindow {
                 ui.horizontal(|ui| {
                     let act = match &dialog {
                         Dialog::NewSite(_) => Some(Command::SaveNewSite),
-                        Dialog::FindFile(find) => Some(Command::OpenSiteFile(find.path())),
+                        Dialog::FindFile(find) => Some(find.command(find.path())),
                         Dialog::Measure | Dialog::Exchange(_) | Dialog::Help => None,
                     };
                     if let Some(act) = act {

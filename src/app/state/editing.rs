@@ -30,6 +30,10 @@ impl State {
     pub fn can_redo(&self) -> bool {
         !self.history.redo.is_empty()
     }
+    /// Whether a change still goes on, as while something is dragged.
+    pub fn is_dragging(&self) -> bool {
+        self.history.before_drag.is_some()
+    }
     /// Why the last change was refused, if it was.
     pub fn refusal(&self) -> Option<&str> {
         self.history.refusal.as_deref()

@@ -104,7 +104,7 @@ impl State {
     }
 
     fn coming(&self, date: NaiveDate, now: Moment) -> Result<Option<plan::Coming>, NightError> {
-        let standpoint = Standpoint::new(self.site_in_air(), self.spot())?;
+        let standpoint = self.standpoint(date)?;
         let request = plan::NightRequest {
             bodies: &[self.body],
             eyes: &[self.eye],
@@ -120,9 +120,13 @@ impl State {
         )
     }
 
+    fn standpoint(&self, date: NaiveDate) -> Result<Standpoint, NightError> {
+        Standpoint::new(self.site_in_air(), self.spot(), self.stature, date)
+    }
+
     fn plan(&mut self, date: NaiveDate) -> Result<Planned, NightError> {
         self.plan_count += 1;
-        let standpoint = Standpoint::new(self.site_in_air(), self.spot())?;
+        let standpoint = self.standpoint(date)?;
         standpoint.plan(&self.ephemeris, (date, self.scales), self.plan_count)
     }
 

@@ -179,6 +179,20 @@ impl StandingMap {
         self.cell(column, row).stay()
     }
 
+    /// The same map by the least that one of the nights gives, in place of the sum over them.
+    #[must_use]
+    pub fn by_least(&self) -> Self {
+        let cells = self.cells.iter().map(|cell| match cell {
+            Cell::Stay(stay) => Cell::Stay(stay.by_least()),
+            other => *other,
+        });
+        Self {
+            open: self.open.by_least(),
+            cells: cells.collect(),
+            ..*self
+        }
+    }
+
     /// Every square that is known and can be stood on, with its centre.
     pub fn stays(&self) -> impl Iterator<Item = (PlanPoint, Stay)> + '_ {
         self.cells.iter().enumerate().filter_map(|(index, cell)| {
