@@ -74,6 +74,10 @@ pub enum Command {
     OpenBackdrop(PathBuf),
     /// Saves the new site being described, and chooses it.
     SaveNewSite,
+    /// Opens the ways to measure the skyline.
+    Measure,
+    /// Opens bringing files in and handing them out.
+    Exchange,
     /// Shows keys and cautions.
     ShowHelp,
     /// Closes whatever dialog is open.
@@ -202,6 +206,8 @@ impl Command {
             Self::FindBackdrop => "find-backdrop",
             Self::OpenBackdrop(_) => "open-backdrop",
             Self::SaveNewSite => "save-new-site",
+            Self::Measure => "measure",
+            Self::Exchange => "exchange",
             Self::ShowHelp => "help",
             Self::CloseDialog => "close",
             Self::DismissNotice => "dismiss-notice",

@@ -16,6 +16,7 @@ pub mod lookout;
 mod measured;
 pub mod palette;
 mod pickers;
+mod picture;
 mod planned;
 pub mod scene;
 mod settings;
