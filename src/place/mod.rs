@@ -23,6 +23,7 @@ mod locate;
 mod measured;
 mod measured_use;
 mod obstacle;
+mod patch;
 mod plan_point;
 mod prepared;
 mod roof;

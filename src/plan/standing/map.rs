@@ -230,7 +230,10 @@ mod tests {
                 order.push((column, job.row));
             }
         }
-        assert_eq!(order[..6], [(0, 0), (8, 0), (16, 0), (0, 8), (8, 8), (16, 8)]);
+        assert_eq!(
+            order[..6],
+            [(0, 0), (8, 0), (16, 0), (0, 8), (8, 8), (16, 8)]
+        );
         let mut once = order.clone();
         once.sort_unstable();
         once.dedup();
