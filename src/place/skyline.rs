@@ -174,6 +174,46 @@ impl Skyline {
         holding.next().map(|layer| layer.source)
     }
 
+    /// The altitude of the edge that [`Skyline::clearance`] counts from: that of an opening's
+    /// floor or ceiling, or the top of all that blocks.
+    pub fn nearest_edge(&self, azimuth: Angle, altitude: Angle) -> Angle {
+        let (at, index) = self.column_at(azimuth);
+        let top = seen(&self.stack.top(index), at);
+        let mut best = ((altitude - top).radians(), top);
+        self.each_opening(at, index, |floor, ceiling| {
+            let over_floor = ((altitude - floor).radians(), floor);
+            let under_ceiling = ((ceiling - altitude).radians(), ceiling);
+            let nearer = if over_floor.0 <= under_ceiling.0 {
+                over_floor
+            } else {
+                under_ceiling
+            };
+            if nearer.0 > best.0 {
+                best = nearer;
+            }
+        });
+        best.1
+    }
+
+    /// The label of what hides a point of the sky, or would hide it an arcsecond further on in
+    /// any direction (it stands at an edge), or else of what is topmost there; `None` where that
+    /// is no obstacle.
+    pub fn hides(&self, azimuth: Angle, altitude: Angle) -> Option<&str> {
+        let (none, little) = (Angle::ZERO, Angle::from_arcsec(1.0));
+        let beside = [
+            (none, none),
+            (none, -little),
+            (none, little),
+            (little, none),
+            (-little, none),
+        ];
+        let found = beside
+            .iter()
+            .find_map(|(across, up)| self.source_at(azimuth + *across, altitude + *up));
+        let source = found.unwrap_or_else(|| self.stack.top_source(self.column_at(azimuth).1));
+        self.name_of(source)
+    }
+
     /// The highest altitude that it reaches anywhere.
     pub fn highest(&self) -> Angle {
         self.highest

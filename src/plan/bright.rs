@@ -61,7 +61,12 @@ impl Looked<'_> {
     fn margin(&self, eye: Eye, moment: Moment) -> Option<Margin> {
         let at_s = moment.seconds_since(self.lit.watch.start);
         let sight: &Sight = self.lit.sight;
-        lit::margin(self.lit.watch, sight, (self.track.body, eye, Luck::Usual), at_s)
+        lit::margin(
+            self.lit.watch,
+            sight,
+            (self.track.body, eye, Luck::Usual),
+            at_s,
+        )
     }
 
     /// The whole night.
@@ -98,7 +103,8 @@ impl Looked<'_> {
                 let bright = self.bright_enough(sky.eye, luck, times_s, &margins[luck as usize]);
                 sky.bright[luck as usize].extend(both(&allowed, &bright));
             }
-            sky.margins.put(samples.start, &margins[Luck::Usual as usize]);
+            sky.margins
+                .put(samples.start, &margins[Luck::Usual as usize]);
         }
     }
 

@@ -187,9 +187,13 @@ mod tests {
     fn breaks_are_found_across_north() {
         let breaks = [1.0, 5.0, 90.0, 355.0, 359.0].map(Angle::from_degrees);
         let within = |from: f64, width: f64| -> Vec<f64> {
-            breaks_within(&breaks, Angle::from_degrees(from), Angle::from_degrees(width))
-                .map(|edge| edge.degrees().round())
-                .collect()
+            breaks_within(
+                &breaks,
+                Angle::from_degrees(from),
+                Angle::from_degrees(width),
+            )
+            .map(|edge| edge.degrees().round())
+            .collect()
         };
         assert_eq!(within(354.0, 8.0), [355.0, 359.0, 1.0]);
         assert_eq!(within(4.0, 2.0), [5.0]);

@@ -195,12 +195,7 @@ fn dark_part_s(night: &Night, request: &NightRequest<'_>) -> std::ops::Range<f64
     from_s.max(0.0)..to_s.min(length_s)
 }
 
-fn body_sky(
-    track: &Track<'_>,
-    lit: &Lit<'_>,
-    bare: &Night,
-    request: &NightRequest<'_>,
-) -> BodySky {
+fn body_sky(track: &Track<'_>, lit: &Lit<'_>, bare: &Night, request: &NightRequest<'_>) -> BodySky {
     // By convention without the site's air: the centre, or the Moon's upper limb, at -34'.
     let above_horizon =
         |sample: &Sample| (sample.airless + sample.limb + HORIZON_REFRACTION).radians();

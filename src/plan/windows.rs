@@ -213,7 +213,10 @@ fn explained(sky: &EyeSky, edge: Edge, at_best: Option<&Margin>) -> Edge {
     if edge.cause != Cause::Twilight {
         return edge;
     }
-    let known = sky.at_ends.iter().find(|(moment, _)| *moment == edge.moment);
+    let known = sky
+        .at_ends
+        .iter()
+        .find(|(moment, _)| *moment == edge.moment);
     let cost = match (known, at_best) {
         (Some((_, at_end)), Some(at_best)) => at_end.cost_against(at_best),
         _ => None,

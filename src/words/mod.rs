@@ -19,7 +19,7 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 9] = [
+const ENGLISH: [&str; 10] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
     include_str!("../../assets/words/en/cli.ftl"),
@@ -27,6 +27,7 @@ const ENGLISH: [&str; 9] = [
     include_str!("../../assets/words/en/lookout.ftl"),
     include_str!("../../assets/words/en/daylight.ftl"),
     include_str!("../../assets/words/en/grounds.ftl"),
+    include_str!("../../assets/words/en/measure.ftl"),
     include_str!("../../assets/words/en/plan.ftl"),
     include_str!("../../assets/words/en/spots.ftl"),
 ];

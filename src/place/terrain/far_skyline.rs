@@ -134,12 +134,13 @@ impl FarSkyline {
         self.nearest_m
     }
 
-    /// The share of looks into the tiles that met a void, 0 to 1. Voids do not block.
+    /// The share of the way over the tiles that led over voids, 0 to 1. Voids do not block.
     pub fn void_share(&self) -> f64 {
         self.void_share
     }
 
-    /// The share of looks that fell outside all tiles, 0 to 1. What is there does not block.
+    /// The share of the way, in all directions to the radius, that lies outside all tiles, 0 to 1.
+    /// What is there does not block.
     pub fn uncovered_share(&self) -> f64 {
         self.uncovered_share
     }

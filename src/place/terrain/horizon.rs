@@ -33,12 +33,12 @@ pub(super) struct Sweep {
     pub radius_m: f64,
 }
 
-/// How many samples were taken, and what they met.
+/// How far lines were followed, m, and what they met.
 #[derive(Clone, Copy, Default)]
 struct Tally {
-    all: u64,
-    void: u64,
-    outside: u64,
+    all_m: f64,
+    void_m: f64,
+    outside_m: f64,
 }
 
 impl Sweep {
@@ -77,8 +77,8 @@ impl Sweep {
         if progress.is_cancelled() {
             return None;
         }
-        let sum = |part: fn(&Tally) -> u64| tallies.iter().map(part).sum::<u64>() as f64;
-        let (all, outside) = (sum(|tally| tally.all), sum(|tally| tally.outside));
+        let sum = |part: fn(&Tally) -> f64| tallies.iter().map(part).sum::<f64>();
+        let (all_m, outside_m) = (sum(|tally| tally.all_m), sum(|tally| tally.outside_m));
         // By bands, as it is looked at from other spots.
         let by_band = (0..bands)
             .flat_map(|band| crests.iter().skip(band).step_by(bands).copied())
@@ -89,8 +89,8 @@ impl Sweep {
             ground_m: self.ground_m,
             drop_per_m: self.drop_per_m,
             nearest_m: edges_m[0],
-            void_share: sum(|tally| tally.void) / (all - outside).max(1.0),
-            uncovered_share: outside / all.max(1.0),
+            void_share: sum(|tally| tally.void_m) / (all_m - outside_m).max(1.0),
+            uncovered_share: outside_m / all_m.max(1.0),
         })
     }
 
@@ -124,19 +124,20 @@ impl Sweep {
             let mut highest: Option<Seen> = None;
             let mut distance_m = *begin_m;
             loop {
-                let sample = ray.at(distance_m);
-                tally.all += 1;
-                match sample {
+                let next_m = (distance_m + step_m(ray, distance_m)).min(*end_m);
+                let ahead_m = next_m - distance_m;
+                tally.all_m += ahead_m;
+                match ray.at(distance_m) {
                     Sample::Ground(elevation_m) => {
                         self.keep_higher(&mut highest, distance_m, elevation_m);
                     }
-                    Sample::Void => tally.void += 1,
-                    Sample::Outside => tally.outside += 1,
+                    Sample::Void => tally.void_m += ahead_m,
+                    Sample::Outside => tally.outside_m += ahead_m,
                 }
                 if distance_m >= *end_m {
                     break;
                 }
-                distance_m = (distance_m + step_m(ray, distance_m)).min(*end_m);
+                distance_m = next_m;
             }
             if let Some(seen) = &mut highest {
                 self.refine(ray, seen, *begin_m, *end_m);
@@ -159,11 +160,12 @@ impl Sweep {
         }
     }
 
-    /// Looks for still higher ground around the highest sample, twice with an eighth of the step.
+    /// Looks for still higher ground around the highest sample, each time with an eighth of the
+    /// step; in the end a few centimetres.
     fn refine(&self, ray: &Ray, seen: &mut Seen, begin_m: f64, end_m: f64) {
         const PARTS: i32 = 8;
         let mut step_m = step_m(ray, seen.distance_m);
-        for _ in 0..2 {
+        for _ in 0..3 {
             let middle_m = seen.distance_m;
             step_m /= f64::from(PARTS);
             for k in -PARTS..=PARTS {

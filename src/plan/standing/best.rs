@@ -40,7 +40,10 @@ impl StandingMap {
             if best.len() == count {
                 break;
             }
-            if best.iter().all(|other| other.0.distance_m(place.0) >= apart_m) {
+            if best
+                .iter()
+                .all(|other| other.0.distance_m(place.0) >= apart_m)
+            {
                 best.push(place);
             }
         }
@@ -49,7 +52,8 @@ impl StandingMap {
 
     /// The most minutes that any place gives.
     pub fn most_minutes(&self) -> f64 {
-        self.stays().fold(0.0, |most, (_, stay)| most.max(stay.minutes))
+        self.stays()
+            .fold(0.0, |most, (_, stay)| most.max(stay.minutes))
     }
 
     /// What it costs to stand somewhere else than at the best place, minutes; never below 0.

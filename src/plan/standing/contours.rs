@@ -27,7 +27,10 @@ impl StandingMap {
                 let lines = self.chains(*level);
                 lines.into_iter().map(|line| Contour {
                     minutes: *level,
-                    line: line.iter().map(|side| self.crossing(*side, *level)).collect(),
+                    line: line
+                        .iter()
+                        .map(|side| self.crossing(*side, *level))
+                        .collect(),
                 })
             })
             .collect()

@@ -192,6 +192,20 @@ impl StandingMap {
         self.cell(column, row).stay()
     }
 
+    /// The same map by the least that one of the nights gives, in place of the sum over them.
+    #[must_use]
+    pub fn by_least(&self) -> Self {
+        let cells = self.cells.iter().map(|cell| match cell {
+            Cell::Stay(stay) => Cell::Stay(stay.by_least()),
+            other => *other,
+        });
+        Self {
+            open: self.open.by_least(),
+            cells: cells.collect(),
+            ..*self
+        }
+    }
+
     /// Every square that is known and can be stood on, with its centre.
     pub fn stays(&self) -> impl Iterator<Item = (PlanPoint, Stay)> + '_ {
         self.cells.iter().enumerate().filter_map(|(index, cell)| {
@@ -229,7 +243,10 @@ mod tests {
                 order.push((column, job.row));
             }
         }
-        assert_eq!(order[..6], [(0, 0), (8, 0), (16, 0), (0, 8), (8, 8), (16, 8)]);
+        assert_eq!(
+            order[..6],
+            [(0, 0), (8, 0), (16, 0), (0, 8), (8, 8), (16, 8)]
+        );
         let mut once = order.clone();
         once.sort_unstable();
         once.dedup();

@@ -58,6 +58,17 @@ pub struct Stay {
     pub total_minutes: f64,
 }
 
+impl Stay {
+    /// The same with the least that one of the nights gives as its minutes.
+    #[must_use]
+    pub fn by_least(self) -> Self {
+        Self {
+            minutes: self.least_minutes,
+            ..self
+        }
+    }
+}
+
 /// A standing map before any place is asked about: shared by threads.
 #[derive(Debug)]
 pub struct Standing<'a> {
