@@ -208,11 +208,24 @@ fn raise_between(tangents: &mut [f64], one: Glimpse, other: Glimpse) {
     } else {
         0.0
     };
-    let mut step = low.step.ceil();
-    while step <= high.step {
-        let tangent = low.tangent + slope * (step - low.step);
-        let k = (step as i64).rem_euclid(tangents.len() as i64) as usize;
-        tangents[k] = tangents[k].max(tangent);
-        step += 1.0;
+    // This is the innermost loop: casts that round towards zero, and steps of the turn before or
+    // after taken into this one by hand.
+    let turn = tangents.len() as i64;
+    let below = low.step as i64;
+    let first = below + i64::from((below as f64) < low.step);
+    for step in first.. {
+        let beyond = step as f64 - low.step;
+        if beyond > width {
+            return;
+        }
+        let tangent = low.tangent + slope * beyond;
+        let k = match step {
+            ..0 => step + turn,
+            _ if step >= turn => step - turn,
+            _ => step,
+        };
+        if let Some(highest) = tangents.get_mut(k as usize) {
+            *highest = highest.max(tangent);
+        }
     }
 }
