@@ -5,8 +5,10 @@ mod common;
 
 mod demo;
 mod disk;
+mod grounds;
 mod measured;
 mod obstacles;
+mod openings;
 mod skyline;
 mod text;
 mod zones;
