@@ -1,6 +1,7 @@
 //! Keys, taken before the window library uses them to move the focus.
 
 use super::command::{self, Command, Commands};
+use super::grounds::plan_keys;
 use eframe::egui::{self, Context, Event, Key, Modifiers, RawInput};
 use std::sync::Arc;
 use std::sync::atomic::{AtomicBool, Ordering};
@@ -27,7 +28,8 @@ impl egui::Plugin for TakeKeys {
         {
             return;
         }
-        let has_focus = ctx.memory(|memory| memory.focused().is_some());
+        let focused = ctx.memory(|memory| memory.focused());
+        let (has_focus, is_plan) = (focused.is_some(), focused == Some(plan_keys::id()));
         let mut taken = Commands::new();
         input.events.retain(|event| match event {
             Event::Key {
@@ -35,7 +37,10 @@ impl egui::Plugin for TakeKeys {
                 pressed: true,
                 modifiers,
                 ..
-            } => match command_for(*key, *modifiers, has_focus) {
+            } => match command_for(*key, *modifiers, has_focus)
+                // The plan of the site moves things by the arrows while it has the focus.
+                .filter(|_| !(is_plan && plan_keys::is_used(*key, *modifiers)))
+            {
                 Some(command) => {
                     taken.push(command);
                     false

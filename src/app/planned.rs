@@ -3,7 +3,7 @@
 
 use crate::light::Eye;
 use crate::measure::TimeScales;
-use crate::place::{Site, Skyline, Spot};
+use crate::place::{Grounds, Site, Skyline, Spot, Stature};
 use crate::plan::{Night, NightError, NightRequest, NightSky, Sight};
 use crate::sky::{Body, Ephemeris, Observer, Span};
 use chrono::NaiveDate;
@@ -40,14 +40,20 @@ pub struct Standpoint {
 }
 
 impl Standpoint {
-    /// What a spot on a site means for planning.
+    /// What a spot on a site means for planning, for people of a stature; the date decides whether
+    /// trees have leaves.
     ///
     /// # Errors
     /// The site's air, sky or kit is beyond what the light model takes.
-    pub fn new(site: &Site, spot: &Spot) -> Result<Self, NightError> {
+    pub fn new(
+        site: &Site,
+        spot: &Spot,
+        stature: Stature,
+        date: NaiveDate,
+    ) -> Result<Self, NightError> {
         Ok(Self {
             observer: site.observer(),
-            skyline: site.skyline(spot),
+            skyline: Grounds::new(site, Some(date)).skyline(spot, stature),
             zone: site.zone(),
             sight: Sight::of_site(site)?,
         })

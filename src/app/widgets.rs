@@ -71,6 +71,17 @@ pub fn line(text: &mut String) -> TextEdit<'_> {
         .align(Align2::LEFT_CENTER)
 }
 
+/// A plain decimal number; a true minus is taken for a hyphen.
+pub fn number(text: &str) -> Option<f64> {
+    let text = text.trim().replace('−', "-");
+    let is_plain = text
+        .chars()
+        .all(|c| c.is_ascii_digit() || matches!(c, '.' | '-' | '+'));
+    text.parse()
+        .ok()
+        .filter(|value: &f64| is_plain && value.is_finite())
+}
+
 /// What is wrong, in one sentence, where there is anything.
 pub fn error_line(ui: &mut Ui, look: &Look, error: Option<&str>) {
     if let Some(error) = error {

@@ -1,8 +1,9 @@
 //! The window as the window library sees it: passes time, draws, runs commands, remembers.
 
 use super::command::{Command, Commands};
-use super::dialogs::Dialog;
-use super::grounds::GroundsArea;
+use super::dialogs::{Dialog, Wanted};
+use super::grounds::measure::Measure;
+use super::grounds::{GroundsArea, backdrop};
 use super::keys::TakeKeys;
 use super::lookout::Drawings;
 use super::palette::{Palette, Theme};
@@ -37,6 +38,7 @@ pub struct DesktopWindow {
     pub(super) notices: Vec<String>,
     pub(super) drawings: Drawings,
     pub(super) grounds: GroundsArea,
+    pub(super) measure: Measure,
     /// The half-night's sentence, made when it changes.
     sentence: Option<(SceneKey, String)>,
     applied_theme: Option<Theme>,
@@ -78,6 +80,7 @@ impl DesktopWindow {
         let mut choices = start.choices;
         choices.body = choices.body.or(Some(settings.body));
         choices.eye = choices.eye.or(Some(settings.eye));
+        choices.stature = choices.stature.or(Some(settings.stature));
         let mut state = State::open(start.clock, start.scales, sites, chosen, choices);
         state.theme = settings.theme;
         state.area = settings.area;
@@ -103,6 +106,7 @@ impl DesktopWindow {
             notices,
             drawings: Drawings::default(),
             grounds: GroundsArea::default(),
+            measure: Measure::default(),
             sentence: None,
             applied_theme: None,
             is_red,
@@ -197,8 +201,13 @@ impl DesktopWindow {
         match command {
             Command::NewSite => self.dialog = Some(Dialog::new_site()),
             Command::FindSiteFile => {
-                self.dialog = Some(Dialog::find_file(self.state.sites().folder()));
+                self.dialog = Some(Dialog::find_file(Wanted::Site, self.state.sites().folder()));
             }
+            Command::FindBackdrop => {
+                let folder = self.state.site_folder();
+                self.dialog = Some(Dialog::find_file(Wanted::Backdrop, folder));
+            }
+            Command::OpenBackdrop(file) => self.open_backdrop(file),
             Command::OpenSiteFile(file) => match Site::read(&file) {
                 Ok(site) => {
                     self.state.add_site(site, file);
@@ -210,12 +219,37 @@ impl DesktopWindow {
                 },
             },
             Command::SaveNewSite => self.save_new_site(),
+            Command::Measure => self.dialog = Some(Dialog::Measure),
+            Command::Exchange => self.dialog = Some(Dialog::Exchange(Box::default())),
             Command::ShowHelp => self.dialog = Some(Dialog::Help),
             Command::CloseDialog => self.dialog = None,
             Command::DismissNotice => {
                 self.notices.drain(..self.notices.len().min(1));
             }
             _ => {}
+        }
+    }
+
+    /// Puts a picture under the plan of the chosen site, by a relative path where it lies in the
+    /// site file's folder.
+    fn open_backdrop(&mut self, file: PathBuf) {
+        match backdrop::size_px(&file) {
+            Ok(size_px) => {
+                let folder = self.state.site_folder();
+                let relative = folder.and_then(|folder| file.strip_prefix(folder).ok());
+                let picture = relative.map_or_else(|| file.clone(), ToOwned::to_owned);
+                let mut site = self.state.site().clone();
+                site.backdrop = Some(backdrop::placed(picture, size_px));
+                self.dialog = None;
+                self.state.run(Command::EditSite(Box::new(site)));
+            }
+            Err(flaw) => {
+                let sentence = flaw.sentence(&self.words, &file);
+                match &mut self.dialog {
+                    Some(Dialog::FindFile(find)) => find.error = Some(sentence),
+                    _ => self.notices.push(sentence),
+                }
+            }
         }
     }
 
@@ -299,6 +333,7 @@ impl DesktopWindow {
             spot: Some(self.state.spot().name.clone()),
             body: self.state.body(),
             eye: self.state.eye(),
+            stature: self.state.stature(),
             theme: self.state.theme,
             area: self.state.area,
             zoom,

@@ -10,6 +10,7 @@ mod blocker;
 mod check;
 mod demo;
 mod envelope;
+pub mod exchange;
 mod eyes;
 mod features;
 mod file;
@@ -32,6 +33,7 @@ mod skyline;
 mod solid;
 mod stack;
 mod stretch;
+pub mod survey;
 mod terrain;
 pub mod zone;
 

@@ -1,6 +1,6 @@
 //! The answer for a crowd: not everybody stands in the middle, and not everybody is tall.
 
-use super::standing::{Cell, Standing, Stay};
+use super::standing::{Standing, Stay};
 use crate::measure::Angle;
 use crate::place::{PlanPoint, Spot, Stature};
 
@@ -35,7 +35,7 @@ pub struct Patch {
 pub fn patch(standing: &Standing<'_>, spot: &Spot) -> Option<Patch> {
     let spots: Vec<Spot> = places(spot)
         .into_iter()
-        .filter(|at| !matches!(standing.cell(*at), Cell::LeftOut(_)))
+        .filter(|at| standing.left_out(*at).is_none())
         .map(|at| Spot {
             east_m: at.east_m,
             north_m: at.north_m,

@@ -5,6 +5,8 @@ mod air;
 mod cautions;
 mod desk;
 mod eyes;
+mod grounds;
+mod measure;
 mod pictures;
 mod sites;
 mod steps;

@@ -3,12 +3,18 @@
 #[path = "../common/mod.rs"]
 mod common;
 
+mod compass;
 mod demo;
 mod disk;
+mod geojson;
 mod grounds;
+mod heights;
 mod measured;
 mod obstacles;
 mod openings;
+mod photo;
 mod skyline;
+mod terrain;
 mod text;
+mod timed;
 mod zones;

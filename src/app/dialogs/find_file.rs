@@ -1,8 +1,8 @@
-//! Finding a site file: a path to write, and the folder's files to choose from.
+//! Finding a file: a path to write, and the folder's files of that kind to choose from.
 
 use crate::app::command::{Command, Commands};
 use crate::app::palette::Look;
-use crate::app::sites::is_site_file;
+use crate::app::sites;
 use crate::app::widgets::{bold, field, text};
 use crate::words::Words;
 use eframe::egui::{ScrollArea, Ui};
@@ -11,8 +11,57 @@ use std::path::{Path, PathBuf};
 /// Entries that the list shows at most.
 const MOST_ENTRIES: usize = 500;
 
+/// What kind of file is looked for.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Wanted {
+    /// A site file.
+    Site,
+    /// A picture for under the plan.
+    Backdrop,
+}
+
+impl Wanted {
+    /// The wording of the dialog's title.
+    const fn title(self) -> &'static str {
+        match self {
+            Self::Site => "find-site-file",
+            Self::Backdrop => "find-backdrop",
+        }
+    }
+
+    /// What is said where the folder holds none.
+    const fn none(self) -> &'static str {
+        match self {
+            Self::Site => "no-site-files",
+            Self::Backdrop => "no-pictures",
+        }
+    }
+
+    /// How the names of such files end, in small letters.
+    const fn suffixes(self) -> &'static [&'static str] {
+        match self {
+            Self::Site => &[sites::SUFFIX],
+            Self::Backdrop => &[".png", ".jpg", ".jpeg"],
+        }
+    }
+
+    /// What is done with the file found.
+    fn command(self, path: PathBuf) -> Command {
+        match self {
+            Self::Site => Command::OpenSiteFile(path),
+            Self::Backdrop => Command::OpenBackdrop(path),
+        }
+    }
+
+    fn is_named_so(self, path: &Path) -> bool {
+        let name = name_of(path).to_lowercase();
+        self.suffixes().iter().any(|suffix| name.ends_with(suffix))
+    }
+}
+
 /// What has been written, and what stands in that folder.
 pub struct FindFile {
+    wanted: Wanted,
     written: String,
     listed: Option<PathBuf>,
     folders: Vec<PathBuf>,
@@ -23,8 +72,9 @@ pub struct FindFile {
 
 impl FindFile {
     /// From a folder on.
-    pub fn new(folder: Option<&Path>) -> Self {
+    pub fn new(wanted: Wanted, folder: Option<&Path>) -> Self {
         Self {
+            wanted,
             written: folder
                 .map(|folder| folder.join("").to_string_lossy().into_owned())
                 .unwrap_or_default(),
@@ -40,9 +90,14 @@ impl FindFile {
         PathBuf::from(self.written.trim())
     }
 
+    /// What is done with a file.
+    pub fn command(&self, path: PathBuf) -> Command {
+        self.wanted.command(path)
+    }
+
     /// Draws the path and the list.
     pub fn show(&mut self, ui: &mut Ui, look: &Look, words: &Words, commands: &mut Commands) {
-        let title = words.text("find-site-file");
+        let title = words.text(self.wanted.title());
         bold(ui, look, look.sizes.sentence, look.colours.text, &title);
         let label = words.text("file-path");
         field(ui, look, &label, &mut self.written, self.error.as_deref());
@@ -72,11 +127,11 @@ impl FindFile {
             for path in &self.files {
                 if ui.selectable_label(false, name_of(path)).clicked() {
                     goal = Some(path.clone());
-                    commands.push(Command::OpenSiteFile(path.clone()));
+                    commands.push(self.wanted.command(path.clone()));
                 }
             }
             if self.files.is_empty() {
-                let none = words.text("no-site-files");
+                let none = words.text(self.wanted.none());
                 text(ui, look, look.sizes.label, look.colours.lesser, &none);
             }
         });
@@ -110,7 +165,7 @@ impl FindFile {
             let is_hidden = name_of(&path).starts_with('.');
             if path.is_dir() && !is_hidden {
                 self.folders.push(path);
-            } else if is_site_file(&path) {
+            } else if self.wanted.is_named_so(&path) {
                 self.files.push(path);
             }
         }

@@ -1,6 +1,7 @@
 //! Help: the cautions in full, and what the keys do.
 
 use crate::app::command::keys;
+use crate::app::grounds::plan_keys;
 use crate::app::palette::Look;
 use crate::app::widgets::{bold, figure, text};
 use crate::words::Words;
@@ -64,6 +65,23 @@ pub fn show(ui: &mut Ui, look: &Look, words: &Words) {
                 ("turn-view-keys", "turn-view"),
                 ("widen-view-keys", "widen-view"),
             ] {
+                figure(ui, look.bold(size), colours.text, &words.text(keys));
+                figure(ui, look.font(size), colours.text, &words.text(what));
+                ui.end_row();
+            }
+        });
+    ui.add_space(look.room.inside);
+    bold(
+        ui,
+        look,
+        look.sizes.sentence,
+        colours.text,
+        &words.text("plan-keys"),
+    );
+    Grid::new("plan keys")
+        .spacing(vec2(look.room.between, 6.0))
+        .show(ui, |ui| {
+            for (keys, what) in plan_keys::HELP {
                 figure(ui, look.bold(size), colours.text, &words.text(keys));
                 figure(ui, look.font(size), colours.text, &words.text(what));
                 ui.end_row();

@@ -2,7 +2,7 @@
 
 use crate::app::palette::Look;
 use crate::app::sites;
-use crate::app::widgets::{bold, error_line, field, line, text};
+use crate::app::widgets::{bold, error_line, field, line, number, text};
 use crate::measure::Angle;
 use crate::place::{Site, SkylinePoint, zone};
 use crate::words::Words;
@@ -292,17 +292,6 @@ fn degrees(text: &str, (positive, negative): (char, char)) -> Option<f64> {
         Some(sign) => Some(sign * value),
         None => Some(value),
     }
-}
-
-/// A plain decimal number; a true minus is taken for a hyphen.
-fn number(text: &str) -> Option<f64> {
-    let text = text.trim().replace('−', "-");
-    let is_plain = text
-        .chars()
-        .all(|c| c.is_ascii_digit() || matches!(c, '.' | '-' | '+'));
-    text.parse()
-        .ok()
-        .filter(|value: &f64| is_plain && value.is_finite())
 }
 
 #[cfg(test)]

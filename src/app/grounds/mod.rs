@@ -9,18 +9,23 @@
 //! [`Command::DragSite`]: super::command::Command::DragSite
 
 mod compare;
+pub mod exchange;
+pub mod measure;
 mod plan;
 mod selected;
 mod standing;
 mod strip;
 
-use super::command::Commands;
+pub use plan::{backdrop, keys as plan_keys};
+
+use super::command::{Command, Commands};
 use super::palette::Look;
 use super::scene::Scene;
 use super::state::State;
+use super::widgets::command_button;
 use super::window::DesktopWindow;
 use crate::words::Words;
-use eframe::egui::{ScrollArea, Ui, UiBuilder, vec2};
+use eframe::egui::{ScrollArea, Sense, Ui, UiBuilder, vec2};
 
 /// What the user has selected on the plan.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -41,6 +46,7 @@ pub struct GroundsArea {
     /// What is selected.
     selection: Option<Selection>,
     plan: plan::Plan,
+    selected: selected::Selected,
     strip: strip::Strip,
     standing: standing::Standing,
     compare: compare::Compare,
@@ -76,8 +82,19 @@ impl DesktopWindow {
     }
 }
 
+/// From this width on, points, the right column stands beside the plan.
+const WIDE: f32 = 1200.0;
+
 impl GroundsArea {
     fn show(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
+        if ui.ctx().content_rect().width() >= WIDE {
+            self.wide(ui, desk, commands);
+        } else {
+            self.narrow(ui, desk, commands);
+        }
+    }
+
+    fn wide(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
         super::pickers::picker_row(ui, desk.look, desk.words, desk.state, commands);
         let whole = ui.available_rect_before_wrap();
         let column = (0.42 * whole.width()).clamp(380.0, 720.0);
@@ -85,20 +102,48 @@ impl GroundsArea {
         let left = whole.with_max_x(divide - desk.look.room.between);
         let right = whole.with_min_x(divide);
         ui.scope_builder(UiBuilder::new().max_rect(left), |ui| {
-            self.plan
-                .show(ui, desk, &mut self.selection, &self.standing, commands);
+            self.plan(ui, desk, commands);
         });
         ui.scope_builder(UiBuilder::new().max_rect(right), |ui| {
             ScrollArea::vertical()
                 .id_salt("grounds")
                 .auto_shrink(false)
-                .show(ui, |ui| {
-                    ui.spacing_mut().item_spacing = vec2(8.0, desk.look.room.inside);
-                    self.strip.show(ui, desk, commands);
-                    selected::show(ui, desk, &mut self.selection, commands);
-                    self.standing.show(ui, desk, commands);
-                    self.compare.show(ui, desk, commands);
-                });
+                .show(ui, |ui| self.column(ui, desk, commands));
         });
+    }
+
+    /// One below the other, scrolling.
+    fn narrow(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
+        let plan_height = (0.62 * ui.available_height()).max(300.0);
+        ScrollArea::vertical()
+            .id_salt("grounds")
+            .auto_shrink(false)
+            .show(ui, |ui| {
+                super::pickers::picker_row(ui, desk.look, desk.words, desk.state, commands);
+                let width = ui.available_width();
+                let (rect, _) = ui.allocate_exact_size(vec2(width, plan_height), Sense::hover());
+                ui.scope_builder(UiBuilder::new().max_rect(rect), |ui| {
+                    self.plan(ui, desk, commands);
+                });
+                self.column(ui, desk, commands);
+            });
+    }
+
+    fn plan(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
+        self.plan
+            .show(ui, desk, &mut self.selection, &self.standing, commands);
+    }
+
+    fn column(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
+        ui.spacing_mut().item_spacing = vec2(8.0, desk.look.room.inside);
+        ui.horizontal_wrapped(|ui| {
+            command_button(ui, desk.words, Command::Measure, commands);
+            command_button(ui, desk.words, Command::Exchange, commands);
+        });
+        self.strip.show(ui, desk, commands);
+        self.selected
+            .show(ui, desk, &mut self.selection, &mut self.plan, commands);
+        self.standing.show(ui, desk, commands);
+        self.compare.show(ui, desk, commands);
     }
 }

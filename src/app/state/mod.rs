@@ -11,7 +11,7 @@ use super::planned::Planned;
 use super::sites::Sites;
 use crate::light::Eye;
 use crate::measure::{DateOutOfRange, Moment, TimeScales, Ut1};
-use crate::place::{Haze, Instrument, Orientation, Site, Spot};
+use crate::place::{Haze, Instrument, Orientation, Site, Spot, Stature};
 use crate::plan::{Half, NightError, Window};
 use crate::sky::{Body, Ephemeris};
 use chrono::{DateTime, NaiveDate, NaiveDateTime, Utc};
@@ -45,6 +45,8 @@ pub struct Choices {
     pub date: Option<NaiveDate>,
     /// A half of that night, else the one in which the body stands better.
     pub half: Option<Half>,
+    /// Whose height, else an adult's.
+    pub stature: Option<Stature>,
 }
 
 /// The choices and the night that follows from them.
@@ -59,6 +61,7 @@ pub struct State {
     half: Half,
     body: Body,
     eye: Eye,
+    stature: Stature,
     haze: Option<Haze>,
     /// The site in the chosen haze, where one is chosen.
     site_in_haze: Option<Site>,
@@ -99,6 +102,7 @@ impl State {
             half: Half::Dusk,
             body: choices.body.unwrap_or(Body::Venus),
             eye: choices.eye.unwrap_or(Eye::Visitor),
+            stature: choices.stature.unwrap_or_default(),
             moment: scales.moment_from_ut1(Ut1::from_days_since_j2000(0.0)),
             wanted: now.naive_utc(),
             planned: Err(NightError::OutOfRange(DateOutOfRange {
@@ -162,6 +166,15 @@ impl State {
     pub fn site_index(&self) -> usize {
         self.site
     }
+    /// The folder from which relative paths in the chosen site's file count: of a demo site the one
+    /// that its copy will go to.
+    pub fn site_folder(&self) -> Option<&std::path::Path> {
+        let known = self.sites.list().get(self.site)?;
+        match &known.file {
+            Some(file) => file.parent(),
+            None => self.sites.folder(),
+        }
+    }
     /// The half of the night.
     pub fn half(&self) -> Half {
         self.half
@@ -185,6 +198,10 @@ impl State {
     /// Whose eye.
     pub fn eye(&self) -> Eye {
         self.eye
+    }
+    /// Whose height.
+    pub fn stature(&self) -> Stature {
+        self.stature
     }
     /// The instant shown.
     pub fn moment(&self) -> Moment {
@@ -256,7 +273,11 @@ impl State {
             Command::ChooseSite(index) => self.choose_site(index),
             Command::ChooseSpot(index) => {
                 self.spot = index;
-                self.show_night(self.date, Goal::Local(self.half, self.wanted));
+                self.show_behind();
+            }
+            Command::ChooseStature(stature) => {
+                self.stature = stature;
+                self.show_behind();
             }
             Command::ChooseHaze(haze) => {
                 self.choose_haze(haze);
@@ -264,7 +285,11 @@ impl State {
             }
             Command::ChooseOpticsView(view) => self.optics_view = view,
             Command::SetTheme(theme) => self.theme = theme,
-            Command::ShowArea(area) => self.area = area,
+            Command::ShowArea(area) => {
+                // What was being dragged is out of sight: it stays where it is, and is saved.
+                self.end_drag();
+                self.area = area;
+            }
             Command::DragSite(site) => self.drag_site(*site),
             Command::EndDrag => self.end_drag(),
             Command::EditSite(site) => self.edit_site(*site),

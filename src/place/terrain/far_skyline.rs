@@ -134,12 +134,13 @@ impl FarSkyline {
         self.nearest_m
     }
 
-    /// The share of looks into the tiles that met a void, 0 to 1. Voids do not block.
+    /// The share of the way over the tiles that led over voids, 0 to 1. Voids do not block.
     pub fn void_share(&self) -> f64 {
         self.void_share
     }
 
-    /// The share of looks that fell outside all tiles, 0 to 1. What is there does not block.
+    /// The share of the way, in all directions to the radius, that lies outside all tiles, 0 to 1.
+    /// What is there does not block.
     pub fn uncovered_share(&self) -> f64 {
         self.uncovered_share
     }
@@ -207,11 +208,24 @@ fn raise_between(tangents: &mut [f64], one: Glimpse, other: Glimpse) {
     } else {
         0.0
     };
-    let mut step = low.step.ceil();
-    while step <= high.step {
-        let tangent = low.tangent + slope * (step - low.step);
-        let k = (step as i64).rem_euclid(tangents.len() as i64) as usize;
-        tangents[k] = tangents[k].max(tangent);
-        step += 1.0;
+    // This is the innermost loop: casts that round towards zero, and steps of the turn before or
+    // after taken into this one by hand.
+    let turn = tangents.len() as i64;
+    let below = low.step as i64;
+    let first = below + i64::from((below as f64) < low.step);
+    for step in first.. {
+        let beyond = step as f64 - low.step;
+        if beyond > width {
+            return;
+        }
+        let tangent = low.tangent + slope * beyond;
+        let k = match step {
+            ..0 => step + turn,
+            _ if step >= turn => step - turn,
+            _ => step,
+        };
+        if let Some(highest) = tangents.get_mut(k as usize) {
+            *highest = highest.max(tangent);
+        }
     }
 }

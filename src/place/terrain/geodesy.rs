@@ -83,3 +83,33 @@ impl Origin {
         }
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::{Origin, Position};
+    use crate::measure::Angle;
+
+    const EXPECTED: &str = include_str!("../../../tests/data/terrain/geodesic.csv");
+
+    #[test] // PROJ's geodesics by pyproj (make_utm.py beside the file)
+    fn lines_end_where_geodesics_end() {
+        let mut rows = 0;
+        for line in EXPECTED.lines().filter(|line| !line.starts_with('#')) {
+            let fields: Vec<f64> = line
+                .split(',')
+                .map(|number| number.parse().expect("a number"))
+                .collect();
+            let origin = Origin::new(Position {
+                latitude: fields[0].to_radians(),
+                longitude: fields[1].to_radians(),
+            });
+            let end = origin.ahead(Angle::from_degrees(fields[2]), fields[3]);
+            let north_m = (end.latitude.to_degrees() - fields[4]) * 111_195.0;
+            let turned = Angle::from_radians(end.longitude) - Angle::from_degrees(fields[5]);
+            let east_m = turned.signed().degrees() * 111_195.0 * end.latitude.cos();
+            assert!(north_m.hypot(east_m) < 0.1, "{line}: {north_m}, {east_m}");
+            rows += 1;
+        }
+        assert_eq!(rows, 40);
+    }
+}

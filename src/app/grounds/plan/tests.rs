@@ -1,0 +1,1 @@
+//! The plan at work without a window.
