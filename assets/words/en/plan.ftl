@@ -53,7 +53,9 @@ tool-outline-hint = Draw the grounds that people may stand on
 tool-tape = Tape
 tool-tape-hint = Measure distance and bearing between two points
 tool-first-picture-point = First known point
+tool-first-picture-point-hint = Then click it in the picture on the plan
 tool-second-picture-point = Second known point
+tool-second-picture-point-hint = Then click it in the picture on the plan
 excluded-label = closed
 
 # What the plan waits for
@@ -159,5 +161,9 @@ backdrop-remove = Take it away
 backdrop-remove-hint = Show the plan without the picture
 backdrop-opacity = Opacity
 backdrop-note = Point out two points of the picture whose places are known, then write where they are: the picture is scaled and turned to fit.
+field-first-east = First point east, m
+field-first-north = First point north, m
+field-second-east = Second point east, m
+field-second-north = Second point north, m
 field-second-distance = Second from first, m
 field-second-bearing = Its bearing, °
