@@ -83,7 +83,7 @@ fn window(
             body: request.body,
             date: request.date,
             half: request.half,
-            eye: None,
+            ..Choices::default()
         },
         renderer,
     });

@@ -156,7 +156,7 @@ pub fn facts(scene: &Scene<'_>, words: &Words) -> [Fact; 8] {
         Body::Moon => appearance.diameter / 2.0,
         _ => Angle::ZERO,
     };
-    let clearance = altitude + limb - scene.skyline.altitude(place.azimuth);
+    let clearance = scene.skyline.clearance(place.azimuth, altitude + limb);
     let sun = view.place(Body::Sun).altitude;
     [
         ("fact-altitude", words.degrees(altitude, 1)),

@@ -4,7 +4,7 @@ use super::area::Area;
 use super::palette::Theme;
 use crate::light::Eye;
 use crate::measure::Moment;
-use crate::place::{Haze, Site};
+use crate::place::{Haze, Site, Stature};
 use crate::plan::Half;
 use crate::sky::Body;
 use chrono::NaiveDate;
@@ -42,6 +42,8 @@ pub enum Command {
     ChooseSite(usize),
     /// Chooses a spot of the site by its place in the site's list.
     ChooseSpot(usize),
+    /// Chooses whose height: the eye's height belongs to people.
+    ChooseStature(Stature),
     /// Chooses how hazy the air is; `None`: as the site file says.
     ChooseHaze(Option<Haze>),
     /// Chooses how the optics show the disc.
@@ -72,6 +74,10 @@ pub enum Command {
     OpenBackdrop(PathBuf),
     /// Saves the new site being described, and chooses it.
     SaveNewSite,
+    /// Opens the ways to measure the skyline.
+    Measure,
+    /// Opens bringing files in and handing them out.
+    Exchange,
     /// Shows keys and cautions.
     ShowHelp,
     /// Closes whatever dialog is open.
@@ -186,6 +192,9 @@ impl Command {
             Self::ChooseEye(Eye::Visitor) => "eye-visitor",
             Self::ChooseEye(Eye::Keen) => "eye-keen",
             Self::ChooseEye(Eye::Optics) => "eye-optics",
+            Self::ChooseStature(Stature::Adult) => "stature-adult",
+            Self::ChooseStature(Stature::Child) => "stature-child",
+            Self::ChooseStature(Stature::Wheelchair) => "stature-wheelchair",
             Self::ChooseHaze(None) => "air-as-stated",
             Self::ChooseHaze(Some(Haze::VeryClear)) => "air-very-clear",
             Self::ChooseHaze(Some(Haze::Clear)) => "air-clear",
@@ -197,6 +206,8 @@ impl Command {
             Self::FindBackdrop => "find-backdrop",
             Self::OpenBackdrop(_) => "open-backdrop",
             Self::SaveNewSite => "save-new-site",
+            Self::Measure => "measure",
+            Self::Exchange => "exchange",
             Self::ShowHelp => "help",
             Self::CloseDialog => "close",
             Self::DismissNotice => "dismiss-notice",

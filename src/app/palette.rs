@@ -110,6 +110,16 @@ pub struct Colours {
     pub disc_shade: Color32,
     #[serde(deserialize_with = "hex")]
     pub disc_lit: Color32,
+    #[serde(deserialize_with = "hex")]
+    pub strip_high: Color32,
+    #[serde(deserialize_with = "hex")]
+    pub strip_low: Color32,
+    #[serde(deserialize_with = "hex")]
+    pub map_least: Color32,
+    #[serde(deserialize_with = "hex")]
+    pub map_middle: Color32,
+    #[serde(deserialize_with = "hex")]
+    pub map_most: Color32,
 }
 
 /// The palette as one theme shows it: cheap to copy, handed to everything that draws.

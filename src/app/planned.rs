@@ -3,17 +3,20 @@
 
 use crate::light::Eye;
 use crate::measure::TimeScales;
-use crate::place::{Site, Skyline, Spot};
-use crate::plan::{Night, NightError, NightRequest, Sight};
+use crate::place::{Grounds, Site, Skyline, Spot, Stature};
+use crate::plan::{Night, NightError, NightRequest, NightSky, Sight};
 use crate::sky::{Body, Ephemeris, Observer, Span};
 use chrono::NaiveDate;
 use chrono_tz::Tz;
+use std::sync::Arc;
 
 /// A planned night.
 #[derive(Clone, Debug)]
 pub struct Planned {
     /// The plan for the bright bodies.
     pub night: Night,
+    /// The same night whatever stands in the way: what every spot of the site shares.
+    pub night_sky: Arc<NightSky>,
     /// All bodies over the night.
     pub span: Span,
     /// Place and air.
@@ -37,14 +40,20 @@ pub struct Standpoint {
 }
 
 impl Standpoint {
-    /// What a spot on a site means for planning.
+    /// What a spot on a site means for planning, for people of a stature; the date decides whether
+    /// trees have leaves.
     ///
     /// # Errors
     /// The site's air, sky or kit is beyond what the light model takes.
-    pub fn new(site: &Site, spot: &Spot) -> Result<Self, NightError> {
+    pub fn new(
+        site: &Site,
+        spot: &Spot,
+        stature: Stature,
+        date: NaiveDate,
+    ) -> Result<Self, NightError> {
         Ok(Self {
             observer: site.observer(),
-            skyline: site.skyline(spot),
+            skyline: Grounds::new(site, Some(date)).skyline(spot, stature),
             zone: site.zone(),
             sight: Sight::of_site(site)?,
         })
@@ -74,7 +83,8 @@ impl Standpoint {
         (date, scales): (NaiveDate, TimeScales),
         count: u64,
     ) -> Result<Planned, NightError> {
-        let night = Night::plan(ephemeris, &self.request(date, scales))?;
+        let night_sky = NightSky::new(ephemeris, &self.request(date, scales))?;
+        let night = night_sky.behind(&self.skyline);
         let span = ephemeris
             .cover(night.start.tt(), night.end.tt(), &Body::ALL)
             .map_err(|_| {
@@ -84,6 +94,7 @@ impl Standpoint {
             })?;
         Ok(Planned {
             night,
+            night_sky: Arc::new(night_sky),
             span,
             observer: self.observer,
             skyline: self.skyline,
@@ -91,5 +102,19 @@ impl Standpoint {
             sight: self.sight,
             count,
         })
+    }
+}
+
+impl Planned {
+    /// The same night seen from behind another skyline of the same site; `count` is the new
+    /// plan's own. A matter of milliseconds.
+    #[must_use]
+    pub fn behind(&self, skyline: Skyline, count: u64) -> Self {
+        Self {
+            night: self.night_sky.behind(&skyline),
+            skyline,
+            count,
+            ..self.clone()
+        }
     }
 }

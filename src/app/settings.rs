@@ -3,6 +3,7 @@
 use super::area::Area;
 use super::palette::Theme;
 use crate::light::Eye;
+use crate::place::Stature;
 use crate::sky::Body;
 use serde::{Deserialize, Serialize};
 use std::io::{ErrorKind, Read, Write};
@@ -28,6 +29,8 @@ pub struct Settings {
     pub body: Body,
     /// Whose eye.
     pub eye: Eye,
+    /// Whose height.
+    pub stature: Stature,
     /// The theme.
     pub theme: Theme,
     /// The work area on view.
@@ -49,6 +52,7 @@ impl Default for Settings {
             spot: None,
             body: Body::Venus,
             eye: Eye::Visitor,
+            stature: Stature::default(),
             theme: Theme::default(),
             area: Area::default(),
             zoom: 1.0,

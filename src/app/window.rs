@@ -2,6 +2,7 @@
 
 use super::command::{Command, Commands};
 use super::dialogs::{Dialog, Wanted};
+use super::grounds::measure::Measure;
 use super::grounds::{GroundsArea, backdrop};
 use super::keys::TakeKeys;
 use super::lookout::Drawings;
@@ -37,6 +38,7 @@ pub struct DesktopWindow {
     pub(super) notices: Vec<String>,
     pub(super) drawings: Drawings,
     pub(super) grounds: GroundsArea,
+    pub(super) measure: Measure,
     /// The half-night's sentence, made when it changes.
     sentence: Option<(SceneKey, String)>,
     applied_theme: Option<Theme>,
@@ -78,6 +80,7 @@ impl DesktopWindow {
         let mut choices = start.choices;
         choices.body = choices.body.or(Some(settings.body));
         choices.eye = choices.eye.or(Some(settings.eye));
+        choices.stature = choices.stature.or(Some(settings.stature));
         let mut state = State::open(start.clock, start.scales, sites, chosen, choices);
         state.theme = settings.theme;
         state.area = settings.area;
@@ -103,6 +106,7 @@ impl DesktopWindow {
             notices,
             drawings: Drawings::default(),
             grounds: GroundsArea::default(),
+            measure: Measure::default(),
             sentence: None,
             applied_theme: None,
             is_red,
@@ -215,6 +219,8 @@ impl DesktopWindow {
                 },
             },
             Command::SaveNewSite => self.save_new_site(),
+            Command::Measure => self.dialog = Some(Dialog::Measure),
+            Command::Exchange => self.dialog = Some(Dialog::Exchange(Box::default())),
             Command::ShowHelp => self.dialog = Some(Dialog::Help),
             Command::CloseDialog => self.dialog = None,
             Command::DismissNotice => {
@@ -327,6 +333,7 @@ impl DesktopWindow {
             spot: Some(self.state.spot().name.clone()),
             body: self.state.body(),
             eye: self.state.eye(),
+            stature: self.state.stature(),
             theme: self.state.theme,
             area: self.state.area,
             zoom,

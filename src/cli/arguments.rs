@@ -72,6 +72,7 @@ pub enum Subcommands {
     Positions(PositionsArguments),
     Night(NightArguments),
     Daylight(DaylightArguments),
+    Skyline(SkylineArguments),
     Completions { shell: Shell },
 }
 
@@ -117,6 +118,15 @@ pub struct PositionsArguments {
     pub format: Option<Format>,
 }
 
+/// Whose eyes stand at a spot.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, ValueEnum)]
+#[allow(missing_docs)]
+pub enum StatureName {
+    Adult,
+    Child,
+    Wheelchair,
+}
+
 /// `dimmet night`.
 #[derive(Args, Clone, Debug)]
 pub struct NightArguments {
@@ -126,6 +136,25 @@ pub struct NightArguments {
     pub date: String,
     #[arg(long, value_name = "NAME")]
     pub spot: Option<String>,
+    #[arg(long, value_name = "WHOSE")]
+    pub stature: Option<StatureName>,
+    #[arg(long, value_name = "FORMAT")]
+    pub format: Option<Format>,
+}
+
+/// `dimmet skyline`.
+#[derive(Args, Clone, Debug)]
+pub struct SkylineArguments {
+    #[arg(long, value_name = "FILE|NAME")]
+    pub site: String,
+    #[arg(long, value_name = "NAME")]
+    pub spot: Option<String>,
+    #[arg(long, value_name = "WHOSE")]
+    pub stature: Option<StatureName>,
+    #[arg(id = "leaf-date", long = "date", value_name = "YYYY-MM-DD")]
+    pub date: Option<String>,
+    #[arg(long, value_name = "DEGREES")]
+    pub step: Option<String>,
     #[arg(long, value_name = "FORMAT")]
     pub format: Option<Format>,
 }

@@ -12,6 +12,7 @@ mod night;
 mod page;
 mod positions;
 mod resolve;
+mod skyline;
 mod usage;
 mod window;
 
@@ -90,6 +91,7 @@ where
         Some(Subcommands::Positions(asked)) => positions::run(asked, scales, around)?,
         Some(Subcommands::Night(asked)) => night::run(asked, scales, around)?,
         Some(Subcommands::Daylight(asked)) => daylight::run(asked, scales, around)?,
+        Some(Subcommands::Skyline(asked)) => skyline::run(asked, around)?,
         Some(Subcommands::Completions { shell }) => {
             let mut script = Vec::new();
             clap_complete::generate(*shell, &mut command, "dimmet", &mut script);

@@ -1,10 +1,11 @@
 //! From what was typed to what it means. Every refusal names the place (an option, or a table's
 //! line and column), the text that stands there and what to write in its stead.
 
+use super::arguments::StatureName;
 use super::civil_text::{self, CivilText};
 use super::fault::Fault;
 use crate::measure::{TimeScales, check_date};
-use crate::place::{Site, demo_site, demo_sites, slug};
+use crate::place::{Site, Stature, demo_site, demo_sites, slug};
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use chrono::{DateTime, FixedOffset, NaiveDate};
@@ -131,6 +132,15 @@ pub(super) fn body(words: &Words, place: &str, text: &str) -> Result<Body, Fault
             ],
         ))
     })
+}
+
+/// Whose eyes look; an adult's where nothing is said.
+pub(super) fn stature(name: Option<StatureName>) -> Stature {
+    match name {
+        None | Some(StatureName::Adult) => Stature::Adult,
+        Some(StatureName::Child) => Stature::Child,
+        Some(StatureName::Wheelchair) => Stature::Wheelchair,
+    }
 }
 
 /// The demo site of that name, or a site file by its path, or one kept in the sites folder; with

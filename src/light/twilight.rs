@@ -12,7 +12,7 @@
 use super::Conditions;
 use super::scattering::{phase, spectrum};
 use std::f64::consts::PI;
-use std::sync::OnceLock;
+use std::sync::{Arc, OnceLock};
 
 /// Hazes: node `i` has a zenith extinction by haze of 0.85 mag (i / 7)², crowded at clean air.
 pub const HAZES: usize = 8;
@@ -155,10 +155,10 @@ fn cell(nodes: &[f64], value: f64) -> (usize, f64) {
     (i, (value - nodes[i]) / (nodes[i + 1] - nodes[i]))
 }
 
-/// Sunlight in the sky over one site, for every Sun altitude.
+/// Sunlight in the sky over one site, for every Sun altitude. Clones share the table.
 #[derive(Clone, Debug)]
 pub struct Dome {
-    ln: Vec<Ln>,
+    ln: Arc<[Ln]>,
     shape: Shape,
 }
 
@@ -191,7 +191,7 @@ impl Dome {
             }
         }
         Self {
-            ln,
+            ln: ln.into(),
             shape: Shape::new(haze_mag, elevation_km),
         }
     }

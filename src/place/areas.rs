@@ -1,6 +1,6 @@
 //! Parts of the grounds: where nobody shall stand, and the picture under the plan.
 
-use super::{PlanPoint, limits};
+use super::{PlanPoint, Site, limits};
 use serde::{Deserialize, Serialize};
 use std::path::PathBuf;
 
@@ -19,6 +19,19 @@ impl Exclusion {
     /// Whether a point lies in it.
     pub fn holds(&self, at: PlanPoint) -> bool {
         super::plan_point::is_within(at, &self.corners_m)
+    }
+}
+
+impl Site {
+    /// Whether a point lies on the grounds that people may stand on, as far as their outline
+    /// says; without one, every point does. Excluded parts are not looked at.
+    pub fn outline_holds(&self, at: PlanPoint) -> bool {
+        self.outline_m.is_empty() || super::plan_point::is_within(at, &self.outline_m)
+    }
+
+    /// The excluded part that a point lies in, if it does.
+    pub fn exclusion_at(&self, at: PlanPoint) -> Option<&Exclusion> {
+        self.excluded.iter().find(|part| part.holds(at))
     }
 }
 

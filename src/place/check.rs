@@ -1,7 +1,8 @@
 //! What no single number of a site file shows: rules between its fields.
 
 use super::locate::Token;
-use super::{Extinction, Site, SiteError};
+use super::plan_point::footprint_flaw;
+use super::{Extinction, Instrument, PlanPoint, Site, SiteError};
 
 /// A broken rule, and the text of the file that shows it.
 pub(super) struct Flaw {
@@ -11,6 +12,10 @@ pub(super) struct Flaw {
 
 const MOST_SPOTS: usize = 200;
 const MOST_OBSTACLES: usize = 2000;
+const MOST_EXCLUDED: usize = 200;
+const MOST_KIT: usize = 200;
+/// As many sectors as anybody can tell apart.
+const MOST_SECTORS: usize = 100;
 
 impl Site {
     /// Whether the site, however it came about, can be written to a file and read again.
@@ -42,7 +47,9 @@ pub(super) fn flaw(site: &Site) -> Option<Flaw> {
         .or_else(|| counts(site))
         .or_else(|| spot_names(site))
         .or_else(|| shapes(site))
+        .or_else(|| areas(site))
         .or_else(|| spots_within(site))
+        .or_else(|| kit_spots(site))
 }
 
 fn air(site: &Site) -> Option<Flaw> {
@@ -75,6 +82,13 @@ fn counts(site: &Site) -> Option<Flaw> {
     };
     too_many("spots", site.spots.len(), MOST_SPOTS)
         .or_else(|| too_many("obstacles", site.obstacles.len(), MOST_OBSTACLES))
+        .or_else(|| too_many("excluded", site.excluded.len(), MOST_EXCLUDED))
+        .or_else(|| too_many("kit", site.kit.len(), MOST_KIT))
+        .or_else(|| {
+            let of_spots = site.spots.iter().map(|spot| &spot.skyline_far);
+            let mut all = of_spots.chain([&site.skyline_far]);
+            all.find_map(|far| too_many("skyline_far", far.len(), MOST_SECTORS))
+        })
 }
 
 fn spot_names(site: &Site) -> Option<Flaw> {
@@ -96,6 +110,32 @@ fn shapes(site: &Site) -> Option<Flaw> {
     })
 }
 
+/// Excluded areas and the outline of the grounds.
+fn areas(site: &Site) -> Option<Flaw> {
+    let excluded = site.excluded.iter().find_map(|area| {
+        let flaw = footprint_flaw(&area.corners_m)?;
+        Some(Flaw {
+            sentence: format!("the excluded area {:?} cannot be: {flaw}", area.label),
+            token: Token::quoted(&area.label, 0),
+        })
+    });
+    excluded.or_else(|| {
+        let flaw = outline_flaw(&site.outline_m)?;
+        Some(Flaw {
+            sentence: format!("the outline of the grounds cannot be: {flaw}"),
+            token: Token::word("outline_m"),
+        })
+    })
+}
+
+fn outline_flaw(outline_m: &[PlanPoint]) -> Option<String> {
+    if outline_m.is_empty() {
+        return None;
+    }
+    let flaw = footprint_flaw(outline_m)?;
+    Some(flaw.replace("corners_m", "outline_m"))
+}
+
 fn spots_within(site: &Site) -> Option<Flaw> {
     site.spots.iter().find_map(|spot| {
         let around = site
@@ -110,5 +150,28 @@ fn spots_within(site: &Site) -> Option<Flaw> {
             ),
             token: Token::quoted(&spot.name, 0),
         })
+    })
+}
+
+fn kit_spots(site: &Site) -> Option<Flaw> {
+    let at_no_spot = |instrument: &&Instrument| {
+        let name = instrument.spot();
+        name.is_some_and(|name| site.spots.iter().all(|spot| spot.name != name))
+    };
+    let instrument = site.kit.iter().find(at_no_spot)?;
+    let name = instrument.spot()?;
+    let known: Vec<String> = site
+        .spots
+        .iter()
+        .map(|spot| format!("{:?}", spot.name))
+        .collect();
+    Some(Flaw {
+        sentence: format!(
+            "the instrument {:?} stands at the spot {name:?}, but there is none of that name: \
+             write one of {}, or leave it out",
+            instrument.label(),
+            known.join(", ")
+        ),
+        token: Token::quoted(name, 0),
     })
 }

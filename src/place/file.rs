@@ -52,33 +52,38 @@ impl Site {
     /// # Errors
     /// The site is not valid, or the file cannot be written: one sentence naming it.
     pub fn save(&self, path: &Path) -> Result<(), SiteError> {
-        let text = self.to_ron()?;
-        let write = || -> std::io::Result<()> {
-            let mut file = AtomicWriteFile::open(path)?;
-            file.write_all(text.as_bytes())?;
-            file.commit()
-        };
-        if path.is_dir() {
-            return Err(SiteError(format!(
-                "cannot write {}: it is a folder; add a file name",
-                path.display()
-            )));
-        }
-        write().map_err(|error| {
-            let folder = path
-                .parent()
-                .filter(|folder| !folder.as_os_str().is_empty());
-            let sentence = match folder {
-                Some(folder) if !folder.is_dir() => format!(
-                    "cannot write {}: there is no folder {}",
-                    path.display(),
-                    folder.display()
-                ),
-                _ => format!("cannot write {}: {}", path.display(), reason(&error)),
-            };
-            SiteError(sentence)
-        })
+        write_text(path, &self.to_ron()?)
     }
+}
+
+/// Writes a text file, whole or not at all: until the new text is complete the old file stays as
+/// it was.
+pub(super) fn write_text(path: &Path, text: &str) -> Result<(), SiteError> {
+    let write = || -> std::io::Result<()> {
+        let mut file = AtomicWriteFile::open(path)?;
+        file.write_all(text.as_bytes())?;
+        file.commit()
+    };
+    if path.is_dir() {
+        return Err(SiteError(format!(
+            "cannot write {}: it is a folder; add a file name",
+            path.display()
+        )));
+    }
+    write().map_err(|error| {
+        let folder = path
+            .parent()
+            .filter(|folder| !folder.as_os_str().is_empty());
+        let sentence = match folder {
+            Some(folder) if !folder.is_dir() => format!(
+                "cannot write {}: there is no folder {}",
+                path.display(),
+                folder.display()
+            ),
+            _ => format!("cannot write {}: {}", path.display(), reason(&error)),
+        };
+        SiteError(sentence)
+    })
 }
 
 /// Writes a site as text and makes sure that it can be read back.

@@ -1,37 +1,59 @@
 //! What blocks the view from a spot, on a date: everything that a site says of it, together.
 
-use super::silhouette;
-use super::{Obstacle, PlanPoint, Site, Skyline, SkylinePoint, Spot, Stature, Viewpoint};
-use crate::measure::Angle;
+use super::{
+    FarSkyline, MeasuredUse, Obstacle, PlanPoint, PreparedGrounds, Site, Skyline, Spot, Stature,
+    Viewpoint,
+};
 use chrono::NaiveDate;
-use std::sync::Arc;
 
 /// A site's surroundings on one date.
 #[derive(Clone, Copy, Debug)]
 pub struct Grounds<'a> {
     site: &'a Site,
     date: Option<NaiveDate>,
+    far: Option<&'a FarSkyline>,
 }
 
 impl<'a> Grounds<'a> {
     /// The surroundings on a date, which decides whether trees have leaves; without one they all
-    /// have.
+    /// have. A leafless crown blocks where more of it is opaque than the site's
+    /// `blocking_density`; its trunk always does.
     pub fn new(site: &'a Site, date: Option<NaiveDate>) -> Self {
-        Self { site, date }
+        Self {
+            site,
+            date,
+            far: None,
+        }
+    }
+
+    /// The same with the terrain of the site, if it has any.
+    #[must_use]
+    pub fn with_far(self, far: Option<&'a FarSkyline>) -> Self {
+        Self { far, ..self }
+    }
+
+    /// What does not depend on the eye, worked out: for whoever asks from more than one spot.
+    pub fn prepared(&self) -> PreparedGrounds<'a> {
+        PreparedGrounds::new(self.site, self.date, self.far)
     }
 
     /// The skyline that somebody at a spot has: the highest of the measured skyline as far as it
-    /// holds there, the obstacles and the terrain.
+    /// holds there ([`Site::measured_use`]), the obstacles and the terrain.
     ///
     /// An obstacle that the spot stands in is left out; [`Site::check`] refuses such spots of the
     /// site's own, and [`Obstacle::surrounds`] asks for any other.
     pub fn skyline(&self, spot: &Spot, stature: Stature) -> Skyline {
-        self.seen(self.site.viewpoint(spot, stature), &self.site.skyline)
+        self.prepared().skyline(spot, stature)
     }
 
     /// The skyline from any point of the grounds: what was measured counts only where it is far.
     pub fn skyline_from(&self, viewpoint: Viewpoint) -> Skyline {
-        self.seen(viewpoint, &[])
+        self.prepared().skyline_from(viewpoint)
+    }
+
+    /// Which measured skyline counts at a spot.
+    pub fn measured_use(&self, spot: &Spot) -> MeasuredUse {
+        self.site.measured_use(spot)
     }
 
     /// The obstacle that a point lies in, if it does.
@@ -45,30 +67,6 @@ impl<'a> Grounds<'a> {
     /// The date that decides on leaves.
     pub fn date(&self) -> Option<NaiveDate> {
         self.date
-    }
-
-    fn seen(&self, viewpoint: Viewpoint, measured: &[SkylinePoint]) -> Skyline {
-        let points: Vec<(Angle, Angle)> = measured
-            .iter()
-            .map(|point| {
-                (
-                    Angle::from_degrees(point.azimuth_deg),
-                    Angle::from_degrees(point.altitude_deg),
-                )
-            })
-            .collect();
-        let mut edges = Vec::new();
-        for obstacle in self
-            .site
-            .obstacles
-            .iter()
-            .filter(|obstacle| !obstacle.surrounds(viewpoint.at))
-        {
-            let label: Arc<str> = obstacle.label().into();
-            let outline = silhouette::edges(obstacle, &self.site.slope, &viewpoint);
-            edges.extend(outline.into_iter().map(|edge| (edge, label.clone())));
-        }
-        Skyline::with_edges(&points, &edges)
     }
 }
 

@@ -6,9 +6,13 @@
 
 mod air;
 mod areas;
+mod blocker;
 mod check;
 mod demo;
+mod envelope;
+pub mod exchange;
 mod eyes;
+mod features;
 mod file;
 mod ground;
 mod grounds;
@@ -17,25 +21,41 @@ mod leafless;
 mod limits;
 mod locate;
 mod measured;
+mod measured_use;
 mod obstacle;
+mod patch;
 mod plan_point;
+mod prepared;
+mod roof;
 mod silhouette;
 mod site;
 mod skyline;
+mod solid;
+mod stack;
 mod stretch;
+pub mod survey;
+mod terrain;
 pub mod zone;
 
 pub use air::{Extinction, Haze, SiteAir, SiteSky, standard_pressure_hpa};
 pub use areas::{Backdrop, Exclusion, PicturePoint, Sector};
+pub use blocker::Blocker;
 pub use demo::{demo_site, demo_sites, slug};
 pub use eyes::SiteEyes;
+pub use features::Feature;
 pub use file::LARGEST_FILE_BYTES;
 pub use ground::{People, Slope, Stature, Viewpoint};
 pub use grounds::Grounds;
 pub use kit::{Eyepiece, Instrument, Orientation};
 pub use leafless::{Leafless, YearDay};
 pub use measured::{SkylinePoint, read_skyline_table, skyline_from_table};
+pub use measured_use::MeasuredUse;
 pub use obstacle::Obstacle;
 pub use plan_point::PlanPoint;
+pub use prepared::{PreparedGrounds, TerrainView};
 pub use site::{Site, SiteError, Spot};
-pub use skyline::{Feature, Skyline};
+pub use skyline::Skyline;
+pub use terrain::{
+    FarSkyline, LARGEST_RADIUS_M, Relief, Terrain, TerrainRequest, USUAL_REFRACTION_K, cache_path,
+    far_skyline_cached, terrain_path,
+};

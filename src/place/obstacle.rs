@@ -12,7 +12,8 @@ use serde::{Deserialize, Serialize};
 #[serde(deny_unknown_fields)]
 pub enum Obstacle {
     /// A crown, drawn as a flat shape through the trunk's axis that always faces the spot: full
-    /// width up to 0.6 of the height, then straight shoulders up to a flat top half as wide.
+    /// width up to 0.6 of the height, then straight shoulders up to a flat top half as wide. With
+    /// a gap beneath it is cut off level at `gap_m`, and the trunk below is a flat strip.
     Tree {
         /// What people call it.
         #[serde(deserialize_with = "limits::name")]
@@ -51,7 +52,10 @@ pub enum Obstacle {
             skip_serializing_if = "Option::is_none"
         )]
         trunk_m: Option<f64>,
-        /// When it stands without leaves, and how much shows through it then.
+        /// When it stands without leaves, and how much shows through it then. A bare crown that
+        /// shows enough of the sky ([`super::Site::blocking_density`]) does not block; its trunk
+        /// still does, up to `gap_m` or else to 0.6 of the height, where it goes over into
+        /// branches.
         #[serde(default, skip_serializing_if = "Option::is_none")]
         leafless: Option<Leafless>,
     },
@@ -149,6 +153,8 @@ pub enum Obstacle {
 
 /// Nearer than this to a wall's line, nobody stands in front of it or behind it.
 const WALL_REACH_M: f64 = 0.1;
+/// A hedge around a large park has fewer.
+const MOST_LINE_POINTS: usize = 1000;
 
 impl Obstacle {
     /// What people call it.
@@ -261,6 +267,12 @@ impl Obstacle {
                     .windows(2)
                     .map(|ends| ends[1].distance_m(ends[0]))
                     .sum();
+                if line_m.len() > MOST_LINE_POINTS {
+                    return Some(format!(
+                        "its line_m has {} points, but may have at most {MOST_LINE_POINTS}",
+                        line_m.len()
+                    ));
+                }
                 (length_m < 0.01).then(|| "its line_m needs at least two points apart".into())
             }
             Self::Shape { corners_m, .. } => footprint_flaw(corners_m),

@@ -1,17 +1,16 @@
 //! The smooth pieces that a skyline is made of, and the highest of two of them all round.
 
-use super::silhouette;
+use super::blocker::Source;
 use crate::measure::{Angle, search};
 use std::f64::consts::{PI, TAU};
-use std::sync::Arc;
 
 /// A smooth stretch of a skyline; it ends where the next begins, or at a whole turn.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Copy, Debug, PartialEq)]
 pub(super) struct Piece {
     /// Radians, in [0, 2π).
     pub from: f64,
     pub shape: Shape,
-    pub label: Option<Arc<str>>,
+    pub source: Source,
 }
 
 /// Altitude as a function of azimuth, radians.
@@ -27,11 +26,29 @@ pub(super) enum Shape {
     Edge { east: f64, north: f64 },
 }
 
-const LEVEL: Shape = Shape::Line {
-    azimuth: 0.0,
-    altitude: 0.0,
-    slope: 0.0,
+/// The level through the eye; it is straight in both senses.
+pub(super) const LEVEL: Shape = Shape::Edge {
+    east: 0.0,
+    north: 0.0,
 };
+
+/// Radians; narrower stretches are rounding.
+pub(super) const SLIVER: f64 = 1e-13;
+
+/// A direction of azimuth, radians, with its sine and cosine.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Ray {
+    pub at: f64,
+    pub sin: f64,
+    pub cos: f64,
+}
+
+impl Ray {
+    pub(super) fn new(at: f64) -> Self {
+        let (sin, cos) = at.sin_cos();
+        Self { at, sin, cos }
+    }
+}
 
 impl Shape {
     pub(super) fn altitude(&self, at: f64) -> f64 {
@@ -41,7 +58,18 @@ impl Shape {
                 altitude,
                 slope,
             } => altitude + slope * (at - azimuth),
-            Self::Edge { east, north } => (east * at.sin() + north * at.cos()).atan(),
+            Self::Edge { east, north } => {
+                let (sin, cos) = at.sin_cos();
+                (east * sin + north * cos).atan()
+            }
+        }
+    }
+
+    /// Tangent of the altitude.
+    pub(super) fn tangent(&self, ray: &Ray) -> f64 {
+        match *self {
+            Self::Line { .. } => self.altitude(ray.at).tan(),
+            Self::Edge { east, north } => east * ray.sin + north * ray.cos,
         }
     }
 
@@ -49,41 +77,68 @@ impl Shape {
         match *self {
             Self::Line { slope, .. } => slope,
             Self::Edge { east, north } => {
-                let tangent = east * at.sin() + north * at.cos();
-                (east * at.cos() - north * at.sin()) / (1.0 + tangent * tangent)
+                let (sin, cos) = at.sin_cos();
+                let tangent = east * sin + north * cos;
+                (east * cos - north * sin) / (1.0 + tangent * tangent)
             }
         }
     }
 
     /// Where two shapes cross strictly between two azimuths less than half a turn apart.
-    fn crossings(&self, other: &Self, from: f64, to: f64) -> Vec<f64> {
+    pub(super) fn crossings(&self, other: &Self, from: f64, to: f64) -> Vec<f64> {
         let is_between = |at: &f64| *at > from && *at < to;
-        match (*self, *other) {
-            (Self::Line { slope: a, .. }, Self::Line { slope: b, .. }) => {
+        if let (Self::Edge { .. }, Self::Edge { .. }) = (self, other) {
+            let at = self.edge_crossing(other, 0.5 * (from + to));
+            return at.filter(is_between).into_iter().collect();
+        }
+        match (self.line_slope(), other.line_slope()) {
+            (Some(a), Some(b)) => {
                 let gap = self.altitude(from) - other.altitude(from);
                 let at = from + gap / (b - a);
                 Some(at).filter(is_between).into_iter().collect()
             }
-            (Self::Edge { east: a, north: b }, Self::Edge { east: c, north: d }) => {
-                let at = (d - b).atan2(a - c);
-                (-1..=2)
-                    .map(|half_turns| at + PI * f64::from(half_turns))
-                    .filter(is_between)
-                    .collect()
-            }
-            // Where both are above 0 the edge is concave and the line straight, so there are two
-            // crossings at most and one turn between them; below 0 neither is ever seen.
-            _ => {
-                let gap = |at: f64| self.altitude(at) - other.altitude(at);
-                let samples = search::grid(from, to, (to - from) / 8.0);
-                let found = search::crossings(gap, &samples, 1e-12);
-                found
-                    .iter()
-                    .map(|crossing| crossing.at)
-                    .filter(is_between)
-                    .collect()
-            }
+            (Some(_), None) => other.line_crossings(self, from, to),
+            _ => self.line_crossings(other, from, to),
         }
+    }
+
+    /// The slope of what is straight in azimuth and altitude.
+    fn line_slope(&self) -> Option<f64> {
+        match *self {
+            Self::Line { slope, .. } => Some(slope),
+            _ if *self == LEVEL => Some(0.0),
+            Self::Edge { .. } => None,
+        }
+    }
+
+    /// Where two edges' planes cross, within a quarter turn of an azimuth.
+    pub(super) fn edge_crossing(&self, other: &Self, near: f64) -> Option<f64> {
+        let (Self::Edge { east: a, north: b }, Self::Edge { east: c, north: d }) = (*self, *other)
+        else {
+            return None;
+        };
+        let at = (d - b).atan2(a - c);
+        Some(at + PI * ((near - at) / PI).round())
+    }
+
+    /// Where an edge crosses a line. Where both are above 0 the edge is concave and the line
+    /// straight, so there are two crossings at most and one turn between them; below 0 neither
+    /// is ever seen.
+    fn line_crossings(&self, line: &Self, from: f64, to: f64) -> Vec<f64> {
+        let (edge_from, edge_to) = (self.altitude(from), self.altitude(to));
+        let (line_from, line_to) = (line.altitude(from), line.altitude(to));
+        let is_above = edge_from.min(edge_to) > line_from.max(line_to).max(0.0);
+        if is_above || self.highest(from, to) < line_from.min(line_to) {
+            return Vec::new();
+        }
+        let gap = |at: f64| self.altitude(at) - line.altitude(at);
+        let samples = search::grid(from, to, (to - from) / 8.0);
+        let found = search::crossings(gap, &samples, 1e-12);
+        found
+            .iter()
+            .map(|crossing| crossing.at)
+            .filter(|at| *at > from && *at < to)
+            .collect()
     }
 
     /// The highest altitude over an interval.
@@ -91,10 +146,10 @@ impl Shape {
         let ends = self.altitude(from).max(self.altitude(to));
         match *self {
             Self::Edge { east, north } => {
-                let crest = east.atan2(north).rem_euclid(TAU);
-                let is_within = crest > from && crest < to;
-                if is_within {
-                    self.altitude(crest)
+                // The crest lies inside only where the shape rises at the start and falls at the
+                // end.
+                if self.slope(from) > 0.0 && self.slope(to) < 0.0 {
+                    east.hypot(north).atan()
                 } else {
                     ends
                 }
@@ -108,11 +163,12 @@ pub(super) fn open_pieces() -> Vec<Piece> {
     vec![Piece {
         from: 0.0,
         shape: LEVEL,
-        label: None,
+        source: Source::Horizon,
     }]
 }
 
-pub(super) fn measured_pieces(points: &[(Angle, Angle)]) -> Vec<Piece> {
+/// Straight between points of (azimuth, altitude) all round; level where there is none.
+pub(super) fn line_pieces(points: &[(Angle, Angle)], source: Source) -> Vec<Piece> {
     let mut points: Vec<(f64, f64)> = points
         .iter()
         .filter(|(azimuth, altitude)| azimuth.is_finite() && altitude.is_finite())
@@ -130,7 +186,7 @@ pub(super) fn measured_pieces(points: &[(Angle, Angle)]) -> Vec<Piece> {
             altitude: start.1,
             slope: (end.1 - start.1) / (end.0 - start.0),
         },
-        label: None,
+        source,
     };
     let mut pieces = Vec::with_capacity(points.len() + 1);
     if first.0 > 0.0 {
@@ -145,41 +201,19 @@ pub(super) fn measured_pieces(points: &[(Angle, Angle)]) -> Vec<Piece> {
     pieces
 }
 
-/// One edge, with the level horizon everywhere else.
-pub(super) fn edge_pieces(arc: silhouette::Arc, label: &Arc<str>) -> Vec<Piece> {
-    let shape = Shape::Edge {
-        east: arc.east,
-        north: arc.north,
-    };
-    let edge = |from| Piece {
-        from,
-        shape,
-        label: Some(label.clone()),
-    };
-    let level = |from| Piece {
-        from,
-        shape: LEVEL,
-        label: None,
-    };
-    let from = Angle::from_radians(arc.from).wrapped().radians();
-    let to = from + arc.width;
-    if to < TAU {
-        let mut pieces = vec![level(0.0), edge(from), level(to)];
-        if from == 0.0 {
-            pieces.remove(0);
-        }
-        pieces
-    } else if to > TAU {
-        vec![edge(0.0), level(to - TAU), edge(from)]
-    } else {
-        vec![level(0.0), edge(from)]
+/// Adds a piece, unless it only goes on with the last one.
+pub(super) fn push_piece(pieces: &mut Vec<Piece>, piece: Piece) {
+    let goes_on = pieces
+        .last()
+        .is_some_and(|last| last.shape == piece.shape && last.source == piece.source);
+    if !goes_on {
+        let from = if pieces.is_empty() { 0.0 } else { piece.from };
+        pieces.push(Piece { from, ..piece });
     }
 }
 
 /// The highest of two whole horizons; where they agree, the first.
 pub(super) fn highest_of(one: &[Piece], other: &[Piece]) -> Vec<Piece> {
-    /// Radians; narrower stretches are rounding.
-    const SLIVER: f64 = 1e-13;
     let mut highest: Vec<Piece> = Vec::with_capacity(one.len() + other.len());
     let (mut i, mut k) = (0, 0);
     let mut from = 0.0;
@@ -188,28 +222,22 @@ pub(super) fn highest_of(one: &[Piece], other: &[Piece]) -> Vec<Piece> {
     while from < TAU {
         let to = start_of(one, i + 1).min(start_of(other, k + 1));
         let (a, b) = (&one[i], &other[k]);
-        let mut cuts = vec![from];
+        let mut keep = |from: f64, to: f64| {
+            if to - from > SLIVER {
+                let middle = 0.5 * (from + to);
+                let is_other = b.shape.altitude(middle) > a.shape.altitude(middle);
+                let piece = if is_other { b } else { a };
+                push_piece(&mut highest, Piece { from, ..*piece });
+            }
+        };
+        let mut start = from;
         if a.shape != b.shape {
-            cuts.extend(a.shape.crossings(&b.shape, from, to));
-        }
-        cuts.push(to);
-        for ends in cuts.windows(2).filter(|ends| ends[1] - ends[0] > SLIVER) {
-            let middle = 0.5 * (ends[0] + ends[1]);
-            let higher = if b.shape.altitude(middle) > a.shape.altitude(middle) {
-                b
-            } else {
-                a
-            };
-            let is_same = highest
-                .last()
-                .is_some_and(|last| last.shape == higher.shape && last.label == higher.label);
-            if !is_same {
-                highest.push(Piece {
-                    from: if highest.is_empty() { 0.0 } else { ends[0] },
-                    ..higher.clone()
-                });
+            for at in a.shape.crossings(&b.shape, from, to) {
+                keep(start, at);
+                start = at;
             }
         }
+        keep(start, to);
         i += usize::from(start_of(one, i + 1) <= to);
         k += usize::from(start_of(other, k + 1) <= to);
         from = to;

@@ -198,8 +198,11 @@ impl Search<'_> {
 
     fn is_plain(&self, star: &Star, view: &View<'_>, glow: &Glow<'_>) -> bool {
         let place = view.refracted(view.horizontal(view.star(star).direction));
-        let skyline = self.request.skyline.altitude(place.azimuth);
-        if place.altitude < Angle::ZERO || place.altitude <= skyline {
+        let clearance = self
+            .request
+            .skyline
+            .clearance(place.azimuth, place.altitude);
+        if place.altitude < Angle::ZERO || clearance <= Angle::ZERO {
             return false;
         }
         let target = Target::point(

@@ -194,7 +194,8 @@ impl Search<'_> {
         let is_day = sun.altitude > DAY;
         let is_plain = is_day && self.request.body != Body::Sun && {
             let place = view.refracted_place(self.request.body);
-            place.altitude > self.skyline.altitude(place.azimuth) && self.margin_mag(&view) >= 0.0
+            self.skyline.clearance(place.azimuth, place.altitude) > Angle::ZERO
+                && self.margin_mag(&view) >= 0.0
         };
         Minute {
             moment,

@@ -1,5 +1,6 @@
 //! The sky's light through a night, shared by all bodies and eyes.
 
+use super::path::Cubic;
 use super::sight::{Lamps, Luck, Sight, target};
 use super::track::Watch;
 use crate::light::{Eye, Glow, Margin};
@@ -17,7 +18,7 @@ const UNKNOWN_MAG: f64 = -99.0;
 /// The sky's light through the part of a night in which eyes are sent looking.
 pub(super) struct Lit<'a> {
     pub watch: Watch<'a>,
-    sight: &'a Sight,
+    pub sight: &'a Sight,
     /// Seconds after the night's start, ascending.
     pub times_s: Vec<f64>,
     /// The sky at each of them, with each [`Luck`] in the air.
@@ -45,11 +46,11 @@ impl<'a> Lit<'a> {
         }
     }
 
-    /// The samples within an interval and the ones just outside it.
+    /// The samples within an interval and the two just outside either end, which a cubic needs.
     pub fn around(&self, from_s: f64, to_s: f64) -> Range<usize> {
         let first = self.times_s.partition_point(|at_s| *at_s <= from_s);
         let past = self.times_s.partition_point(|at_s| *at_s < to_s);
-        first.saturating_sub(1)..(past + 1).min(self.times_s.len())
+        first.saturating_sub(2)..(past + 2).min(self.times_s.len())
     }
 
     /// A body's margins at the samples of a range, for each of the eyes.
@@ -77,18 +78,75 @@ impl<'a> Lit<'a> {
         margins
     }
 
-    /// A body's margin at any instant.
-    pub fn margin(&self, body: Body, eye: Eye, luck: Luck, at_s: f64) -> Option<Margin> {
-        let epoch = self.watch.span.at(self.watch.moment(at_s));
-        let view = epoch.seen_by(self.watch.observer);
-        let target = target(&view, body)?;
-        let glow = Lamps::of(&view).glow(self.sight.sky_with(luck));
-        Some(glow.margin(&target, &self.sight.gaze_with(eye, luck)))
+    /// A body's margin at any instant, magnitudes.
+    pub fn margin_mag(&self, body: Body, eye: Eye, luck: Luck, at_s: f64) -> f64 {
+        margin(self.watch, self.sight, (body, eye, luck), at_s)
+            .map_or(UNKNOWN_MAG, |margin| margin.margin_mag)
+    }
+}
+
+/// A body's margin for an eye at any instant; `None` where its brightness is not known.
+pub(super) fn margin(
+    watch: Watch<'_>,
+    sight: &Sight,
+    (body, eye, luck): (Body, Eye, Luck),
+    at_s: f64,
+) -> Option<Margin> {
+    let epoch = watch.span.at(watch.moment(at_s));
+    let view = epoch.seen_by(watch.observer);
+    let target = target(&view, body)?;
+    let glow = Lamps::of(&view).glow(sight.sky_with(luck));
+    Some(glow.margin(&target, &sight.gaze_with(eye, luck)))
+}
+
+/// One body's margins for one eye at the samples of a night's light, and between them.
+#[derive(Clone, Debug)]
+pub(super) struct MarginRow {
+    times_s: Range<f64>,
+    /// Magnitudes; [`UNKNOWN_MAG`] at samples that were not looked at.
+    mags: Vec<f32>,
+}
+
+impl MarginRow {
+    /// Of samples that nobody has looked at.
+    pub fn unknown(lit: &Lit<'_>) -> Self {
+        let ends = (lit.times_s.first(), lit.times_s.last());
+        let (Some(first), Some(last)) = ends else {
+            unreachable!("a grid has two ends")
+        };
+        Self {
+            times_s: *first..*last,
+            mags: vec![UNKNOWN_MAG as f32; lit.times_s.len()],
+        }
     }
 
-    /// That margin as a number, magnitudes.
-    pub fn margin_mag(&self, body: Body, eye: Eye, luck: Luck, at_s: f64) -> f64 {
-        self.margin(body, eye, luck, at_s)
-            .map_or(UNKNOWN_MAG, |margin| margin.margin_mag)
+    /// Puts the values from a sample on.
+    pub fn put(&mut self, first: usize, mags: &[f64]) {
+        for (known, mag) in self.mags[first..].iter_mut().zip(mags) {
+            *known = *mag as f32;
+        }
+    }
+
+    /// The samples with their times, seconds after the night's start.
+    pub fn samples(&self) -> impl Iterator<Item = (f64, f64)> + '_ {
+        let step_s = self.step_s();
+        let row = self.mags.iter().enumerate();
+        row.map(move |(k, mag)| (self.times_s.start + k as f64 * step_s, f64::from(*mag)))
+    }
+
+    fn step_s(&self) -> f64 {
+        (self.times_s.end - self.times_s.start) / (self.mags.len() - 1) as f64
+    }
+
+    /// The margin between samples: a cubic where four of them are known, else straight.
+    pub fn at(&self, at_s: f64) -> f64 {
+        let place = (at_s - self.times_s.start) / self.step_s();
+        let cubic = Cubic::at(place, self.mags.len());
+        let mag = |k: usize| f64::from(self.mags[k]);
+        if cubic.nodes().all(|k| mag(k) > UNKNOWN_MAG) {
+            return cubic.of(mag);
+        }
+        let k = (place.max(0.0) as usize).min(self.mags.len() - 2);
+        mag(k) + (place - k as f64) * (mag(k + 1) - mag(k))
     }
 }

@@ -1,6 +1,6 @@
 //! One night at one spot: from the Sun's highest point on a date to its next.
 
-use super::Sight;
+use super::{NightSky, Sight};
 use crate::light::{Eye, LightError};
 use crate::measure::{Angle, DateOutOfRange, Moment, TimeScales};
 use crate::place::Skyline;
@@ -267,12 +267,12 @@ impl From<LightError> for NightError {
 }
 
 impl Night {
-    /// Plans a night.
+    /// Plans a night; to plan it for several skylines, keep the [`NightSky`].
     ///
     /// # Errors
     /// The date does not exist in the zone, or lies outside the supported years.
     pub fn plan(ephemeris: &Ephemeris, request: &NightRequest<'_>) -> Result<Self, NightError> {
-        super::survey::survey(ephemeris, request)
+        Ok(NightSky::new(ephemeris, request)?.behind(request.skyline))
     }
     /// What a body does in it.
     pub fn body(&self, body: Body) -> Option<&BodyNight> {

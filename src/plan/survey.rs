@@ -1,9 +1,12 @@
-//! Going through a night: culminations, the Sun's times, each body's events.
+//! Going through a night: culminations, the Sun's times, each body's path and light.
 
+use super::bright::Looked;
 use super::lit::Lit;
-use super::night::{BodyNight, Night, NightError, NightRequest, SkylineEvent, SunTimes};
-use super::track::{Track, Watch};
-use super::{Half, optics, windows};
+use super::night::{Night, NightError, NightRequest, SunTimes};
+use super::night_sky::{BodySky, NightSky};
+use super::path::Path;
+use super::track::{Sample, Track, Watch};
+use super::{Half, optics};
 use crate::measure::{Angle, DateOutOfRange, Moment, check_date, civil, search};
 use crate::sky::{Body, Ephemeris, OutsideEphemeris, Span};
 
@@ -14,11 +17,11 @@ pub(super) const SUN_RISE_SET: Angle = Angle::from_arcmin(-50.0);
 
 const SECONDS_PER_HOUR: f64 = 3600.0;
 
-/// Plans a night ([`Night::plan`]).
+/// Goes through a night ([`NightSky::new`]).
 pub(super) fn survey(
     ephemeris: &Ephemeris,
     request: &NightRequest<'_>,
-) -> Result<Night, NightError> {
+) -> Result<NightSky, NightError> {
     let culminations = Culminations::find(ephemeris, request)?;
     let Culminations {
         span,
@@ -29,13 +32,12 @@ pub(super) fn survey(
     let watch = Watch {
         span: &span,
         observer: request.observer,
-        skyline: request.skyline,
         start,
     };
     let length_s = end.seconds_since(start);
 
     let sun = Track::new(watch, Body::Sun, length_s);
-    let mut night = Night {
+    let bare = Night {
         date: request.date,
         start,
         middle,
@@ -44,17 +46,23 @@ pub(super) fn survey(
         bodies: Vec::new(),
         optics: optics::optics_times(&sun, middle, request),
     };
-    let lit = Lit::new(watch, request.sight, dark_part_s(&night, request));
-    night.bodies = Body::ALL
+    let lit = Lit::new(watch, request.sight, dark_part_s(&bare, request));
+    let bodies = Body::ALL
         .into_iter()
         .filter(|body| *body == Body::Moon || request.bodies.contains(body))
         .filter(|body| *body != Body::Sun)
         .map(|body| {
-            let track = Track::new(watch, body, length_s).with_skyline_breaks();
-            body_night(&track, &lit, &night, request)
+            let track = Track::new(watch, body, length_s);
+            body_sky(&track, &lit, &bare, request)
         })
         .collect();
-    Ok(night)
+    Ok(NightSky {
+        bare,
+        bodies,
+        observer: *request.observer,
+        sight: request.sight.clone(),
+        span,
+    })
 }
 
 /// The Sun's three culminations that bound a night and its halves.
@@ -187,17 +195,10 @@ fn dark_part_s(night: &Night, request: &NightRequest<'_>) -> std::ops::Range<f64
     from_s.max(0.0)..to_s.min(length_s)
 }
 
-fn body_night(
-    track: &Track<'_>,
-    lit: &Lit<'_>,
-    night: &Night,
-    request: &NightRequest<'_>,
-) -> BodyNight {
-    let body = track.body;
+fn body_sky(track: &Track<'_>, lit: &Lit<'_>, bare: &Night, request: &NightRequest<'_>) -> BodySky {
     // By convention without the site's air: the centre, or the Moon's upper limb, at -34'.
-    let above_horizon = |sample: &super::track::Sample| {
-        (sample.airless + sample.limb + HORIZON_REFRACTION).radians()
-    };
+    let above_horizon =
+        |sample: &Sample| (sample.airless + sample.limb + HORIZON_REFRACTION).radians();
     let horizon = track.crossings(above_horizon);
     let moments = |rising: bool| {
         let chosen = horizon.iter().filter(|crossing| crossing.rising == rising);
@@ -205,35 +206,16 @@ fn body_night(
             .map(|crossing| track.watch.moment(crossing.at))
             .collect()
     };
-    let skyline_events: Vec<SkylineEvent> = track
-        .crossings(|sample| sample.clearance.radians())
-        .into_iter()
-        .map(|crossing| {
-            let sample = track.watch.sample(body, crossing.at);
-            SkylineEvent {
-                moment: track.watch.moment(crossing.at),
-                clears: crossing.rising,
-                azimuth: sample.azimuth,
-                altitude: sample.refracted,
-            }
-        })
-        .collect();
-    let searched = windows::Searched { track, lit, night };
-    let eyes = searched.windows(&skyline_events, request.eyes);
-    BodyNight {
-        body,
+    BodySky {
+        body: track.body,
         rise: moments(true),
         set: moments(false),
         is_up_at_start: track
             .samples
             .first()
             .is_some_and(|first| above_horizon(first) >= 0.0),
-        is_clear_at_start: track
-            .samples
-            .first()
-            .is_some_and(|first| first.clearance > Angle::ZERO),
-        skyline_events,
-        eyes,
+        eyes: Looked { track, lit, bare }.eyes(request.eyes),
+        path: Path::of(track),
     }
 }
 

@@ -1,20 +1,18 @@
-//! One body's way across one spot's sky, sampled through a night.
+//! One body's way across a site's sky, sampled through a night.
 
 use crate::measure::{Angle, Moment};
-use crate::place::Skyline;
-use crate::sky::{Body, Observer, Span, refraction};
+use crate::sky::{Body, Observer, Span};
 
 /// Astronomical unit, km (IAU 2012 Resolution B2).
 const AU_KM: f64 = 149_597_870.7;
 
 /// Seconds between samples. A body's altitude turns only at its culminations, hours apart, and
 /// its azimuth moves by a few degrees in a step, so that a step holds at most one turn of
-/// either; what the skyline does within a step is caught by samples at the skyline's own breaks
-/// ([`Track::with_skyline_breaks`]). A second setting within minutes of a first rising is a turn
-/// on the near side of zero, which the search looks at whatever the step.
+/// either. A second setting within minutes of a first rising is a turn on the near side of zero,
+/// which the search looks at whatever the step.
 const STEP_S: f64 = 300.0;
 
-/// Where a body is seen, at one instant, from one spot.
+/// Where a body is, at one instant, over one site.
 #[derive(Clone, Copy, Debug)]
 pub(super) struct Sample {
     /// Seconds after the night's start.
@@ -25,10 +23,6 @@ pub(super) struct Sample {
     pub airless: Angle,
     /// Half of the body's apparent diameter where its upper limb counts, else zero.
     pub limb: Angle,
-    /// Refracted altitude of the point that counts: planets' centres, the Moon's upper limb.
-    pub refracted: Angle,
-    /// That altitude above the skyline.
-    pub clearance: Angle,
 }
 
 /// Who looks, from where, and when.
@@ -36,7 +30,6 @@ pub(super) struct Sample {
 pub(super) struct Watch<'a> {
     pub span: &'a Span,
     pub observer: &'a Observer,
-    pub skyline: &'a Skyline,
     pub start: Moment,
 }
 
@@ -59,14 +52,11 @@ impl Watch<'_> {
             }
             _ => Angle::ZERO,
         };
-        let refracted = refraction::refracted(place.altitude + limb, &self.observer.air);
         Sample {
             at_s,
             azimuth: place.azimuth,
             airless: place.altitude,
             limb,
-            refracted,
-            clearance: refracted - self.skyline.altitude(place.azimuth),
         }
     }
 }
@@ -91,42 +81,6 @@ impl<'a> Track<'a> {
             body,
             samples,
         }
-    }
-
-    /// Adds samples just before and just after the body's azimuth passes each break of the
-    /// skyline, wherever the skyline could reach it, so that nothing narrow is stepped over.
-    pub fn with_skyline_breaks(mut self) -> Self {
-        /// Half a second on either side: a lamp post of 0.01 degrees is passed in two seconds.
-        const BESIDE_S: f64 = 0.5;
-        let highest = self.watch.skyline.highest() + Angle::from_degrees(1.0);
-        let reaches = |s: &Sample| s.refracted < highest && s.refracted > Angle::from_degrees(-1.0);
-        let mut extra = Vec::new();
-        for pair in self.samples.windows(2) {
-            let (a, b) = (&pair[0], &pair[1]);
-            if !reaches(a) && !reaches(b) {
-                continue;
-            }
-            let turned = (b.azimuth - a.azimuth).signed();
-            for edge in self.watch.skyline.breaks() {
-                let ahead = (*edge - a.azimuth).signed();
-                let share = ahead / turned;
-                if !(0.0..=1.0).contains(&share) {
-                    continue;
-                }
-                // One secant step from the straight-line guess leaves milliseconds.
-                let guess_s = a.at_s + share * (b.at_s - a.at_s);
-                let missed = (*edge - self.watch.sample(self.body, guess_s).azimuth).signed();
-                let at_s = guess_s + missed / turned * (b.at_s - a.at_s);
-                for beside_s in [at_s - BESIDE_S, at_s + BESIDE_S] {
-                    if beside_s > a.at_s && beside_s < b.at_s {
-                        extra.push(self.watch.sample(self.body, beside_s));
-                    }
-                }
-            }
-        }
-        self.samples.extend(extra);
-        self.samples.sort_by(|a, b| a.at_s.total_cmp(&b.at_s));
-        self
     }
 
     /// Where a quantity of the samples crosses zero, to 10 ms: seconds after the start, and

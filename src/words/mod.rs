@@ -18,13 +18,14 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 8] = [
+const ENGLISH: [&str; 9] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
     include_str!("../../assets/words/en/cli.ftl"),
     include_str!("../../assets/words/en/window.ftl"),
     include_str!("../../assets/words/en/lookout.ftl"),
     include_str!("../../assets/words/en/daylight.ftl"),
+    include_str!("../../assets/words/en/measure.ftl"),
     include_str!("../../assets/words/en/plan.ftl"),
     include_str!("../../assets/words/en/spots.ftl"),
 ];

@@ -44,12 +44,10 @@ impl Words {
     }
 
     fn window(&self, about: &HalfNight<'_>, body: &BodyNight, window: &Window) -> String {
-        let azimuth_at = |edge: Edge| {
+        let place_at = |edge: Edge| {
             let same = |event: &&crate::plan::SkylineEvent| event.moment == edge.moment;
-            body.skyline_events
-                .iter()
-                .find(same)
-                .map(|event| event.azimuth)
+            let event = body.skyline_events.iter().find(same)?;
+            Some((event.azimuth, event.altitude))
         };
         let time = |edge: Edge| FluentValue::from(self.time(about.clock, edge.moment));
         let cause = |edge: Edge| FluentValue::from(spoken_cause(about.night, edge));
@@ -63,13 +61,13 @@ impl Words {
                 ("start", time(window.start)),
                 (
                     "startObstacle",
-                    self.obstacle(about, azimuth_at(window.start)).into(),
+                    self.obstacle(about, place_at(window.start)).into(),
                 ),
                 ("endCause", cause(window.end)),
                 ("end", time(window.end)),
                 (
                     "endObstacle",
-                    self.obstacle(about, azimuth_at(window.end)).into(),
+                    self.obstacle(about, place_at(window.end)).into(),
                 ),
                 ("best", self.time(about.clock, best.moment).into()),
                 ("altitude", self.degrees(best.altitude, 0).into()),
@@ -78,7 +76,8 @@ impl Words {
                 ("fists", self.fists(best.clearance).into()),
                 (
                     "bestObstacle",
-                    self.obstacle(about, Some(best.azimuth)).into(),
+                    self.obstacle(about, Some((best.azimuth, best.altitude)))
+                        .into(),
                 ),
             ],
         )
@@ -96,9 +95,10 @@ impl Words {
         )
     }
 
-    /// What stands at an azimuth: an obstacle by its label, or the skyline.
-    pub fn obstacle(&self, about: &HalfNight<'_>, azimuth: Option<Angle>) -> String {
-        match azimuth.and_then(|azimuth| about.skyline.label(azimuth)) {
+    /// What hides a place (azimuth and altitude) or stands there: an obstacle by its label, or the
+    /// skyline.
+    pub fn obstacle(&self, about: &HalfNight<'_>, place: Option<(Angle, Angle)>) -> String {
+        match place.and_then(|(azimuth, altitude)| about.skyline.hides(azimuth, altitude)) {
             Some(label) => self.text_with("the-obstacle", &[("label", label)]),
             None => self.text("the-skyline"),
         }

@@ -6,6 +6,7 @@ mod cautions;
 mod desk;
 mod eyes;
 mod grounds;
+mod measure;
 mod pictures;
 mod sites;
 mod steps;

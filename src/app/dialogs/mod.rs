@@ -8,6 +8,8 @@ pub use find_file::{FindFile, Wanted};
 pub use new_site::NewSite;
 
 use super::command::{Command, Commands};
+use super::grounds::Desk;
+use super::grounds::exchange::Exchange;
 use super::widgets::{card_frame, command_button};
 use super::window::DesktopWindow;
 use eframe::egui::{Context, Id, Modal, ScrollArea, Ui};
@@ -19,6 +21,10 @@ pub enum Dialog {
     NewSite(Box<NewSite>),
     /// The path to a site file.
     FindFile(FindFile),
+    /// The ways to measure; what is written there is kept in the window.
+    Measure,
+    /// Bringing files in and handing them out.
+    Exchange(Box<Exchange>),
     /// Keys and cautions.
     Help,
 }
@@ -38,30 +44,53 @@ impl DesktopWindow {
     /// Draws the open dialog, if there is one, over everything else.
     pub(super) fn dialog_ui(&mut self, ctx: &Context, commands: &mut Commands) {
         let look = self.palette.look(self.state.theme);
-        let words = &self.words;
-        let Some(dialog) = &mut self.dialog else {
+        let Some(mut dialog) = self.dialog.take() else {
             return;
+        };
+        let mut measure = std::mem::take(&mut self.measure);
+        let scene = self.scene();
+        let desk = Desk {
+            state: &self.state,
+            scene: scene.as_ref(),
+            words: &self.words,
+            look: &look,
+        };
+        let words = &self.words;
+        let is_measure = matches!(dialog, Dialog::Measure);
+        let is_large = is_measure && measure.is_large();
+        let widest = match (is_measure, is_large) {
+            (_, true) => 1400.0,
+            (true, _) => 820.0,
+            _ => 620.0,
         };
         let screen = ctx.content_rect();
         let modal = Modal::new(Id::unique("dialog"))
             .frame(card_frame(&look).inner_margin(look.room.between))
             .show(ctx, |ui: &mut Ui| {
-                ui.set_width((screen.width() - 96.0).clamp(280.0, 620.0));
+                ui.set_width((screen.width() - 96.0).clamp(280.0, widest));
                 let most = (screen.height() - 140.0).max(160.0);
                 // Both, or the dialog would grow towards its size from frame to frame.
                 ScrollArea::vertical()
                     .max_height(most)
                     .min_scrolled_height(most)
-                    .show(ui, |ui| match dialog {
-                        Dialog::NewSite(form) => form.show(ui, &look, words),
-                        Dialog::FindFile(find) => find.show(ui, &look, words, commands),
-                        Dialog::Help => help::show(ui, &look, words),
+                    .show(ui, |ui| {
+                        if is_large {
+                            // So that it does not move while marks are added.
+                            ui.set_min_height(most);
+                        }
+                        match &mut dialog {
+                            Dialog::NewSite(form) => form.show(ui, &look, words),
+                            Dialog::FindFile(find) => find.show(ui, &look, words, commands),
+                            Dialog::Measure => measure.show(ui, &desk, commands),
+                            Dialog::Exchange(form) => form.show(ui, &desk, commands),
+                            Dialog::Help => help::show(ui, &look, words),
+                        }
                     });
                 ui.horizontal(|ui| {
-                    let act = match dialog {
+                    let act = match &dialog {
                         Dialog::NewSite(_) => Some(Command::SaveNewSite),
                         Dialog::FindFile(find) => Some(find.command(find.path())),
-                        Dialog::Help => None,
+                        Dialog::Measure | Dialog::Exchange(_) | Dialog::Help => None,
                     };
                     if let Some(act) = act {
                         command_button(ui, words, act, commands);
@@ -72,5 +101,7 @@ impl DesktopWindow {
         if modal.should_close() {
             commands.push(Command::CloseDialog);
         }
+        self.measure = measure;
+        self.dialog = Some(dialog);
     }
 }

@@ -9,6 +9,8 @@
 //! [`Command::DragSite`]: super::command::Command::DragSite
 
 mod compare;
+pub mod exchange;
+pub mod measure;
 mod plan;
 mod selected;
 mod standing;
@@ -16,10 +18,11 @@ mod strip;
 
 pub use plan::{backdrop, keys as plan_keys};
 
-use super::command::Commands;
+use super::command::{Command, Commands};
 use super::palette::Look;
 use super::scene::Scene;
 use super::state::State;
+use super::widgets::command_button;
 use super::window::DesktopWindow;
 use crate::words::Words;
 use eframe::egui::{ScrollArea, Sense, Ui, UiBuilder, vec2};
@@ -133,6 +136,10 @@ impl GroundsArea {
 
     fn column(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
         ui.spacing_mut().item_spacing = vec2(8.0, desk.look.room.inside);
+        ui.horizontal_wrapped(|ui| {
+            command_button(ui, desk.words, Command::Measure, commands);
+            command_button(ui, desk.words, Command::Exchange, commands);
+        });
         self.strip.show(ui, desk, commands);
         self.selected
             .show(ui, desk, &mut self.selection, &mut self.plan, commands);

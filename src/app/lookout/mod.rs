@@ -8,14 +8,14 @@ mod disc;
 pub mod fade;
 pub mod horizon;
 pub mod inset;
-mod labels;
+pub(in crate::app) mod labels;
 mod lights;
 pub mod model;
 pub mod phase;
 pub mod plot;
-mod says;
+pub(in crate::app) mod says;
 #[cfg(test)]
-mod staged;
+pub(in crate::app) mod staged;
 #[cfg(test)]
 mod tests;
 
@@ -104,7 +104,7 @@ const AROUND: [Vec2; 4] = [
 ];
 
 /// Letters over the sky: with a dark shade around them, so that they read in every light.
-fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
+pub(in crate::app) fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
     let shade = look.colours.sky_shade.gamma_multiply(0.7);
     if look.theme == Theme::Red {
         // Letters and sky differ in brightness alone: a rim is not enough.
@@ -118,7 +118,7 @@ fn shaded(painter: &Painter, look: &Look, at: Pos2, text: &Arc<Galley>) {
 }
 
 /// Something made once for a key and shared until the key changes.
-struct Kept<K, T>(Option<(K, Arc<T>)>);
+pub(in crate::app) struct Kept<K, T>(Option<(K, Arc<T>)>);
 
 impl<K, T> Default for Kept<K, T> {
     fn default() -> Self {
@@ -127,7 +127,7 @@ impl<K, T> Default for Kept<K, T> {
 }
 
 impl<K: PartialEq, T> Kept<K, T> {
-    fn get(&mut self, key: K, make: impl FnOnce() -> T) -> Arc<T> {
+    pub(in crate::app) fn get(&mut self, key: K, make: impl FnOnce() -> T) -> Arc<T> {
         match &self.0 {
             Some((known, value)) if *known == key => value.clone(),
             _ => {

@@ -131,7 +131,7 @@ impl Sample {
             Body::Sun | Body::Moon => view.refracted_upper_limb(body).altitude,
             _ => altitude,
         };
-        let clearance = counting - scene.skyline.altitude(place.azimuth);
+        let clearance = scene.skyline.clearance(place.azimuth, counting);
         let (margins_mag, spread_mag) = lights.margins(&view, body);
         let of_eye = Eye::ALL.iter().position(|eye| *eye == scene.eye);
         // Nobody is sent looking while the Sun is up, whatever shines then.

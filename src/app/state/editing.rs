@@ -30,6 +30,10 @@ impl State {
     pub fn can_redo(&self) -> bool {
         !self.history.redo.is_empty()
     }
+    /// Whether a change still goes on, as while something is dragged.
+    pub fn is_dragging(&self) -> bool {
+        self.history.before_drag.is_some()
+    }
     /// Why the last change was refused, if it was.
     pub fn refusal(&self) -> Option<&str> {
         self.history.refusal.as_deref()
@@ -104,13 +108,31 @@ impl State {
     }
 
     fn put_site(&mut self, site: Site) {
+        let has_same_sky = same_sky(self.site(), &site);
         self.spot = self.spot.min(site.spots.len().saturating_sub(1));
         self.sites.replace(self.site, site);
         self.choose_haze(self.haze);
-        self.show_edited();
+        if has_same_sky {
+            self.show_behind();
+        } else {
+            self.show_edited();
+        }
     }
 
     pub(super) fn forget_history(&mut self) {
         self.history = History::default();
     }
+}
+
+/// Whether two sites differ at most in what stands on the grounds and who stands where: then a
+/// night that was gone through for one holds for the other.
+fn same_sky(one: &Site, other: &Site) -> bool {
+    one.latitude_deg == other.latitude_deg
+        && one.longitude_deg == other.longitude_deg
+        && one.elevation_m == other.elevation_m
+        && one.time_zone == other.time_zone
+        && one.air == other.air
+        && one.sky == other.sky
+        && one.eyes == other.eyes
+        && one.kit == other.kit
 }

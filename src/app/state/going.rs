@@ -5,7 +5,7 @@ use super::super::planned::Planned;
 use super::{Motion, State};
 use crate::app::planned::Standpoint;
 use crate::measure::{Moment, civil};
-use crate::place::Haze;
+use crate::place::{Grounds, Haze};
 use crate::plan::{self, Half, NightError};
 use chrono::{Days, DurationRound, NaiveDate, NaiveDateTime, TimeDelta};
 
@@ -104,7 +104,7 @@ impl State {
     }
 
     fn coming(&self, date: NaiveDate, now: Moment) -> Result<Option<plan::Coming>, NightError> {
-        let standpoint = Standpoint::new(self.site_in_air(), self.spot())?;
+        let standpoint = self.standpoint(date)?;
         let request = plan::NightRequest {
             bodies: &[self.body],
             eyes: &[self.eye],
@@ -120,9 +120,13 @@ impl State {
         )
     }
 
+    fn standpoint(&self, date: NaiveDate) -> Result<Standpoint, NightError> {
+        Standpoint::new(self.site_in_air(), self.spot(), self.stature, date)
+    }
+
     fn plan(&mut self, date: NaiveDate) -> Result<Planned, NightError> {
         self.plan_count += 1;
-        let standpoint = Standpoint::new(self.site_in_air(), self.spot())?;
+        let standpoint = self.standpoint(date)?;
         standpoint.plan(&self.ephemeris, (date, self.scales), self.plan_count)
     }
 
@@ -139,6 +143,20 @@ impl State {
     /// Plans the shown night anew after a change of the site, and stays at the moment shown.
     pub(super) fn show_edited(&mut self) {
         self.show_night(self.date, Goal::Local(self.half, self.wanted));
+    }
+
+    /// Plans the shown night anew for another skyline under the same sky, as after a change of
+    /// what stands on the grounds, of the spot or of the stature: within a frame.
+    pub(super) fn show_behind(&mut self) {
+        let Ok(planned) = &self.planned else {
+            self.show_edited();
+            return;
+        };
+        let grounds = Grounds::new(self.site_in_air(), Some(planned.night.date));
+        let skyline = grounds.skyline(self.spot(), self.stature);
+        self.plan_count += 1;
+        self.planned = Ok(planned.behind(skyline, self.plan_count));
+        self.go(Goal::Local(self.half, self.wanted));
     }
 
     /// Goes to a goal; to another night where the goal is an instant outside the present one.

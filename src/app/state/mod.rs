@@ -11,7 +11,7 @@ use super::planned::Planned;
 use super::sites::Sites;
 use crate::light::Eye;
 use crate::measure::{DateOutOfRange, Moment, TimeScales, Ut1};
-use crate::place::{Haze, Instrument, Orientation, Site, Spot};
+use crate::place::{Haze, Instrument, Orientation, Site, Spot, Stature};
 use crate::plan::{Half, NightError, Window};
 use crate::sky::{Body, Ephemeris};
 use chrono::{DateTime, NaiveDate, NaiveDateTime, Utc};
@@ -45,6 +45,8 @@ pub struct Choices {
     pub date: Option<NaiveDate>,
     /// A half of that night, else the one in which the body stands better.
     pub half: Option<Half>,
+    /// Whose height, else an adult's.
+    pub stature: Option<Stature>,
 }
 
 /// The choices and the night that follows from them.
@@ -59,6 +61,7 @@ pub struct State {
     half: Half,
     body: Body,
     eye: Eye,
+    stature: Stature,
     haze: Option<Haze>,
     /// The site in the chosen haze, where one is chosen.
     site_in_haze: Option<Site>,
@@ -99,6 +102,7 @@ impl State {
             half: Half::Dusk,
             body: choices.body.unwrap_or(Body::Venus),
             eye: choices.eye.unwrap_or(Eye::Visitor),
+            stature: choices.stature.unwrap_or_default(),
             moment: scales.moment_from_ut1(Ut1::from_days_since_j2000(0.0)),
             wanted: now.naive_utc(),
             planned: Err(NightError::OutOfRange(DateOutOfRange {
@@ -195,6 +199,10 @@ impl State {
     pub fn eye(&self) -> Eye {
         self.eye
     }
+    /// Whose height.
+    pub fn stature(&self) -> Stature {
+        self.stature
+    }
     /// The instant shown.
     pub fn moment(&self) -> Moment {
         self.moment
@@ -265,7 +273,11 @@ impl State {
             Command::ChooseSite(index) => self.choose_site(index),
             Command::ChooseSpot(index) => {
                 self.spot = index;
-                self.show_night(self.date, Goal::Local(self.half, self.wanted));
+                self.show_behind();
+            }
+            Command::ChooseStature(stature) => {
+                self.stature = stature;
+                self.show_behind();
             }
             Command::ChooseHaze(haze) => {
                 self.choose_haze(haze);

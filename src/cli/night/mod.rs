@@ -8,7 +8,7 @@ use super::arguments::{Format, NightArguments};
 use super::{Fault, Surroundings, resolve};
 use crate::light::Eye;
 use crate::measure::{Moment, TimeScales, civil};
-use crate::place::{Site, Skyline, Spot, demo_sites};
+use crate::place::{Grounds, Site, Skyline, Spot, Stature, demo_sites};
 use crate::plan::{Half, Night, NightError, NightRequest, Sight};
 use crate::sky::{Appearance, Body, Ephemeris, Observer};
 use crate::words::CivilClock;
@@ -49,7 +49,8 @@ pub(super) fn run(
     let (site, _) = resolve::site(words, &arguments.site, around.sites_folder)?;
     let spot = site.resolve_spot(arguments.spot.as_deref())?;
     let date = resolve::date(words, "--date", &arguments.date)?;
-    let planned = Planned::new(&site, spot, date, scales)?;
+    let stature = resolve::stature(arguments.stature);
+    let planned = Planned::new(&site, (spot, stature), date, scales)?;
     let output = match arguments.format.unwrap_or(Format::Text) {
         Format::Text => text::page(words, &planned, &[Half::Dusk, Half::Dawn]).into_bytes(),
         Format::Json => record::json(&planned)?,
@@ -76,7 +77,7 @@ pub fn coming_dusk(scales: TimeScales, around: &mut Surroundings<'_>) -> Result<
     let today = civil::local_date(around.now, site.zone());
     let mut failure = None;
     for date in (0..DATES_AHEAD).filter_map(|days| today.checked_add_days(Days::new(days))) {
-        match Planned::new(site, spot, date, scales) {
+        match Planned::new(site, (spot, Stature::Adult), date, scales) {
             Ok(planned) if planned.night.middle > now => {
                 let page = text::page(around.words, &planned, &[Half::Dusk]);
                 around.output.write_all(page.as_bytes())?;
@@ -95,12 +96,13 @@ pub fn coming_dusk(scales: TimeScales, around: &mut Surroundings<'_>) -> Result<
 impl<'a> Planned<'a> {
     fn new(
         site: &'a Site,
-        spot: &'a Spot,
+        (spot, stature): (&'a Spot, Stature),
         date: NaiveDate,
         scales: TimeScales,
     ) -> Result<Self, NightError> {
         let ephemeris = Ephemeris::new();
-        let (observer, skyline): (Observer, Skyline) = (site.observer(), site.skyline(spot));
+        let observer: Observer = site.observer();
+        let skyline = Grounds::new(site, Some(date)).skyline(spot, stature);
         let sight = Sight::of_site(site)?;
         let request = NightRequest {
             observer: &observer,

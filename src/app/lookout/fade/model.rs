@@ -218,7 +218,8 @@ fn obstacle(scene: &Scene<'_>, night: &BodyNight, edge: Edge) -> Option<String> 
         .skyline_events
         .iter()
         .find(|event| event.moment.seconds_since(edge.moment).abs() < 1.0)?;
-    scene.skyline.label(event.azimuth).map(str::to_owned)
+    let label = scene.skyline.hides(event.azimuth, event.altitude);
+    label.map(str::to_owned)
 }
 
 fn absence(points: &[Point]) -> Option<Absence> {

@@ -10,6 +10,7 @@ use crate::app::palette::Look;
 use crate::app::scene::Scene;
 use crate::light::Standing;
 use crate::measure::Angle;
+use crate::place::Feature;
 use crate::sky::Body;
 use eframe::egui::{Color32, FontId, Galley, Painter, Pos2, Rect, Vec2, pos2, vec2};
 use std::sync::Arc;
@@ -233,7 +234,7 @@ impl<'a> Captions<'a> {
             let font = self.look.font(self.look.sizes.label);
             let colour = self.look.colours.skyline_name;
             let line = self.galley(feature.label.to_string(), font, colour);
-            let crest = self.lowest_crest(feature.azimuth, line.size().x + 8.0);
+            let crest = self.lowest_crest(&feature, line.size().x + 8.0);
             let top = camera.pos(feature.azimuth, crest);
             let width = (feature.width.degrees() * camera.points_per_deg) as f32;
             let foot_y = camera.rect.bottom();
@@ -250,13 +251,15 @@ impl<'a> Captions<'a> {
         }
     }
 
-    /// The lowest that the skyline comes over a label's width.
-    fn lowest_crest(&self, azimuth: Angle, width: f32) -> Angle {
+    /// The lowest that a feature comes over a label's width, as far as it is seen there.
+    fn lowest_crest(&self, feature: &Feature, width: f32) -> Angle {
         let half_deg = 0.5 * f64::from(width) / self.camera.points_per_deg;
         let across = [-1.0, -0.75, -0.5, -0.25, 0.0, 0.25, 0.5, 0.75, 1.0];
         let crests = across.map(|share| {
-            let at = azimuth + Angle::from_degrees(share * half_deg);
-            self.scene.skyline.altitude(at).radians()
+            let at = feature.azimuth + Angle::from_degrees(share * half_deg);
+            let top = self.scene.skyline.top_of(&feature.label, at);
+            top.unwrap_or_else(|| self.scene.skyline.altitude(at))
+                .radians()
         });
         Angle::from_radians(crests.into_iter().fold(f64::INFINITY, f64::min))
     }
@@ -266,7 +269,8 @@ impl<'a> Captions<'a> {
         const NAMED_TO: f64 = 1.7;
         for star in &model.stars {
             let at = self.camera.pos(star.azimuth, star.altitude);
-            let is_clear = star.altitude > self.scene.skyline.altitude(star.azimuth);
+            let clearance = self.scene.skyline.clearance(star.azimuth, star.altitude);
+            let is_clear = clearance > Angle::ZERO;
             let (Some(name), true) = (star.name, is_clear && self.camera.rect.contains(at)) else {
                 continue;
             };

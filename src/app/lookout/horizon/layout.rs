@@ -120,18 +120,34 @@ impl Layout {
 
 /// The outline of the skyline across the view, from left to right, both sides of every jump.
 pub fn outline(camera: &Camera, skyline: &[(Angle, Angle)]) -> Vec<Pos2> {
+    let turns = TURNS_DEG.iter();
+    turns
+        .flat_map(|turn_deg| in_view(camera, skyline, *turn_deg))
+        .collect()
+}
+
+/// What of two lines through the same azimuths lies in the view, once for each turn in which
+/// some of it does.
+pub fn outlines(camera: &Camera, lines: [&[(Angle, Angle)]; 2]) -> Vec<[Vec<Pos2>; 2]> {
+    TURNS_DEG
+        .iter()
+        .map(|turn_deg| lines.map(|line| in_view(camera, line, *turn_deg)))
+        .filter(|[first, _]| !first.is_empty())
+        .collect()
+}
+
+/// The view may begin before north and end behind it.
+const TURNS_DEG: [f64; 2] = [0.0, 360.0];
+
+fn in_view(camera: &Camera, line: &[(Angle, Angle)], turn_deg: f64) -> Vec<Pos2> {
     let half_deg = 0.5 * camera.width_deg() + 1.0;
     let start_deg = (camera.middle_deg - half_deg).rem_euclid(360.0);
-    // The view may begin before north and end behind it.
-    let turns = [0.0, 360.0];
-    let mut points = Vec::new();
-    for turn_deg in turns {
-        for (azimuth, altitude) in skyline {
+    line.iter()
+        .map(|(azimuth, altitude)| {
             let beside_deg = azimuth.degrees() + turn_deg - start_deg - half_deg;
-            if beside_deg.abs() <= half_deg {
-                points.push(camera.pos_beside(beside_deg, altitude.degrees()));
-            }
-        }
-    }
-    points
+            (beside_deg, altitude.degrees())
+        })
+        .filter(|(beside_deg, _)| beside_deg.abs() <= half_deg)
+        .map(|(beside_deg, altitude_deg)| camera.pos_beside(beside_deg, altitude_deg))
+        .collect()
 }

@@ -37,8 +37,16 @@ pub struct Horizon {
     /// What the view was turned for; another body or half is framed anew.
     turned_for: Option<(Half, Body)>,
     sector: Kept<SpanKey, (Sector, Vec<super::model::Tick>)>,
-    outline: Kept<u64, Vec<(Angle, Angle)>>,
+    shapes: Kept<u64, Shapes>,
     sky: KeptTexture<SkyKey>,
+}
+
+/// What is drawn of a skyline: (azimuth, altitude).
+pub(super) struct Shapes {
+    /// What stands on the ground.
+    floor: Vec<(Angle, Angle)>,
+    /// What hangs over it, each with its upper edge first and its lower edge backwards after it.
+    crowns: Vec<Vec<(Angle, Angle)>>,
 }
 
 /// What the sky's picture depends on.
@@ -86,11 +94,12 @@ impl Horizon {
 
         let model = Model::new(scene, tracks);
         let layout = Layout::new(scene, &model, tracks, ticks, camera, ui.painter());
-        let outline = self
-            .outline
-            .get(scene.night_count, || scene.skyline.outline(OUTLINE_STEP));
+        let shapes = self.shapes.get(scene.night_count, || Shapes {
+            floor: scene.skyline.floor_outline(OUTLINE_STEP),
+            crowns: scene.skyline.crowns(OUTLINE_STEP),
+        });
         let sky = self.sky(ui, scene, camera);
-        paint::paint(ui.painter(), &scene.look, &model, &layout, sky, &outline);
+        paint::paint(ui.painter(), &scene.look, &model, &layout, sky, &shapes);
         if response.has_focus() {
             let stroke = Stroke::new(2.0, scene.look.colours.chosen);
             ui.painter()

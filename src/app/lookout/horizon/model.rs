@@ -12,9 +12,9 @@ use crate::sky::{Body, View, stars};
 pub struct Model {
     /// The chosen body.
     pub target: Mark,
-    /// The altitude of the skyline under it.
+    /// The altitude of the skyline's edge that it is nearest to.
     pub skyline: Angle,
-    /// What stands there; `None` for a measured hill or the open horizon.
+    /// What hides it or stands there; `None` for a measured hill or the open horizon.
     pub obstacle: Option<String>,
     /// The other bright bodies, brightest first.
     pub others: Vec<Mark>,
@@ -83,10 +83,12 @@ impl Model {
         let brightness = |mark: &Mark| mark.magnitude.unwrap_or(f64::INFINITY);
         others.sort_by(|a, b| brightness(a).total_cmp(&brightness(b)));
         Self {
-            skyline: scene.skyline.altitude(target.sample.azimuth),
+            skyline: scene
+                .skyline
+                .nearest_edge(target.sample.azimuth, target.sample.altitude),
             obstacle: scene
                 .skyline
-                .label(target.sample.azimuth)
+                .hides(target.sample.azimuth, target.sample.altitude)
                 .map(str::to_owned),
             sun: mark(Body::Sun),
             stars: seen_stars(&view, &lights.usual, &scene.sight.gaze(scene.eye)),

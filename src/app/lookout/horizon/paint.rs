@@ -1,13 +1,13 @@
 //! Draws the horizon view.
 
+use super::Shapes;
 use super::captions::Label;
-use super::layout::{Layout, outline};
+use super::layout::{Layout, outline, outlines};
 use super::model::Model;
 use super::path::Stretch;
 use crate::app::lookout::{disc, shaded};
 use crate::app::palette::Look;
 use crate::light::Standing;
-use crate::measure::Angle;
 use crate::sky::Body;
 use eframe::egui::epaint::RectShape;
 use eframe::egui::{
@@ -21,7 +21,7 @@ pub fn paint(
     model: &Model,
     layout: &Layout,
     sky: TextureId,
-    skyline: &[(Angle, Angle)],
+    skyline: &Shapes,
 ) {
     let rect = layout.camera.rect;
     let inside = painter.with_clip_rect(rect.intersect(painter.clip_rect()));
@@ -107,15 +107,38 @@ fn bodies(painter: &Painter, look: &Look, model: &Model, layout: &Layout) {
     }
 }
 
-/// The skyline's flat shapes, down to the lower edge.
-fn shapes(painter: &Painter, look: &Look, layout: &Layout, skyline: &[(Angle, Angle)]) {
-    let colour = look.colours.skyline;
+/// The skyline's flat shapes: the floor down to the lower edge, and over it the crowns.
+fn shapes(painter: &Painter, look: &Look, layout: &Layout, skyline: &Shapes) {
     let bottom = layout.camera.rect.bottom() + 1.0;
-    let points = outline(&layout.camera, skyline);
+    let floor = outline(&layout.camera, &skyline.floor);
+    let foot = floor
+        .iter()
+        .map(|point| pos2(point.x, bottom.max(point.y)))
+        .collect();
+    strip(painter, look, floor, foot, Rim::Upper);
+    for crown in &skyline.crowns {
+        let half = crown.len() / 2;
+        let lower: Vec<_> = crown[half..].iter().rev().copied().collect();
+        for [upper, lower] in outlines(&layout.camera, [&crown[..half], &lower]) {
+            strip(painter, look, upper, lower, Rim::Both);
+        }
+    }
+}
+
+/// Which edges of a strip are softened.
+#[derive(Clone, Copy, PartialEq)]
+enum Rim {
+    Upper,
+    Both,
+}
+
+/// What lies between two lines of as many points, each over its fellow.
+fn strip(painter: &Painter, look: &Look, upper: Vec<Pos2>, lower: Vec<Pos2>, rim: Rim) {
+    let colour = look.colours.skyline;
     let mut mesh = Mesh::default();
-    for (k, point) in points.iter().enumerate() {
-        mesh.colored_vertex(*point, colour);
-        mesh.colored_vertex(pos2(point.x, bottom.max(point.y)), colour);
+    for (k, (above, below)) in upper.iter().zip(&lower).enumerate() {
+        mesh.colored_vertex(*above, colour);
+        mesh.colored_vertex(*below, colour);
         if k > 0 {
             let k = 2 * k as u32;
             mesh.add_triangle(k - 2, k - 1, k);
@@ -124,8 +147,11 @@ fn shapes(painter: &Painter, look: &Look, layout: &Layout, skyline: &[(Angle, An
     }
     painter.add(Shape::mesh(mesh));
     // The mesh's edge is hard; a hair line softens it, and tells the shapes from a night sky.
-    let rim = look.colours.hidden.gamma_multiply(0.25);
-    painter.add(Shape::line(points, Stroke::new(1.0, rim)));
+    let stroke = Stroke::new(1.0, look.colours.hidden.gamma_multiply(0.25));
+    if rim == Rim::Both {
+        painter.add(Shape::line(lower, stroke));
+    }
+    painter.add(Shape::line(upper, stroke));
 }
 
 fn path(painter: &Painter, look: &Look, stretch: &Stretch) {

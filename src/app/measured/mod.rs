@@ -1,0 +1,8 @@
+//! The measured skyline in the hand: its points are dragged, added and taken away wherever a
+//! skyline is drawn.
+
+mod edit;
+mod handles;
+
+pub use edit::Owned;
+pub use handles::{Handles, Place};
