@@ -1,12 +1,16 @@
-//! How long a frame's own work takes while the time is scrubbed at 1600x1000: 4 ms.
+//! How long a frame's own work takes while the time is scrubbed at 1600x1000: 4 ms; and while an
+//! obstacle is dragged on the plan of the site: 8 ms.
 //!
 //! Everything but the painting of the finished shapes: the window's `ui`, with the tree for
 //! screen readers that the harness always asks for.
 
 use chrono::{DateTime, Utc};
+use dimmet::app::area::Area;
+use dimmet::app::command::Command;
 use dimmet::app::state::Choices;
 use dimmet::app::{DesktopWindow, Start};
 use dimmet::measure::TimeScales;
+use dimmet::place::PlanPoint;
 use eframe::egui::{Event, Key, Modifiers};
 use egui_kittest::Harness;
 use std::sync::Arc;
@@ -63,4 +67,39 @@ fn scrubbing(bencher: divan::Bencher) {
 fn standing_still(bencher: divan::Bencher) {
     let mut harness = open();
     bencher.bench_local(|| harness.step());
+}
+
+fn open_grounds() -> Harness<'static, DesktopWindow> {
+    let mut harness = open();
+    harness.state_mut().run(Command::ShowArea(Area::Grounds));
+    harness.run();
+    harness
+}
+
+/// The work area Grounds, drawn anew without a change.
+#[divan::bench]
+fn grounds_standing_still(bencher: divan::Bencher) {
+    let mut harness = open_grounds();
+    bencher.bench_local(|| harness.step());
+}
+
+/// The first obstacle of the demo site goes to and fro, held by the pointer; each frame plans the
+/// shown night behind another skyline.
+#[divan::bench]
+fn dragging_in_grounds(bencher: divan::Bencher) {
+    let mut harness = open_grounds();
+    let site = harness.state().state().site().clone();
+    let mut is_aside = false;
+    bencher.bench_local(|| {
+        is_aside = !is_aside;
+        let mut moved = site.clone();
+        let points: Vec<_> = moved.obstacles[0]
+            .points()
+            .into_iter()
+            .map(|at| PlanPoint::new(at.east_m + if is_aside { 0.5 } else { -0.5 }, at.north_m))
+            .collect();
+        moved.obstacles[0].set_points(&points);
+        harness.state_mut().run(Command::DragSite(Box::new(moved)));
+        harness.step();
+    });
 }

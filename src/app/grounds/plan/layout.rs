@@ -61,6 +61,8 @@ pub fn labels(
         let size = galley.size();
         let is_inside = !is_spot && size.x + 6.0 < 2.0 * half.x && size.y < 2.0 * half.y;
         let colour = match (is_selected, is_spot, is_inside) {
+            // Within a near-black shape the brighter amber, whatever the theme.
+            (true, _, true) => look.colours.seen,
             (true, ..) => look.colours.chosen,
             (_, true, _) => look.colours.text,
             (_, _, true) if !matches!(thing.figure, Figure::Excluded(_)) => {

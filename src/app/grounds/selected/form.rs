@@ -137,7 +137,6 @@ impl Form {
     ) -> Option<(Id, String)> {
         let look = desk.look;
         let id = Id::unique(("site field", field.label, field.of, field.point));
-        ui.spacing_mut().item_spacing.y = 3.0;
         let name = desk.words.text(field.label);
         let mut text = match &self.writing {
             Some((writing, text)) if *writing == id => text.clone(),
@@ -149,11 +148,15 @@ impl Form {
             .desired_width(f32::INFINITY);
         let response = match field.point {
             None => {
-                let label = RichText::new(name)
-                    .font(look.font(look.sizes.label))
-                    .color(look.colours.lesser);
-                let label = ui.label(label);
-                ui.add(edit).labelled_by(label.id)
+                ui.scope(|ui| {
+                    ui.spacing_mut().item_spacing.y = 3.0;
+                    let label = RichText::new(name)
+                        .font(look.font(look.sizes.label))
+                        .color(look.colours.lesser);
+                    let label = ui.label(label);
+                    ui.add(edit).labelled_by(label.id)
+                })
+                .inner
             }
             Some(point) => {
                 let number = point.to_string();

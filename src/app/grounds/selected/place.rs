@@ -4,9 +4,9 @@ use super::{Field, Form, exists, row};
 use crate::app::command::Commands;
 use crate::app::grounds::plan::things::Form as Stands;
 use crate::app::grounds::{Desk, Selection};
-use crate::app::widgets::{choice, figure, text};
+use crate::app::widgets::{choice, text};
 use crate::place::{PlanPoint, Site};
-use eframe::egui::{ScrollArea, Ui, vec2};
+use eframe::egui::{Align2, ScrollArea, Sense, Ui, vec2};
 
 /// How positions are shown.
 #[derive(Default)]
@@ -71,11 +71,7 @@ impl Shown {
                 }
                 ui.horizontal_top(|ui| {
                     let number = (index + 1).to_string();
-                    let (size, colour) = (desk.look.sizes.label, desk.look.colours.lesser);
-                    ui.allocate_ui(vec2(NUMBER_WIDTH, ui.spacing().interact_size.y), |ui| {
-                        ui.set_min_width(NUMBER_WIDTH);
-                        figure(ui, desk.look.font(size), colour, &number);
-                    });
+                    number_ui(ui, desk, &number);
                     ui.vertical(|ui| {
                         self.point(ui, desk, form, (thing, index, *at), commands);
                     });
@@ -165,6 +161,21 @@ impl Shown {
             }
         });
     }
+}
+
+/// A point's number, level with its fields.
+fn number_ui(ui: &mut Ui, desk: &Desk<'_>, number: &str) {
+    /// As high as a line to write in.
+    const HEIGHT: f32 = 28.0;
+    let (rect, _) = ui.allocate_exact_size(vec2(NUMBER_WIDTH, HEIGHT), Sense::hover());
+    let look = desk.look;
+    ui.painter().text(
+        rect.left_center(),
+        Align2::LEFT_CENTER,
+        number,
+        look.font(look.sizes.label),
+        look.colours.lesser,
+    );
 }
 
 /// The point at a distance and a bearing from another.
