@@ -1,7 +1,7 @@
 //! Where a gable roof's ridge runs.
 
-use super::{Obstacle, PlanPoint};
 use super::plan_point::sides;
+use super::{Obstacle, PlanPoint};
 
 impl Obstacle {
     /// The ridges of a building's roof in its plan, each by its two ends; none without a roof.
