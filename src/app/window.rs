@@ -153,6 +153,7 @@ impl DesktopWindow {
             optics_view: self.state.optics_view,
             look: self.palette.look(self.state.theme),
             night_count: planned.count,
+            sky_count: planned.sky_count,
         })
     }
 

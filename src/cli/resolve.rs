@@ -74,7 +74,10 @@ pub(super) fn number(words: &Words, place: &str, text: &str, limits: Limits) -> 
             &[
                 ("place", place.to_owned()),
                 ("value", quoted(text)),
-                ("low", decimal(limits.low, 0)),
+                (
+                    "low",
+                    decimal(limits.low, if limits.low.fract() == 0.0 { 0 } else { 2 }),
+                ),
                 ("high", decimal(limits.high, 0)),
                 ("unit", limits.unit.to_owned()),
             ],

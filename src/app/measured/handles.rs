@@ -190,6 +190,11 @@ impl Handles {
         }
     }
 
+    /// Whether a point is being dragged.
+    pub fn is_dragging(&self) -> bool {
+        self.is_dragging
+    }
+
     /// The point last taken hold of.
     pub fn chosen(&self, owned: &Owned<'_>) -> Option<SkylinePoint> {
         owned.points().get(self.chosen?).copied()
