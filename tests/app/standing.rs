@@ -205,7 +205,7 @@ fn a_child_sees_no_more_than_an_adult_and_is_remembered() {
         line_m: [(-3.0, -40.0), (-3.0, 40.0)]
             .map(|(east, north)| dimmet::place::PlanPoint::new(east, north))
             .to_vec(),
-        base_m: None,
+        base_m: Some(0.0),
         height_m: 2.1,
     }];
     run(&mut window, Command::EditSite(Box::new(site)));
