@@ -223,7 +223,7 @@ impl DesktopWindow {
     /// Puts a picture under the plan of the chosen site, by a relative path where it lies in the
     /// site file's folder.
     fn open_backdrop(&mut self, file: PathBuf) {
-        match backdrop::size_px(&file) {
+        match super::picture::size_px(&file) {
             Ok(size_px) => {
                 let folder = self.state.site_folder();
                 let relative = folder.and_then(|folder| file.strip_prefix(folder).ok());
