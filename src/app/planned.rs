@@ -29,6 +29,9 @@ pub struct Planned {
     pub sight: Sight,
     /// Different for every plan made.
     pub count: u64,
+    /// The count of the plan for which the sky was gone through: the same for all that differ in
+    /// the skyline alone.
+    pub sky_count: u64,
 }
 
 /// A spot on a site, as far as planning goes.
@@ -101,6 +104,7 @@ impl Standpoint {
             zone: self.zone,
             sight: self.sight,
             count,
+            sky_count: count,
         })
     }
 }

@@ -51,6 +51,9 @@ pub struct Scene<'a> {
     /// Changes whenever the plan is made anew (site, spot, date): with half, body and theme it
     /// keys what a drawing keeps between frames.
     pub night_count: u64,
+    /// Changes only when the sky itself is gone through anew (another site, date or air), not
+    /// when the skyline alone is another.
+    pub sky_count: u64,
 }
 
 /// What the half-night's sentence depends on: everything but moment and colours.

@@ -21,7 +21,6 @@ fn request<'a>(
 ) -> StandingRequest<'a> {
     StandingRequest {
         site,
-        far: None,
         nights,
         body,
         eye: Eye::Visitor,
@@ -334,7 +333,6 @@ fn spots_are_compared_with_what_ends_their_windows() {
     for (body, half) in [(Body::Saturn, Half::Dusk), (Body::Venus, Half::Dawn)] {
         let asked = CompareRequest {
             site: &site,
-            far: None,
             night: &sky,
             body,
             eye: Eye::Visitor,

@@ -17,8 +17,8 @@ strip-body-behind = { $body } at { $azimuth }, { $altitude } up: behind { $obsta
 measured-here = The measured skyline is this spot’s own: drag its points, double-click for a new one.
 measured-nothing = Nothing is measured from here yet: double-click in the drawing for a first point.
 measured-nowhere = Nothing was measured from here: the skyline is that of the obstacles alone.
-measured-elsewhere = The skyline measured from the mark does not hold here: none of it is marked as far.
-measured-far-only = Measured from the mark: only the far parts of it hold here.
+measured-elsewhere = The skyline measured elsewhere does not hold at this spot: none of it is marked far.
+measured-far-only = Only the far parts of the measured skyline hold at this spot.
 measured-point = Chosen point: { $azimuth }, { $altitude }. Ctrl and arrows move it by 0.1°, Delete takes it away.
 
 # The standing map
@@ -76,3 +76,8 @@ kit-stands = Kit
 kit-nowhere = wherever people stand
 kit-at = { $instrument }: { $spot }
 kit-menu = Put { $instrument } at a spot, now { $spot }
+measured-all-far = Measured from another place: all of it is far and holds here.
+
+# The Lookout
+move-measured = Move the measured skyline
+move-measured-hint = Show the points of the measured skyline: drag one, double-click for a new one, Delete takes it away

@@ -35,6 +35,8 @@ use std::sync::Arc;
 /// The drawings, with what they keep between frames.
 #[derive(Default)]
 pub struct Drawings {
+    /// Made for a sky, whatever the skyline was then.
+    sky_tracks: Kept<HalfKey, Tracks>,
     tracks: Kept<HalfKey, Tracks>,
     horizon: horizon::Horizon,
     fade: fade::Fade,
@@ -91,7 +93,12 @@ impl Drawings {
     }
 
     fn tracks(&mut self, scene: &Scene<'_>) -> Arc<Tracks> {
-        self.tracks.get(HalfKey::of(scene), || Tracks::new(scene))
+        let of_sky = HalfKey {
+            night_count: scene.sky_count,
+            ..HalfKey::of(scene)
+        };
+        let sky = self.sky_tracks.get(of_sky, || Tracks::new(scene));
+        self.tracks.get(HalfKey::of(scene), || sky.behind(scene))
     }
 }
 

@@ -38,8 +38,9 @@ pub struct Sample {
     pub azimuth: Angle,
     /// Refracted altitude of the centre.
     pub altitude: Angle,
-    /// Refracted altitude of the point that counts (the upper limb of the Sun and the Moon)
-    /// above the skyline.
+    /// Refracted altitude of the point that counts: the upper limb of the Sun and the Moon.
+    pub counting: Angle,
+    /// How far that point stands from what blocks.
     pub clearance: Angle,
     /// Airless altitude of the Sun's centre.
     pub sun_altitude: Angle,
@@ -76,6 +77,22 @@ impl Tracks {
             length_s,
             sun,
             bodies,
+        }
+    }
+
+    /// The same half-night from behind the scene's skyline, which these samples need not have
+    /// been made for: the sky is not gone through again.
+    #[must_use]
+    pub fn behind(&self, scene: &Scene<'_>) -> Self {
+        let behind = |samples: &[Sample]| samples.iter().map(|s| s.behind(scene)).collect();
+        Self {
+            sun: behind(&self.sun),
+            bodies: self
+                .bodies
+                .iter()
+                .map(|(body, samples)| (*body, behind(samples)))
+                .collect(),
+            ..*self
         }
     }
 
@@ -133,22 +150,38 @@ impl Sample {
         };
         let clearance = scene.skyline.clearance(place.azimuth, counting);
         let (margins_mag, spread_mag) = lights.margins(&view, body);
-        let of_eye = Eye::ALL.iter().position(|eye| *eye == scene.eye);
-        // Nobody is sent looking while the Sun is up, whatever shines then.
-        let margin_mag = match of_eye {
-            Some(number) if lights.sun_altitude < SUN_RISE_SET => margins_mag[number],
-            _ => f64::NEG_INFINITY,
-        };
+        let margin_mag = margin_of(scene.eye, lights.sun_altitude, &margins_mag);
         Self {
             at_s,
             azimuth: place.azimuth,
             altitude,
+            counting,
             clearance,
             sun_altitude: lights.sun_altitude,
             margins_mag,
             spread_mag,
             standing: Standing::of(counting, clearance, margin_mag),
         }
+    }
+
+    /// The same from behind the scene's skyline.
+    fn behind(self, scene: &Scene<'_>) -> Self {
+        let clearance = scene.skyline.clearance(self.azimuth, self.counting);
+        let margin_mag = margin_of(scene.eye, self.sun_altitude, &self.margins_mag);
+        Self {
+            clearance,
+            standing: Standing::of(self.counting, clearance, margin_mag),
+            ..self
+        }
+    }
+}
+
+/// The margin that counts for an eye. Nobody is sent looking while the Sun is up, whatever shines
+/// then.
+fn margin_of(eye: Eye, sun_altitude: Angle, margins_mag: &[f64; 4]) -> f64 {
+    match Eye::ALL.iter().position(|known| *known == eye) {
+        Some(number) if sun_altitude < SUN_RISE_SET => margins_mag[number],
+        _ => f64::NEG_INFINITY,
     }
 }
 

@@ -87,6 +87,7 @@ impl Stage {
             optics_view: OpticsView::Mirrored,
             look: self.palette.look(Theme::Dark),
             night_count: 1,
+            sky_count: 1,
         }
     }
 }

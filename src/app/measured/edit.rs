@@ -1,6 +1,6 @@
 //! Changes of a measured skyline, each a whole changed site.
 
-use crate::place::{Site, SkylinePoint};
+use crate::place::{MeasuredUse, Site, SkylinePoint};
 
 /// The finest step of azimuth and altitude, degrees: no clinometer reads finer.
 pub const STEP_DEG: f64 = 0.1;
@@ -19,14 +19,16 @@ impl<'a> Owned<'a> {
     /// parts of another's.
     pub fn at(site: &'a Site, spot: usize) -> Option<Self> {
         let of_spot = site.spots.get(spot)?;
-        if !of_spot.skyline.is_empty() {
-            return Some(Self {
+        let is_mark = of_spot.east_m == 0.0 && of_spot.north_m == 0.0;
+        match site.measured_use(of_spot) {
+            MeasuredUse::Own => Some(Self {
                 site,
                 spot: Some(spot),
-            });
+            }),
+            MeasuredUse::Mark => Some(Self { site, spot: None }),
+            MeasuredUse::Nothing if is_mark => Some(Self { site, spot: None }),
+            _ => None,
         }
-        let is_mark = of_spot.east_m == 0.0 && of_spot.north_m == 0.0;
-        is_mark.then_some(Self { site, spot: None })
     }
 
     /// The site that it belongs to.
@@ -108,6 +110,21 @@ impl<'a> Owned<'a> {
     }
 }
 
+/// The wording of what holds of a skyline that was measured elsewhere; `None` where nothing was,
+/// or where it was measured here.
+pub fn elsewhere(used: MeasuredUse) -> Option<&'static str> {
+    match used {
+        MeasuredUse::FarPartsOnly {
+            is_any_left_out: true,
+        } => Some("measured-far-only"),
+        MeasuredUse::FarPartsOnly {
+            is_any_left_out: false,
+        } => Some("measured-all-far"),
+        MeasuredUse::LeftOut => Some("measured-elsewhere"),
+        MeasuredUse::Own | MeasuredUse::Mark | MeasuredUse::Nothing => None,
+    }
+}
+
 /// To the nearest step; written so that a file shows no more decimals than were meant.
 fn rounded(degrees: f64) -> f64 {
     (degrees * 10.0).round() / 10.0
@@ -150,7 +167,10 @@ mod tests {
         assert_eq!(far.skyline[1].altitude_deg, 90.0);
         assert!(far.skyline[1].azimuth_deg < far.skyline[2].azimuth_deg);
         let around = owned.moved(0, point(350.0, 1.0)).unwrap();
-        assert_eq!(around.skyline[0].azimuth_deg, 0.0, "north is as far as it goes");
+        assert_eq!(
+            around.skyline[0].azimuth_deg, 0.0,
+            "north is as far as it goes"
+        );
         for site in [moved, far, around] {
             site.check().unwrap();
         }

@@ -4,5 +4,5 @@
 mod edit;
 mod handles;
 
-pub use edit::Owned;
+pub use edit::{Owned, elsewhere};
 pub use handles::{Handles, Place};

@@ -67,7 +67,7 @@ impl<'a> NightRays<'a> {
                 })
                 .collect()
         });
-        let grounds = Grounds::new(request.site, Some(night.date)).with_far(request.far);
+        let grounds = Grounds::new(request.site, Some(night.date));
         Self {
             grounds: grounds.prepared(),
             start: night.start,

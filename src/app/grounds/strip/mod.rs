@@ -35,6 +35,9 @@ const RULER: f32 = 24.0;
 pub struct Strip {
     view: View,
     handles: Handles,
+    /// Altitude at the upper edge, degrees: it stays while a point is dragged, so that the scale
+    /// does not run away from the pointer.
+    top_deg: f64,
     bands: Kept<u64, Vec<Band>>,
     ways: Kept<WaysKey, Ways>,
 }
@@ -117,23 +120,29 @@ impl Strip {
             .text_with("strip-name", &[("spot", scene.spot.name.as_str())]);
         response.widget_info(|| WidgetInfo::labeled(Role::Canvas, true, &name));
         let sky = whole.with_max_y(whole.bottom() - RULER);
-        let frame = Frame::new(sky, self.view, highest_deg(scene, ways));
+        if !self.handles.is_dragging() {
+            self.top_deg = Frame::top_for(highest_deg(scene, ways));
+        }
+        let frame = Frame {
+            rect: sky,
+            view: self.view,
+            top_deg: self.top_deg,
+        };
         if !ui.is_rect_visible(whole) {
             return (response, frame);
         }
         let owned = Owned::at(desk.state.site(), desk.state.spot_index());
-        let is_held = owned.is_some_and(|owned| {
-            self.handles.handle(ui, &response, &owned, &frame, commands)
-        });
+        let is_held =
+            owned.is_some_and(|owned| self.handles.handle(ui, &response, &owned, &frame, commands));
         if response.clicked() || response.drag_started() {
             response.request_focus();
         }
         if !is_held {
             self.steer(ui, &response, &frame);
         }
-        let bands = self
-            .bands
-            .get(scene.night_count, || shapes::bands(scene.skyline, OUTLINE_STEP));
+        let bands = self.bands.get(scene.night_count, || {
+            shapes::bands(scene.skyline, OUTLINE_STEP)
+        });
         let painter = ui.painter().clone();
         paint::paint(&painter, desk, scene, &frame, ways, &bands);
         let below = Rect::from_min_max(pos2(whole.left(), sky.bottom()), whole.max);

@@ -141,8 +141,7 @@ fn bodies(
             continue;
         }
         let at = frame.pos(point.azimuth, point.altitude);
-        let is_blocked =
-            scene.skyline.clearance(point.azimuth, point.altitude) <= Angle::ZERO;
+        let is_blocked = scene.skyline.clearance(point.azimuth, point.altitude) <= Angle::ZERO;
         let is_chosen = *body == scene.body;
         let (radius, colour) = match (is_chosen, is_blocked) {
             (true, _) => (5.5, desk.look.colours.body),
@@ -188,14 +187,19 @@ fn names(
         texts.push((text, true));
     }
     for feature in scene.skyline.features() {
-        let colour = look.colours.skyline_name;
-        let text = painter.layout_no_wrap(feature.label.to_string(), font(), colour);
         let width = (feature.width.degrees() * frame.points_per_deg()) as f32;
         let top = frame.pos(feature.azimuth, feature.top);
         let foot = frame.rect.bottom();
-        let size = text.size();
+        let label = feature.label.to_string();
+        let inside = painter.layout_no_wrap(label.clone(), font(), look.colours.skyline_name);
+        let size = inside.size();
         // Inside the shape where there is room for it, else over its top.
         let is_inside = size.x + 4.0 < width && foot - top.y > size.y + 6.0;
+        let text = if is_inside {
+            inside
+        } else {
+            painter.layout_no_wrap(label, font(), look.colours.sky_text)
+        };
         let places = if is_inside {
             vec![
                 pos2(top.x - 0.5 * size.x, foot - size.y - 3.0),
@@ -216,8 +220,7 @@ fn names(
         texts.push((text, !is_inside));
     }
     let bounds = frame.rect.shrink(2.0);
-    for (place, (text, is_on_sky)) in labels::arrange(&wanted, bounds, &[]).into_iter().zip(texts)
-    {
+    for (place, (text, is_on_sky)) in labels::arrange(&wanted, bounds, &[]).into_iter().zip(texts) {
         match place {
             Some(rect) if is_on_sky => shaded(painter, look, rect.min, &text),
             Some(rect) => {

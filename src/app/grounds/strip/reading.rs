@@ -3,9 +3,10 @@
 use super::frame::Frame;
 use super::ways::{self, Ways};
 use crate::app::grounds::Desk;
-use crate::app::measured::{Handles, Owned, Place};
+use crate::app::measured::{Handles, Owned, Place, elsewhere};
 use crate::app::scene::Scene;
 use crate::measure::Angle;
+use crate::place::MeasuredUse;
 use eframe::egui::Response;
 
 /// What is under the pointer, or else where the chosen body stands.
@@ -80,12 +81,9 @@ pub fn measured(desk: &Desk<'_>, handles: &Handles) -> String {
             ],
         );
     }
-    let id = match owned {
-        Some(owned) if owned.points().is_empty() => "measured-nothing",
-        Some(_) => "measured-here",
-        None if site.skyline.is_empty() => "measured-nowhere",
-        None if site.skyline_far.is_empty() => "measured-elsewhere",
-        None => "measured-far-only",
-    };
-    desk.words.text(id)
+    desk.words.text(match site.measured_use(desk.state.spot()) {
+        MeasuredUse::Own | MeasuredUse::Mark => "measured-here",
+        MeasuredUse::Nothing if owned.is_some() => "measured-nothing",
+        other => elsewhere(other).unwrap_or("measured-nowhere"),
+    })
 }

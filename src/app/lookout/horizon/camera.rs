@@ -4,6 +4,7 @@
 //! are placed by their signed distance from the middle, so that north is a place like any other.
 
 use crate::app::lookout::model::Sample;
+use crate::app::measured::Place;
 use crate::measure::Angle;
 use eframe::egui::{Pos2, Rect, pos2};
 
@@ -204,6 +205,21 @@ impl Camera {
     }
 }
 
+impl Place for Camera {
+    fn pos(&self, azimuth: Angle, altitude: Angle) -> Pos2 {
+        Self::pos(self, azimuth, altitude)
+    }
+
+    fn sky(&self, pos: Pos2) -> (Angle, Angle) {
+        let beside_deg = f64::from(pos.x - self.rect.center().x) / self.points_per_deg;
+        let above_deg = f64::from(self.rect.bottom() - pos.y) / self.points_per_deg;
+        (
+            Angle::from_degrees(self.middle_deg + beside_deg).wrapped(),
+            Angle::from_degrees(self.bottom_deg + above_deg),
+        )
+    }
+}
+
 #[cfg(test)]
 mod tests {
     #![allow(clippy::unwrap_used)]
@@ -221,6 +237,7 @@ mod tests {
                 at_s: 60.0 * k as f64,
                 azimuth: Angle::from_degrees(*azimuth).wrapped(),
                 altitude: Angle::from_degrees(altitude_deg),
+                counting: Angle::ZERO,
                 clearance: Angle::ZERO,
                 sun_altitude: Angle::ZERO,
                 margins_mag: [0.0; 4],

@@ -74,6 +74,11 @@ impl<'a> Captions<'a> {
         }
     }
 
+    /// Keeps labels off what stands in the view's corner.
+    pub fn keep_off_corner(&mut self, corner: Option<Rect>) {
+        self.taken.extend(corner);
+    }
+
     fn want(
         &mut self,
         rank: Rank,

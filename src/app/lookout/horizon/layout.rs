@@ -61,6 +61,7 @@ impl Layout {
         ticks: &[Tick],
         camera: Camera,
         painter: &Painter,
+        corner: Option<Rect>,
     ) -> Self {
         let look = scene.look;
         let sky = camera.rect;
@@ -79,6 +80,7 @@ impl Layout {
         let stretches = path::stretches(&camera, samples);
         let ticks = path::path_ticks(&camera, samples, ticks);
         captions.keep_off(&stretches);
+        captions.keep_off_corner(corner);
 
         let place = |mark: &Mark| camera.pos(mark.sample.azimuth, mark.sample.altitude);
         let is_up = model.target.sample.standing != Standing::Down;

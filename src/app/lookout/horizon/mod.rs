@@ -2,6 +2,7 @@
 
 mod camera;
 mod captions;
+mod corner;
 mod layout;
 pub(super) mod model;
 mod paint;
@@ -13,6 +14,7 @@ use super::model::{Tracks, ticks};
 use super::says::Says;
 use super::{Kept, KeptTexture, SpanKey};
 use crate::app::command::{Command, Commands};
+use crate::app::measured::{Handles, Owned};
 use crate::app::palette::Theme;
 use crate::app::scene::Scene;
 use crate::measure::{Angle, Moment};
@@ -39,7 +41,15 @@ pub struct Horizon {
     sector: Kept<SpanKey, (Sector, Vec<super::model::Tick>)>,
     shapes: Kept<u64, Shapes>,
     sky: KeptTexture<SkyKey>,
+    /// The points of the measured skyline, while they are to be moved.
+    handles: Handles,
+    moves_measured: bool,
+    /// What was framed when a point was taken hold of: it stays while the point moves.
+    held: Option<Framed>,
 }
+
+/// What a view is framed for, and the ticks of its path.
+type Framed = std::sync::Arc<(Sector, Vec<super::model::Tick>)>;
 
 /// What is drawn of a skyline: (azimuth, altitude).
 pub(super) struct Shapes {
@@ -52,7 +62,7 @@ pub(super) struct Shapes {
 /// What the sky's picture depends on.
 #[derive(Clone, Copy, PartialEq)]
 struct SkyKey {
-    night_count: u64,
+    sky_count: u64,
     moment: Moment,
     camera: Camera,
     theme: Theme,
@@ -85,15 +95,28 @@ impl Horizon {
             let ticks = ticks(tracks, scene.scales, scene.zone, 0.0, tracks.length_s);
             (sector, ticks)
         });
+        let kept = match (&self.held, self.handles.is_dragging()) {
+            (Some(held), true) => held.clone(),
+            _ => self.held.insert(kept).clone(),
+        };
         let (sector, ticks) = &*kept;
         let ruler = layout::RULER_LINES * scene.look.sizes.label;
         let sky = Rect::from_min_max(card.min, pos2(card.right(), card.bottom() - ruler));
         let (camera, turn) = Camera::new(sector, self.turn, sky);
         self.turn = turn;
-        self.steer(ui, &response, &camera);
+        let owned = owned(scene);
+        let moved = owned.filter(|_| self.moves_measured);
+        let is_held = moved.is_some_and(|owned| {
+            self.handles
+                .handle(ui, &response, &owned, &camera, commands)
+        });
+        if !is_held {
+            self.steer(ui, &response, &camera);
+        }
 
         let model = Model::new(scene, tracks);
-        let layout = Layout::new(scene, &model, tracks, ticks, camera, ui.painter());
+        let note = corner::room(&scene.look, sky, owned.is_some(), scene);
+        let layout = Layout::new(scene, &model, tracks, ticks, camera, ui.painter(), note);
         let shapes = self.shapes.get(scene.night_count, || Shapes {
             floor: scene.skyline.floor_outline(OUTLINE_STEP),
             crowns: scene.skyline.crowns(OUTLINE_STEP),
@@ -106,6 +129,14 @@ impl Horizon {
                 .rect_stroke(card, scene.look.room.corner, stroke, StrokeKind::Inside);
         }
         choose_body(ui, &response, &model, &layout, commands);
+        if let Some(owned) = moved {
+            let inside = ui.painter().with_clip_rect(camera.rect);
+            self.handles
+                .paint(&inside, &scene.look, &response, &owned, &camera);
+        }
+        if let Some(room) = note {
+            corner::show(ui, scene, room, owned.is_some(), &mut self.moves_measured);
+        }
         response
     }
 
@@ -177,7 +208,7 @@ impl Horizon {
     /// The sky's picture, made anew only when the site, the moment, the view or the theme changed.
     fn sky(&mut self, ui: &Ui, scene: &Scene<'_>, camera: Camera) -> TextureId {
         let key = SkyKey {
-            night_count: scene.night_count,
+            sky_count: scene.sky_count,
             moment: scene.moment,
             camera,
             theme: scene.look.theme,
@@ -185,6 +216,13 @@ impl Horizon {
         let image = || Picture::new(&sky::glow(scene, scene.moment), &scene.look).image(&camera);
         self.sky.get(ui, key, image)
     }
+}
+
+/// The measured skyline that belongs to the scene's spot.
+fn owned<'a>(scene: &Scene<'a>) -> Option<Owned<'a>> {
+    let mut spots = scene.site.spots.iter();
+    let spot = spots.position(|spot| spot.name == scene.spot.name)?;
+    Owned::at(scene.site, spot)
 }
 
 /// A click on a body chooses it.

@@ -122,6 +122,7 @@ mod tests {
             at_s: 60.0 * minute as f64,
             azimuth: Angle::from_degrees(azimuth_deg).wrapped(),
             altitude: Angle::from_degrees(20.0),
+            counting: Angle::ZERO,
             clearance: Angle::ZERO,
             sun_altitude: Angle::ZERO,
             margins_mag: [0.0; 4],
