@@ -81,7 +81,9 @@ pub fn mesh(
             if beside[1] < -half_deg || beside[0] > half_deg {
                 continue;
             }
-            let low = band.low.map_or([ground_deg; 2], |low| low.map(Angle::degrees));
+            let low = band
+                .low
+                .map_or([ground_deg; 2], |low| low.map(Angle::degrees));
             let first = mesh.vertices.len() as u32;
             for end in 0..2 {
                 let beside_deg = beside[end].clamp(-half_deg, half_deg);

@@ -1,7 +1,7 @@
 //! Where a gable roof's ridge runs.
 
-use super::{Obstacle, PlanPoint};
 use super::plan_point::sides;
+use super::{Obstacle, PlanPoint};
 
 /// Where the ridge's line crosses a wall.
 pub(super) struct RidgeEnd {

@@ -113,7 +113,8 @@ fn crowded(obstacles: usize) -> Site {
         let turn = k as f64 * 2.399_963; // the golden angle spreads them evenly
         let far_m = 15.0 + 135.0 * ((k as f64 + 0.5) / obstacles as f64).sqrt();
         let at = PlanPoint::new(far_m * turn.sin(), far_m * turn.cos());
-        let off = |east_m: f64, north_m: f64| PlanPoint::new(at.east_m + east_m, at.north_m + north_m);
+        let off =
+            |east_m: f64, north_m: f64| PlanPoint::new(at.east_m + east_m, at.north_m + north_m);
         let label = format!("obstacle {k}");
         let height_m = 3.0 + (k % 7) as f64;
         site.obstacles.push(match k % 4 {
@@ -130,7 +131,12 @@ fn crowded(obstacles: usize) -> Site {
             },
             1 => Obstacle::Building {
                 label,
-                corners_m: vec![off(-5.0, -3.0), off(5.0, -3.0), off(5.0, 3.0), off(-5.0, 3.0)],
+                corners_m: vec![
+                    off(-5.0, -3.0),
+                    off(5.0, -3.0),
+                    off(5.0, 3.0),
+                    off(-5.0, 3.0),
+                ],
                 base_m: None,
                 eaves_m: height_m,
                 ridge_m: Some(height_m + 2.0),

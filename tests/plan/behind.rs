@@ -52,8 +52,11 @@ fn request<'a>(
 pub fn night_sky(site: &Site, date: NaiveDate) -> NightSky {
     let sight = Sight::of_site(site).expect("the demo sites' air");
     let (observer, open) = (site.observer(), Skyline::open());
-    NightSky::new(&Ephemeris::new(), &request(site, &observer, &open, &sight, date))
-        .expect("a supported date")
+    NightSky::new(
+        &Ephemeris::new(),
+        &request(site, &observer, &open, &sight, date),
+    )
+    .expect("a supported date")
 }
 
 fn planned_anew(site: &Site, date: NaiveDate, skyline: &Skyline) -> Night {
@@ -136,7 +139,9 @@ pub fn raise(obstacle: &mut Obstacle, by_m: f64) {
         | Obstacle::Pole { height_m, .. }
         | Obstacle::Shape { height_m, .. }
         | Obstacle::Wall { height_m, .. } => *height_m += by_m,
-        Obstacle::Building { eaves_m, ridge_m, .. } => {
+        Obstacle::Building {
+            eaves_m, ridge_m, ..
+        } => {
             *eaves_m += by_m;
             if let Some(ridge_m) = ridge_m {
                 *ridge_m += by_m;
@@ -178,7 +183,9 @@ fn a_night_behind_a_skyline_is_the_night_planned_anew() {
                 .collect();
             assert!(order.is_sorted(), "{order:?}");
             assert!(
-                a.skyline_events.windows(2).all(|pair| pair[0].clears != pair[1].clears),
+                a.skyline_events
+                    .windows(2)
+                    .all(|pair| pair[0].clears != pair[1].clears),
                 "in and out of view in turn"
             );
             for eye in Eye::ALL {
@@ -193,7 +200,10 @@ fn a_night_behind_a_skyline_is_the_night_planned_anew() {
             }
         }
     }
-    assert!(windows > 100 && events > 50, "{windows} windows, {events} events");
+    assert!(
+        windows > 100 && events > 50,
+        "{windows} windows, {events} events"
+    );
 }
 
 /// The windows' ends and the skyline's events agree with the clearance looked at every 7 s.
@@ -266,7 +276,9 @@ fn a_higher_obstacle_never_gives_a_longer_window() {
                 }
                 let total_s = |night: &dimmet::plan::BodyNight| -> f64 {
                     let windows = night.windows(eye).iter();
-                    windows.map(|w| w.end.moment.seconds_since(w.start.moment)).sum()
+                    windows
+                        .map(|w| w.end.moment.seconds_since(w.start.moment))
+                        .sum()
                 };
                 shorter += usize::from(total_s(after) < total_s(before) - 30.0);
             }
@@ -283,7 +295,11 @@ fn a_body_comes_through_the_opening_beneath_a_crown() {
     let date = NaiveDate::from_ymd_opt(2026, 12, 4).expect("a date");
     let sky = night_sky(&site, date);
     // Where Venus stands two hours after it rises.
-    let venus_rise = sky.behind(&Skyline::open()).body(Body::Venus).expect("asked for").rise[0];
+    let venus_rise = sky
+        .behind(&Skyline::open())
+        .body(Body::Venus)
+        .expect("asked for")
+        .rise[0];
     let (azimuth, altitude) = sky
         .place(Body::Venus, venus_rise.plus_seconds(7200.0))
         .expect("asked for");
@@ -304,7 +320,11 @@ fn a_body_comes_through_the_opening_beneath_a_crown() {
         site.obstacles = vec![tree(gap_m)];
         let night = sky.behind(&site.skyline(&site.spots[0]));
         let venus = night.body(Body::Venus).expect("asked for");
-        venus.skyline_events.iter().filter(|event| event.clears).count()
+        venus
+            .skyline_events
+            .iter()
+            .filter(|event| event.clears)
+            .count()
     };
     // With a crown to the ground it comes out once, over the top; with a gap it has been in view
     // beneath the crown before.

@@ -50,7 +50,10 @@ fn planned(
 ) -> Option<(Moment, Moment)> {
     let grounds = Grounds::new(site, Some(sky.night().date));
     let night = sky.behind(&grounds.skyline_from(site.viewpoint_at(at, Stature::Adult)));
-    let windows = night.body(body).expect("asked for").windows_in(Eye::Visitor, half);
+    let windows = night
+        .body(body)
+        .expect("asked for")
+        .windows_in(Eye::Visitor, half);
     windows
         .iter()
         .map(|window| (window.start.moment, window.end.moment))
@@ -128,7 +131,10 @@ fn a_higher_obstacle_gives_no_square_more_minutes() {
             let mut raised = site.clone();
             let chosen = random.below(raised.obstacles.len());
             crate::behind::raise(&mut raised.obstacles[chosen], 6.0);
-            let high = map(&Standing::new(request(&raised, &nights, body, half)), raster);
+            let high = map(
+                &Standing::new(request(&raised, &nights, body, half)),
+                raster,
+            );
             for row in 0..raster.rows {
                 for column in 0..raster.columns {
                     let (Cell::Stay(before), Cell::Stay(after)) =
@@ -171,7 +177,11 @@ fn places_where_nobody_is_to_stand_are_left_out() {
         ((-50.0, -26.0), WhyLeftOut::InObstacle), // the hall
         ((21.0, 0.0), WhyLeftOut::Outside),
     ] {
-        assert_eq!(standing.left_out(PlanPoint::new(at.0, at.1)), Some(why), "{at:?}");
+        assert_eq!(
+            standing.left_out(PlanPoint::new(at.0, at.1)),
+            Some(why),
+            "{at:?}"
+        );
     }
     let raster = Raster::of_site(&site, 5.0);
     assert_eq!(raster.origin, PlanPoint::new(-60.0, -40.0));
@@ -192,7 +202,8 @@ fn the_map_tells_the_best_places_what_a_place_costs_and_the_way_to_more() {
         .map(raster, TWO, &progress, |partial| {
             shares += 1;
             // After the first report every square has at least a coarse one to stand for it.
-            coarse += usize::from(partial.shown(raster.columns - 1, raster.rows - 1) != Cell::Waiting);
+            coarse +=
+                usize::from(partial.shown(raster.columns - 1, raster.rows - 1) != Cell::Waiting);
         })
         .expect("nobody cancels it");
     assert!(shares >= 2 && coarse == shares, "{coarse} of {shares}");
@@ -200,7 +211,11 @@ fn the_map_tells_the_best_places_what_a_place_costs_and_the_way_to_more() {
     let best = map.best_places(3, 15.0);
     assert_eq!(best.len(), 3);
     for (k, (at, stay)) in best.iter().enumerate() {
-        assert!(best[..k].iter().all(|other| other.0.distance_m(*at) >= 15.0));
+        assert!(
+            best[..k]
+                .iter()
+                .all(|other| other.0.distance_m(*at) >= 15.0)
+        );
         assert!(map.cost_of(stay) < 60.0, "{stay:?}");
     }
     assert!(map.cost_of(&best[0].1) <= 0.1, "the first is the best");
@@ -234,7 +249,10 @@ fn the_map_tells_the_best_places_what_a_place_costs_and_the_way_to_more() {
         let (least, most) = around
             .iter()
             .fold((f64::MAX, f64::MIN), |(a, b), m| (a.min(*m), b.max(*m)));
-        assert!(least <= level && level <= most, "{point:?}: {least} to {most}");
+        assert!(
+            least <= level && level <= most,
+            "{point:?}: {least} to {most}"
+        );
     }
 }
 
@@ -251,13 +269,19 @@ fn a_cancelled_map_is_none() {
         progress.cancel();
     });
     assert_eq!(answer, None);
-    assert!(squares > 0 && squares < 2500, "{squares} were known when it was cancelled");
+    assert!(
+        squares > 0 && squares < 2500,
+        "{squares} were known when it was cancelled"
+    );
 }
 
 #[test]
 fn several_nights_are_summed_and_the_least_is_told() {
     let site = demo_site("fennick-common").expect("a demo site");
-    let skies = [night_sky(site, date(2026, 12, 4)), night_sky(site, date(2027, 1, 10))];
+    let skies = [
+        night_sky(site, date(2026, 12, 4)),
+        night_sky(site, date(2027, 1, 10)),
+    ];
     let at = site.viewpoint_at(PlanPoint::new(10.0, -20.0), Stature::Adult);
     let alone = skies.each_ref().map(|sky| {
         let nights = [sky];
@@ -320,10 +344,13 @@ fn spots_are_compared_with_what_ends_their_windows() {
         let spots = compare(&asked, &site.spots);
         assert_eq!(spots.len(), 3);
         for compared in &spots {
-            let skyline = Grounds::new(&site, Some(sky.night().date))
-                .skyline(compared.spot, Stature::Adult);
+            let skyline =
+                Grounds::new(&site, Some(sky.night().date)).skyline(compared.spot, Stature::Adult);
             let night = sky.behind(&skyline);
-            let expected = night.body(body).expect("asked for").windows_in(Eye::Visitor, half);
+            let expected = night
+                .body(body)
+                .expect("asked for")
+                .windows_in(Eye::Visitor, half);
             let windows: Vec<_> = compared.windows.iter().map(|seen| seen.window).collect();
             assert_eq!(windows, expected, "{}", compared.spot.name);
             assert_eq!(compared.absence.is_some(), windows.is_empty());

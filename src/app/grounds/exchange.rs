@@ -32,7 +32,12 @@ enum Act {
 }
 
 impl Act {
-    const ALL: [Self; 4] = [Self::SkylineIn, Self::PlanIn, Self::SkylineOut, Self::PlanOut];
+    const ALL: [Self; 4] = [
+        Self::SkylineIn,
+        Self::PlanIn,
+        Self::SkylineOut,
+        Self::PlanOut,
+    ];
 
     const fn wording(self) -> &'static str {
         match self {
@@ -88,13 +93,7 @@ impl Exchange {
         }
     }
 
-    fn run(
-        &mut self,
-        act: Act,
-        path: &Path,
-        desk: &Desk<'_>,
-        commands: &mut Commands,
-    ) -> Outcome {
+    fn run(&mut self, act: Act, path: &Path, desk: &Desk<'_>, commands: &mut Commands) -> Outcome {
         if act.writes() && path.is_file() && self.asked_about.as_deref() != Some(path) {
             self.asked_about = Some(path.to_owned());
             let file = path.to_string_lossy();
@@ -139,11 +138,7 @@ impl Exchange {
     }
 }
 
-fn skyline_in(
-    path: &Path,
-    desk: &Desk<'_>,
-    commands: &mut Commands,
-) -> Result<Outcome, SiteError> {
+fn skyline_in(path: &Path, desk: &Desk<'_>, commands: &mut Commands) -> Result<Outcome, SiteError> {
     let points = read_skyline_table(path)?;
     let count = points.len().to_string();
     let mut site = desk.state.site().clone();

@@ -167,7 +167,10 @@ mod tests {
         assert_eq!(far.skyline[1].altitude_deg, 90.0);
         assert!(far.skyline[1].azimuth_deg < far.skyline[2].azimuth_deg);
         let around = owned.moved(0, point(350.0, 1.0)).unwrap();
-        assert_eq!(around.skyline[0].azimuth_deg, 0.0, "north is as far as it goes");
+        assert_eq!(
+            around.skyline[0].azimuth_deg, 0.0,
+            "north is as far as it goes"
+        );
         for site in [moved, far, around] {
             site.check().unwrap();
         }

@@ -5,9 +5,7 @@ use crate::app::command::{Command, Commands};
 use crate::app::palette::Look;
 use crate::measure::Angle;
 use crate::place::SkylinePoint;
-use eframe::egui::{
-    CursorIcon, EventFilter, Key, Modifiers, Painter, Pos2, Response, Stroke, Ui,
-};
+use eframe::egui::{CursorIcon, EventFilter, Key, Modifiers, Painter, Pos2, Response, Stroke, Ui};
 
 /// From how far the pointer takes hold of a handle, points.
 const REACH: f32 = 10.0;
@@ -126,13 +124,7 @@ impl Handles {
     }
 
     /// Nudges by a tenth of a degree with Ctrl and the arrows; Delete takes the point away.
-    fn keys(
-        &mut self,
-        ui: &Ui,
-        response: &Response,
-        owned: &Owned<'_>,
-        commands: &mut Commands,
-    ) {
+    fn keys(&mut self, ui: &Ui, response: &Response, owned: &Owned<'_>, commands: &mut Commands) {
         let Some(index) = self.chosen.filter(|_| response.has_focus()) else {
             return;
         };
@@ -149,8 +141,8 @@ impl Handles {
             let command = Modifiers::COMMAND;
             let right = pressed(command, Key::ArrowRight) - pressed(command, Key::ArrowLeft);
             let up = pressed(command, Key::ArrowUp) - pressed(command, Key::ArrowDown);
-            let deleted = pressed(Modifiers::NONE, Key::Delete)
-                + pressed(Modifiers::NONE, Key::Backspace);
+            let deleted =
+                pressed(Modifiers::NONE, Key::Delete) + pressed(Modifiers::NONE, Key::Backspace);
             (right, up, deleted > 0.0)
         });
         if is_deleted {

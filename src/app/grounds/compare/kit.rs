@@ -15,7 +15,12 @@ pub fn menus(ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
     let look = desk.look;
     ui.horizontal_wrapped(|ui| {
         let font = look.font(look.sizes.label);
-        figure(ui, font, look.colours.lesser, &desk.words.text("kit-stands"));
+        figure(
+            ui,
+            font,
+            look.colours.lesser,
+            &desk.words.text("kit-stands"),
+        );
         for index in 0..kit.len() {
             menu(ui, desk, index, commands);
         }
@@ -46,5 +51,9 @@ fn menu(ui: &mut Ui, desk: &Desk<'_>, index: usize, commands: &mut Commands) {
             }
         });
     });
-    name_it(&button, Role::Button, &words.text_with("kit-menu", &arguments));
+    name_it(
+        &button,
+        Role::Button,
+        &words.text_with("kit-menu", &arguments),
+    );
 }

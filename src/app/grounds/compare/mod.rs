@@ -76,7 +76,9 @@ impl Compare {
             text(ui, look, look.sizes.label, look.colours.lesser, &about);
             let width = ui.available_width();
             let axis = axis(ui, desk, scene, &rows, width);
-            let most = rows.iter().fold(0.0, |most: f64, row| most.max(row.minutes));
+            let most = rows
+                .iter()
+                .fold(0.0, |most: f64, row| most.max(row.minutes));
             for (index, row) in rows.iter().enumerate() {
                 // A spot that has just gone may still be among rows that wait.
                 if index < scene.site.spots.len() {

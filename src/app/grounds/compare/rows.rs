@@ -46,7 +46,11 @@ pub fn rows(desk: &Desk<'_>, scene: &Scene<'_>, sky: &NightSky) -> Vec<Row> {
 fn row(desk: &Desk<'_>, scene: &Scene<'_>, spot: &SpotNight<'_>) -> Row {
     let words = desk.words;
     let ends = |window: &SpotWindow| (window.window.start.moment, window.window.end.moment);
-    let kit: Vec<&str> = spot.kit.iter().map(|instrument| instrument.label()).collect();
+    let kit: Vec<&str> = spot
+        .kit
+        .iter()
+        .map(|instrument| instrument.label())
+        .collect();
     let (times, best, why) = match spot.longest() {
         Some(longest) => said(desk, scene, longest),
         None => (

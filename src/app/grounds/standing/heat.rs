@@ -37,9 +37,7 @@ pub fn range(map: &StandingMap) -> Option<(f64, f64)> {
 /// Round minutes to draw lines at: a handful within a range.
 pub fn levels((least, most): (f64, f64)) -> Vec<f64> {
     const MOST_LINES: f64 = 6.0;
-    const STEPS: [f64; 10] = [
-        1.0, 2.0, 5.0, 10.0, 15.0, 20.0, 30.0, 60.0, 120.0, 240.0,
-    ];
+    const STEPS: [f64; 10] = [1.0, 2.0, 5.0, 10.0, 15.0, 20.0, 30.0, 60.0, 120.0, 240.0];
     let step = STEPS
         .into_iter()
         .find(|step| (most - least) / step <= MOST_LINES)

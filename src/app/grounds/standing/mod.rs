@@ -20,8 +20,7 @@ use crate::plan::standing::Contour;
 use crate::words::{Words, decimal};
 use crate::{light::Eye, sky::Body};
 use eframe::egui::{
-    Context, Painter, ProgressBar, Role, Sense, TextureHandle, TextureOptions, Ui,
-    WidgetInfo, vec2,
+    Context, Painter, ProgressBar, Role, Sense, TextureHandle, TextureOptions, Ui, WidgetInfo, vec2,
 };
 use job::{Asked, Found, News, Summing};
 use paint::Line;
@@ -142,7 +141,13 @@ impl Standing {
             self.nights_ui(ui, desk);
             self.progress_ui(ui, desk);
             if let Some(error) = &self.error {
-                text(ui, desk.look, desk.look.sizes.label, desk.look.colours.caution, error);
+                text(
+                    ui,
+                    desk.look,
+                    desk.look.sizes.label,
+                    desk.look.colours.caution,
+                    error,
+                );
             }
             self.answers(ui, desk, scene, commands);
         });
@@ -221,11 +226,9 @@ impl Standing {
         self.is_stopped = false;
         let (asked, ephemeris) = (asked.clone(), desk.state.ephemeris().clone());
         let shown = planned.night_sky.clone();
-        let started = self
-            .worker
-            .start(ctx, "standing map", move |telling| {
-                asked.work(&shown, &ephemeris, telling);
-            });
+        let started = self.worker.start(ctx, "standing map", move |telling| {
+            asked.work(&shown, &ephemeris, telling);
+        });
         self.error = started.err().map(|error| error.to_string());
     }
 
@@ -289,7 +292,11 @@ impl Standing {
                     .desired_height(12.0)
                     .fill(look.colours.chosen);
                 let bar = ui.add(bar);
-                name_it(&bar, Role::ProgressIndicator, &words.text("standing-progress"));
+                name_it(
+                    &bar,
+                    Role::ProgressIndicator,
+                    &words.text("standing-progress"),
+                );
                 let cancel = ui.button(words.text("standing-cancel"));
                 if cancel.clicked() {
                     self.worker.cancel();
@@ -314,10 +321,7 @@ impl Standing {
                     let (least, most) = map.range;
                     let name = words.text_with(
                         "standing-legend",
-                        &[
-                            ("least", decimal(least, 0)),
-                            ("most", decimal(most, 0)),
-                        ],
+                        &[("least", decimal(least, 0)), ("most", decimal(most, 0))],
                     );
                     response.widget_info(|| WidgetInfo::labeled(Role::Canvas, true, &name));
                 }

@@ -20,7 +20,10 @@ pub fn corners(raster: &Raster) -> [PlanPoint; 2] {
         raster.rows.saturating_sub(1),
     );
     [
-        PlanPoint::new(raster.origin.east_m - half_m, raster.origin.north_m - half_m),
+        PlanPoint::new(
+            raster.origin.east_m - half_m,
+            raster.origin.north_m - half_m,
+        ),
         PlanPoint::new(last.east_m + half_m, last.north_m + half_m),
     ]
 }
@@ -44,12 +47,7 @@ pub struct Line {
 }
 
 /// The lines of equal minutes, each line of some length with its minutes written on it.
-pub fn contours(
-    painter: &Painter,
-    to_screen: ToScreen<'_>,
-    look: &Look,
-    lines: &[Line],
-) {
+pub fn contours(painter: &Painter, to_screen: ToScreen<'_>, look: &Look, lines: &[Line]) {
     /// Shorter lines carry no figure, and lines of a few points are not drawn.
     const LEAST_FOR_TEXT: f32 = 70.0;
     const LEAST: f32 = 12.0;
@@ -66,7 +64,10 @@ pub fn contours(
         }
         let shade = Stroke::new(2.6, colours.sky_shade.gamma_multiply(0.55));
         painter.add(Shape::line(points.clone(), shade));
-        painter.add(Shape::line(points.clone(), Stroke::new(1.1, colours.sky_text)));
+        painter.add(Shape::line(
+            points.clone(),
+            Stroke::new(1.1, colours.sky_text),
+        ));
         if length < LEAST_FOR_TEXT {
             continue;
         }
@@ -77,8 +78,8 @@ pub fn contours(
         let place = [0.5, 0.35, 0.65, 0.2, 0.8].into_iter().find_map(|share| {
             let at = along(&points, share * length)?;
             let rect = Align2::CENTER_CENTER.anchor_size(at, text.size());
-            let is_free = visible.contains_rect(rect)
-                && taken.iter().all(|other| !other.intersects(rect));
+            let is_free =
+                visible.contains_rect(rect) && taken.iter().all(|other| !other.intersects(rect));
             is_free.then_some(rect)
         });
         if let Some(rect) = place {
@@ -103,7 +104,12 @@ fn along(points: &[Pos2], mut far: f32) -> Option<Pos2> {
 }
 
 /// The best places with their numbers.
-pub fn places(painter: &Painter, to_screen: ToScreen<'_>, look: &Look, places: &[(PlanPoint, Stay)]) {
+pub fn places(
+    painter: &Painter,
+    to_screen: ToScreen<'_>,
+    look: &Look,
+    places: &[(PlanPoint, Stay)],
+) {
     const RADIUS: f32 = 9.0;
     let colours = &look.colours;
     // The first on top.
@@ -135,10 +141,7 @@ pub fn legend(painter: &Painter, rect: Rect, look: &Look, words: &Words, range: 
     let mut taken: Vec<Rect> = Vec::new();
     let mut mark = |minutes: f64, align: Align2| {
         let at = pos2(x_at(heat::share(range, minutes)), bar.bottom() + 3.0);
-        let text = words.text_with(
-            "standing-minutes",
-            &[("minutes", decimal(minutes, 0))],
-        );
+        let text = words.text_with("standing-minutes", &[("minutes", decimal(minutes, 0))]);
         let text = painter.layout_no_wrap(text, font.clone(), look.colours.lesser);
         let place = align.anchor_size(at, text.size());
         if taken.iter().any(|other| other.intersects(place)) {

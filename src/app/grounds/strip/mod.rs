@@ -122,18 +122,17 @@ impl Strip {
             return (response, frame);
         }
         let owned = Owned::at(desk.state.site(), desk.state.spot_index());
-        let is_held = owned.is_some_and(|owned| {
-            self.handles.handle(ui, &response, &owned, &frame, commands)
-        });
+        let is_held =
+            owned.is_some_and(|owned| self.handles.handle(ui, &response, &owned, &frame, commands));
         if response.clicked() || response.drag_started() {
             response.request_focus();
         }
         if !is_held {
             self.steer(ui, &response, &frame);
         }
-        let bands = self
-            .bands
-            .get(scene.night_count, || shapes::bands(scene.skyline, OUTLINE_STEP));
+        let bands = self.bands.get(scene.night_count, || {
+            shapes::bands(scene.skyline, OUTLINE_STEP)
+        });
         let painter = ui.painter().clone();
         paint::paint(&painter, desk, scene, &frame, ways, &bands);
         let below = Rect::from_min_max(pos2(whole.left(), sky.bottom()), whole.max);

@@ -141,8 +141,7 @@ fn bodies(
             continue;
         }
         let at = frame.pos(point.azimuth, point.altitude);
-        let is_blocked =
-            scene.skyline.clearance(point.azimuth, point.altitude) <= Angle::ZERO;
+        let is_blocked = scene.skyline.clearance(point.azimuth, point.altitude) <= Angle::ZERO;
         let is_chosen = *body == scene.body;
         let (radius, colour) = match (is_chosen, is_blocked) {
             (true, _) => (5.5, desk.look.colours.body),
@@ -216,8 +215,7 @@ fn names(
         texts.push((text, !is_inside));
     }
     let bounds = frame.rect.shrink(2.0);
-    for (place, (text, is_on_sky)) in labels::arrange(&wanted, bounds, &[]).into_iter().zip(texts)
-    {
+    for (place, (text, is_on_sky)) in labels::arrange(&wanted, bounds, &[]).into_iter().zip(texts) {
         match place {
             Some(rect) if is_on_sky => shaded(painter, look, rect.min, &text),
             Some(rect) => {

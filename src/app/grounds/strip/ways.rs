@@ -43,8 +43,10 @@ impl Ways {
     /// The ways of a scene's half-night, sampled.
     pub fn new(scene: &Scene<'_>) -> Self {
         let (start, end) = scene.ends();
-        let mut ways: Vec<(Body, Vec<Point>)> =
-            Body::BRIGHT.iter().map(|body| (*body, Vec::new())).collect();
+        let mut ways: Vec<(Body, Vec<Point>)> = Body::BRIGHT
+            .iter()
+            .map(|body| (*body, Vec::new()))
+            .collect();
         for at_s in search::grid(0.0, end.seconds_since(start), STEP_S) {
             for (body, points) in &mut ways {
                 points.push(point(scene, *body, start, at_s));
@@ -73,7 +75,10 @@ impl Ways {
             last_deg = match found {
                 None => point.azimuth.degrees(),
                 Some(_) => {
-                    last_deg + (point.azimuth - Angle::from_degrees(last_deg)).signed().degrees()
+                    last_deg
+                        + (point.azimuth - Angle::from_degrees(last_deg))
+                            .signed()
+                            .degrees()
                 }
             };
             let (from, to) = found.unwrap_or((last_deg, last_deg));

@@ -31,13 +31,7 @@ pub fn room(look: &Look, sky: Rect, is_own: bool, scene: &Scene<'_>) -> Option<R
 }
 
 /// Shows it.
-pub fn show(
-    ui: &mut Ui,
-    scene: &Scene<'_>,
-    room: Rect,
-    is_own: bool,
-    moves_measured: &mut bool,
-) {
+pub fn show(ui: &mut Ui, scene: &Scene<'_>, room: Rect, is_own: bool, moves_measured: &mut bool) {
     let (look, words) = (&scene.look, scene.words);
     if is_own {
         let layout = Layout::right_to_left(Align::Min);

@@ -107,7 +107,8 @@ impl Horizon {
         let owned = owned(scene);
         let moved = owned.filter(|_| self.moves_measured);
         let is_held = moved.is_some_and(|owned| {
-            self.handles.handle(ui, &response, &owned, &camera, commands)
+            self.handles
+                .handle(ui, &response, &owned, &camera, commands)
         });
         if !is_held {
             self.steer(ui, &response, &camera);
