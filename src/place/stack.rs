@@ -139,14 +139,22 @@ fn cuts(floor: &Piece, active: &[Band], to: f64) -> Vec<f64> {
     for band in active {
         curves.extend([with_ends(band.bottom), with_ends(band.top)]);
     }
+    // What stays below an edge of the floor is never seen.
+    let (shape, left, right) = curves[0];
+    let is_edge = |shape: &Shape| matches!(shape, Shape::Edge { .. });
+    if is_edge(&shape) {
+        curves.retain(|curve| curve.1 >= left || curve.2 >= right);
+    }
+    let middle = 0.5 * (floor.from + to);
     let mut cuts = Vec::new();
     for (k, (one, one_left, one_right)) in curves.iter().enumerate() {
         for (other, other_left, other_right) in &curves[k + 1..] {
-            let is_edge = |shape: &Shape| matches!(shape, Shape::Edge { .. });
-            // Two edges on one side of each other at both ends do not cross between.
-            let is_apart = (one_left - other_left) * (one_right - other_right) > 0.0;
-            if one != other && !(is_apart && is_edge(one) && is_edge(other)) {
+            if !(is_edge(one) && is_edge(other)) {
                 cuts.extend(one.crossings(other, floor.from, to));
+            } else if (one_left - other_left) * (one_right - other_right) <= 0.0 && one != other {
+                // On one side of each other at both ends they would not cross between.
+                let at = one.edge_crossing(other, middle);
+                cuts.extend(at.filter(|at| *at > floor.from && *at < to));
             }
         }
     }

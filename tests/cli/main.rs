@@ -10,4 +10,5 @@ mod places;
 mod positions;
 mod program;
 mod refusals;
+mod skyline;
 mod table;

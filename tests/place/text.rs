@@ -316,6 +316,149 @@ fn impossible_shapes_are_refused() {
 }
 
 #[test]
+fn what_cannot_stand_on_the_grounds_is_refused_where_it_is_written() {
+    let bow = "[(9.0, 9.0), (20.0, 20.0), (20.0, 9.0), (9.0, 24.0)]";
+    let tree = |rest: &str| {
+        with(&format!(
+            "obstacles: [Tree(label: \"elm\", east_m: 30.0, north_m: 0.0, height_m: 9.0, width_m: 4.0, {rest})],"
+        ))
+    };
+    for (text, expected) in [
+        (
+            with(&format!(
+                "obstacles: [Shape(label: \"tent\", corners_m: {bow}, height_m: 3.0)],"
+            )),
+            "line 6, column 30: the obstacle \"tent\" cannot be: its sides cross each other: list \
+             the corners in order",
+        ),
+        (
+            with(&format!(
+                "excluded: [Exclusion(label: \"pond\", corners_m: {bow})],"
+            )),
+            "line 6, column 33: the excluded area \"pond\" cannot be: its sides cross each other: \
+             list the corners in order",
+        ),
+        (
+            with(&format!("outline_m: {bow},")),
+            "line 6, column 5: the outline of the grounds cannot be: its sides cross each other: \
+             list the corners in order",
+        ),
+        (
+            with("outline_m: [(1.0, 1.0), (2.0, 2.0)],"),
+            "line 6, column 5: the outline of the grounds cannot be: its outline_m need at least \
+             three corners that enclose an area",
+        ),
+        (
+            tree("gap_m: 9.0"),
+            "line 6, column 29: the obstacle \"elm\" cannot be: its gap_m 9 reaches its height_m 9",
+        ),
+        (
+            tree("trunk_m: 5.0"),
+            "line 6, column 29: the obstacle \"elm\" cannot be: its trunk_m 5 exceeds its width_m 4",
+        ),
+        (
+            tree("leafless: Leafless(from: (2, 30), to: (4, 1), see_through: 0.5)")
+                .replace("[Tree", "\n[Tree"),
+            "line 7, column 109: (2, 30) is no day of the year: write (month, day), as (11, 15)",
+        ),
+        (
+            with(
+                "obstacles: [Pole(label: \"post\", east_m: 9.0, north_m: 0.0, height_m: 0.0, width_m: 0.1)],",
+            ),
+            "line 6, column 76: height_m is 0, but must lie between 0.01 and 1000 metres",
+        ),
+        (
+            with(
+                "obstacles: [Pole(label: \"post\", east_m: 9.0, north_m: 0.0, height_m: -2.0, width_m: 0.1)],",
+            ),
+            "line 6, column 77: height_m is -2, but must lie between 0.01 and 1000 metres",
+        ),
+        (
+            with(
+                "kit: [Binocular(label: \"8x30\", magnification: 8.0, aperture_mm: 30.0, field_deg: 7.0, spot: \"roof\")],",
+            ),
+            "line 6, column 96: the instrument \"8x30\" stands at the spot \"roof\", but there is \
+             none of that name: write one of \"mark\", or leave it out",
+        ),
+        (
+            with(&format!("skyline_far: [{}],", "(0.0, 1.0), ".repeat(101))),
+            "line 6, column 5: there are 101 skyline_far, but may be at most 100",
+        ),
+    ] {
+        assert_eq!(refusal(&text), expected, "{text}");
+    }
+}
+
+#[test]
+fn all_that_the_grounds_can_say_reads_back_the_same() {
+    let text = with(
+        "slope: Slope(east_percent: 2.5, north_percent: -1.0),
+    people: People(adult_m: 1.65, child_m: 1.0, wheelchair_m: 1.25),
+    spots: [
+        Spot(name: \"mark\", eye_height_m: 1.5, radius_m: 4.0),
+        Spot(name: \"roof\", east_m: 30.0, north_m: -2.0, base_m: 3.5, skyline: [(10.0, 4.0)], skyline_far: [(0.0, 0.0)]),
+    ],
+    skyline: [(0.0, 1.0), (90.0, 2.0)],
+    skyline_far: [(350.0, 20.0)],
+    obstacles: [
+        Tree(label: \"elm\", east_m: 9.0, north_m: 9.0, height_m: 9.0, width_m: 4.0, gap_m: 2.5, trunk_m: 0.4, leafless: Leafless(from: (11, 1), to: (4, 30), see_through: 0.7)),
+        Pole(label: \"post\", east_m: 5.0, north_m: 0.0, base_m: -1.0, height_m: 4.0, width_m: 0.1),
+        Shape(label: \"tent\", corners_m: [(-5.0, -5.0), (-9.0, -5.0), (-7.0, -9.0)], height_m: 3.0),
+    ],
+    blocking_density: 0.25,
+    excluded: [Exclusion(label: \"pond\", corners_m: [(1.0, 1.0), (4.0, 1.0), (2.0, 4.0)])],
+    outline_m: [(-20.0, -20.0), (20.0, -20.0), (0.0, 30.0)],
+    terrain_k: 0.2,
+    kit: [Binocular(label: \"8x30\", magnification: 8.0, aperture_mm: 30.0, field_deg: 7.0, spot: \"roof\")],",
+    );
+    let site = Site::from_ron(&text).expect("a valid site");
+    let again = Site::from_ron(&site.to_ron().expect("it can be written"));
+    assert_eq!(again.expect("what was written can be read"), site);
+    let bare = Site::from_ron(LEAST).expect("a valid site");
+    assert_ne!(site.slope, bare.slope);
+    assert_ne!(site.people, bare.people);
+    assert_ne!(site.blocking_density, bare.blocking_density);
+    assert_ne!(site.terrain_k, bare.terrain_k);
+    assert_eq!(site.spots[0].radius_m, Some(4.0));
+    assert_eq!(
+        (site.spots[1].base_m, site.spots[1].skyline.len()),
+        (Some(3.5), 1)
+    );
+    assert_eq!(
+        (site.spots[1].skyline_far.len(), site.skyline_far.len()),
+        (1, 1)
+    );
+    assert_eq!((site.excluded.len(), site.outline_m.len()), (1, 3));
+    assert_eq!(site.kit[0].spot(), Some("roof"));
+    let Obstacle::Tree {
+        gap_m,
+        trunk_m,
+        leafless,
+        ..
+    } = &site.obstacles[0]
+    else {
+        panic!("a tree: {:?}", site.obstacles[0]);
+    };
+    assert_eq!(
+        (*gap_m, *trunk_m, leafless.is_some()),
+        (Some(2.5), Some(0.4), true)
+    );
+    // Nobody could tell apart what is usual from what is left out, so it is not written.
+    let least = bare.to_ron().expect("it can be written");
+    for field in [
+        "slope",
+        "people",
+        "skyline_far",
+        "blocking_density",
+        "excluded",
+        "outline_m",
+        "terrain_k",
+    ] {
+        assert!(!least.contains(field), "{least}");
+    }
+}
+
+#[test]
 fn deep_nesting_is_refused_and_a_byte_order_mark_is_not() {
     refusal(&"[".repeat(200_000));
     refusal(&format!("Site(skyline: {}", "(".repeat(200_000)));
