@@ -43,7 +43,7 @@ const SNAPS: Manner = Manner {
 fn the_demo_site_in_words() {
     let site = demo_site("fennick-common").unwrap();
     let date = NaiveDate::from_ymd_opt(2026, 12, 4).unwrap();
-    let model = Model::new(&site, 1, date);
+    let model = Model::new(site, 1, date);
     let text: Vec<String> = model
         .things
         .iter()
@@ -87,10 +87,10 @@ fn everything_fits_into_the_view() {
     let site = demo_site("ternskjell-quay").unwrap();
     for size in [vec2(800.0, 600.0), vec2(300.0, 900.0)] {
         let rect = Rect::from_min_size(pos2(5.0, 7.0), size);
-        let view = View::of_everything(&Extent::of(&site), rect);
+        let view = View::of_everything(&Extent::of(site), rect);
         let camera = Camera { rect, view };
-        for thing in things::all(&site) {
-            for point in thing.points(&site) {
+        for thing in things::all(site) {
+            for point in thing.points(site) {
                 assert!(rect.contains(camera.to_screen(point)), "{point:?}");
             }
         }
