@@ -88,6 +88,7 @@ impl DesktopWindow {
                     command_button(ui, &self.words, Command::DismissNotice, commands);
                 });
             }
+            self.terrain.show(ui, &look, &self.words, commands);
             if self.state.area == Area::Grounds {
                 self.grounds_ui(ui, commands);
             } else if is_wide {

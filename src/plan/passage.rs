@@ -122,12 +122,49 @@ impl<'a, W: Way> Passage<'a, W> {
     /// Where it comes into view and goes out of it, in order, to 10 ms.
     pub fn crossings(&self) -> Vec<search::Crossing> {
         const TOLERANCE_S: f64 = 0.01;
-        search::crossings_of_sampled(
-            |at_s| self.clearance(at_s).radians(),
-            &self.times_s,
-            &self.clearances,
-            TOLERANCE_S,
-        )
+        let mut found = Vec::new();
+        for k in 1..self.times_s.len() {
+            if self.changes(k) || self.can_touch(k) {
+                found.extend(search::crossings_of_sampled(
+                    |at_s| self.clearance(at_s).radians(),
+                    &self.times_s[k - 1..=k],
+                    &self.clearances[k - 1..=k],
+                    TOLERANCE_S,
+                ));
+            }
+        }
+        found
+    }
+
+    fn changes(&self, k: usize) -> bool {
+        (self.clearances[k - 1] < 0.0) != (self.clearances[k] < 0.0)
+    }
+
+    /// Whether the clearance can cross zero and come back in the step that ends at sample `k`:
+    /// the parabola through its ends and its middle goes more than half the way to zero from the
+    /// nearer end. Between breaks the clearance is smooth and turns once at most; across a break
+    /// it jumps, and what lies within that second is not told apart.
+    fn can_touch(&self, k: usize) -> bool {
+        let (a_s, b_s) = (self.times_s[k - 1], self.times_s[k]);
+        if b_s - a_s <= 2.0 * BESIDE_S {
+            return false;
+        }
+        let side = self.clearances[k].signum();
+        let (a, b) = (side * self.clearances[k - 1], side * self.clearances[k]);
+        let nearer = a.min(b);
+        // No body and no skyline of use moves by more than this in a step.
+        const FAR_RAD: f64 = 0.5;
+        if nearer > FAR_RAD {
+            return false;
+        }
+        let middle = side * self.clearance(0.5 * (a_s + b_s)).radians();
+        let (slope, bend) = (b - a, a + b - 2.0 * middle);
+        let least = if 2.0 * bend > slope.abs() {
+            middle - slope * slope / (8.0 * bend)
+        } else {
+            nearer.min(middle)
+        };
+        least < 0.5 * nearer
     }
 }
 

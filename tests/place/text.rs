@@ -50,7 +50,7 @@ fn the_least_file_is_read_with_the_usual_values() {
         ("mark", 0.0, 0.0)
     );
     assert!(site.skyline(spot).breaks().is_empty(), "an open horizon");
-    assert!(!site.ignores_terrain());
+    assert!(site.terrain.is_none());
 }
 
 #[test]
@@ -347,7 +347,7 @@ fn the_written_text_reads_back_the_same_and_has_a_line_for_each_thing() {
             &Site::from_ron(&text).expect("what was written can be read"),
             site
         );
-        let lines = 20..60;
+        let lines = 20..75;
         assert!(lines.contains(&text.lines().count()), "{text}");
         assert!(text.contains("\n        Spot(name: \"mark\", "), "{text}");
     }

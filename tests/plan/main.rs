@@ -3,8 +3,10 @@
 // The figures measured are there for whoever runs with --nocapture.
 #![allow(clippy::print_stdout)]
 
+mod behind;
 mod daylight;
 mod edges;
 mod reference;
 mod rise_set;
+mod standing;
 mod windows;

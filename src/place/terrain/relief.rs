@@ -167,11 +167,40 @@ impl<'a> Ray<'a> {
         }))
     }
 
-    /// Distance between postings of the finest grid there; infinite where there is none.
-    pub(super) fn spacing_m(&self, distance_m: f64) -> f64 {
-        self.tracks((distance_m / NODE_M) as usize)
+    /// Distance between postings of the finest grid around the site; infinite without one.
+    pub(super) fn spacing_m(&self) -> f64 {
+        self.tracks(0)
             .iter()
             .map(|track| self.relief.rasters[track.raster].spacing_m)
             .fold(f64::INFINITY, f64::min)
+    }
+
+    /// Distance at which the line next crosses from one cell of the finest grid there into
+    /// another, beyond a distance; at most a kilometre's end, or 100 m on where there is no grid.
+    pub(super) fn next_cell_m(&self, distance_m: f64) -> f64 {
+        const ACROSS_NOTHING_M: f64 = 100.0;
+        let kilometre = (distance_m / NODE_M) as usize;
+        let begin_m = kilometre as f64 * NODE_M;
+        let beyond_m = distance_m - begin_m;
+        let ahead_m = self
+            .tracks(kilometre)
+            .first()
+            .map_or(ACROSS_NOTHING_M, |track| {
+                let to_line_m = |from: f64, by: f64| {
+                    if by == 0.0 {
+                        return f64::INFINITY;
+                    }
+                    let at = from + by * beyond_m;
+                    let line = if by > 0.0 {
+                        at.floor() + 1.0
+                    } else {
+                        at.ceil() - 1.0
+                    };
+                    (line - at) / by
+                };
+                let columns_m = to_line_m(track.from.0, track.by.0);
+                columns_m.min(to_line_m(track.from.1, track.by.1))
+            });
+        (distance_m + ahead_m).min(begin_m + NODE_M)
     }
 }

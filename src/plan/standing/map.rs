@@ -2,7 +2,7 @@
 
 use super::{Raster, Standing, Stay};
 use crate::measure::Progress;
-use crate::place::{Grounds, PlanPoint};
+use crate::place::{PlanPoint, TerrainView};
 use std::num::NonZeroUsize;
 use std::sync::atomic::{AtomicUsize, Ordering};
 use std::sync::mpsc;
@@ -47,7 +47,7 @@ impl Standing<'_> {
     ///
     /// The squares come coarse to fine, and `share` is called after each pass and several times
     /// during it with what is known so far; [`StandingMap::shown`] fills the gaps. `progress`
-    /// counts squares; once it is cancelled, nothing more is looked at and the answer is `None`.
+    /// counts squares; once it is cancelled, nothing more is looked at and the answer is `None`, as it is for no nights.
     pub fn map(
         &self,
         raster: Raster,
@@ -63,15 +63,22 @@ impl Standing<'_> {
             cells: vec![Cell::Waiting; raster.len()],
         };
         progress.set_total(raster.len() as u64);
+        // Terrain is far: from the middle of the grounds it stands as from their edges to within
+        // what a person could measure.
+        let middle = raster.centre(raster.columns / 2, raster.rows / 2);
+        let viewpoint = self.request.site.viewpoint_at(middle, self.request.stature);
+        let terrain = self.grounds()?.terrain_from(viewpoint);
         let jobs = jobs(&raster);
         let next = AtomicUsize::new(0);
         let (send, receive) = mpsc::channel();
         std::thread::scope(|scope| {
             for _ in 0..threads.get() {
-                let (send, next, jobs) = (send.clone(), &next, &jobs);
+                let (send, next, jobs, terrain) = (send.clone(), &next, &jobs, &terrain);
                 scope.spawn(move || {
                     while let Some(job) = jobs.get(next.fetch_add(1, Ordering::Relaxed)) {
-                        if progress.is_cancelled() || send.send(self.row(&raster, job)).is_err() {
+                        if progress.is_cancelled()
+                            || send.send(self.row(&raster, job, terrain)).is_err()
+                        {
                             return;
                         }
                     }
@@ -97,31 +104,37 @@ impl Standing<'_> {
         Some(map)
     }
 
-    fn row(&self, raster: &Raster, job: &Job) -> Vec<(usize, Cell)> {
+    fn row(&self, raster: &Raster, job: &Job, terrain: &TerrainView) -> Vec<(usize, Cell)> {
         let columns = (job.first..raster.columns).step_by(job.step);
         columns
             .map(|column| {
-                let cell = self.cell(raster.centre(column, job.row));
+                let cell = self.cell(raster.centre(column, job.row), terrain);
                 (job.row * raster.columns + column, cell)
             })
             .collect()
     }
 
-    /// What a place gives, or why nobody is to stand there.
-    pub fn cell(&self, at: PlanPoint) -> Cell {
+    fn cell(&self, at: PlanPoint, terrain: &TerrainView) -> Cell {
+        match self.left_out(at) {
+            Some(why) => Cell::LeftOut(why),
+            None => {
+                let viewpoint = self.request.site.viewpoint_at(at, self.request.stature);
+                Cell::Stay(self.stay_near(viewpoint, terrain))
+            }
+        }
+    }
+
+    /// Why nobody is to stand at a place, if so.
+    pub fn left_out(&self, at: PlanPoint) -> Option<WhyLeftOut> {
         let site = self.request.site;
-        let why = if !site.outline_holds(at) {
+        if !site.outline_holds(at) {
             Some(WhyLeftOut::Outside)
         } else if site.exclusion_at(at).is_some() {
             Some(WhyLeftOut::Excluded)
-        } else if Grounds::new(site, None).around(at).is_some() {
+        } else if self.grounds()?.around(at).is_some() {
             Some(WhyLeftOut::InObstacle)
         } else {
             None
-        };
-        match why {
-            Some(why) => Cell::LeftOut(why),
-            None => Cell::Stay(self.stay(site.viewpoint_at(at, self.request.stature))),
         }
     }
 }

@@ -20,7 +20,7 @@ use super::night::Half;
 use super::night_sky::NightSky;
 use crate::light::Eye;
 use crate::measure::Moment;
-use crate::place::{Grounds, Site, Skyline, Spot, Stature, Viewpoint};
+use crate::place::{PreparedGrounds, Site, Skyline, Spot, Stature, TerrainView, Viewpoint};
 use crate::sky::Body;
 use rays::NightRays;
 
@@ -89,32 +89,43 @@ impl<'a> Standing<'a> {
 
     /// What an eye at a viewpoint has, near parts of measured skylines left out.
     pub fn stay(&self, viewpoint: Viewpoint) -> Stay {
-        self.over_nights(|grounds| grounds.skyline_from(viewpoint))
+        self.over_nights(|night| night.grounds.skyline_from(viewpoint))
+    }
+
+    /// The same for one of many places, with terrain as it is seen from nearby.
+    fn stay_near(&self, viewpoint: Viewpoint, terrain: &TerrainView) -> Stay {
+        self.over_nights(|night| night.skyline(viewpoint, terrain))
     }
 
     /// What somebody of the stature has at a spot, with the skyline measured there.
     pub fn stay_at_spot(&self, spot: &Spot, stature: Stature) -> Stay {
-        self.over_nights(|grounds| grounds.skyline(spot, stature))
+        self.over_nights(|night| night.grounds.skyline(spot, stature))
     }
 
-    /// What is left of it when the minutes are as many as could be: nothing in the way.
+    /// What the eye would have with nothing in the way.
     pub fn stay_in_the_open(&self) -> Stay {
         self.over_nights(|_| Skyline::open())
     }
 
-    fn over_nights(&self, skyline: impl Fn(&Grounds<'_>) -> Skyline) -> Stay {
+    /// The surroundings that all nights share: where one cannot stand.
+    fn grounds(&self) -> Option<&PreparedGrounds<'a>> {
+        self.nights.first().map(|night| &night.grounds)
+    }
+
+    fn over_nights(&self, skyline: impl Fn(&NightRays<'_>) -> Skyline) -> Stay {
         let mut stay = Stay::default();
         for (index, night) in self.nights.iter().enumerate() {
-            let behind = night.behind(&skyline(&night.grounds));
-            stay.minutes += behind.longest_minutes();
+            let behind = night.behind(&skyline(night));
+            let minutes = behind.longest_minutes();
+            stay.minutes += minutes;
             stay.total_minutes += behind.total_s / 60.0;
             if index == 0 {
                 stay.window = behind
                     .longest_s
                     .map(|(from_s, to_s)| (night.moment(from_s), night.moment(to_s)));
-                stay.least_minutes = stay.minutes;
+                stay.least_minutes = minutes;
             }
-            stay.least_minutes = stay.least_minutes.min(behind.longest_minutes());
+            stay.least_minutes = stay.least_minutes.min(minutes);
         }
         stay
     }

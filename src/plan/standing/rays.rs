@@ -3,7 +3,7 @@
 
 use super::StandingRequest;
 use crate::measure::{Angle, Moment, search};
-use crate::place::{Grounds, Skyline};
+use crate::place::{Grounds, PreparedGrounds, Sector, Skyline, TerrainView, Viewpoint};
 use crate::plan::interval::cut;
 use crate::plan::night::Cause;
 use crate::plan::night_sky::NightSky;
@@ -22,9 +22,10 @@ const ROWS_PER_SAMPLE: usize = 15;
 /// One night's rays.
 #[derive(Debug)]
 pub(super) struct NightRays<'a> {
-    pub grounds: Grounds<'a>,
+    pub grounds: PreparedGrounds<'a>,
     start: Moment,
     stretches: Vec<Rays>,
+    sector: Sector,
 }
 
 /// What is left of a night behind a skyline; seconds after the night's start.
@@ -66,11 +67,19 @@ impl<'a> NightRays<'a> {
                 })
                 .collect()
         });
+        let grounds = Grounds::new(request.site, Some(night.date));
         Self {
-            grounds: Grounds::new(request.site, Some(night.date)),
+            grounds: grounds.prepared(),
             start: night.start,
+            sector: sector_of(&stretches),
             stretches,
         }
+    }
+
+    /// The skyline from a viewpoint as far as the body passes it, with terrain as it is seen from
+    /// nearby.
+    pub fn skyline(&self, viewpoint: Viewpoint, terrain: &TerrainView) -> Skyline {
+        self.grounds.skyline_within(viewpoint, self.sector, terrain)
     }
 
     pub fn moment(&self, at_s: f64) -> Moment {
@@ -97,6 +106,34 @@ impl<'a> NightRays<'a> {
             }
         }
         behind
+    }
+}
+
+/// The azimuths that the rays take, with a degree to spare; the whole circle where they go more
+/// than half round.
+fn sector_of(stretches: &[Rays]) -> Sector {
+    const SPARE_DEG: f64 = 1.0;
+    let whole = Sector {
+        from_deg: 0.0,
+        to_deg: 0.0,
+    };
+    let azimuths = || stretches.iter().flat_map(|rays| rays.rows.iter());
+    let Some((first, _)) = azimuths().next() else {
+        return whole;
+    };
+    let (mut least, mut most) = (0.0_f64, 0.0_f64);
+    for (azimuth, _) in azimuths() {
+        let turned_deg = Angle::from_radians(azimuth - first).signed().degrees();
+        least = least.min(turned_deg);
+        most = most.max(turned_deg);
+    }
+    if most - least > 180.0 - 3.0 * SPARE_DEG {
+        return whole;
+    }
+    let first_deg = first.to_degrees();
+    Sector {
+        from_deg: (first_deg + least - SPARE_DEG).rem_euclid(360.0),
+        to_deg: (first_deg + most + SPARE_DEG).rem_euclid(360.0),
     }
 }
 

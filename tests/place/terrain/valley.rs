@@ -27,11 +27,10 @@ fn the_skyline_of_a_real_valley_is_that_of_dense_sampling() {
         let azimuth = Angle::from_degrees(azimuth_deg);
         let actual = skyline.altitude(azimuth, east_m, north_m, eye_m).degrees();
         let is_moved = east_m != 0.0;
-        // From the mark: a sampling of 2 to 5 m passes crests by as much as 0.005 deg, the plain
-        // formula is 0.001 deg from the exact triangle, both skylines are rounded to 0.0001 deg.
-        // From 50 to 100 m away: 0.3 r/d of the altitude may be missing, and points 0.1 deg
-        // apart are joined straight.
-        let tolerance = if is_moved { 0.25 } else { 0.01 };
+        // From the mark: dense sampling passes crests by up to half a metre, 0.003 deg from 5 km;
+        // the plain formula is 0.001 deg from the exact triangle.
+        // From 50 or 100 m away, and 5 m up: 0.3 r/d of the altitude may be missing.
+        let tolerance = if is_moved { 0.15 } else { 0.004 };
         worst[usize::from(is_moved)] =
             worst[usize::from(is_moved)].max((actual - expected_deg).abs());
         highest = highest.max(expected_deg);
