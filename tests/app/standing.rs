@@ -259,7 +259,8 @@ fn a_child_sees_no_more_than_an_adult_and_is_remembered() {
         "{adult} {wheelchair} {child}"
     );
     assert_eq!(window.state().state().stature(), Stature::Child);
-    drop(window);
+    // What is remembered is written every other second.
+    window.run_steps(12);
     let saved = std::fs::read_to_string(desk.settings()).expect("settings");
     assert!(saved.contains("stature: child"), "{saved}");
 }
