@@ -8,7 +8,7 @@ use dimmet::place::{FarSkyline, Skyline, TerrainRequest};
 const POSTING_M: f64 = 3.0 * ARC_SECOND_AT_51_M;
 
 /// A ridge of 40 m at posting 11 (1.0 km) before one of 500 m at posting 216 (20 km), both from
-/// west to east, and 80 m of ground at the mark... which is at sea level itself.
+/// west to east; the mark and all else are at sea level.
 fn two_ridges() -> FarSkyline {
     let land = world(|north, _| match north {
         11 => 40,
