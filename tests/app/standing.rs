@@ -5,7 +5,7 @@ use dimmet::app::DesktopWindow;
 use dimmet::app::area::Area;
 use dimmet::app::command::Command;
 use dimmet::app::state::State;
-use dimmet::place::Stature;
+use dimmet::place::{Sector, Stature};
 use eframe::egui::accesskit::Role;
 use eframe::egui::{Event, Modifiers, PointerButton, Pos2, Rect, pos2};
 use egui_kittest::Harness;
@@ -226,9 +226,16 @@ fn the_lookout_moves_the_measured_skyline_only_while_it_is_switched_on() {
     click(&mut window, "Move the measured skyline");
     double_click(&mut window, at);
     assert_eq!(count(&window), points + 1);
+    // Not all that was measured is far: elsewhere the rest does not hold, and it is said.
+    let mut site = window.state().state().site().clone();
+    site.skyline_far = vec![Sector {
+        from_deg: 0.0,
+        to_deg: 90.0,
+    }];
+    run(&mut window, Command::EditSite(Box::new(site)));
     run(&mut window, Command::ChooseSpot(1));
     assert!(window.query_by_label("Move the measured skyline").is_none());
-    window.get_by_label_contains("does not hold at this spot");
+    window.get_by_label_contains("Only the far parts of the measured skyline hold at this spot");
 }
 
 #[test]

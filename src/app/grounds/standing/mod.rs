@@ -26,11 +26,15 @@ use job::{Asked, Found, News, Summing};
 use paint::Line;
 use std::cell::Cell;
 use std::sync::Arc;
+use std::time::Duration;
 
 pub use paint::ToScreen;
 
 /// Numbers of nights that can be asked for.
 const NIGHTS: [u32; 4] = [1, 7, 14, 28];
+
+/// How soon news are painted: the plan was painted before they came in.
+const SOON: Duration = Duration::from_millis(5);
 
 /// What it keeps between frames.
 pub struct Standing {
@@ -160,8 +164,7 @@ impl Standing {
             Some(Ok(found)) => {
                 self.map = Some(Map::new(ctx, look, desk.words, found));
                 self.error = None;
-                // The plan was painted before it in this frame.
-                ctx.request_repaint();
+                ctx.request_repaint_after(SOON);
             }
             Some(Err(error)) => {
                 self.map = None;
