@@ -78,6 +78,10 @@ pub enum Command {
     Measure,
     /// Opens bringing files in and handing them out.
     Exchange,
+    /// Stops looking along the terrain.
+    StopTerrain,
+    /// Looks along it anew.
+    LookAlongTerrain,
     /// Shows keys and cautions.
     ShowHelp,
     /// Closes whatever dialog is open.
@@ -208,6 +212,8 @@ impl Command {
             Self::SaveNewSite => "save-new-site",
             Self::Measure => "measure",
             Self::Exchange => "exchange",
+            Self::StopTerrain => "stop-terrain",
+            Self::LookAlongTerrain => "look-along-terrain",
             Self::ShowHelp => "help",
             Self::CloseDialog => "close",
             Self::DismissNotice => "dismiss-notice",

@@ -15,6 +15,8 @@ use super::transport::transport_ui;
 use super::widgets::{bold, choice, command_button, figure};
 use super::window::DesktopWindow;
 use crate::measure::CivilScale;
+use crate::place::Stature;
+use crate::words::decimal;
 use eframe::egui::{
     Align, Button, Label, Layout, Rect, RichText, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder,
     WidgetInfo, pos2, vec2,
@@ -86,6 +88,7 @@ impl DesktopWindow {
                     command_button(ui, &self.words, Command::DismissNotice, commands);
                 });
             }
+            self.terrain.show(ui, &look, &self.words, commands);
             if self.state.area == Area::Grounds {
                 self.grounds_ui(ui, commands);
             } else if is_wide {
@@ -277,12 +280,24 @@ impl DesktopWindow {
         scale == CivilScale::Ut1
     }
 
+    /// Whose height the skyline is for.
+    fn stature(&self) -> String {
+        let stature = self.state.stature();
+        let height_m = self.state.site().people.eye_height_m(stature);
+        let id = Command::ChooseStature(stature).wording();
+        self.words
+            .text_with(id.unwrap_or_default(), &[("height", decimal(height_m, 2))])
+    }
+
     /// The air on the right, and on the left as much of the keys as there is room for.
     fn status_line(&self, ui: &mut Ui, look: &Look) {
         let (font, colour) = (look.font(look.sizes.least), look.colours.lesser);
         ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
             let air = self.words.air(self.state.site_in_air());
             figure(ui, font.clone(), colour, &air);
+            if self.state.stature() != Stature::Adult {
+                figure(ui, font.clone(), colour, &self.stature());
+            }
             if self.is_counted_from_ut1() {
                 figure(ui, font.clone(), colour, &self.words.text("clock-is-ut1"));
             }

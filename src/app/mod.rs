@@ -24,6 +24,7 @@ mod shapes;
 mod sites;
 mod start;
 pub mod state;
+mod terrain;
 mod theme;
 mod transport;
 mod widgets;

@@ -47,6 +47,17 @@ pub fn choice(ui: &mut Ui, look: &Look, is_chosen: bool, text: &str) -> Response
     response
 }
 
+/// A box to tick, outlined so that it is seen on a card while it is empty.
+pub fn check_box(ui: &mut Ui, look: &Look, is_ticked: &mut bool, text: &str) -> Response {
+    ui.scope(|ui| {
+        let inactive = &mut ui.visuals_mut().widgets.inactive;
+        inactive.bg_fill = look.colours.ground;
+        inactive.bg_stroke = Stroke::new(1.0, look.colours.lesser);
+        ui.checkbox(is_ticked, text)
+    })
+    .inner
+}
+
 /// Gives a control a name other than the text that it shows.
 pub fn name_it(response: &Response, role: Role, name: &str) {
     response.widget_info(|| WidgetInfo::labeled(role, true, name));

@@ -12,6 +12,7 @@ use super::settings::Settings;
 use super::sites::Sites;
 use super::start::Start;
 use super::state::{Motion, State};
+use super::terrain::Terrain;
 use super::theme;
 use crate::place::{Site, SiteError};
 use crate::words::Words;
@@ -39,6 +40,7 @@ pub struct DesktopWindow {
     pub(super) drawings: Drawings,
     pub(super) grounds: GroundsArea,
     pub(super) measure: Measure,
+    pub(super) terrain: Terrain,
     /// The half-night's sentence, made when it changes.
     sentence: Option<(SceneKey, String)>,
     applied_theme: Option<Theme>,
@@ -98,7 +100,7 @@ impl DesktopWindow {
             commands,
             is_blocked: are_keys_blocked.clone(),
         });
-        let mut window = Self {
+        Ok(Self {
             state,
             words,
             palette,
@@ -107,6 +109,7 @@ impl DesktopWindow {
             drawings: Drawings::default(),
             grounds: GroundsArea::default(),
             measure: Measure::default(),
+            terrain: Terrain::default(),
             sentence: None,
             applied_theme: None,
             is_red,
@@ -116,9 +119,7 @@ impl DesktopWindow {
             latest: settings.clone(),
             saved: settings,
             saved_at_s: f64::NEG_INFINITY,
-        };
-        window.warn_of_terrain();
-        Ok(window)
+        })
     }
 
     /// What is chosen and shown.
@@ -175,25 +176,11 @@ impl DesktopWindow {
 
     /// Runs a command, as its control or key would.
     pub fn run(&mut self, command: Command) {
-        let site = self.state.site_index();
         if let Some(command) = self.state.run(command) {
             self.run_in_window(command);
         }
         if self.state.take_unsaved() {
             self.save_site();
-        } else if self.state.site_index() != site {
-            self.warn_of_terrain();
-        }
-    }
-
-    /// Says that the site names an elevation tile, which the skyline does not look at.
-    fn warn_of_terrain(&mut self) {
-        let site = self.state.site();
-        if site.ignores_terrain() {
-            let text = self
-                .words
-                .text_with("terrain-ignored", &[("site", site.name.as_str())]);
-            self.notices.push(text);
         }
     }
 
@@ -222,6 +209,8 @@ impl DesktopWindow {
             Command::SaveNewSite => self.save_new_site(),
             Command::Measure => self.dialog = Some(Dialog::Measure),
             Command::Exchange => self.dialog = Some(Dialog::Exchange(Box::default())),
+            Command::StopTerrain => self.terrain.stop(),
+            Command::LookAlongTerrain => self.terrain.look_again(),
             Command::ShowHelp => self.dialog = Some(Dialog::Help),
             Command::CloseDialog => self.dialog = None,
             Command::DismissNotice => {
@@ -234,7 +223,7 @@ impl DesktopWindow {
     /// Puts a picture under the plan of the chosen site, by a relative path where it lies in the
     /// site file's folder.
     fn open_backdrop(&mut self, file: PathBuf) {
-        match backdrop::size_px(&file) {
+        match super::picture::size_px(&file) {
             Ok(size_px) => {
                 let folder = self.state.site_folder();
                 let relative = folder.and_then(|folder| file.strip_prefix(folder).ok());
@@ -415,6 +404,8 @@ impl eframe::App for DesktopWindow {
         while let Ok(command) = self.keys.try_recv() {
             self.run(command);
         }
+        let said = self.terrain.follow(ctx, &mut self.state, &self.words);
+        self.notices.extend(said);
         let seconds = f64::from(ctx.input(|input| input.stable_dt)).min(LONGEST_STEP_S);
         self.state.pass(seconds);
         match self.state.motion() {

@@ -4,12 +4,13 @@
 use super::arguments::StatureName;
 use super::civil_text::{self, CivilText};
 use super::fault::Fault;
-use crate::measure::{TimeScales, check_date};
+use crate::measure::{Progress, TimeScales, check_date};
 use crate::place::{Site, Stature, demo_site, demo_sites, slug};
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use chrono::{DateTime, FixedOffset, NaiveDate};
 use std::path::{Path, PathBuf};
+use std::sync::Arc;
 
 /// What a number may be.
 #[derive(Clone, Copy, Debug)]
@@ -169,6 +170,19 @@ pub(super) fn site(
         "cli-no-site",
         &[("value", quoted(text)), ("known", known.join(", "))],
     )))
+}
+
+/// The same site with what its terrain makes of the skyline, which is worked out first where it
+/// is not kept beside the file.
+pub(super) fn site_with_terrain(
+    words: &Words,
+    text: &str,
+    folder: Option<&Path>,
+) -> Result<Site, Fault> {
+    let (mut site, file) = site(words, text, folder)?;
+    let far = site.find_far(file.as_deref(), &Progress::new(), &mut |_| {})?;
+    site.far = far.map(Arc::new);
+    Ok(site)
 }
 
 fn bad_text(words: &Words, id: &str, place: &str, text: &str) -> Fault {

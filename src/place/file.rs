@@ -98,7 +98,12 @@ pub(super) fn reread(site: &Site) -> Result<String, SiteError> {
         .map_err(|error| SiteError(format!("the site cannot be written: {error}")))?;
     // The position is that of a text that nobody has seen.
     let reread = parse(&text).map_err(|refusal| SiteError(refusal.sentence))?;
-    if reread == *site {
+    // What the terrain makes of it is worked out anew, not written.
+    let written = Site {
+        far: None,
+        ..site.clone()
+    };
+    if reread == written {
         Ok(text + "\n")
     } else {
         Err(SiteError(

@@ -1,8 +1,7 @@
 //! What blocks the view from a spot, on a date: everything that a site says of it, together.
 
 use super::{
-    FarSkyline, MeasuredUse, Obstacle, PlanPoint, PreparedGrounds, Site, Skyline, Spot, Stature,
-    Viewpoint,
+    MeasuredUse, Obstacle, PlanPoint, PreparedGrounds, Site, Skyline, Spot, Stature, Viewpoint,
 };
 use chrono::NaiveDate;
 
@@ -11,7 +10,6 @@ use chrono::NaiveDate;
 pub struct Grounds<'a> {
     site: &'a Site,
     date: Option<NaiveDate>,
-    far: Option<&'a FarSkyline>,
 }
 
 impl<'a> Grounds<'a> {
@@ -19,22 +17,12 @@ impl<'a> Grounds<'a> {
     /// have. A leafless crown blocks where more of it is opaque than the site's
     /// `blocking_density`; its trunk always does.
     pub fn new(site: &'a Site, date: Option<NaiveDate>) -> Self {
-        Self {
-            site,
-            date,
-            far: None,
-        }
-    }
-
-    /// The same with the terrain of the site, if it has any.
-    #[must_use]
-    pub fn with_far(self, far: Option<&'a FarSkyline>) -> Self {
-        Self { far, ..self }
+        Self { site, date }
     }
 
     /// What does not depend on the eye, worked out: for whoever asks from more than one spot.
     pub fn prepared(&self) -> PreparedGrounds<'a> {
-        PreparedGrounds::new(self.site, self.date, self.far)
+        PreparedGrounds::new(self.site, self.date)
     }
 
     /// The skyline that somebody at a spot has: the highest of the measured skyline as far as it

@@ -30,11 +30,7 @@ pub struct TerrainView {
 }
 
 impl<'a> PreparedGrounds<'a> {
-    pub(super) fn new(
-        site: &'a Site,
-        date: Option<NaiveDate>,
-        far: Option<&'a FarSkyline>,
-    ) -> Self {
+    pub(super) fn new(site: &'a Site, date: Option<NaiveDate>) -> Self {
         let mut numbers: HashMap<&str, u32> = HashMap::new();
         let mut names: Vec<Arc<str>> = Vec::new();
         let solids = site
@@ -50,7 +46,7 @@ impl<'a> PreparedGrounds<'a> {
             .collect();
         Self {
             site,
-            far,
+            far: site.far.as_deref(),
             solids,
             names: names.into(),
             measured_far: measured_use::far_pieces(site),

@@ -3,6 +3,23 @@
 use super::plan_point::sides;
 use super::{Obstacle, PlanPoint};
 
+impl Obstacle {
+    /// The ridges of a building's roof in its plan, each by its two ends; none without a roof.
+    pub fn ridges(&self) -> Vec<[PlanPoint; 2]> {
+        match self {
+            Self::Building {
+                corners_m,
+                ridge_m: Some(_),
+                ..
+            } => ridge_crossings(corners_m)
+                .chunks_exact(2)
+                .map(|ends| [ends[0].at, ends[1].at])
+                .collect(),
+            _ => Vec::new(),
+        }
+    }
+}
+
 /// Where the ridge's line crosses a wall.
 pub(super) struct RidgeEnd {
     along_m: f64,
@@ -77,21 +94,4 @@ fn extent(corners: &[PlanPoint], direction: PlanPoint) -> (f64, f64) {
     reach.fold((f64::INFINITY, f64::NEG_INFINITY), |(low, high), at| {
         (low.min(at), high.max(at))
     })
-}
-
-impl Obstacle {
-    /// The ridges of a building's roof in its plan, each by its two ends; none without a roof.
-    pub fn ridges(&self) -> Vec<[PlanPoint; 2]> {
-        match self {
-            Self::Building {
-                corners_m,
-                ridge_m: Some(_),
-                ..
-            } => ridge_crossings(corners_m)
-                .chunks_exact(2)
-                .map(|ends| [ends[0].at, ends[1].at])
-                .collect(),
-            _ => Vec::new(),
-        }
-    }
 }

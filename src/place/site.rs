@@ -4,14 +4,16 @@ use super::{
     Backdrop, Exclusion, Extinction, Haze, Instrument, Obstacle, People, PlanPoint, Sector,
     SiteAir, SiteEyes, SiteSky, SkylinePoint, Slope,
 };
+use super::{FarSkyline, TerrainRequest, far_skyline_cached, terrain_path};
 use super::{limits, measured, zone};
-use crate::measure::Angle;
+use crate::measure::{Angle, Progress};
 use crate::sky::Observer;
 use chrono_tz::Tz;
 use serde::de::Error;
 use serde::{Deserialize, Deserializer, Serialize};
 use std::fmt;
-use std::path::PathBuf;
+use std::path::{Path, PathBuf};
+use std::sync::Arc;
 
 /// A place with coordinates, elevation, time zone, sky quality and haze. Its fields are those of
 /// the site file; name, coordinates and time zone must be given, the rest may be left out there.
@@ -98,6 +100,10 @@ pub struct Site {
     /// A picture of the site under its plan.
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub backdrop: Option<Backdrop>,
+    /// What the terrain makes of the skyline, once it is worked out ([`Site::find_far`]); not in
+    /// the file.
+    #[serde(skip)]
+    pub far: Option<Arc<FarSkyline>>,
     /// How much light the people here need, where that is known to differ.
     #[serde(default, skip_serializing_if = "SiteEyes::is_usual")]
     pub eyes: SiteEyes,
@@ -226,6 +232,7 @@ impl Site {
             terrain: None,
             terrain_k: usual_terrain_k(),
             backdrop: None,
+            far: None,
             eyes: SiteEyes::default(),
             kit: Vec::new(),
         };
@@ -286,9 +293,29 @@ impl Site {
         })
     }
 
-    /// Whether the file names an elevation tile, which is not used yet and should be said.
-    pub fn ignores_terrain(&self) -> bool {
-        self.terrain.is_some()
+    /// Looks along the terrain that the site names, or takes what was kept beside its file from
+    /// the last time; `None` where it names none, or when cancelled. [`Site::far`] is where the
+    /// result belongs.
+    ///
+    /// # Errors
+    /// A tile is missing or cannot be used, or does not hold the site: one sentence naming it.
+    pub fn find_far(
+        &self,
+        site_file: Option<&Path>,
+        progress: &Progress,
+        on_coarse: &mut dyn FnMut(FarSkyline),
+    ) -> Result<Option<FarSkyline>, SiteError> {
+        let Some(terrain) = &self.terrain else {
+            return Ok(None);
+        };
+        let mark = Spot::mark();
+        let request = TerrainRequest {
+            eye_height_m: mark.eye_height_m,
+            refraction_k: self.terrain_k,
+            ..TerrainRequest::at(self.latitude_deg, self.longitude_deg)
+        };
+        let path = terrain_path(terrain, site_file);
+        far_skyline_cached(&path, site_file, request, progress, on_coarse)
     }
 }
 

@@ -4,7 +4,7 @@ use super::night::{Cause, Edge, Half, Window};
 use super::{Absence, NightSky};
 use crate::light::Eye;
 use crate::measure::{Angle, Moment};
-use crate::place::{FarSkyline, Grounds, Instrument, Site, Skyline, Spot, Stature};
+use crate::place::{Grounds, Instrument, Site, Skyline, Spot, Stature};
 use crate::sky::Body;
 
 /// What spots are compared for.
@@ -12,8 +12,6 @@ use crate::sky::Body;
 pub struct CompareRequest<'a> {
     /// The site.
     pub site: &'a Site,
-    /// Its terrain, if it has any.
-    pub far: Option<&'a FarSkyline>,
     /// The night over it, gone through for the body and the eye.
     pub night: &'a NightSky,
     /// Which body.
@@ -72,7 +70,7 @@ pub fn compare<'a>(request: &CompareRequest<'a>, spots: &'a [Spot]) -> Vec<SpotN
 impl<'a> CompareRequest<'a> {
     fn at(&self, spot: &'a Spot) -> SpotNight<'a> {
         let night = self.night.night();
-        let grounds = Grounds::new(self.site, Some(night.date)).with_far(self.far);
+        let grounds = Grounds::new(self.site, Some(night.date));
         let skyline = grounds.skyline(spot, self.stature);
         let body = self.night.body_night(self.body, &skyline);
         let windows: Vec<SpotWindow> = body

@@ -18,7 +18,7 @@ use crate::sky::{Body, Ephemeris, Observer, Span};
 /// stands all through it, when it rises and sets, and when it is bright enough for each eye.
 ///
 /// Made once for a site's air, a date, eyes and bodies, in some 15 ms; [`NightSky::behind`] then
-/// plans the night of any spot in a fraction of that. It never changes, takes some 150 kB, and is
+/// plans the night of any spot in one or two. It never changes, takes some 90 kB, and is
 /// to be shared (in an [`std::sync::Arc`]) between threads. The site's air is seen from its mark:
 /// its spots are too near each other for the sky to differ.
 #[derive(Clone, Debug)]

@@ -1,8 +1,7 @@
 //! The answer for a crowd: not everybody stands in the middle, and not everybody is tall.
 
 use super::standing::{Standing, Stay};
-use crate::measure::Angle;
-use crate::place::{PlanPoint, Spot, Stature};
+use crate::place::{MeasuredUse, PlanPoint, Spot, Stature};
 
 /// Somebody of a crowd: where, how tall, and what is seen from there.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -29,16 +28,26 @@ pub struct Patch {
     pub places: usize,
 }
 
-/// What a crowd on a spot's patch has: people of every stature on its places.
+/// What a crowd on a spot's patch has: people of every stature on its places ([`Site::patch`]),
+/// all on the spot's own ground (a terrace, a slope) and behind the skyline measured there.
 ///
-/// `None`: nobody is to stand on any of them.
+/// `None`: there is no place on it.
+///
+/// [`Site::patch`]: crate::place::Site::patch
 pub fn patch(standing: &Standing<'_>, spot: &Spot) -> Option<Patch> {
-    let spots: Vec<Spot> = places(spot)
+    let site = standing.request().site;
+    // What was measured from a patch's middle holds for all of it.
+    let skyline = match site.measured_use(spot) {
+        MeasuredUse::Mark => &site.skyline,
+        _ => &spot.skyline,
+    };
+    let spots: Vec<Spot> = site
+        .patch(spot)
         .into_iter()
-        .filter(|at| standing.left_out(*at).is_none())
         .map(|at| Spot {
             east_m: at.east_m,
             north_m: at.north_m,
+            skyline: skyline.clone(),
             ..spot.clone()
         })
         .collect();
@@ -64,23 +73,4 @@ pub fn patch(standing: &Standing<'_>, spot: &Spot) -> Option<Patch> {
         median: *crowd.get((crowd.len() - 1) / 2)?,
         places: spots.len(),
     })
-}
-
-/// The places of a spot's patch: its middle, and two rings.
-fn places(spot: &Spot) -> Vec<PlanPoint> {
-    let middle = spot.plan_point();
-    let mut places = vec![middle];
-    let Some(radius_m) = spot.radius_m else {
-        return places;
-    };
-    for (part, count) in [(0.5, 6), (1.0, 12)] {
-        places.extend((0..count).map(|k| {
-            let bearing = Angle::from_degrees(360.0 / f64::from(count) * f64::from(k));
-            PlanPoint::new(
-                middle.east_m + part * radius_m * bearing.sin(),
-                middle.north_m + part * radius_m * bearing.cos(),
-            )
-        }));
-    }
-    places
 }

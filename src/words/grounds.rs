@@ -104,7 +104,7 @@ impl Words {
     /// From when to when a body is seen from a spot, what ends that, and what stands there.
     pub fn spot_night(&self, clock: CivilClock, night: &Night, spot: &SpotNight<'_>) -> String {
         let mut sentences = match spot.windows.as_slice() {
-            [] => vec![self.from_here_none(spot.absence)],
+            [] => vec![self.never_from_here(spot.absence)],
             [first, again @ ..] => {
                 let mut sentences = vec![self.spot_window(clock, night, first)];
                 sentences.extend(again.iter().map(|seen| {
@@ -145,7 +145,7 @@ impl Words {
         )
     }
 
-    fn from_here_none(&self, absence: Option<Absence>) -> String {
+    fn never_from_here(&self, absence: Option<Absence>) -> String {
         let why = match absence {
             Some(Absence::NotForEyes) => "faint",
             Some(Absence::SunStaysUp) => "sun-up",

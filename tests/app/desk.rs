@@ -59,7 +59,8 @@ impl Desk {
     ) -> Harness<'static, DesktopWindow> {
         let mut harness = Harness::builder()
             .with_size([width, height])
-            .with_max_steps(12)
+            // The standing map comes from its own thread and is waited for.
+            .with_max_steps(60)
             .build_eframe(|cc| DesktopWindow::new(cc, start).expect("the shipped palette"));
         harness.run();
         harness

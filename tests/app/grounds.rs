@@ -21,12 +21,17 @@ const BARE: &str = r#"Site(name: "Bare Field", latitude_deg: 51.0, longitude_deg
     outline_m: [(-40.0, -40.0), (40.0, -40.0), (40.0, 40.0), (-40.0, 40.0)])"#;
 
 fn open(desk: &Desk) -> Window {
+    open_high(desk, 800.0)
+}
+
+/// So high that all of the right column is in sight.
+fn open_high(desk: &Desk, height: f32) -> Window {
     std::fs::create_dir_all(desk.sites()).unwrap();
     let file = desk.sites().join("bare-field.site.ron");
     std::fs::write(&file, BARE).unwrap();
     let mut start = desk.start(crate::desk::NOW);
     start.site = Some((Site::read(&file).unwrap(), Some(file)));
-    let mut window = desk.open_sized(1280.0, 800.0, start);
+    let mut window = desk.open_sized(1280.0, height, start);
     window.state_mut().run(Command::ShowArea(Area::Grounds));
     window.run();
     window
@@ -413,7 +418,7 @@ fn the_wheel_zooms_at_the_pointer_and_the_ground_is_dragged() {
 #[test]
 fn a_picture_is_placed_by_two_known_points() {
     let desk = Desk::new();
-    let mut window = open(&desk);
+    let mut window = open_high(&desk, 1800.0);
     let file = desk.sites().join("aerial.png");
     image_of(200, 100).save(&file).unwrap();
     window.state_mut().run(Command::OpenBackdrop(file));

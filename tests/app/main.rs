@@ -9,5 +9,6 @@ mod grounds;
 mod measure;
 mod pictures;
 mod sites;
+mod standing;
 mod steps;
 mod themes;

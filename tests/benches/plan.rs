@@ -92,7 +92,6 @@ fn standing_map(bencher: divan::Bencher, obstacles: usize) {
     let nights = [&sky];
     let standing = Standing::new(StandingRequest {
         site: &site,
-        far: None,
         nights: &nights,
         body: Body::Venus,
         eye: Eye::Visitor,

@@ -50,7 +50,7 @@ fn the_least_file_is_read_with_the_usual_values() {
         ("mark", 0.0, 0.0)
     );
     assert!(site.skyline(spot).breaks().is_empty(), "an open horizon");
-    assert!(!site.ignores_terrain());
+    assert!(site.terrain.is_none());
 }
 
 #[test]

@@ -2,7 +2,7 @@
 
 use chrono::NaiveDate;
 use dimmet::light::Eye;
-use dimmet::measure::TimeScales;
+use dimmet::measure::{Angle, TimeScales};
 use dimmet::place::{Obstacle, PlanPoint, Site, Skyline, demo_site, demo_sites};
 use dimmet::plan::{Night, NightRequest, NightSky, Sight};
 use dimmet::sky::{Body, Ephemeris};
@@ -304,30 +304,44 @@ fn a_body_comes_through_the_opening_beneath_a_crown() {
         .place(Body::Venus, venus_rise.plus_seconds(7200.0))
         .expect("asked for");
     let far_m = 40.0;
-    let at = |rise: f64| 1.6 + far_m * rise.tan();
-    let tree = |gap_m: Option<f64>| Obstacle::Tree {
-        label: "lime".into(),
-        east_m: far_m * azimuth.sin(),
-        north_m: far_m * azimuth.cos(),
-        base_m: None,
-        height_m: at(altitude.radians() + 0.06),
-        width_m: 60.0,
-        gap_m,
-        trunk_m: Some(0.4),
-        leafless: None,
+    let at = |rise: f64, far_m: f64| 1.6 + far_m * rise.tan();
+    let ahead = |far_m: f64, aside_m: f64| {
+        let (sin, cos) = azimuth.sin_cos();
+        PlanPoint::new(far_m * sin + aside_m * cos, far_m * cos - aside_m * sin)
     };
-    let mut clears = |gap_m: Option<f64>| -> usize {
-        site.obstacles = vec![tree(gap_m)];
-        let night = sky.behind(&site.skyline(&site.spots[0]));
-        let venus = night.body(Body::Venus).expect("asked for");
-        venus
-            .skyline_events
-            .iter()
-            .filter(|event| event.clears)
-            .count()
-    };
-    // With a crown to the ground it comes out once, over the top; with a gap it has been in view
-    // beneath the crown before.
-    assert_eq!(clears(None), 1);
-    assert!(clears(Some(at(altitude.radians() - 0.12))) >= 2);
+    // A wall before the tree leaves a slit of 0.15 degrees beneath a crown as thin: Venus passes
+    // both within two minutes. At several altitudes, so that some fall between two samples.
+    let wall_m = 35.0;
+    for lower_deg in [5.0, 5.3, 5.6, 5.9, 6.2, 6.5] {
+        let slit = (altitude - Angle::from_degrees(lower_deg)).radians();
+        let thin = 0.0026;
+        let wall = Obstacle::Wall {
+            label: "wall".into(),
+            line_m: vec![ahead(wall_m, -40.0), ahead(wall_m, 40.0)],
+            base_m: None,
+            height_m: at(slit - thin, wall_m),
+        };
+        let tree = |gap_m: Option<f64>| Obstacle::Tree {
+            label: "lime".into(),
+            east_m: ahead(far_m, 0.0).east_m,
+            north_m: ahead(far_m, 0.0).north_m,
+            base_m: None,
+            height_m: at(slit + thin, far_m),
+            width_m: 60.0,
+            gap_m,
+            trunk_m: Some(0.4),
+            leafless: None,
+        };
+        let mut clears = |gap_m: Option<f64>| -> usize {
+            site.obstacles = vec![wall.clone(), tree(gap_m)];
+            let night = sky.behind(&site.skyline(&site.spots[0]));
+            let venus = night.body(Body::Venus).expect("asked for");
+            let events = venus.skyline_events.iter();
+            events.filter(|event| event.clears).count()
+        };
+        // With a crown to the ground it comes out once, over the top; with a gap it has been in
+        // view beneath the crown before.
+        assert_eq!(clears(None), 1, "{lower_deg}");
+        assert_eq!(clears(Some(at(slit, far_m))), 2, "{lower_deg}");
+    }
 }

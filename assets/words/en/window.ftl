@@ -101,7 +101,13 @@ folder-above = .. (the folder above)
 no-site-files = No site files stand in this folder.
 
 # Sites
-terrain-ignored = { $site } names an elevation tile. The skyline does not look at terrain yet: measure the hills into the skyline.
+terrain-looking = Looking along the terrain
+terrain-stopped = Looking along the terrain was stopped: the skyline holds what was found so far.
+terrain-disagrees = The elevation tiles put the ground of { $site } at { $ground } m, but the site file says { $stated } m: { $off } m apart. Check the coordinates.
+stop-terrain = Stop
+stop-terrain-hint = Stop looking along the terrain
+look-along-terrain = Look along it
+look-along-terrain-hint = Look along the terrain from the beginning
 
 # Settings
 settings-set-aside = The settings could not be used ({ $reason }); they were kept as { $file } and the usual ones are in use.

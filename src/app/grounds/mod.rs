@@ -114,7 +114,7 @@ impl GroundsArea {
 
     /// One below the other, scrolling.
     fn narrow(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
-        let plan_height = (0.62 * ui.available_height()).max(300.0);
+        let plan_height = (0.85 * ui.available_height()).max(400.0);
         ScrollArea::vertical()
             .id_salt("grounds")
             .auto_shrink(false)

@@ -2,7 +2,7 @@
 //! is putting the old one back.
 
 use super::{Motion, State};
-use crate::place::Site;
+use crate::place::{FarSkyline, Site};
 use std::sync::Arc;
 
 /// Changes kept for undoing.
@@ -107,7 +107,23 @@ impl State {
         self.put_site(site.clone());
     }
 
+    /// Puts what the terrain makes of the skyline into the site; no change of it to be undone.
+    pub fn set_far(&mut self, far: Option<Arc<FarSkyline>>) {
+        let site = Site {
+            far,
+            ..self.site().clone()
+        };
+        self.sites.replace(self.site, site);
+        self.choose_haze(self.haze);
+        self.show_behind();
+    }
+
     fn put_site(&mut self, site: Site) {
+        // What an older step knew of the terrain may be less than is known now.
+        let site = Site {
+            far: self.site().far.clone(),
+            ..site
+        };
         let has_same_sky = same_sky(self.site(), &site);
         self.spot = self.spot.min(site.spots.len().saturating_sub(1));
         self.sites.replace(self.site, site);

@@ -25,7 +25,7 @@ pub(super) fn run(
     around: &mut Surroundings<'_>,
 ) -> Result<(), Fault> {
     let words = around.words;
-    let (site, _) = resolve::site(words, &arguments.site, around.sites_folder)?;
+    let site = resolve::site_with_terrain(words, &arguments.site, around.sites_folder)?;
     let spot = site.resolve_spot(arguments.spot.as_deref())?;
     let date = resolve::date(words, "--date", &arguments.date)?;
     let body = match &arguments.body {
@@ -57,11 +57,6 @@ pub(super) fn run(
         PageFormat::Text => text::page(words, &found).into_bytes(),
         PageFormat::Json => record::json(words, &found)?,
     };
-    if site.ignores_terrain() {
-        let site = site.name.as_str();
-        let sentence = words.text_with("terrain-ignored", &[("site", site)]);
-        writeln!(around.messages, "{sentence}")?;
-    }
     around.output.write_all(&output)?;
     Ok(around.output.flush()?)
 }

@@ -46,7 +46,7 @@ pub(super) fn run(
     around: &mut Surroundings<'_>,
 ) -> Result<(), Fault> {
     let words = around.words;
-    let (site, _) = resolve::site(words, &arguments.site, around.sites_folder)?;
+    let site = resolve::site_with_terrain(words, &arguments.site, around.sites_folder)?;
     let spot = site.resolve_spot(arguments.spot.as_deref())?;
     let date = resolve::date(words, "--date", &arguments.date)?;
     let stature = resolve::stature(arguments.stature);
@@ -56,11 +56,6 @@ pub(super) fn run(
         Format::Json => record::json(&planned)?,
         Format::Csv => rows::csv(&planned)?,
     };
-    if site.ignores_terrain() {
-        let site = site.name.as_str();
-        let sentence = words.text_with("terrain-ignored", &[("site", site)]);
-        writeln!(around.messages, "{sentence}")?;
-    }
     around.output.write_all(&output)?;
     Ok(around.output.flush()?)
 }

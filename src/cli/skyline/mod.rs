@@ -43,7 +43,7 @@ pub(super) fn run(
     around: &mut Surroundings<'_>,
 ) -> Result<(), Fault> {
     let words = around.words;
-    let (site, _) = resolve::site(words, &arguments.site, around.sites_folder)?;
+    let site = resolve::site_with_terrain(words, &arguments.site, around.sites_folder)?;
     let spot = site.resolve_spot(arguments.spot.as_deref())?;
     let date = match &arguments.date {
         Some(text) => Some(resolve::date(words, "--date", text)?),
@@ -60,11 +60,6 @@ pub(super) fn run(
         Format::Json => record::json(&seen)?,
         Format::Csv => rows::csv(&seen)?,
     };
-    if site.ignores_terrain() {
-        let site = site.name.as_str();
-        let sentence = words.text_with("terrain-ignored", &[("site", site)]);
-        writeln!(around.messages, "{sentence}")?;
-    }
     around.output.write_all(&output)?;
     Ok(around.output.flush()?)
 }

@@ -84,7 +84,7 @@ fn inverse(transform: &Transform, keys: &GeoKeys, size: (usize, usize)) -> Optio
     let [x, x_column, x_row, y, y_column, y_row] = *transform;
     let determinant = x_column * y_row - x_row * y_column;
     let scale = (x_column.hypot(y_column)) * (x_row.hypot(y_row));
-    if !(determinant.abs() > 1e-9 * scale) {
+    if !determinant.is_finite() || determinant.abs() <= 1e-9 * scale {
         return None;
     }
     // The posting of an area is its middle.

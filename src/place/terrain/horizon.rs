@@ -22,6 +22,9 @@ const STEP_SHARE: f64 = 7e-4;
 /// Terrain nearer than this is left to the obstacles, m; more where postings are far apart.
 const NEAREST_M: f64 = 200.0;
 
+/// From here on bands of distance are wider, m.
+const FAR_M: f64 = 3000.0;
+
 /// What a search looks for, and how the ground falls away.
 pub(super) struct Sweep {
     /// Elevation of the ground at the mark, m.
@@ -96,7 +99,7 @@ impl Sweep {
     }
 
     /// Limits of the bands of distance, m: each reaches the square root of two times as far as
-    /// the one before.
+    /// the one before; far away, where steps on the grounds matter less, twice as far.
     fn edges_m(&self, relief: &Relief) -> Vec<f64> {
         let mut ray = Ray::new(relief);
         ray.aim(Angle::ZERO, 1.0);
@@ -108,7 +111,8 @@ impl Sweep {
         });
         let mut edges_m = vec![nearest_m.min(0.5 * self.radius_m)];
         while let Some(last) = edges_m.last().filter(|last| **last < self.radius_m) {
-            edges_m.push((last * SQRT_2).min(self.radius_m));
+            let growth = if *last < FAR_M { SQRT_2 } else { 2.0 };
+            edges_m.push((last * growth).min(self.radius_m));
         }
         edges_m
     }

@@ -92,9 +92,11 @@ impl StandingMap {
                 for k in (0..4).filter(|k| ends(*k)) {
                     // A saddle's middle decides whether its two heights meet there.
                     let mut others = (1..4).map(|n| (k + n) % 4).filter(|m| begins(*m));
-                    let next = others.next();
-                    let last = others.last().or(next);
-                    let to = if is_middle_more { next } else { last };
+                    let to = if is_middle_more {
+                        others.next()
+                    } else {
+                        others.next_back()
+                    };
                     pieces.extend(to.map(|to| (sides[k], sides[to])));
                 }
             }

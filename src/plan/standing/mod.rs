@@ -20,9 +20,7 @@ use super::night::Half;
 use super::night_sky::NightSky;
 use crate::light::Eye;
 use crate::measure::Moment;
-use crate::place::{
-    FarSkyline, PreparedGrounds, Site, Skyline, Spot, Stature, TerrainView, Viewpoint,
-};
+use crate::place::{PreparedGrounds, Site, Skyline, Spot, Stature, TerrainView, Viewpoint};
 use crate::sky::Body;
 use rays::NightRays;
 
@@ -31,8 +29,6 @@ use rays::NightRays;
 pub struct StandingRequest<'a> {
     /// The site.
     pub site: &'a Site,
-    /// Its terrain, if it has any.
-    pub far: Option<&'a FarSkyline>,
     /// One night or several over it: each must have been gone through for the body and the eye.
     pub nights: &'a [&'a NightSky],
     /// Which body.

@@ -16,7 +16,7 @@ use crate::plan::sight::Luck;
 /// body climbs in 4 ms at the least steep that matters.
 const STEP_S: f64 = 20.0;
 
-/// Every so manieth row is a sample of its own; the skyline's breaks add theirs.
+/// Every row of so many is a sample of its own; the skyline’s breaks add theirs.
 const ROWS_PER_SAMPLE: usize = 15;
 
 /// One night's rays.
@@ -67,7 +67,7 @@ impl<'a> NightRays<'a> {
                 })
                 .collect()
         });
-        let grounds = Grounds::new(request.site, Some(night.date)).with_far(request.far);
+        let grounds = Grounds::new(request.site, Some(night.date));
         Self {
             grounds: grounds.prepared(),
             start: night.start,

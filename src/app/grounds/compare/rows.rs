@@ -30,7 +30,6 @@ pub struct Row {
 pub fn rows(desk: &Desk<'_>, scene: &Scene<'_>, sky: &NightSky) -> Vec<Row> {
     let request = CompareRequest {
         site: scene.site,
-        far: None,
         night: sky,
         body: scene.body,
         eye: scene.eye,

@@ -4,95 +4,12 @@
 use super::camera::Camera;
 use super::geometry::{minus, plus};
 use crate::app::palette::{Look, Theme};
+use crate::app::picture::{MOST_SIDE, Picture, PictureFlaw, read};
 use crate::place::{Backdrop, PicturePoint, PlanPoint};
 use crate::words::Words;
-use eframe::egui::{
-    Color32, ColorImage, Context, Mesh, Painter, Shape, TextureHandle, TextureOptions, pos2,
-};
-use image::ImageReader;
-use std::path::{Path, PathBuf};
+use eframe::egui::{Color32, Context, Mesh, Painter, Shape, TextureHandle, TextureOptions, pos2};
+use std::path::PathBuf;
 use std::sync::mpsc::{Receiver, TryRecvError, channel};
-
-/// Larger pictures are refused, pixels.
-const MOST_PIXELS: u64 = 100_000_000;
-/// A side of the kept picture, pixels.
-const MOST_SIDE: u32 = 4096;
-
-/// Why a picture cannot lie under the plan.
-#[derive(Clone, Debug, PartialEq, Eq)]
-pub enum PictureFlaw {
-    /// It cannot be read; the system's reason.
-    Unreadable(String),
-    /// It is no PNG or JPEG, or a damaged one.
-    NoPicture,
-    /// It has so many megapixels.
-    TooLarge(u64),
-}
-
-impl PictureFlaw {
-    /// In one sentence.
-    pub fn sentence(&self, words: &Words, path: &Path) -> String {
-        let file = path.to_string_lossy();
-        match self {
-            Self::Unreadable(reason) => words
-                .text_with::<&str>("picture-unreadable", &[("file", &file), ("reason", reason)]),
-            Self::NoPicture => words.text_with::<&str>("picture-none", &[("file", &file)]),
-            Self::TooLarge(megapixels) => words.text_with::<&str>(
-                "picture-too-large",
-                &[("file", &file), ("size", &megapixels.to_string())],
-            ),
-        }
-    }
-}
-
-/// A picture's width and height in pixels, from its header alone.
-///
-/// # Errors
-/// It cannot be read, is no PNG or JPEG, or has more than 100 megapixels.
-pub fn size_px(path: &Path) -> Result<[u32; 2], PictureFlaw> {
-    let reader = ImageReader::open(path)
-        .and_then(ImageReader::with_guessed_format)
-        .map_err(|error| PictureFlaw::Unreadable(error.to_string()))?;
-    let (width, height) = reader
-        .into_dimensions()
-        .map_err(|_| PictureFlaw::NoPicture)?;
-    let pixels = u64::from(width) * u64::from(height);
-    if pixels > MOST_PIXELS {
-        return Err(PictureFlaw::TooLarge(pixels.div_ceil(1_000_000)));
-    }
-    if pixels == 0 {
-        return Err(PictureFlaw::NoPicture);
-    }
-    Ok([width, height])
-}
-
-/// A picture as it is kept.
-struct Picture {
-    /// Its size as the file has it, pixels.
-    size_px: [u32; 2],
-    image: ColorImage,
-}
-
-fn read(path: &Path, most_side: u32) -> Result<Picture, PictureFlaw> {
-    let size_px = size_px(path)?;
-    let decoded = ImageReader::open(path)
-        .and_then(ImageReader::with_guessed_format)
-        .map_err(|error| PictureFlaw::Unreadable(error.to_string()))?
-        .decode()
-        .map_err(|_| PictureFlaw::NoPicture)?;
-    let is_large = size_px.into_iter().any(|side| side > most_side);
-    let decoded = if is_large {
-        decoded.thumbnail(most_side, most_side)
-    } else {
-        decoded
-    };
-    let rgba = decoded.into_rgba8();
-    let size = [rgba.width() as usize, rgba.height() as usize];
-    Ok(Picture {
-        size_px,
-        image: ColorImage::from_rgba_unmultiplied(size, rgba.as_raw()),
-    })
-}
 
 /// A backdrop for a picture that nobody has placed yet: a hundred metres wide, its middle at the
 /// mark.
@@ -242,13 +159,11 @@ impl Underlay {
             .as_ref()
             .is_some_and(|(theme, _)| *theme == look.theme);
         if !is_current {
-            let mut image = picture.image.clone();
-            for pixel in &mut image.pixels {
-                *pixel = look.texel(*pixel);
-            }
-            let texture = painter
-                .ctx()
-                .load_texture("backdrop", image, TextureOptions::LINEAR);
+            let texture = painter.ctx().load_texture(
+                "backdrop",
+                picture.image_for(look),
+                TextureOptions::LINEAR,
+            );
             self.texture = Some((look.theme, texture));
         }
         let Some((_, texture)) = &self.texture else {

@@ -3,7 +3,7 @@
 use super::{BAR_GAP, Plan, Tool};
 use crate::app::command::{Command, Commands};
 use crate::app::grounds::Desk;
-use crate::app::widgets::{choice, command_button, name_it};
+use crate::app::widgets::{check_box, choice, command_button, name_it};
 use eframe::egui::{Role, Ui};
 
 impl Plan {
@@ -52,8 +52,8 @@ impl Plan {
                 self.view = None;
             }
             let hint = desk.words.text("plan-snaps-hint");
-            ui.checkbox(&mut self.snaps, desk.words.text("plan-snaps"))
-                .on_hover_text(hint);
+            let name = desk.words.text("plan-snaps");
+            check_box(ui, desk.look, &mut self.snaps, &name).on_hover_text(hint);
         });
     }
 }

@@ -188,13 +188,13 @@ impl Plan {
         } else if enter && matches!(takes, Takes::Line | Takes::Corners) {
             self.finish(desk, selection, false, commands);
         }
-        if pressed(Key::Delete) || pressed(Key::Backspace) {
-            if self.points.pop().is_none()
-                && let Some(thing) = *selection
-            {
-                self.read_refusal = None;
-                remove(thing, selection, desk, commands);
-            }
+        let deletes = pressed(Key::Delete) || pressed(Key::Backspace);
+        if deletes
+            && self.points.pop().is_none()
+            && let Some(thing) = *selection
+        {
+            self.read_refusal = None;
+            remove(thing, selection, desk, commands);
         }
     }
 

@@ -20,7 +20,7 @@ fn doubled_area(a: Pos2, b: Pos2, c: Pos2) -> f32 {
     (b - a).x * (c - a).y - (b - a).y * (c - a).x
 }
 
-/// Cuts corners off one after another, each with no other corner within.
+/// Cuts corners off one after another, each with no other corner within or on the cut.
 fn triangles(corners: &[Pos2]) -> Vec<[u32; 3]> {
     let mut left: Vec<usize> = (0..corners.len()).collect();
     let area: f32 = (1..corners.len().saturating_sub(1))
@@ -42,9 +42,9 @@ fn triangles(corners: &[Pos2]) -> Vec<[u32; 3]> {
                     .filter(|other| ![a, b, c].contains(other))
                     .all(|other| {
                         let p = corners[*other];
-                        doubled_area(pa, pb, p) <= 0.0
-                            || doubled_area(pb, pc, p) <= 0.0
-                            || doubled_area(pc, pa, p) <= 0.0
+                        doubled_area(pa, pb, p) < 0.0
+                            || doubled_area(pb, pc, p) < 0.0
+                            || doubled_area(pc, pa, p) < 0.0
                     })
         });
         // Corners in one line, or sides that cross: nothing to fill there.

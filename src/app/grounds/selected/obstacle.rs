@@ -3,6 +3,7 @@
 use super::{Field, Form, name, row};
 use crate::app::command::Commands;
 use crate::app::grounds::Desk;
+use crate::app::widgets::check_box;
 use crate::place::{Leafless, Obstacle, Site, YearDay};
 use eframe::egui::{Id, Ui};
 
@@ -134,7 +135,7 @@ impl Fields<'_> {
     fn leafless(&mut self, ui: &mut Ui, leafless: Option<Leafless>) {
         let (desk, index) = (self.desk, self.index);
         let mut is_bare = leafless.is_some();
-        ui.checkbox(&mut is_bare, desk.words.text("leafless"));
+        check_box(ui, desk.look, &mut is_bare, &desk.words.text("leafless"));
         if is_bare != leafless.is_some() {
             // From mid-November to mid-April, as oaks and limes of the temperate north stand.
             let usual = Leafless {

@@ -143,6 +143,8 @@ fn backdrop(
             commands.push(Command::EditSite(Box::new(site)));
         }
         let slider = Slider::new(&mut plan.underlay.opacity, 0.0..=1.0).show_value(false);
+        // Else the slider's rail has the card's own colour.
+        ui.visuals_mut().widgets.inactive.bg_fill = look.colours.lesser;
         ui.add(slider.text(words.text("backdrop-opacity")));
     });
     let note = words.text("backdrop-note");
@@ -165,12 +167,18 @@ fn known_point(
     };
     let name = desk.words.text(tool.wording());
     let is_taken = plan.tool() == tool;
-    if choice(ui, desk.look, is_taken, &name).clicked() {
+    let hint = desk.words.text(&format!("{}-hint", tool.wording()));
+    let button = choice(ui, desk.look, is_taken, &name).on_hover_text(hint);
+    if button.clicked() {
         plan.take(if is_taken { Tool::Select } else { tool });
     }
     let mut shown = backdrop.clone();
     let at = point(&mut shown, tool).at;
     let of = tool.wording();
+    let labels = match tool {
+        Tool::SecondPicturePoint => ["field-second-east", "field-second-north"],
+        _ => ["field-first-east", "field-first-north"],
+    };
     let put = move |site: &mut Site, change: &dyn Fn(&mut PicturePoint)| {
         if let Some(backdrop) = &mut site.backdrop {
             change(point(backdrop, tool));
@@ -178,12 +186,12 @@ fn known_point(
     };
     row::<2>(ui, |column, ui| {
         if column == 0 {
-            let field = Field::new("field-east", of);
+            let field = Field::new(labels[0], of);
             form.number(ui, desk, commands, field, at.east_m, |site, east_m| {
                 put(site, &|point| point.at.east_m = east_m);
             });
         } else {
-            let field = Field::new("field-north", of);
+            let field = Field::new(labels[1], of);
             form.number(ui, desk, commands, field, at.north_m, |site, north_m| {
                 put(site, &|point| point.at.north_m = north_m);
             });

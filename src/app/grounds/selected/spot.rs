@@ -3,7 +3,7 @@
 use super::{Field, Form, name, row};
 use crate::app::command::{Command, Commands};
 use crate::app::grounds::Desk;
-use crate::app::widgets::text;
+use crate::app::widgets::{check_box, text};
 use crate::place::{Site, Spot};
 use eframe::egui::Ui;
 
@@ -94,7 +94,7 @@ fn kit(ui: &mut Ui, desk: &Desk<'_>, spot: &Spot, commands: &mut Commands) {
             ),
             None => instrument.label().to_owned(),
         };
-        ui.checkbox(&mut is_here, label);
+        check_box(ui, look, &mut is_here, &label);
         if is_here != was_here {
             let mut site = site.clone();
             site.kit[index].set_spot(is_here.then(|| spot.name.clone()));

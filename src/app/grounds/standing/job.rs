@@ -96,7 +96,6 @@ impl Asked {
         let nights: Vec<&NightSky> = std::iter::once(&**shown).chain(&further).collect();
         let standing = Standing::new(StandingRequest {
             site: &self.site,
-            far: None,
             nights: &nights,
             body: self.body,
             eye: self.eye,

@@ -12,18 +12,18 @@ use crate::plan::{BodyNight, Edge, NightSky, Patch, PatchStay, Window};
 use crate::words::{decimal, spoken_cause};
 
 /// Somebody at a point, in the shown half-night.
-pub struct Here {
+struct Here {
     /// What blocks the view.
-    pub skyline: Skyline,
+    skyline: Skyline,
     /// What the body does.
-    pub body: BodyNight,
+    body: BodyNight,
     /// When it is seen.
-    pub windows: Vec<Window>,
+    windows: Vec<Window>,
 }
 
 impl Here {
     /// At any point of the grounds.
-    pub fn at(asked: &Asked, sky: &NightSky, at: PlanPoint) -> Option<Self> {
+    fn at(asked: &Asked, sky: &NightSky, at: PlanPoint) -> Option<Self> {
         let grounds = Grounds::new(&asked.site, Some(asked.date));
         let skyline = grounds.skyline_from(asked.site.viewpoint_at(at, asked.stature));
         let body = sky.body_night(asked.body, &skyline)?;
@@ -35,20 +35,20 @@ impl Here {
         })
     }
 
-    /// Minutes in which the body is seen.
-    pub fn minutes(&self) -> f64 {
-        minutes(&self.windows)
+    /// The longest time in which the body is seen: what the map counts.
+    fn longest(&self) -> Option<&Window> {
+        let by_minutes = |a: &&Window, b: &&Window| minutes(a).total_cmp(&minutes(b));
+        self.windows.iter().max_by(by_minutes)
     }
 }
 
-/// Minutes of windows together.
-pub fn minutes(windows: &[Window]) -> f64 {
-    let length_s = |window: &Window| window.end.moment.seconds_since(window.start.moment);
-    windows.iter().map(length_s).sum::<f64>() / 60.0
+/// Minutes of a window.
+fn minutes(window: &Window) -> f64 {
+    window.end.moment.seconds_since(window.start.moment) / 60.0
 }
 
 /// Where a point lies from the mark.
-pub fn whereabouts(desk: &Desk<'_>, at: PlanPoint) -> String {
+fn whereabouts(desk: &Desk<'_>, at: PlanPoint) -> String {
     let part = |id: [&str; 2], metres: f64| {
         let id = if metres < 0.0 { id[1] } else { id[0] };
         let metres = decimal(metres.abs(), 0);
@@ -63,17 +63,17 @@ pub fn whereabouts(desk: &Desk<'_>, at: PlanPoint) -> String {
     )
 }
 
-/// From when until when, how many minutes, and what ends it.
-pub fn times(desk: &Desk<'_>, scene: &Scene<'_>, here: &Here) -> String {
+/// From when until when the longest time is, how many minutes, and what ends it.
+fn times(desk: &Desk<'_>, scene: &Scene<'_>, here: &Here) -> String {
     let words = desk.words;
-    let (Some(first), Some(last)) = (here.windows.first(), here.windows.last()) else {
+    let Some(longest) = here.longest() else {
         return words.text("standing-not-seen");
     };
     let time = |edge: Edge| words.time(scene.clock(), edge.moment);
-    let obstacle = obstacle_at(&here.skyline, &here.body, last.end);
-    let cause = spoken_cause(scene.night, last.end);
+    let obstacle = obstacle_at(&here.skyline, &here.body, longest.end);
+    let cause = spoken_cause(scene.night, longest.end);
     let says = Says::new(scene);
-    let end = says.edge(cause, true, obstacle.as_deref(), &time(last.end));
+    let end = says.edge(cause, true, obstacle.as_deref(), &time(longest.end));
     let id = if end.is_some() {
         "standing-times"
     } else {
@@ -82,9 +82,9 @@ pub fn times(desk: &Desk<'_>, scene: &Scene<'_>, here: &Here) -> String {
     words.text_with(
         id,
         &[
-            ("start", time(first.start)),
-            ("end", time(last.end)),
-            ("minutes", decimal(here.minutes(), 0)),
+            ("start", time(longest.start)),
+            ("end", time(longest.end)),
+            ("minutes", decimal(minutes(longest), 0)),
             ("why", end.unwrap_or_default()),
         ],
     )
@@ -203,7 +203,7 @@ fn crowd(desk: &Desk<'_>, patch: &Patch) -> String {
 }
 
 /// The label of what a window's end has to do with, where it is an obstacle.
-pub fn obstacle_at(skyline: &Skyline, body: &BodyNight, edge: Edge) -> Option<String> {
+fn obstacle_at(skyline: &Skyline, body: &BodyNight, edge: Edge) -> Option<String> {
     let event = body
         .skyline_events
         .iter()

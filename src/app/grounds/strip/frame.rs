@@ -73,15 +73,10 @@ pub struct Frame {
 }
 
 impl Frame {
-    /// A frame that shows what reaches `highest_deg`.
-    pub fn new(rect: Rect, view: View, highest_deg: f64) -> Self {
+    /// The upper edge, degrees, for what reaches `highest_deg`.
+    pub fn top_for(highest_deg: f64) -> f64 {
         const ABOVE_DEG: f64 = 5.0;
-        let top_deg = (highest_deg + ABOVE_DEG).clamp(25.0, 92.0);
-        Self {
-            rect,
-            view,
-            top_deg,
-        }
+        (highest_deg + ABOVE_DEG).clamp(25.0, 92.0)
     }
 
     /// Altitude at the lower edge, degrees.
@@ -141,7 +136,12 @@ mod tests {
 
     fn frame(view: View) -> Frame {
         let rect = Rect::from_min_max(pos2(20.0, 10.0), pos2(740.0, 210.0));
-        Frame::new(rect, view, 30.0)
+        let top_deg = Frame::top_for(30.0);
+        Frame {
+            rect,
+            view,
+            top_deg,
+        }
     }
 
     #[test]

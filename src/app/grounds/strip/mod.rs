@@ -35,6 +35,9 @@ const RULER: f32 = 24.0;
 pub struct Strip {
     view: View,
     handles: Handles,
+    /// Altitude at the upper edge, degrees: it stays while a point is dragged, so that the scale
+    /// does not run away from the pointer.
+    top_deg: f64,
     bands: Kept<u64, Vec<Band>>,
     ways: Kept<WaysKey, Ways>,
 }
@@ -117,7 +120,14 @@ impl Strip {
             .text_with("strip-name", &[("spot", scene.spot.name.as_str())]);
         response.widget_info(|| WidgetInfo::labeled(Role::Canvas, true, &name));
         let sky = whole.with_max_y(whole.bottom() - RULER);
-        let frame = Frame::new(sky, self.view, highest_deg(scene, ways));
+        if !self.handles.is_dragging() {
+            self.top_deg = Frame::top_for(highest_deg(scene, ways));
+        }
+        let frame = Frame {
+            rect: sky,
+            view: self.view,
+            top_deg: self.top_deg,
+        };
         if !ui.is_rect_visible(whole) {
             return (response, frame);
         }

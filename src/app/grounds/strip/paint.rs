@@ -187,14 +187,19 @@ fn names(
         texts.push((text, true));
     }
     for feature in scene.skyline.features() {
-        let colour = look.colours.skyline_name;
-        let text = painter.layout_no_wrap(feature.label.to_string(), font(), colour);
         let width = (feature.width.degrees() * frame.points_per_deg()) as f32;
         let top = frame.pos(feature.azimuth, feature.top);
         let foot = frame.rect.bottom();
-        let size = text.size();
+        let label = feature.label.to_string();
+        let inside = painter.layout_no_wrap(label.clone(), font(), look.colours.skyline_name);
+        let size = inside.size();
         // Inside the shape where there is room for it, else over its top.
         let is_inside = size.x + 4.0 < width && foot - top.y > size.y + 6.0;
+        let text = if is_inside {
+            inside
+        } else {
+            painter.layout_no_wrap(label, font(), look.colours.sky_text)
+        };
         let places = if is_inside {
             vec![
                 pos2(top.x - 0.5 * size.x, foot - size.y - 3.0),

@@ -203,6 +203,8 @@ mod tests {
             assert!((last.at_s - at_s(window.end)).abs() < 1e-6);
         }
         let (from, to) = ways.extent_deg(Body::Venus).unwrap();
-        assert!(from > 90.0 && to < 200.0, "a morning star: {from} to {to}");
+        // It rises south of east, and by noon, the end of the half, is past the south.
+        assert!((90.0..120.0).contains(&from), "{from}");
+        assert!((180.0..270.0).contains(&to), "{to}");
     }
 }

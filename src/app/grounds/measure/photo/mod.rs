@@ -7,7 +7,8 @@ mod paint;
 use super::into_skyline::{NewPoints, put};
 use super::{Compass, Desk, Outcome, fields};
 use crate::app::command::Commands;
-use crate::app::picture::LoadedPicture;
+use crate::app::palette::Theme;
+use crate::app::picture::{MOST_SIDE, Picture, read};
 use crate::app::widgets::{choice, error_line, line, text};
 use crate::measure::Angle;
 use crate::place::survey::SurveyError;
@@ -15,7 +16,7 @@ use crate::place::survey::photo::{
     Level, PhotoFit, PhotoMark, PictureKind, PictureSize, Pixel, Projection, fit,
 };
 use crate::words::decimal;
-use eframe::egui::Ui;
+use eframe::egui::{TextureHandle, Ui};
 use std::path::PathBuf;
 
 /// What a click on the picture does.
@@ -69,7 +70,9 @@ struct Mark {
 pub struct Photo {
     path: String,
     error: Option<String>,
-    picture: Option<LoadedPicture>,
+    picture: Option<Picture>,
+    /// It as the theme shows it.
+    texture: Option<(Theme, TextureHandle)>,
     kind: PictureKind,
     marks: Vec<Mark>,
     level: Vec<Pixel>,
@@ -85,6 +88,7 @@ impl Default for Photo {
             path: String::new(),
             error: None,
             picture: None,
+            texture: None,
             kind: PictureKind::Single,
             marks: Vec::new(),
             level: Vec::new(),
@@ -109,11 +113,8 @@ impl Photo {
         commands: &mut Commands,
     ) -> Option<Outcome> {
         self.file_row(ui, desk);
-        let size = self.picture.as_ref().map(|picture| picture.size)?;
-        let size = PictureSize {
-            width: size.0,
-            height: size.1,
-        };
+        let [width, height] = self.picture.as_ref().map(|picture| picture.size_px)?;
+        let size = PictureSize { width, height };
         let words = desk.words;
         ui.horizontal_wrapped(|ui| {
             for (kind, name) in KINDS {
@@ -160,9 +161,9 @@ impl Photo {
                 .labelled_by(label.id);
             if ui.button(desk.words.text("photo-load")).clicked() {
                 let path = PathBuf::from(self.path.trim());
-                match LoadedPicture::load(ui.ctx(), &path) {
+                match read(&path, MOST_SIDE) {
                     Ok(picture) => self.take(picture),
-                    Err(error) => self.error = Some(error),
+                    Err(flaw) => self.error = Some(flaw.sentence(desk.words, &path)),
                 }
             }
         });
@@ -170,7 +171,7 @@ impl Photo {
     }
 
     /// Begins anew with a picture: what was marked on another one means nothing here.
-    fn take(&mut self, picture: LoadedPicture) {
+    fn take(&mut self, picture: Picture) {
         *self = Self {
             path: std::mem::take(&mut self.path),
             picture: Some(picture),

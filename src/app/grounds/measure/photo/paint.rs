@@ -7,8 +7,8 @@ use crate::measure::Angle;
 use crate::place::survey::photo::{Direction, PhotoFit, Pixel};
 use crate::words::{Words, decimal};
 use eframe::egui::{
-    Align2, Color32, Painter, Pos2, Rect, Response, Role, Sense, Shape, Stroke, Ui, Vec2,
-    WidgetInfo, pos2, vec2,
+    Align2, Color32, Painter, Pos2, Rect, Response, Role, Sense, Shape, Stroke, TextureOptions, Ui,
+    Vec2, WidgetInfo, pos2, vec2,
 };
 
 /// Nearer than this to a point, points, it is that point which is dragged.
@@ -69,13 +69,25 @@ impl Photo {
     /// Shows the picture and lets it be marked.
     pub(super) fn picture_ui(&mut self, ui: &mut Ui, desk: &Desk<'_>, fitted: Option<&PhotoFit>) {
         let Some(picture) = &self.picture else { return };
-        let size = vec2(picture.size.0 as f32, picture.size.1 as f32);
+        let size = vec2(picture.size_px[0] as f32, picture.size_px[1] as f32);
         let height = (ui.ctx().content_rect().height() - ROOM_FOR_FORM).clamp(200.0, 720.0);
         let area = vec2(ui.available_width(), height);
         let (area, response) = ui.allocate_exact_size(area, Sense::click_and_drag());
         let name = desk.words.text("photo-canvas");
         response.widget_info(|| WidgetInfo::labeled(Role::Canvas, true, &name));
-        let texture = picture.texture.id();
+        let theme = desk.look.theme;
+        let texture = match &self.texture {
+            Some((shown, texture)) if *shown == theme => texture.id(),
+            _ => {
+                let image = picture.image_for(desk.look);
+                let texture = ui
+                    .ctx()
+                    .load_texture("photo", image, TextureOptions::LINEAR);
+                let id = texture.id();
+                self.texture = Some((theme, texture));
+                id
+            }
+        };
         self.turn_view(ui, &response, area, size);
         let frame = Frame::new(&self.view, area, size);
         self.touch(&response, frame, size, fitted);
