@@ -365,19 +365,19 @@ fn what_cannot_stand_on_the_grounds_is_refused_where_it_is_written() {
             with(
                 "obstacles: [Pole(label: \"post\", east_m: 9.0, north_m: 0.0, height_m: 0.0, width_m: 0.1)],",
             ),
-            "line 6, column 76: height_m is 0, but must lie between 0.01 and 1000 metres",
+            "line 6, column 74: height_m is 0, but must lie between 0.01 and 1000 metres",
         ),
         (
             with(
                 "obstacles: [Pole(label: \"post\", east_m: 9.0, north_m: 0.0, height_m: -2.0, width_m: 0.1)],",
             ),
-            "line 6, column 77: height_m is -2, but must lie between 0.01 and 1000 metres",
+            "line 6, column 74: height_m is -2, but must lie between 0.01 and 1000 metres",
         ),
         (
             with(
                 "kit: [Binocular(label: \"8x30\", magnification: 8.0, aperture_mm: 30.0, field_deg: 7.0, spot: \"roof\")],",
             ),
-            "line 6, column 96: the instrument \"8x30\" stands at the spot \"roof\", but there is \
+            "line 6, column 97: the instrument \"8x30\" stands at the spot \"roof\", but there is \
              none of that name: write one of \"mark\", or leave it out",
         ),
         (
