@@ -65,6 +65,8 @@ fn the_demo_site_in_words() {
     assert_eq!(
         text,
         [
+            "pond: excluded",
+            "car park: excluded",
             "oak: crown 6",
             "hall: 4 corners 1 ridge",
             "hedge: wall 3",
@@ -74,7 +76,7 @@ fn the_demo_site_in_words() {
             "limes: crown 6",
             "pavilion: 4 corners 1 ridge",
             "beech: crown 8.5",
-            "lamp post: crown 0.07",
+            "lamp post: pole",
             "mark: spot false",
             "pond lawn: spot true",
             "bandstand: spot false",

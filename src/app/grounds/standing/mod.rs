@@ -14,11 +14,12 @@ use crate::app::palette::{Look, Theme};
 use crate::app::scene::Scene;
 use crate::app::widgets::{bold, card, choice, name_it, text};
 use crate::app::worker::Worker;
+use crate::light::Eye;
 use crate::place::{PlanPoint, Spot};
 use crate::plan::Half;
 use crate::plan::standing::Contour;
+use crate::sky::Body;
 use crate::words::{Words, decimal};
-use crate::{light::Eye, sky::Body};
 use eframe::egui::{
     Context, Painter, ProgressBar, Role, Sense, TextureHandle, TextureOptions, Ui, WidgetInfo, vec2,
 };
