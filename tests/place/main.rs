@@ -1,4 +1,5 @@
 //! Sites: files, skylines, obstacles, zones.
+#![allow(clippy::unwrap_used)]
 
 #[path = "../common/mod.rs"]
 mod common;
