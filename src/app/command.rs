@@ -139,7 +139,7 @@ pub type Commands = Vec<Command>;
 
 /// The keys that work while no text is being written. Held as one table, so that the help
 /// cannot say anything else than what happens.
-pub fn keys() -> [(KeyboardShortcut, Command); 16] {
+pub fn keys() -> [(KeyboardShortcut, Command); 17] {
     let plain = |key| KeyboardShortcut::new(Modifiers::NONE, key);
     let control = |key| KeyboardShortcut::new(Modifiers::COMMAND, key);
     let shift = |key| KeyboardShortcut::new(Modifiers::SHIFT, key);
@@ -159,6 +159,7 @@ pub fn keys() -> [(KeyboardShortcut, Command); 16] {
         (plain(Key::G), Command::ShowArea(Area::Grounds)),
         (control(Key::Z), Command::Undo),
         (control(Key::Y), Command::Redo),
+        (plain(Key::M), Command::Measure),
         (plain(Key::F1), Command::ShowHelp),
     ]
 }

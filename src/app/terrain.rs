@@ -6,7 +6,7 @@ use super::state::State;
 use super::widgets::{command_button, figure};
 use super::worker::Worker;
 use crate::place::{FarSkyline, Site};
-use crate::words::{Words, decimal};
+use crate::words::Words;
 use eframe::egui::{Context, ProgressBar, Ui};
 use std::path::PathBuf;
 use std::sync::Arc;
@@ -71,7 +71,7 @@ impl Terrain {
             Some(Ok(far)) => {
                 // Of a first result in coarse steps nothing is said yet.
                 if self.worker.share().is_none() {
-                    said.extend(disagreement(&far, state.site(), words));
+                    said.extend(words.terrain_remarks(state.site(), &far));
                 }
                 state.set_far(Some(far));
             }
@@ -133,18 +133,4 @@ impl Terrain {
             });
         }
     }
-}
-
-/// That the tiles put the mark's ground elsewhere than the site file does.
-fn disagreement(far: &FarSkyline, site: &Site, words: &Words) -> Option<String> {
-    let off_m = far.disagreement_m(site.elevation_m)?;
-    Some(words.text_with::<&str>(
-        "terrain-disagrees",
-        &[
-            ("site", &site.name),
-            ("ground", &decimal(far.ground_m(), 0)),
-            ("stated", &decimal(site.elevation_m, 0)),
-            ("off", &decimal(off_m.abs(), 0)),
-        ],
-    ))
 }

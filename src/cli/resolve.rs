@@ -1,6 +1,7 @@
 //! From what was typed to what it means. Every refusal names the place (an option, or a table's
 //! line and column), the text that stands there and what to write in its stead.
 
+use super::Surroundings;
 use super::arguments::StatureName;
 use super::civil_text::{self, CivilText};
 use super::fault::Fault;
@@ -9,6 +10,7 @@ use crate::place::{Site, Stature, demo_site, demo_sites, slug};
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use chrono::{DateTime, FixedOffset, NaiveDate};
+use std::io::Write;
 use std::path::{Path, PathBuf};
 use std::sync::Arc;
 
@@ -173,15 +175,15 @@ pub(super) fn site(
 }
 
 /// The same site with what its terrain makes of the skyline, which is worked out first where it
-/// is not kept beside the file.
-pub(super) fn site_with_terrain(
-    words: &Words,
-    text: &str,
-    folder: Option<&Path>,
-) -> Result<Site, Fault> {
-    let (mut site, file) = site(words, text, folder)?;
-    let far = site.find_far(file.as_deref(), &Progress::new(), &mut |_| {})?;
-    site.far = far.map(Arc::new);
+/// is not kept beside the file. What is worth saying of it goes to the messages.
+pub(super) fn site_with_terrain(text: &str, around: &mut Surroundings<'_>) -> Result<Site, Fault> {
+    let (mut site, file) = site(around.words, text, around.sites_folder)?;
+    if let Some(far) = site.find_far(file.as_deref(), &Progress::new(), &mut |_| {})? {
+        for remark in around.words.terrain_remarks(&site, &far) {
+            writeln!(around.messages, "{remark}")?;
+        }
+        site.far = Some(Arc::new(far));
+    }
     Ok(site)
 }
 

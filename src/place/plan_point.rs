@@ -115,17 +115,20 @@ pub(super) fn footprint_flaw(corners_m: &[PlanPoint]) -> Option<String> {
             corners_m.len()
         ));
     }
-    let doubled_area: f64 = sides(corners_m).map(|(a, b)| a.cross(b)).sum();
-    if corners_m.len() < 3 || doubled_area.abs() < 0.02 {
+    if corners_m.len() < 3 {
         return Some("its corners_m need at least three corners that enclose an area".into());
     }
+    // Before the area: a bow-tie encloses two that cancel.
     let walls: Vec<_> = sides(corners_m).collect();
     let crosses = |k: usize| {
         walls[k + 1..]
             .iter()
             .any(|wall| is_crossing(walls[k], *wall))
     };
-    (0..walls.len())
-        .any(crosses)
-        .then(|| "its sides cross each other: list the corners in order".into())
+    if (0..walls.len()).any(crosses) {
+        return Some("its sides cross each other: list the corners in order".into());
+    }
+    let doubled_area: f64 = sides(corners_m).map(|(a, b)| a.cross(b)).sum();
+    (doubled_area.abs() < 0.02)
+        .then(|| "its corners_m need at least three corners that enclose an area".into())
 }

@@ -7,6 +7,7 @@ mod daylight;
 mod grounds;
 mod night;
 mod number;
+mod terrain;
 mod time;
 
 pub use fluent_bundle::FluentValue;

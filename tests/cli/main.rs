@@ -12,3 +12,4 @@ mod program;
 mod refusals;
 mod skyline;
 mod table;
+mod terrain;

@@ -141,9 +141,20 @@ impl GroundsArea {
             command_button(ui, desk.words, Command::Exchange, commands);
         });
         self.strip.show(ui, desk, commands);
-        self.selected
-            .show(ui, desk, &mut self.selection, &mut self.plan, commands);
+        // What is selected is being worked on; the site's own measures are wanted seldom.
+        let is_site = self.selection.is_none();
+        if !is_site {
+            self.selected_ui(ui, desk, commands);
+        }
         self.standing.show(ui, desk, commands);
         self.compare.show(ui, desk, commands);
+        if is_site {
+            self.selected_ui(ui, desk, commands);
+        }
+    }
+
+    fn selected_ui(&mut self, ui: &mut Ui, desk: &Desk<'_>, commands: &mut Commands) {
+        self.selected
+            .show(ui, desk, &mut self.selection, &mut self.plan, commands);
     }
 }

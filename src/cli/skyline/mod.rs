@@ -43,7 +43,7 @@ pub(super) fn run(
     around: &mut Surroundings<'_>,
 ) -> Result<(), Fault> {
     let words = around.words;
-    let site = resolve::site_with_terrain(words, &arguments.site, around.sites_folder)?;
+    let site = resolve::site_with_terrain(&arguments.site, around)?;
     let spot = site.resolve_spot(arguments.spot.as_deref())?;
     let date = match &arguments.date {
         Some(text) => Some(resolve::date(words, "--date", text)?),
