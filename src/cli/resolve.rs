@@ -10,7 +10,6 @@ use crate::place::{Site, Stature, demo_site, demo_sites, slug};
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use chrono::{DateTime, FixedOffset, NaiveDate};
-use std::io::Write;
 use std::path::{Path, PathBuf};
 use std::sync::Arc;
 
