@@ -18,6 +18,7 @@ pub mod palette;
 mod pickers;
 mod picture;
 mod planned;
+mod saving;
 pub mod scene;
 mod settings;
 mod shapes;

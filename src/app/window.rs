@@ -14,7 +14,7 @@ use super::start::Start;
 use super::state::{Motion, State};
 use super::terrain::Terrain;
 use super::theme;
-use crate::place::{Site, SiteError};
+use crate::place::Site;
 use crate::words::Words;
 use eframe::egui::{self, Context};
 use std::path::PathBuf;
@@ -243,54 +243,6 @@ impl DesktopWindow {
         }
     }
 
-    /// Writes the changed site to its file; a demo site's changes go to a copy in the sites
-    /// folder.
-    fn save_site(&mut self) {
-        let known = self.state.sites().list().get(self.state.site_index());
-        let file = known.and_then(|known| known.file.clone());
-        let is_copy = file.is_none();
-        let Some(file) = file.or_else(|| self.file_for_copy()) else {
-            return;
-        };
-        let saved = make_folder(&file).and_then(|()| self.state.site().save(&file));
-        match saved {
-            Ok(()) if is_copy => {
-                let text = self.words.text_with::<&str>(
-                    "demo-site-copied",
-                    &[
-                        ("site", self.state.site().name.as_str()),
-                        ("file", &file.to_string_lossy()),
-                    ],
-                );
-                self.state.give_file(file);
-                self.notices.push(text);
-            }
-            Ok(()) => {}
-            Err(error) => {
-                self.state.still_unsaved();
-                let reason = error.to_string();
-                let text = self
-                    .words
-                    .text_with::<&str>("site-not-saved", &[("reason", &reason)]);
-                if self.notices.last() != Some(&text) {
-                    self.notices.push(text);
-                }
-            }
-        }
-    }
-
-    /// A file in the sites folder that is not there yet.
-    fn file_for_copy(&self) -> Option<PathBuf> {
-        let folder = self.state.sites().folder()?;
-        let name = &self.state.site().name;
-        (1..1000)
-            .map(|number| match number {
-                1 => folder.join(super::sites::file_name(name)),
-                _ => folder.join(super::sites::file_name(&format!("{name} {number}"))),
-            })
-            .find(|file| !file.exists())
-    }
-
     fn save_new_site(&mut self) {
         let Some(Dialog::NewSite(form)) = &mut self.dialog else {
             return;
@@ -365,14 +317,6 @@ impl DesktopWindow {
     }
 }
 
-fn make_folder(file: &std::path::Path) -> Result<(), SiteError> {
-    let Some(folder) = file.parent() else {
-        return Ok(());
-    };
-    std::fs::create_dir_all(folder)
-        .map_err(|error| SiteError(format!("cannot make {}: {error}", folder.display())))
-}
-
 /// The site and spot asked for, or else those remembered, or else the first.
 fn choose_site(sites: &mut Sites, start: &Start, settings: &Settings) -> (usize, usize) {
     let site = match &start.site {
@@ -437,6 +381,10 @@ impl eframe::App for DesktopWindow {
     }
 
     fn on_exit(&mut self, _gl: Option<&eframe::glow::Context>) {
+        // A change that could not be written before gets a last try.
+        if self.state.take_unsaved() {
+            self.save_site();
+        }
         self.remember();
     }
 

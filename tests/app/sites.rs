@@ -195,3 +195,30 @@ fn broken_settings_are_set_aside_with_a_notice() {
     click(&mut harness, "Got it");
     assert!(harness.state().notices().is_empty());
 }
+
+#[test]
+fn a_hand_written_file_is_kept_when_the_window_first_writes_the_site() {
+    let desk = Desk::new();
+    let folder = tempfile::tempdir().expect("a folder");
+    let file = folder.path().join("hill.site.ron");
+    let text = "// The gate is locked at ten.\n(name: \"Hill\", latitude_deg: 50.0, \
+                longitude_deg: 8.0, time_zone: \"Europe/Berlin\")";
+    std::fs::write(&file, text).expect("a file");
+    let mut start = desk.start(NOW);
+    start.site = Some((Site::read(&file).expect("a site"), Some(file.clone())));
+    let mut harness = desk.open_sized(1280.0, 800.0, start);
+    let kept = folder.path().join("hill.site.ron.before");
+    for (name, notices) in [("Hill Top", 1), ("Hill Foot", 1)] {
+        let mut site = harness.state().state().site().clone();
+        site.spots[0].name = name.to_owned();
+        harness
+            .state_mut()
+            .run(dimmet::app::command::Command::EditSite(Box::new(site)));
+        harness.run();
+        // Kept once: what the window wrote itself needs no keeping.
+        assert_eq!(harness.state().notices().len(), notices, "{name}");
+        assert_eq!(std::fs::read_to_string(&kept).expect("kept"), text);
+        let written = Site::read(&file).expect("written");
+        assert_eq!(written.spots[0].name, name);
+    }
+}

@@ -6,6 +6,8 @@ undo-hint = Take the last change back
 redo = Redo
 redo-hint = Make the change again that was taken back
 demo-site-copied = The changes to { $site } are kept in { $file }; the demo site itself stays as it was.
+hand-written-kept = The site file had remarks or an order of its own; it is kept as { $file }.
+site-has-no-file = The changes are not saved: there is no folder for site files on this machine. Open the site from a file to keep them.
 site-not-saved = The last change is not in the file yet: { $reason }
 
 # The plan
