@@ -51,6 +51,37 @@ impl Site {
     }
 }
 
+impl Site {
+    /// The parts that are marked far, as points of a measured skyline, in ascending azimuth: what
+    /// to begin with where a spot gets a skyline of its own, which then counts in their place.
+    /// None where nothing is marked far.
+    pub fn far_points(&self) -> Vec<SkylinePoint> {
+        /// The lower side of a jump stands so far beside it.
+        const BESIDE: f64 = 1e-4;
+        let pieces = far_pieces(self);
+        if pieces.iter().all(|piece| piece.shape == LEVEL) {
+            return Vec::new();
+        }
+        let ends = pieces.iter().skip(1).map(|next| next.from).chain([TAU]);
+        let mut points: Vec<SkylinePoint> = Vec::with_capacity(2 * pieces.len());
+        for (piece, to) in pieces.iter().zip(ends) {
+            for at in [piece.from, to - BESIDE] {
+                let point = SkylinePoint {
+                    azimuth_deg: at.to_degrees(),
+                    altitude_deg: piece.shape.altitude(at).to_degrees(),
+                };
+                if points
+                    .last()
+                    .is_none_or(|last| last.azimuth_deg < point.azimuth_deg)
+                {
+                    points.push(point);
+                }
+            }
+        }
+        points
+    }
+}
+
 fn is_mark(spot: &Spot) -> bool {
     spot.plan_point().distance_m(PlanPoint::new(0.0, 0.0)) <= MARK_REACH_M
 }

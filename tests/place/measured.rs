@@ -1,6 +1,9 @@
 //! Measured skylines from tables.
 
-use dimmet::place::{read_skyline_table, skyline_from_table};
+use dimmet::measure::Angle;
+use dimmet::place::{
+    PlanPoint, Sector, Site, SkylinePoint, Spot, read_skyline_table, skyline_from_table,
+};
 use proptest::prelude::*;
 use std::fs;
 
@@ -96,5 +99,32 @@ proptest! {
             let ascends = points.array_windows().all(|[a, b]| a.azimuth_deg < b.azimuth_deg);
             prop_assert!(ascends && !points.is_empty());
         }
+    }
+}
+
+#[test]
+fn a_spots_own_skyline_can_begin_with_what_is_far() {
+    let mut site = Site::new("Hill", 50.0, 8.0, chrono_tz::Tz::UTC).expect("a valid site");
+    assert!(site.far_points().is_empty(), "nothing measured");
+    let point = |azimuth_deg, altitude_deg| SkylinePoint {
+        azimuth_deg,
+        altitude_deg,
+    };
+    site.skyline = vec![point(30.0, 4.0), point(200.0, 9.0), point(300.0, 2.0)];
+    assert!(site.far_points().is_empty(), "nothing marked far");
+    site.skyline_far = vec![Sector {
+        from_deg: 250.0,
+        to_deg: 40.0,
+    }];
+    site.spots.push(Spot::at("lawn", PlanPoint::new(20.0, 5.0)));
+    let far = site.skyline(&site.spots[1]);
+    let mut own = site.clone();
+    own.spots[1].skyline = site.far_points();
+    own.check().expect("points that a file can hold");
+    let own = own.skyline(&own.spots[1]);
+    for tenth in 0..3600 {
+        let azimuth = Angle::from_degrees(0.1 * f64::from(tenth) + 0.05);
+        let (far, own) = (far.altitude(azimuth), own.altitude(azimuth));
+        assert!((far - own).degrees().abs() < 1e-6, "{}", azimuth.degrees());
     }
 }

@@ -3,7 +3,7 @@
 use super::{Desk, Outcome, done};
 use crate::app::command::Commands;
 use crate::place::survey::compass::{Sweep, merged};
-use crate::place::{Sector, Site, SkylinePoint};
+use crate::place::{MeasuredUse, Sector, Site, SkylinePoint};
 
 /// New points for the chosen spot's measured skyline.
 pub struct NewPoints {
@@ -21,7 +21,16 @@ pub fn put(desk: &Desk<'_>, new: NewPoints, commands: &mut Commands) -> Outcome 
     let spot = desk.state.spot_index();
     let count = new.points.len().to_string();
     let sector = sector(new.sweep);
+    // A spot's own skyline counts in place of what is far: it begins with that.
+    let is_first = matches!(
+        site.measured_use(desk.state.spot()),
+        MeasuredUse::FarPartsOnly { .. }
+    );
+    let before = is_first.then(|| site.far_points());
     let (points, far) = measured_of(&mut site, spot);
+    if let Some(before) = before {
+        *points = before;
+    }
     *points = merged(points, &new.points, new.sweep);
     if new.is_far {
         far.extend(sector);
