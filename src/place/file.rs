@@ -96,6 +96,13 @@ pub(super) fn reread(site: &Site) -> Result<String, SiteError> {
     let text = options()
         .to_string_pretty(site, layout)
         .map_err(|error| SiteError(format!("the site cannot be written: {error}")))?;
+    if text.len() as u64 >= LARGEST_FILE_BYTES {
+        return Err(SiteError(format!(
+            "the site's file would be larger than {} MB and could not be read again: thin out its \
+             measured skylines, or the corners of its obstacles",
+            LARGEST_FILE_BYTES / 1024 / 1024
+        )));
+    }
     // The position is that of a text that nobody has seen.
     let reread = parse(&text).map_err(|refusal| SiteError(refusal.sentence))?;
     // What the terrain makes of it is worked out anew, not written.
