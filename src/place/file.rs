@@ -135,7 +135,13 @@ fn parse(text: &str) -> Result<Site, Refusal> {
         sentence: error.code.to_string().replace("``", "`"),
     })?;
     if site.spots.is_empty() {
-        site.spots.push(Spot::mark());
+        site.spots.push(Spot {
+            eye_height_m: site.people.adult_m,
+            ..Spot::mark()
+        });
+    }
+    for spot in &mut site.spots {
+        spot.stand(&site.people);
     }
     match check::flaw(&site) {
         None => Ok(site),

@@ -5,7 +5,7 @@ use super::tangent::TangentPlane;
 use crate::measure::Angle;
 use crate::place::file::read_text;
 use crate::place::plan_point::footprint_flaw;
-use crate::place::{Exclusion, Leafless, Obstacle, PlanPoint, Site, SiteError, Spot};
+use crate::place::{Exclusion, Leafless, Obstacle, People, PlanPoint, Site, SiteError, Spot};
 use geojson::{Feature, GeoJson, GeometryValue, JsonObject, JsonValue, Position};
 use serde::de::DeserializeOwned;
 use std::collections::HashSet;
@@ -148,6 +148,7 @@ pub fn from_geojson(text: &str, site: &Site) -> Result<Imported, SiteError> {
     }
     let mut import = Import {
         plane: TangentPlane::at(site),
+        people: site.people,
         names: site.spots.iter().map(|spot| spot.name.clone()).collect(),
         imported: Imported::default(),
     };
@@ -181,6 +182,7 @@ fn check_system(crs: Option<&JsonValue>) -> Result<(), SiteError> {
 
 struct Import {
     plane: TangentPlane,
+    people: People,
     /// Names of spots that are taken.
     names: HashSet<String>,
     imported: Imported,
@@ -299,7 +301,11 @@ impl Import {
             }
         }
         match kind {
-            "spot" => self.imported.spots.push(made(JsonValue::Object(fields))?),
+            "spot" => {
+                let mut spot: Spot = made(JsonValue::Object(fields))?;
+                spot.stand(&self.people);
+                self.imported.spots.push(spot);
+            }
             "excluded" => {
                 let exclusion: Exclusion = made(JsonValue::Object(fields))?;
                 if let Some(flaw) = footprint_flaw(&exclusion.corners_m) {
