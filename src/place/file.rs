@@ -96,6 +96,13 @@ pub(super) fn reread(site: &Site) -> Result<String, SiteError> {
     let text = options()
         .to_string_pretty(site, layout)
         .map_err(|error| SiteError(format!("the site cannot be written: {error}")))?;
+    if text.len() as u64 >= LARGEST_FILE_BYTES {
+        return Err(SiteError(format!(
+            "the site's file would be larger than {} MB and could not be read again: thin out its \
+             measured skylines, or the corners of its obstacles",
+            LARGEST_FILE_BYTES / 1024 / 1024
+        )));
+    }
     // The position is that of a text that nobody has seen.
     let reread = parse(&text).map_err(|refusal| SiteError(refusal.sentence))?;
     // What the terrain makes of it is worked out anew, not written.
@@ -128,7 +135,13 @@ fn parse(text: &str) -> Result<Site, Refusal> {
         sentence: error.code.to_string().replace("``", "`"),
     })?;
     if site.spots.is_empty() {
-        site.spots.push(Spot::mark());
+        site.spots.push(Spot {
+            eye_height_m: site.people.adult_m,
+            ..Spot::mark()
+        });
+    }
+    for spot in &mut site.spots {
+        spot.stand(&site.people);
     }
     match check::flaw(&site) {
         None => Ok(site),

@@ -104,6 +104,18 @@ pub struct Viewpoint {
 }
 
 impl Site {
+    /// Gives the adults here another height of the eye, m: every spot's goes with it, a terrace
+    /// stays as high as it was.
+    pub fn set_adult_eye_m(&mut self, adult_m: f64) {
+        let higher_m = adult_m - self.people.adult_m;
+        for spot in &mut self.spots {
+            // Without the last bits of adding and taking away.
+            let eye_m = ((spot.eye_height_m + higher_m) * 1e6).round() / 1e6;
+            spot.eye_height_m = eye_m.clamp(0.0, 200.0);
+        }
+        self.people.adult_m = adult_m;
+    }
+
     /// Height of a spot's ground over the mark's, m: as stated, or as the site slopes.
     pub fn ground_m(&self, spot: &Spot) -> f64 {
         spot.base_m

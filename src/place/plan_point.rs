@@ -106,6 +106,18 @@ fn is_crossing((a, b): (PlanPoint, PlanPoint), (c, d): (PlanPoint, PlanPoint)) -
     on_both_sides_of_ab && on_both_sides_of_cd
 }
 
+/// Whether a corner stands on a side that is not one of its own two.
+pub(super) fn touches_itself(corners: &[PlanPoint]) -> bool {
+    const TOUCHING_M: f64 = 1e-6;
+    let count = corners.len();
+    corners.iter().enumerate().any(|(k, corner)| {
+        sides(corners).enumerate().any(|(side, (a, b))| {
+            let is_own = side == k || (side + 1) % count == k;
+            !is_own && distance_to_side_m(*corner, a, b) < TOUCHING_M
+        })
+    })
+}
+
 /// Why corners enclose nothing that could stand somewhere, if they do not.
 pub(super) fn footprint_flaw(corners_m: &[PlanPoint]) -> Option<String> {
     const MOST_CORNERS: usize = 100;

@@ -132,10 +132,10 @@ pub struct Spot {
         skip_serializing_if = "Option::is_none"
     )]
     pub base_m: Option<f64>,
-    /// Height of a standing adult's eye over the ground, m, a terrace counted in; 1.6 where it is
-    /// left out.
+    /// Height of a standing adult's eye over the ground, m, a terrace counted in; left out in the
+    /// file, as high as the site's adults have it ([`People::adult_m`]).
     #[serde(
-        default = "usual_eye_height_m",
+        default = "unstated_eye_height_m",
         deserialize_with = "limits::eye_height_m"
     )]
     pub eye_height_m: f64,
@@ -188,6 +188,13 @@ impl Spot {
             radius_m: None,
             skyline: Vec::new(),
             skyline_far: Vec::new(),
+        }
+    }
+
+    /// Gives a spot that was read without a height of the eye that of the site's adults.
+    pub(super) fn stand(&mut self, people: &People) {
+        if self.eye_height_m.is_nan() {
+            self.eye_height_m = people.adult_m;
         }
     }
 
@@ -321,6 +328,12 @@ impl Site {
 
 fn usual_eye_height_m() -> f64 {
     1.6
+}
+
+/// Until the site's people are read too ([`Spot::stand`]); nobody can write it, since no number
+/// of a file may be none.
+fn unstated_eye_height_m() -> f64 {
+    f64::NAN
 }
 
 fn usual_blocking_density() -> f64 {

@@ -1,6 +1,6 @@
 //! What of an obstacle does not depend on the eye: its edges in space, its height, its reach.
 
-use super::plan_point::{footprint_flaw, sides};
+use super::plan_point::{footprint_flaw, sides, touches_itself};
 use super::roof::ridge_crossings;
 use super::{Obstacle, PlanPoint, Site};
 use chrono::NaiveDate;
@@ -191,7 +191,8 @@ fn tree(tree: &Obstacle, ground_m: f64, site: &Site, date: Option<NaiveDate>) ->
 /// The level top of a footprint, listed clockwise.
 fn level_rims(corners: &[PlanPoint], height_m: f64) -> Vec<Rim> {
     let doubled_area: f64 = sides(corners).map(|(a, b)| a.cross(b)).sum();
-    let is_one_sided = footprint_flaw(corners).is_none();
+    // Where sides meet in more than their corners, a part of it may be listed the other way.
+    let is_one_sided = footprint_flaw(corners).is_none() && !touches_itself(corners);
     let peak = |plan| Peak { plan, height_m };
     sides(corners)
         .map(|(a, b)| if doubled_area > 0.0 { (a, b) } else { (b, a) })

@@ -19,8 +19,8 @@ use crate::sky::{Body, Ephemeris, Observer, Span};
 ///
 /// Made once for a site's air, a date, eyes and bodies, in some 15 ms; [`NightSky::behind`] then
 /// plans the night of any spot in one or two. It never changes, takes some 90 kB, and is
-/// to be shared (in an [`std::sync::Arc`]) between threads. The site's air is seen from its mark:
-/// its spots are too near each other for the sky to differ.
+/// to be shared (in an [`std::sync::Arc`]) between threads. The sky is that of the site's mark: a
+/// kilometre off everything stands 0.01° elsewhere, and comes 2 s sooner or later.
 #[derive(Clone, Debug)]
 pub struct NightSky {
     /// The night without its bodies.

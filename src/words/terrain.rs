@@ -2,15 +2,17 @@
 
 use super::Words;
 use super::number::decimal;
-use crate::place::FarSkyline;
-use crate::place::Site;
+use crate::place::{FarSkyline, PlanPoint, Site};
 
 /// Less than this of the terrain may be unknown without a word.
 const WORTH_A_WORD: f64 = 0.01;
+/// From spots farther than this from the mark its terrain is only roughly theirs, m.
+const ROUGH_FROM_M: f64 = 1000.0;
 
 impl Words {
     /// What somebody should check: ground elsewhere than the site file has it, terrain that the
-    /// tiles do not hold, voids in them. Often nothing.
+    /// tiles do not hold, voids in them, spots too far off for what was seen from the mark. Often
+    /// nothing.
     pub fn terrain_remarks(&self, site: &Site, far: &FarSkyline) -> Vec<String> {
         let disagreement = far.disagreement_m(site.elevation_m).map(|off_m| {
             self.text_with::<&str>(
@@ -34,6 +36,24 @@ impl Words {
                 let share = self.percent(share);
                 self.text_with::<&str>(id, &[("site", &site.name), ("share", &share)])
             });
-        disagreement.into_iter().chain(missing).collect()
+        let distance_m = |at: PlanPoint| at.distance_m(PlanPoint::new(0.0, 0.0));
+        let far_off = site.spots.iter().filter_map(|spot| {
+            let away_m = distance_m(spot.plan_point());
+            (away_m > ROUGH_FROM_M).then(|| {
+                self.text_with::<&str>(
+                    "terrain-far-spot",
+                    &[
+                        ("site", &site.name),
+                        ("spot", &spot.name),
+                        ("away", &decimal(away_m / 1000.0, 1)),
+                    ],
+                )
+            })
+        });
+        disagreement
+            .into_iter()
+            .chain(missing)
+            .chain(far_off)
+            .collect()
     }
 }

@@ -94,6 +94,23 @@ fn ground_elsewhere_than_the_site_file_says_is_remarked_on() {
 }
 
 #[test]
+fn a_spot_too_far_off_for_the_marks_terrain_is_remarked_on() {
+    let folder = tempfile::tempdir().expect("a temporary folder");
+    let file = site_file(folder.path(), 318.0, &tile());
+    let text = std::fs::read_to_string(&file).expect("readable");
+    let spots = "spots: [(name: \"near\", east_m: 900.0), (name: \"mill\", east_m: -4000.0)])";
+    std::fs::write(&file, text.trim_end_matches(')').to_owned() + ", " + spots).expect("written");
+    let site = file.to_str().expect("a plain path");
+    let run = run(&["skyline", "--site", site, "--step", "90"]);
+    assert_eq!(run.code, 0, "{}", run.err);
+    assert!(
+        run.err.contains("mill lies 4.0 km") && !run.err.contains("near"),
+        "{}",
+        run.err
+    );
+}
+
+#[test]
 fn a_missing_tile_is_one_sentence_and_no_answer() {
     let folder = tempfile::tempdir().expect("a temporary folder");
     let file = site_file(folder.path(), 318.0, "hills.tif");

@@ -1,6 +1,6 @@
 //! Site files on disk: every bad place is one sentence naming the path, and nothing is lost.
 
-use dimmet::place::{LARGEST_FILE_BYTES, Site, demo_sites};
+use dimmet::place::{LARGEST_FILE_BYTES, Site, SkylinePoint, demo_sites};
 use std::fs;
 use std::path::Path;
 
@@ -65,6 +65,29 @@ fn places_that_cannot_be_written_are_named() {
     assert!(save_refusal(site, &file.join("x.site.ron")).contains("there is no folder"));
     #[cfg(target_os = "linux")]
     save_refusal(site, Path::new("/proc/dimmet.site.ron"));
+}
+
+#[test]
+fn a_site_too_large_to_be_read_again_is_not_written() {
+    let folder = tempfile::tempdir().expect("a folder");
+    let file = folder.path().join("site.ron");
+    let mut site = demo_sites()[0].clone();
+    site.save(&file).expect("saved");
+    let before = fs::read(&file).expect("readable");
+    // As many points as a table may hold, each with many digits.
+    site.skyline = (0..216_000)
+        .map(|k| SkylinePoint {
+            azimuth_deg: f64::from(k) / 600.0,
+            altitude_deg: 3.0 + f64::from(k % 977) / 811.0,
+        })
+        .collect();
+    let sentence = site.save(&file).expect_err("too large").to_string();
+    assert!(sentence.contains("larger than 4 MB"), "{sentence}");
+    assert_eq!(fs::read(&file).expect("readable"), before);
+    // A quarter of them fits, and comes back.
+    site.skyline.truncate(54_000);
+    site.save(&file).expect("saved");
+    assert_eq!(Site::read(&file).expect("readable"), site);
 }
 
 #[test]

@@ -338,6 +338,14 @@ fn mapping_data_comes_in_with_what_was_assumed() {
 }
 
 #[test]
+fn a_number_is_a_name_too() {
+    let text = collection(&feature(POINT, r#""name": 12"#));
+    let imported = from_geojson(&text, &site()).unwrap();
+    assert_eq!(imported.spots[0].name, "12");
+    assert_eq!(imported.remarks, []);
+}
+
+#[test]
 fn what_cannot_be_is_refused_in_a_sentence() {
     let one = |geometry: &str, properties: &str| collection(&feature(geometry, properties));
     for (text, expected) in [
@@ -364,6 +372,12 @@ fn what_cannot_be_is_refused_in_a_sentence() {
             ),
             "feature 1: [512345, 181234] is no longitude and latitude in degrees: save the file \
              in WGS84",
+        ),
+        (
+            one(POINT, r#""kind": "tree", "leafless": "winter""#),
+            "feature 1: its leafless cannot be read (invalid type: string \"winter\", expected \
+             struct Leafless): write it as {\"from\": [11, 15], \"to\": [4, 20], \
+             \"see_through\": 0.6}",
         ),
         (
             collection(&[feature(POINT, ""), feature(AREA, r#""kind": "wall""#)].join(",")),

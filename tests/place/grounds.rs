@@ -387,6 +387,43 @@ fn a_child_and_a_wheelchair_see_less() {
 }
 
 #[test]
+fn the_eyes_height_belongs_to_people() {
+    let read = |spots: &str| {
+        let text = format!(
+            "(name: \"Lawn\", latitude_deg: 51.0, longitude_deg: 0.0, time_zone: \"UTC\", \
+             people: (adult_m: 1.75){spots})"
+        );
+        Site::from_ron(&text).unwrap()
+    };
+    let heights_m = |site: &Site, spot: usize| {
+        let at = |stature| site.viewpoint(&site.spots[spot], stature).height_m;
+        [at(Stature::Adult), at(Stature::Child)]
+    };
+    let stated = read(
+        ", spots: [(name: \"mark\"), (name: \"lawn\", east_m: 9.0), \
+         (name: \"terrace\", east_m: 30.0, eye_height_m: 2.75)]",
+    );
+    for (site, spot) in [(&stated, 0), (&stated, 1), (&read(""), 0)] {
+        let [adult_m, child_m] = heights_m(site, spot);
+        assert_within(adult_m, 1.75, 1e-9, "an adult where no spot states it");
+        assert_within(child_m, 1.1, 1e-9, "a child");
+    }
+    // Other people on the same spots: children stay as tall as they are.
+    let mut taller = stated;
+    taller.set_adult_eye_m(1.6);
+    assert_eq!(taller.spots[0].eye_height_m, 1.6);
+    for (spot, up_m) in [(0, 0.0), (1, 0.0), (2, 1.0)] {
+        let [adult_m, child_m] = heights_m(&taller, spot);
+        assert_within(adult_m, 1.6 + up_m, 1e-9, "an adult");
+        assert_within(child_m, 1.1 + up_m, 1e-9, "a child");
+    }
+    let point = r#"{"type": "Feature", "properties": {},
+        "geometry": {"type": "Point", "coordinates": [0.0, 51.0001]}}"#;
+    let imported = dimmet::place::exchange::from_geojson(point, &read("")).unwrap();
+    assert_eq!(imported.spots[0].eye_height_m, 1.75);
+}
+
+#[test]
 fn an_eye_above_the_underside_sees_no_opening() {
     let site = site(vec![oak()]);
     let high = Viewpoint {

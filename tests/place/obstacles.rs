@@ -223,6 +223,42 @@ fn a_flat_roof_is_its_eaves_and_ground_and_eye_heights_count() {
 }
 
 #[test]
+fn a_footprint_in_two_parts_that_meet_at_a_corner_is_seen_from_its_near_sides() {
+    // The small western part runs the other way round than the large eastern one.
+    let meeting = at(0.0, 20.0);
+    let corners_m = vec![
+        meeting,
+        at(-1.0, 19.0),
+        at(-1.0, 21.0),
+        meeting,
+        at(5.0, 15.0),
+        at(5.0, 25.0),
+    ];
+    let block = Obstacle::Shape {
+        label: "block".into(),
+        corners_m,
+        base_m: None,
+        height_m: 6.0,
+    };
+    let seen = skyline(&[block.clone()], &spot(0.0, 0.0));
+    for azimuth_deg in [-2.0, -1.0, 1.0, 5.0, 10.0] {
+        let side = |a, b| {
+            ray(azimuth_deg, &spot(0.0, 0.0), a, b)
+                .map(|(distance_m, _)| elevation_deg(4.4, distance_m))
+        };
+        let points = block.points();
+        let sides = (0..6).filter_map(|k| side(points[k], points[(k + 1) % 6]));
+        let expected = sides.fold(0.0, f64::max);
+        assert_within(
+            altitude_deg(&seen, azimuth_deg),
+            expected,
+            1e-9,
+            &format!("at {azimuth_deg}"),
+        );
+    }
+}
+
+#[test]
 fn a_narrow_post_is_in_the_breaks() {
     // 0.1 m at 60 m is a tenth of a degree.
     let seen = skyline(&[tree(60.0, 0.0, 8.0, 0.1)], &spot(0.0, 0.0));

@@ -105,6 +105,7 @@ terrain-looking = Looking along the terrain
 terrain-stopped = Looking along the terrain was stopped: the skyline holds what was found so far.
 terrain-disagrees = The elevation tiles put the ground of { $site } at { $ground } m, but the site file says { $stated } m: { $off } m apart. Check the coordinates.
 terrain-uncovered = { $share } of the terrain within sight of { $site } lies outside its elevation tiles, and nothing there blocks: add the tiles that are missing.
+terrain-far-spot = The spot { $spot } lies { $away } km from the mark of { $site }, and the terrain there is only roughly what was seen from the mark: make it a site of its own.
 terrain-voids = { $share } of the terrain within sight of { $site } is void in its elevation tiles, and nothing there blocks: take tiles with their voids filled.
 stop-terrain = Stop
 stop-terrain-hint = Stop looking along the terrain

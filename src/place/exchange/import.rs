@@ -5,7 +5,7 @@ use super::tangent::TangentPlane;
 use crate::measure::Angle;
 use crate::place::file::read_text;
 use crate::place::plan_point::footprint_flaw;
-use crate::place::{Exclusion, Obstacle, PlanPoint, Site, SiteError, Spot};
+use crate::place::{Exclusion, Leafless, Obstacle, People, PlanPoint, Site, SiteError, Spot};
 use geojson::{Feature, GeoJson, GeometryValue, JsonObject, JsonValue, Position};
 use serde::de::DeserializeOwned;
 use std::collections::HashSet;
@@ -148,6 +148,7 @@ pub fn from_geojson(text: &str, site: &Site) -> Result<Imported, SiteError> {
     }
     let mut import = Import {
         plane: TangentPlane::at(site),
+        people: site.people,
         names: site.spots.iter().map(|spot| spot.name.clone()).collect(),
         imported: Imported::default(),
     };
@@ -181,6 +182,7 @@ fn check_system(crs: Option<&JsonValue>) -> Result<(), SiteError> {
 
 struct Import {
     plane: TangentPlane,
+    people: People,
     /// Names of spots that are taken.
     names: HashSet<String>,
     imported: Imported,
@@ -196,7 +198,8 @@ struct Outline {
 impl Import {
     fn add(&mut self, number: usize, feature: Feature) -> Result<(), SiteError> {
         let properties = feature.properties.unwrap_or_default();
-        let given = text_of(&properties, "label").or_else(|| text_of(&properties, "name"));
+        let given = name_of(&properties, "label").or_else(|| name_of(&properties, "name"));
+        let given = given.as_deref();
         let Some(geometry) = feature.geometry else {
             self.remark(number, given.unwrap_or_default(), [Remark::NoGeometry]);
             return Ok(());
@@ -298,7 +301,11 @@ impl Import {
             }
         }
         match kind {
-            "spot" => self.imported.spots.push(made(JsonValue::Object(fields))?),
+            "spot" => {
+                let mut spot: Spot = made(JsonValue::Object(fields))?;
+                spot.stand(&self.people);
+                self.imported.spots.push(spot);
+            }
             "excluded" => {
                 let exclusion: Exclusion = made(JsonValue::Object(fields))?;
                 if let Some(flaw) = footprint_flaw(&exclusion.corners_m) {
@@ -401,6 +408,15 @@ fn text_of<'a>(properties: &'a JsonObject, key: &str) -> Option<&'a str> {
     properties.get(key)?.as_str()
 }
 
+/// A name as text; tables of mapping software often number things.
+fn name_of(properties: &JsonObject, key: &str) -> Option<String> {
+    match properties.get(key)? {
+        JsonValue::String(text) => Some(text.clone()),
+        JsonValue::Number(number) => Some(number.to_string()),
+        _ => None,
+    }
+}
+
 /// The geometry's form and its lines. Of a collection only one of a single part is taken.
 fn rings(value: GeometryValue) -> Result<(Form, Vec<Vec<Position>>), SiteError> {
     let name = value.type_name();
@@ -429,6 +445,17 @@ fn rings(value: GeometryValue) -> Result<(Form, Vec<Vec<Position>>), SiteError> 
         }
         GeometryValue::GeometryCollection { geometries } => Err(parts(geometries.len())),
     }
+}
+
+/// That what is no length, when a tree is bare, has the form that [`super::to_geojson`] gives it.
+fn check_leafless(name: &str, value: &JsonValue) -> Result<(), SiteError> {
+    let read = serde_json::from_value::<Leafless>(value.clone());
+    read.map(|_| ()).map_err(|error| {
+        SiteError(format!(
+            "its {name} cannot be read ({error}): write it as {{\"from\": [11, 15], \"to\": [4, 20], \
+             \"see_through\": 0.6}}"
+        ))
+    })
 }
 
 /// A feature with a kind of its own: what fields it may have, and which geometry it needs.
@@ -478,6 +505,7 @@ fn own(kind: &str, properties: &JsonObject, form: Form) -> Result<Reading, SiteE
             })?;
             JsonValue::from(length_m)
         } else {
+            check_leafless(name, value)?;
             value.clone()
         };
         fields.insert((*name).into(), value);

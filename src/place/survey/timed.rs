@@ -140,12 +140,6 @@ pub fn shadow_bearing(
 }
 
 impl ShadowBearing {
-    /// How far a compass reads too much when it is laid along the shadow, foot to tip,
-    /// [-180°, 180°).
-    pub fn compass_error(&self, reading: Angle) -> Angle {
-        (reading - self.azimuth).signed()
-    }
-
     /// The declination that puts this compass right, east positive: the Earth's together with
     /// the compass's own deviation.
     pub fn declination(&self, reading: Angle) -> Angle {

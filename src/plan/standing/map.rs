@@ -186,12 +186,6 @@ impl StandingMap {
         Cell::Waiting
     }
 
-    /// What the square that holds a point gives; `None` off the map, or where nobody is to stand.
-    pub fn stay_at(&self, at: PlanPoint) -> Option<Stay> {
-        let (column, row) = self.raster.square(at)?;
-        self.cell(column, row).stay()
-    }
-
     /// The same map by the least that one of the nights gives, in place of the sum over them.
     #[must_use]
     pub fn by_least(&self) -> Self {

@@ -175,7 +175,10 @@ impl Tool {
             },
             Self::Spot => {
                 let name = free_name(&site, &label());
-                site.spots.push(Spot::at(&name, first));
+                site.spots.push(Spot {
+                    eye_height_m: site.people.adult_m,
+                    ..Spot::at(&name, first)
+                });
                 let index = site.spots.len() - 1;
                 return Some((site, Selection::Spot(index)));
             }

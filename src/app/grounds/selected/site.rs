@@ -62,9 +62,7 @@ pub fn show(
     });
     row::<3>(ui, |column, ui| {
         let (label, value, change): (_, _, fn(&mut Site, f64)) = match column {
-            0 => ("field-adult", site.people.adult_m, |s, v| {
-                s.people.adult_m = v
-            }),
+            0 => ("field-adult", site.people.adult_m, Site::set_adult_eye_m),
             1 => ("field-child", site.people.child_m, |s, v| {
                 s.people.child_m = v
             }),
