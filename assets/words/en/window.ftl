@@ -164,4 +164,4 @@ widen-view = Narrow and widen it
 zoom-keys = Ctrl + / Ctrl − / Ctrl 0
 zoom = Larger, smaller, usual size
 status-keys = ← → one minute · ⇧ ten · Page a day · Home best moment · Space let it run · T this minute · F1 help
-
+status-keys-plan = On the plan: 1–9, 0 tools · Tab next thing · ← ↑ → ↓ move · Space set a point · Delete · E everything · Ctrl Z undo · M measure · F1 help

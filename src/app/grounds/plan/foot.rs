@@ -103,6 +103,7 @@ impl Plan {
 
     fn hint(&self, desk: &Desk<'_>, selection: Option<Selection>) -> String {
         let id = match (self.tool.takes(), self.points.len()) {
+            _ if self.is_standing => "plan-waits-standing",
             (Takes::Things, _) if selection.is_some() => "plan-waits-selected",
             (Takes::Things, _) => "plan-waits-things",
             (Takes::Point, _) => "plan-waits-point",

@@ -18,8 +18,9 @@ const ARROWS: [(Key, f64, f64); 4] = [
 ];
 
 /// What the help says of them: keys and what they do.
-pub const HELP: [(&str, &str); 11] = [
+pub const HELP: [(&str, &str); 12] = [
     ("plan-keys-tools", "plan-keys-tools-do"),
+    ("plan-keys-more-tools", "plan-keys-more-tools-do"),
     ("plan-keys-tab", "plan-keys-tab-do"),
     ("plan-keys-arrows", "plan-keys-arrows-do"),
     ("plan-keys-cross", "plan-keys-cross-do"),

@@ -45,6 +45,13 @@ impl Plan {
             is_free: modifiers.command,
         };
         self.pan_and_zoom(ui, response, camera);
+        if self.is_standing {
+            self.snapped = None;
+            if response.hovered() {
+                ui.ctx().set_cursor_icon(CursorIcon::Crosshair);
+            }
+            return;
+        }
         let pointer = response.interact_pointer_pos().or(response.hover_pos());
         if self.tool == Tool::Select {
             self.work_on_things(

@@ -21,7 +21,8 @@ use crate::plan::standing::Contour;
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use eframe::egui::{
-    Context, Painter, ProgressBar, Role, Sense, TextureHandle, TextureOptions, Ui, WidgetInfo, vec2,
+    Context, Painter, ProgressBar, Rect, Role, Sense, TextureHandle, TextureOptions, Ui,
+    WidgetInfo, vec2,
 };
 use job::{Asked, Found, News, Summing};
 use paint::Line;
@@ -124,8 +125,37 @@ impl Standing {
         };
         paint::squares(painter, to_screen, &map.found.map.raster, map.texture.id());
         paint::contours(painter, to_screen, look, &map.lines);
-        paint::places(painter, to_screen, look, &map.found.best);
         self.pointed.set(pointed(painter, to_screen, map));
+    }
+
+    /// Whether the next click on the map makes a spot.
+    pub fn is_placing(&self) -> bool {
+        self.is_on && self.is_placing
+    }
+
+    /// Where the best places' numbers stand, which nothing is to cover.
+    pub fn marks(&self, to_screen: ToScreen<'_>, spots: &[PlanPoint]) -> Vec<Rect> {
+        let map = self.map.as_ref().filter(|_| self.is_on);
+        map.map_or_else(Vec::new, |map| {
+            paint::marks(to_screen, &map.found.best, spots)
+        })
+    }
+
+    /// Paints what is written on the map over the plan: the minutes of the lines where neither
+    /// a name nor a number stands, and the numbers.
+    pub fn paint_over(
+        &self,
+        painter: &Painter,
+        to_screen: ToScreen<'_>,
+        look: &Look,
+        (marks, mut taken): (&[Rect], Vec<Rect>),
+    ) {
+        let Some(map) = self.map.as_ref().filter(|_| self.is_on) else {
+            return;
+        };
+        taken.extend_from_slice(marks);
+        paint::figures(painter, to_screen, look, &map.lines, taken);
+        paint::numbers(painter, look, marks);
     }
 
     /// Shows the card: choices, progress, legend, the best places.
@@ -436,6 +466,10 @@ fn stand(desk: &Desk<'_>, at: PlanPoint, commands: &mut Commands) {
     let mut spot = Spot::at(&name, at);
     spot.eye_height_m = site.people.adult_m;
     site.spots.push(spot);
+    let is_right = site.check_rules().is_ok();
     commands.push(Command::EditSite(Box::new(site)));
-    commands.push(Command::ChooseSpot(index));
+    // A refused change is said by the plan, and the chosen spot stays.
+    if is_right {
+        commands.push(Command::ChooseSpot(index));
+    }
 }
