@@ -103,7 +103,7 @@ no-site-files = No site files stand in this folder.
 # Sites
 terrain-looking = Looking along the terrain
 terrain-stopped = Looking along the terrain was stopped: the skyline holds what was found so far.
-terrain-disagrees = The elevation tiles put the ground of { $site } at { $ground } m, but the site file says { $stated } m: { $off } m apart. Check the coordinates.
+terrain-disagrees = The elevation tiles put the ground of { $site } at { $ground } m, but the site file says { $stated } m: { $off } m apart. Check the coordinates and the elevation.
 terrain-uncovered = { $share } of the terrain within sight of { $site } lies outside its elevation tiles, and nothing there blocks: add the tiles that are missing.
 terrain-voids = { $share } of the terrain within sight of { $site } is void in its elevation tiles, and nothing there blocks: take tiles with their voids filled.
 stop-terrain = Stop

@@ -196,10 +196,11 @@ pub fn legend(painter: &Painter, rect: Rect, look: &Look, words: &Words, range: 
         );
         painter.galley(place.min, text, look.colours.lesser);
     };
-    mark(range.0, Align2::LEFT_TOP);
+    // Where everything is alike, its one figure stands at the amber end.
     if range.1 > range.0 {
-        mark(range.1, Align2::RIGHT_TOP);
+        mark(range.0, Align2::LEFT_TOP);
     }
+    mark(range.1, Align2::RIGHT_TOP);
     for level in heat::levels(range) {
         mark(level, Align2::CENTER_TOP);
     }
