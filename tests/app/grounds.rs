@@ -227,7 +227,7 @@ fn a_spot_in_a_crown_is_refused_and_the_last_spot_stays() {
 }
 
 #[test]
-fn standing_in_a_crown_is_refused_and_the_chosen_spot_stays() {
+fn a_place_is_read_under_the_plan_and_standing_in_a_crown_is_refused() {
     let desk = Desk::new();
     let mut window = open_high(&desk, 1600.0);
     let start = std::time::Instant::now();
@@ -236,6 +236,12 @@ fn standing_in_a_crown_is_refused_and_the_chosen_spot_stays() {
         std::thread::sleep(std::time::Duration::from_millis(5));
         window.step();
     }
+    // Under the plan, since the column may be scrolled.
+    let pos = on_screen(&window, 20.0, 10.0);
+    window.event(Event::PointerMoved(pos));
+    window.run();
+    let read = window.get_by_label_contains("There, 20").rect();
+    assert!(read.top() >= window.get_by_label(PLAN).rect().bottom());
     click(&mut window, "Stand where I click");
     click_at(&mut window, -30.0, -20.0);
     window.get_by_label_contains("Nothing was changed");

@@ -62,7 +62,7 @@ standing-gain = Ten minutes more: { $metres } m to the { $direction }.
 standing-no-gain = Nowhere on the grounds gives ten minutes more.
 standing-nowhere = Nobody can stand anywhere on these grounds: everything is built over or left out.
 standing-pointed = There, { $said }
-standing-point-at = Point at the map to read a square metre.
+standing-point-at = Point at the map: what a square metre gives is read beneath it.
 new-spot-name = spot { $number }
 
 # The spots side by side

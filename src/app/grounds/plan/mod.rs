@@ -131,7 +131,9 @@ impl Plan {
             .rect_stroke(rect, desk.look.room.corner, border, StrokeKind::Inside);
         self.refusal(ui, rect, desk);
         let below = Rect::from_min_max(rect.left_bottom(), room.right_bottom());
-        self.foot(ui, below, desk, *selection);
+        let is_free = self.tool == Tool::Select && self.drag.is_none();
+        let reading = standing.reading().filter(|_| is_free);
+        self.foot(ui, below, desk, *selection, reading);
         ui.advance_cursor_after_rect(room);
     }
 

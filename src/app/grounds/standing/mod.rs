@@ -55,6 +55,8 @@ pub struct Standing {
     is_placing: bool,
     /// The point of the map under the pointer, and whether it was clicked: seen while painting.
     pointed: Cell<Option<(PlanPoint, bool)>>,
+    /// What is read there.
+    reading: Option<String>,
 }
 
 /// The choices that a map belongs to; cheap to compare in every frame.
@@ -91,6 +93,7 @@ impl Default for Standing {
             is_stopped: false,
             is_placing: false,
             pointed: Cell::new(None),
+            reading: None,
         }
     }
 }
@@ -133,6 +136,11 @@ impl Standing {
         self.is_on && self.is_placing
     }
 
+    /// What somebody at the point under the pointer has.
+    pub fn reading(&self) -> Option<&str> {
+        self.reading.as_deref()
+    }
+
     /// Where the best places' numbers stand, which nothing is to cover.
     pub fn marks(&self, to_screen: ToScreen<'_>, spots: &[PlanPoint]) -> Vec<Rect> {
         let map = self.map.as_ref().filter(|_| self.is_on);
@@ -163,8 +171,10 @@ impl Standing {
         let Some(scene) = desk.scene else {
             self.worker.cancel();
             self.map = None;
+            self.reading = None;
             return;
         };
+        self.reading = None;
         self.take_news(ui.ctx(), desk);
         self.ask(ui.ctx(), desk);
         card(ui, desk.look, 0.0, |ui| {
@@ -385,12 +395,12 @@ impl Standing {
         for line in reading::costs(desk, &map.found) {
             text(ui, look, size, colour, &line);
         }
-        let pointed = self.pointed.get();
-        let line = match pointed {
-            Some((at, _)) => reading::pointed(desk, scene, (asked, sky), &map.found, at),
-            None => desk.words.text("standing-point-at"),
-        };
+        let line = desk.words.text("standing-point-at");
         text(ui, look, size, look.colours.lesser, &line);
+        let pointed = self.pointed.get();
+        // Read under the plan, where the pointer is: this card may be out of sight.
+        self.reading =
+            pointed.map(|(at, _)| reading::pointed(desk, scene, (asked, sky), &map.found, at));
         if let Some((at, true)) = pointed
             && self.is_placing
         {

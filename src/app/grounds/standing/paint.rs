@@ -196,11 +196,13 @@ pub fn legend(painter: &Painter, rect: Rect, look: &Look, words: &Words, range: 
         );
         painter.galley(place.min, text, look.colours.lesser);
     };
-    // Where everything is alike, its one figure stands at the amber end.
-    if range.1 > range.0 {
+    // Where everything is alike there is one figure, at the end of its colour.
+    if range.1 > range.0 || range.1 <= 0.0 {
         mark(range.0, Align2::LEFT_TOP);
     }
-    mark(range.1, Align2::RIGHT_TOP);
+    if range.1 > 0.0 {
+        mark(range.1, Align2::RIGHT_TOP);
+    }
     for level in heat::levels(range) {
         mark(level, Align2::CENTER_TOP);
     }
