@@ -386,6 +386,22 @@ fn the_plan_works_by_keys_alone() {
 }
 
 #[test]
+fn keys_set_points_a_metre_apart_however_small_the_plan_is_shown() {
+    let desk = Desk::new();
+    let mut window = open(&desk);
+    window.get_by_label(PLAN).focus();
+    window.run();
+    press(&mut window, Key::Num4);
+    press(&mut window, Key::Space);
+    press(&mut window, Key::ArrowRight);
+    press(&mut window, Key::Space);
+    press(&mut window, Key::ArrowUp);
+    press(&mut window, Key::Space);
+    press(&mut window, Key::Enter);
+    assert_eq!(points(&window, 1), [(0.0, 0.0), (1.0, 0.0), (1.0, 1.0)]);
+}
+
+#[test]
 fn a_drag_shows_at_once_but_is_written_only_when_it_ends() {
     let desk = Desk::new();
     let mut window = open(&desk);
