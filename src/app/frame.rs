@@ -302,7 +302,11 @@ impl DesktopWindow {
                 figure(ui, font.clone(), colour, &self.words.text("clock-is-ut1"));
             }
             ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
-                let keys = RichText::new(self.words.text("status-keys"));
+                let id = match self.state.area {
+                    Area::Lookout => "status-keys",
+                    Area::Grounds => "status-keys-plan",
+                };
+                let keys = RichText::new(self.words.text(id));
                 ui.add(Label::new(keys.font(font).color(colour)).truncate());
             });
         });

@@ -227,6 +227,66 @@ fn a_spot_in_a_crown_is_refused_and_the_last_spot_stays() {
 }
 
 #[test]
+fn a_place_is_read_under_the_plan_and_standing_in_a_crown_is_refused() {
+    let desk = Desk::new();
+    let mut window = open_high(&desk, 1600.0);
+    let start = std::time::Instant::now();
+    while window.query_by_label_contains("Legend: from").is_none() {
+        assert!(start.elapsed().as_secs() < 120, "no map");
+        std::thread::sleep(std::time::Duration::from_millis(5));
+        window.step();
+    }
+    // Under the plan, since the column may be scrolled.
+    let pos = on_screen(&window, 20.0, 10.0);
+    window.event(Event::PointerMoved(pos));
+    window.run();
+    let read = window.get_by_label_contains("There, 20").rect();
+    assert!(read.top() >= window.get_by_label(PLAN).rect().bottom());
+    click(&mut window, "Stand where I click");
+    click_at(&mut window, -30.0, -20.0);
+    window.get_by_label_contains("Nothing was changed");
+    let state = window.state().state();
+    assert_eq!(state.site().spots.len(), 1);
+    assert_eq!(state.spot_index(), 0, "no spot that is not there");
+    assert!(
+        window.query_by_label("Crown width, m").is_none(),
+        "the click selects nothing"
+    );
+    click(&mut window, "Stand where I click");
+    click_at(&mut window, 20.0, 10.0);
+    let state = window.state().state();
+    assert_eq!(state.spot_index(), 1, "the new spot");
+    assert!((state.spot().east_m - 20.0).abs() < 0.5);
+}
+
+#[test]
+fn the_plan_stays_where_it_is_while_spots_are_chosen() {
+    let desk = Desk::new();
+    // The length of the spots' names decides how the pickers wrap here.
+    let mut window = desk.open_sized(1280.0, 800.0, desk.start(crate::desk::NOW));
+    window.state_mut().run(Command::ShowArea(Area::Grounds));
+    window.run();
+    let before = window.get_by_label(PLAN).rect();
+    for index in 0..window.state().state().site().spots.len() {
+        window.state_mut().run(Command::ChooseSpot(index));
+        window.run();
+        assert_eq!(window.get_by_label(PLAN).rect(), before, "spot {index}");
+    }
+}
+
+#[test]
+fn the_line_at_the_bottom_holds_the_keys_of_the_area() {
+    let desk = Desk::new();
+    let mut window = open(&desk);
+    window.get_by_label_contains("On the plan: 1–9, 0 tools");
+    assert!(window.query_by_label_contains("Space let it run").is_none());
+    window.state_mut().run(Command::ShowArea(Area::Lookout));
+    window.run();
+    window.get_by_label_contains("Space let it run");
+    assert!(window.query_by_label_contains("On the plan:").is_none());
+}
+
+#[test]
 fn positions_snap_to_corners_and_lines_unless_alt_or_the_box_says_not() {
     let desk = Desk::new();
     let mut window = open(&desk);
@@ -323,6 +383,22 @@ fn the_plan_works_by_keys_alone() {
         60.0,
         "without the focus the arrows are the time's"
     );
+}
+
+#[test]
+fn keys_set_points_a_metre_apart_however_small_the_plan_is_shown() {
+    let desk = Desk::new();
+    let mut window = open(&desk);
+    window.get_by_label(PLAN).focus();
+    window.run();
+    press(&mut window, Key::Num4);
+    press(&mut window, Key::Space);
+    press(&mut window, Key::ArrowRight);
+    press(&mut window, Key::Space);
+    press(&mut window, Key::ArrowUp);
+    press(&mut window, Key::Space);
+    press(&mut window, Key::Enter);
+    assert_eq!(points(&window, 1), [(0.0, 0.0), (1.0, 0.0), (1.0, 1.0)]);
 }
 
 #[test]

@@ -63,6 +63,7 @@ excluded-label = closed
 # What the plan waits for
 plan-waits-things = Click a thing to select it; drag the ground to move the plan, turn the wheel to zoom.
 plan-waits-selected = Drag it or its handles; arrow keys move it by 0.1 m, with Shift by 1 m.
+plan-waits-standing = Click the place to stand at.
 plan-waits-point = Click the point; Escape gives up.
 plan-waits-circle = Click the trunk, or drag from the trunk to the rim of the crown.
 plan-waits-line = Click where it begins.
@@ -73,8 +74,10 @@ plan-waits-pair = Click one end, then the other.
 
 # The plan's keys
 plan-keys = Keys on the plan of the site (Tab to it first)
-plan-keys-tools = 1 to 9, 0
-plan-keys-tools-do = Select, tree, building, wall, pole, shape, spot, excluded area, bounds; tape
+plan-keys-tools = 1 to 5
+plan-keys-tools-do = Select, tree, building, wall, pole
+plan-keys-more-tools = 6 to 9, 0
+plan-keys-more-tools-do = Shape, spot, excluded area, bounds, tape
 plan-keys-tab = Tab
 plan-keys-tab-do = Next thing; with ⇧ the one before
 plan-keys-arrows = ← → ↑ ↓

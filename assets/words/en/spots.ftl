@@ -57,11 +57,12 @@ standing-crowd = Of the crowd on its patch, the worst off has { $worst }, the mi
 standing-stand-here = Stand here
 standing-stand-here-named = Stand at best place { $number }
 standing-cost = At { $spot }: { $minutes } min, { $fewer } fewer than at the best place.
+standing-no-cost = At { $spot }: { $minutes } min, and no place of the grounds gives more.
 standing-gain = Ten minutes more: { $metres } m to the { $direction }.
 standing-no-gain = Nowhere on the grounds gives ten minutes more.
 standing-nowhere = Nobody can stand anywhere on these grounds: everything is built over or left out.
 standing-pointed = There, { $said }
-standing-point-at = Point at the map to read a square metre.
+standing-point-at = Point at the map: what a square metre gives is read beneath it.
 new-spot-name = spot { $number }
 
 # The spots side by side

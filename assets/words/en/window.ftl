@@ -103,7 +103,7 @@ no-site-files = No site files stand in this folder.
 # Sites
 terrain-looking = Looking along the terrain
 terrain-stopped = Looking along the terrain was stopped: the skyline holds what was found so far.
-terrain-disagrees = The elevation tiles put the ground of { $site } at { $ground } m, but the site file says { $stated } m: { $off } m apart. Check the coordinates.
+terrain-disagrees = The elevation tiles put the ground of { $site } at { $ground } m, but the site file says { $stated } m: { $off } m apart. Check the coordinates and the elevation.
 terrain-uncovered = { $share } of the terrain within sight of { $site } lies outside its elevation tiles, and nothing there blocks: add the tiles that are missing.
 terrain-far-spot = The spot { $spot } lies { $away } km from the mark of { $site }, and the terrain there is only roughly what was seen from the mark: make it a site of its own.
 terrain-voids = { $share } of the terrain within sight of { $site } is void in its elevation tiles, and nothing there blocks: take tiles with their voids filled.
@@ -165,4 +165,4 @@ widen-view = Narrow and widen it
 zoom-keys = Ctrl + / Ctrl − / Ctrl 0
 zoom = Larger, smaller, usual size
 status-keys = ← → one minute · ⇧ ten · Page a day · Home best moment · Space let it run · T this minute · F1 help
-
+status-keys-plan = On the plan: 1–9, 0 tools · Tab next thing · ← ↑ → ↓ move · Space set a point · Delete · E everything · Ctrl Z undo · M measure · F1 help

@@ -12,8 +12,11 @@ use super::grounds::Desk;
 use super::grounds::exchange::Exchange;
 use super::widgets::{card_frame, command_button};
 use super::window::DesktopWindow;
-use eframe::egui::{Context, Id, Modal, ScrollArea, Ui};
+use eframe::egui::{Align2, Context, Id, Modal, ScrollArea, Ui, vec2};
 use std::path::Path;
+
+/// From the window's top to a dialog that hangs there, points.
+const TOP: f32 = 36.0;
 
 /// An open dialog.
 pub enum Dialog {
@@ -64,7 +67,16 @@ impl DesktopWindow {
             _ => 620.0,
         };
         let screen = ctx.content_rect();
-        let modal = Modal::new(Id::unique("dialog"))
+        let id = Id::unique("dialog");
+        // What grows and shrinks with what is chosen in it hangs from the top: its head stays.
+        let area = match dialog {
+            Dialog::Measure | Dialog::Exchange(_) => {
+                Modal::default_area(id).anchor(Align2::CENTER_TOP, vec2(0.0, TOP))
+            }
+            _ => Modal::default_area(id),
+        };
+        let modal = Modal::new(id)
+            .area(area)
             .frame(card_frame(&look).inner_margin(look.room.between))
             .show(ctx, |ui: &mut Ui| {
                 ui.set_width((screen.width() - 96.0).clamp(280.0, widest));

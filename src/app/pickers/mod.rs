@@ -2,17 +2,18 @@
 
 mod date;
 
+use super::area::Area;
 use super::command::{Command, Commands};
 use super::palette::Look;
 use super::state::State;
 use super::widgets::{choice, command_button, figure, name_it, text};
 use crate::light::Eye;
-use crate::place::Haze;
+use crate::place::{Haze, Spot};
 use crate::plan::Half;
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use eframe::egui::containers::menu::MenuButton;
-use eframe::egui::{Button, Role, ScrollArea, Stroke, Ui};
+use eframe::egui::{Button, Color32, Role, ScrollArea, Stroke, TextStyle, Ui, vec2};
 
 /// The whole row; it wraps where there is no room.
 pub fn picker_row(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
@@ -102,10 +103,24 @@ fn air_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: 
 }
 
 fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands: &mut Commands) {
-    let site = &state.site().name;
-    let spot = &state.spot().name;
-    let shown = words.text_with::<&str>("site-and-spot", &[("site", site), ("spot", spot)]);
-    let (button, _) = MenuButton::new(format!("{shown} ▾")).ui(ui, |ui| {
+    let naming = |spot: &Spot| {
+        let names = [("site", &*state.site().name), ("spot", &*spot.name)];
+        words.text_with::<&str>("site-and-spot", &names)
+    };
+    let shown = naming(state.spot());
+    let button = Button::new(format!("{shown} ▾"));
+    let button = if state.area == Area::Grounds {
+        // As wide for every spot: a press on the plan chooses one, and the plan must not move.
+        let captions = state
+            .site()
+            .spots
+            .iter()
+            .map(|spot| format!("{} ▾", naming(spot)));
+        button.min_size(vec2(widest(ui, captions), 0.0))
+    } else {
+        button
+    };
+    let (button, _) = MenuButton::from_button(button).ui(ui, |ui| {
         ui.set_min_width(240.0);
         ui.spacing_mut().button_padding.x = 8.0;
         ScrollArea::vertical().max_height(320.0).show(ui, |ui| {
@@ -143,4 +158,16 @@ fn site_picker(ui: &mut Ui, look: &Look, words: &Words, state: &State, commands:
         Role::Button,
         &words.text_with::<&str>("site-picker", &[("shown", &shown)]),
     );
+}
+
+/// The width of a button that holds any of the captions.
+fn widest(ui: &Ui, captions: impl Iterator<Item = String>) -> f32 {
+    let font = TextStyle::Button.resolve(ui.style());
+    let width = |caption| {
+        let galley = ui
+            .painter()
+            .layout_no_wrap(caption, font.clone(), Color32::WHITE);
+        galley.size().x
+    };
+    captions.map(width).fold(0.0, f32::max) + 2.0 * ui.spacing().button_padding.x
 }

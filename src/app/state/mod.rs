@@ -272,7 +272,7 @@ impl State {
             Command::ChooseEye(eye) => self.eye = eye,
             Command::ChooseSite(index) => self.choose_site(index),
             Command::ChooseSpot(index) => {
-                self.spot = index;
+                self.spot = index.min(self.site().spots.len().saturating_sub(1));
                 self.show_behind();
             }
             Command::ChooseStature(stature) => {

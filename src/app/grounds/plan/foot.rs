@@ -70,13 +70,15 @@ pub fn picture_point(painter: &Painter, look: &Look, at: Pos2, name: &str) {
 }
 
 impl Plan {
-    /// What the tool waits for, or the tape's reading; and where the pointer is.
+    /// What the tool waits for, or the tape's reading, or the map's at the pointer; and where the
+    /// pointer is.
     pub(super) fn foot(
         &self,
         ui: &mut Ui,
         rect: Rect,
         desk: &Desk<'_>,
         selection: Option<Selection>,
+        on_map: Option<&str>,
     ) {
         let look = desk.look;
         let font = look.font(look.sizes.label);
@@ -91,9 +93,10 @@ impl Plan {
                 ui.add(Label::new(text.color(look.colours.text)).extend());
             }
             ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
-                let (text, colour) = match self.tape(desk) {
-                    Some(reading) => (reading, look.colours.chosen),
-                    None => (self.hint(desk, selection), look.colours.lesser),
+                let (text, colour) = match (self.tape(desk), on_map) {
+                    (Some(reading), _) => (reading, look.colours.chosen),
+                    (None, Some(reading)) => (reading.to_owned(), look.colours.text),
+                    (None, None) => (self.hint(desk, selection), look.colours.lesser),
                 };
                 let text = RichText::new(text).font(font).color(colour);
                 ui.add(Label::new(text).truncate());
@@ -103,6 +106,7 @@ impl Plan {
 
     fn hint(&self, desk: &Desk<'_>, selection: Option<Selection>) -> String {
         let id = match (self.tool.takes(), self.points.len()) {
+            _ if self.is_standing => "plan-waits-standing",
             (Takes::Things, _) if selection.is_some() => "plan-waits-selected",
             (Takes::Things, _) => "plan-waits-things",
             (Takes::Point, _) => "plan-waits-point",

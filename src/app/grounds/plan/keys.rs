@@ -17,9 +17,13 @@ const ARROWS: [(Key, f64, f64); 4] = [
     (Key::ArrowDown, 0.0, -1.0),
 ];
 
+/// Less than the cross's smallest step.
+const NEAR_M: f64 = 0.05;
+
 /// What the help says of them: keys and what they do.
-pub const HELP: [(&str, &str); 11] = [
+pub const HELP: [(&str, &str); 12] = [
     ("plan-keys-tools", "plan-keys-tools-do"),
+    ("plan-keys-more-tools", "plan-keys-more-tools-do"),
     ("plan-keys-tab", "plan-keys-tab-do"),
     ("plan-keys-arrows", "plan-keys-arrows-do"),
     ("plan-keys-cross", "plan-keys-cross-do"),
@@ -61,7 +65,7 @@ impl Plan {
             };
             ui.memory_mut(|memory| memory.set_focus_lock_filter(id(), filter));
             self.choose_by_key(ui, camera, desk, selection, commands);
-            self.draw_by_key(ui, camera, desk, selection, commands);
+            self.draw_by_key(ui, desk, selection, commands);
             self.arrows(ui, camera, desk, *selection, commands);
         }
         let is_down = ui.input(|input| ARROWS.iter().any(|(arrow, ..)| input.key_down(*arrow)));
@@ -172,7 +176,6 @@ impl Plan {
     fn draw_by_key(
         &mut self,
         ui: &Ui,
-        camera: Camera,
         desk: &Desk<'_>,
         selection: &mut Option<Selection>,
         commands: &mut Commands,
@@ -182,7 +185,8 @@ impl Plan {
         let takes = self.tool.takes();
         let is_one = matches!(takes, Takes::Point | Takes::Circle);
         if let Some(at) = self.cross.filter(|_| space || (enter && is_one)) {
-            if self.set_point(at, camera) {
+            // Keys go by tenths of a metre however small the plan is shown.
+            if self.set_point(at, NEAR_M) {
                 self.finish(desk, selection, false, commands);
             }
         } else if enter && matches!(takes, Takes::Line | Takes::Corners) {

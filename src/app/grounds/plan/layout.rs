@@ -23,13 +23,26 @@ pub struct Label {
     pub is_outside: bool,
 }
 
-/// Places the names: the selected thing's first, then the spots', then the others'.
+impl Label {
+    /// The ground under it.
+    pub fn hem(&self) -> Rect {
+        hem(self.rect)
+    }
+}
+
+fn hem(letters: Rect) -> Rect {
+    letters.expand2(vec2(2.0, 0.0))
+}
+
+/// Places the names: the selected thing's first, then the spots', then the others'; none over
+/// what is `taken` already.
 pub fn labels(
     painter: &Painter,
     look: &Look,
     camera: Camera,
     model: &Model,
     selection: Option<Selection>,
+    taken: &[Rect],
     words: &dyn Fn(&Thing) -> String,
 ) -> Vec<Label> {
     let rank = |thing: &&Thing| {
@@ -88,7 +101,11 @@ pub fn labels(
         };
         let free = places.into_iter().find(|rect| {
             camera.rect.contains_rect(*rect)
-                && placed.iter().all(|label| !label.rect.intersects(*rect))
+                && placed
+                    .iter()
+                    .map(Label::hem)
+                    .chain(taken.iter().copied())
+                    .all(|other| !other.intersects(hem(*rect)))
         });
         if let Some(rect) = free {
             let is_ground = matches!(thing.figure, Figure::Excluded(_));

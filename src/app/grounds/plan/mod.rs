@@ -26,7 +26,7 @@ mod triangles;
 use super::standing::Standing;
 use super::{Desk, Selection};
 use crate::app::command::{Command, Commands};
-use crate::place::{PlanPoint, Site};
+use crate::place::{PlanPoint, Site, Spot};
 use backdrop::Underlay;
 use camera::{Camera, View};
 pub use changes::{duplicate, remove, select};
@@ -63,6 +63,8 @@ pub struct Plan {
     pub snaps: bool,
     /// Where the pointer is, and to what that was drawn.
     snapped: Option<Snapped>,
+    /// Whether the next click is the standing map's: it makes a spot, and selects nothing.
+    is_standing: bool,
     /// The picture under the plan.
     pub underlay: Underlay,
     /// A refusal that was read.
@@ -83,6 +85,7 @@ impl Default for Plan {
             is_nudging: false,
             snaps: true,
             snapped: None,
+            is_standing: false,
             underlay: Underlay::default(),
             read_refusal: None,
         }
@@ -100,6 +103,7 @@ impl Plan {
         commands: &mut Commands,
     ) {
         self.follow(desk.state.site(), selection);
+        self.is_standing = standing.is_placing();
         let path = backdrop_path(desk);
         self.underlay.follow(ui.ctx(), path);
         self.bar(ui, desk, commands);
@@ -127,7 +131,9 @@ impl Plan {
             .rect_stroke(rect, desk.look.room.corner, border, StrokeKind::Inside);
         self.refusal(ui, rect, desk);
         let below = Rect::from_min_max(rect.left_bottom(), room.right_bottom());
-        self.foot(ui, below, desk, *selection);
+        let is_free = self.tool == Tool::Select && self.drag.is_none();
+        let reading = standing.reading().filter(|_| is_free);
+        self.foot(ui, below, desk, *selection, reading);
         ui.advance_cursor_after_rect(room);
     }
 
@@ -281,8 +287,15 @@ impl Plan {
             }
             _ => thing.label.clone(),
         };
-        let labels = layout::labels(painter, look, camera, &model, selection, &caption);
+        let spots: Vec<PlanPoint> = site.spots.iter().map(Spot::plan_point).collect();
+        let marks = standing.marks(&to_screen, &spots);
+        let circles = spots.iter().map(|spot| paint::spot_rect(to_screen(*spot)));
+        // Numbers before names before the figures of the map.
+        let mut taken: Vec<Rect> = marks.iter().copied().chain(circles).collect();
+        let labels = layout::labels(painter, look, camera, &model, selection, &taken, &caption);
         paint::labels(painter, look, &labels);
+        taken.extend(labels.iter().map(layout::Label::hem));
+        standing.paint_over(painter, &to_screen, look, (&marks, taken));
         if let (Some(thing), Tool::Select) = (selection, self.tool) {
             paint::handles(painter, look, &drag::handles(site, thing, camera));
         }

@@ -8,10 +8,18 @@ use super::triangles::{filled, hatching};
 use crate::app::grounds::Selection;
 use crate::app::palette::Look;
 use crate::place::PlanPoint;
-use eframe::egui::{Color32, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, vec2};
+use eframe::egui::{Color32, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, Vec2, vec2};
 
 /// A crown of this radius on the screen shows its trunk, points.
 pub const TRUNK_FROM: f32 = 24.0;
+
+/// Of a spot's circle with its dark rim, points.
+const SPOT_RADIUS: f32 = 7.5;
+
+/// What a spot's circle covers.
+pub fn spot_rect(centre: Pos2) -> Rect {
+    Rect::from_center_size(centre, Vec2::splat(2.0 * SPOT_RADIUS))
+}
 
 /// The things, in the model's order, the selected one in amber.
 pub fn things(
@@ -136,7 +144,7 @@ fn figure(painter: &Painter, look: &Look, camera: Camera, thing: &Thing, rim: St
                 colours.text
             };
             // Dark around it, so that it stands out over whatever lies there.
-            painter.circle_filled(centre, 7.5, colours.card);
+            painter.circle_filled(centre, SPOT_RADIUS, colours.card);
             painter.circle_stroke(centre, 5.5, Stroke::new(1.8, colour));
             if *is_chosen {
                 painter.circle_filled(centre, 3.0, colour);
@@ -156,8 +164,7 @@ pub fn labels(painter: &Painter, look: &Look, labels: &[Label]) {
         } else {
             look.colours.skyline
         };
-        let hem = label.rect.expand2(vec2(2.0, 0.0));
-        painter.rect_filled(hem, 3.0, ground);
+        painter.rect_filled(label.hem(), 3.0, ground);
         painter.galley_with_override_text_color(label.rect.min, label.galley.clone(), label.colour);
     }
 }
@@ -232,11 +239,7 @@ pub fn cross(painter: &Painter, look: &Look, at: Pos2) {
 fn circle(centre: Pos2, radius: f32) -> Vec<Pos2> {
     const SIDES: u32 = 64;
     (0..=SIDES)
-        .map(|k| {
-            centre
-                + radius
-                    * eframe::egui::Vec2::angled(std::f32::consts::TAU * k as f32 / SIDES as f32)
-        })
+        .map(|k| centre + radius * Vec2::angled(std::f32::consts::TAU * k as f32 / SIDES as f32))
         .collect()
 }
 

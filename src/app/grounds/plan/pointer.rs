@@ -15,6 +15,11 @@ const REACH: f32 = 6.0;
 /// A press that moved no farther than this is a click, points.
 const STILL: f32 = 4.0;
 
+/// What a click cannot tell apart.
+fn near_m(camera: Camera) -> f64 {
+    2.0 * f64::from(STILL) / camera.view.points_per_m
+}
+
 impl Plan {
     pub(super) fn pointer(
         &mut self,
@@ -45,6 +50,13 @@ impl Plan {
             is_free: modifiers.command,
         };
         self.pan_and_zoom(ui, response, camera);
+        if self.is_standing {
+            self.snapped = None;
+            if response.hovered() {
+                ui.ctx().set_cursor_icon(CursorIcon::Crosshair);
+            }
+            return;
+        }
         let pointer = response.interact_pointer_pos().or(response.hover_pos());
         if self.tool == Tool::Select {
             self.work_on_things(
@@ -80,7 +92,7 @@ impl Plan {
             let from = self.drawn_from.take();
             self.drawn(from, at, camera)
         } else if response.clicked_by(PointerButton::Primary) {
-            self.set_point(at, camera)
+            self.set_point(at, near_m(camera))
         } else {
             false
         };
@@ -89,11 +101,10 @@ impl Plan {
         }
     }
 
-    /// Sets the tool's next point; whether the thing is done with it.
-    pub(super) fn set_point(&mut self, at: PlanPoint, camera: Camera) -> bool {
-        let is_near = |point: &PlanPoint| {
-            camera.to_screen(*point).distance(camera.to_screen(at)) <= 2.0 * STILL
-        };
+    /// Sets the tool's next point; whether the thing is done with it. A point no farther than
+    /// `near_m` from the last or the first is that one again.
+    pub(super) fn set_point(&mut self, at: PlanPoint, near_m: f64) -> bool {
+        let is_near = |point: &PlanPoint| point.distance_m(at) <= near_m;
         match self.tool.takes() {
             Takes::Things => false,
             Takes::Point | Takes::Circle => {
@@ -125,7 +136,7 @@ impl Plan {
         let far =
             from.filter(|from| camera.to_screen(*from).distance(camera.to_screen(to)) > STILL);
         let Some(from) = far else {
-            return self.set_point(to, camera);
+            return self.set_point(to, near_m(camera));
         };
         match (self.tool.takes(), self.points.is_empty()) {
             (Takes::Circle, _) => {
@@ -144,7 +155,7 @@ impl Plan {
                 self.points = vec![from, to];
                 false
             }
-            _ => self.set_point(to, camera),
+            _ => self.set_point(to, near_m(camera)),
         }
     }
 

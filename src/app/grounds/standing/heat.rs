@@ -49,12 +49,16 @@ pub fn levels((least, most): (f64, f64)) -> Vec<f64> {
         .collect()
 }
 
-/// The share of a range that a number of minutes stands at; where all is one, at the top.
+/// The share of a range that a number of minutes stands at; where all is one, at the top,
+/// or at the foot where it is none.
 pub fn share((least, most): (f64, f64), minutes: f64) -> f32 {
     if most > least {
         ((minutes - least) / (most - least)) as f32
-    } else {
+    } else if most > 0.0 {
         1.0
+    } else {
+        // Nowhere is anything seen: nothing of it is amber.
+        0.0
     }
 }
 
@@ -105,5 +109,6 @@ mod tests {
         }
         assert_eq!(share((10.0, 20.0), 15.0), 0.5);
         assert_eq!(share((10.0, 10.0), 10.0), 1.0);
+        assert_eq!(share((0.0, 0.0), 0.0), 0.0, "nothing seen is not the best");
     }
 }

@@ -21,7 +21,8 @@ use crate::plan::standing::Contour;
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use eframe::egui::{
-    Context, Painter, ProgressBar, Role, Sense, TextureHandle, TextureOptions, Ui, WidgetInfo, vec2,
+    Context, Painter, ProgressBar, Rect, Role, Sense, TextureHandle, TextureOptions, Ui,
+    WidgetInfo, vec2,
 };
 use job::{Asked, Found, News, Summing};
 use paint::Line;
@@ -54,6 +55,8 @@ pub struct Standing {
     is_placing: bool,
     /// The point of the map under the pointer, and whether it was clicked: seen while painting.
     pointed: Cell<Option<(PlanPoint, bool)>>,
+    /// What is read there.
+    reading: Option<String>,
 }
 
 /// The choices that a map belongs to; cheap to compare in every frame.
@@ -90,6 +93,7 @@ impl Default for Standing {
             is_stopped: false,
             is_placing: false,
             pointed: Cell::new(None),
+            reading: None,
         }
     }
 }
@@ -124,8 +128,42 @@ impl Standing {
         };
         paint::squares(painter, to_screen, &map.found.map.raster, map.texture.id());
         paint::contours(painter, to_screen, look, &map.lines);
-        paint::places(painter, to_screen, look, &map.found.best);
         self.pointed.set(pointed(painter, to_screen, map));
+    }
+
+    /// Whether the next click on the map makes a spot.
+    pub fn is_placing(&self) -> bool {
+        self.is_on && self.is_placing
+    }
+
+    /// What somebody at the point under the pointer has.
+    pub fn reading(&self) -> Option<&str> {
+        self.reading.as_deref()
+    }
+
+    /// Where the best places' numbers stand, which nothing is to cover.
+    pub fn marks(&self, to_screen: ToScreen<'_>, spots: &[PlanPoint]) -> Vec<Rect> {
+        let map = self.map.as_ref().filter(|_| self.is_on);
+        map.map_or_else(Vec::new, |map| {
+            paint::marks(to_screen, &map.found.best, spots)
+        })
+    }
+
+    /// Paints what is written on the map over the plan: the minutes of the lines where neither
+    /// a name nor a number stands, and the numbers.
+    pub fn paint_over(
+        &self,
+        painter: &Painter,
+        to_screen: ToScreen<'_>,
+        look: &Look,
+        (marks, mut taken): (&[Rect], Vec<Rect>),
+    ) {
+        let Some(map) = self.map.as_ref().filter(|_| self.is_on) else {
+            return;
+        };
+        taken.extend_from_slice(marks);
+        paint::figures(painter, to_screen, look, &map.lines, taken);
+        paint::numbers(painter, look, marks);
     }
 
     /// Shows the card: choices, progress, legend, the best places.
@@ -133,8 +171,10 @@ impl Standing {
         let Some(scene) = desk.scene else {
             self.worker.cancel();
             self.map = None;
+            self.reading = None;
             return;
         };
+        self.reading = None;
         self.take_news(ui.ctx(), desk);
         self.ask(ui.ctx(), desk);
         card(ui, desk.look, 0.0, |ui| {
@@ -355,12 +395,12 @@ impl Standing {
         for line in reading::costs(desk, &map.found) {
             text(ui, look, size, colour, &line);
         }
-        let pointed = self.pointed.get();
-        let line = match pointed {
-            Some((at, _)) => reading::pointed(desk, scene, (asked, sky), &map.found, at),
-            None => desk.words.text("standing-point-at"),
-        };
+        let line = desk.words.text("standing-point-at");
         text(ui, look, size, look.colours.lesser, &line);
+        let pointed = self.pointed.get();
+        // Read under the plan, where the pointer is: this card may be out of sight.
+        self.reading =
+            pointed.map(|(at, _)| reading::pointed(desk, scene, (asked, sky), &map.found, at));
         if let Some((at, true)) = pointed
             && self.is_placing
         {
@@ -436,6 +476,10 @@ fn stand(desk: &Desk<'_>, at: PlanPoint, commands: &mut Commands) {
     let mut spot = Spot::at(&name, at);
     spot.eye_height_m = site.people.adult_m;
     site.spots.push(spot);
+    let is_right = site.check_rules().is_ok();
     commands.push(Command::EditSite(Box::new(site)));
-    commands.push(Command::ChooseSpot(index));
+    // A refused change is said by the plan, and the chosen spot stays.
+    if is_right {
+        commands.push(Command::ChooseSpot(index));
+    }
 }

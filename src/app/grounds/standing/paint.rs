@@ -6,7 +6,7 @@ use crate::place::PlanPoint;
 use crate::plan::standing::{Raster, Stay};
 use crate::words::{Words, decimal};
 use eframe::egui::{
-    Align2, Color32, Mesh, Painter, Pos2, Rect, Shape, Stroke, TextureId, pos2, vec2,
+    Align2, Color32, Mesh, Painter, Pos2, Rect, Shape, Stroke, TextureId, Vec2, pos2, vec2,
 };
 
 /// How the plan's points fall on the screen.
@@ -46,49 +46,75 @@ pub struct Line {
     pub points: Vec<PlanPoint>,
 }
 
-/// The lines of equal minutes, each line of some length with its minutes written on it.
+/// Shorter lines of equal minutes are not drawn, points on the screen.
+const LEAST: f32 = 12.0;
+
+/// The lines of equal minutes.
 pub fn contours(painter: &Painter, to_screen: ToScreen<'_>, look: &Look, lines: &[Line]) {
-    /// Shorter lines carry no figure, and lines of a few points are not drawn.
-    const LEAST_FOR_TEXT: f32 = 70.0;
-    const LEAST: f32 = 12.0;
     let colours = &look.colours;
-    let mut taken: Vec<Rect> = Vec::new();
     for line in lines {
-        let points: Vec<Pos2> = line.points.iter().map(|at| to_screen(*at)).collect();
-        let length: f32 = points
-            .windows(2)
-            .map(|pair| pair[0].distance(pair[1]))
-            .sum();
-        if length < LEAST {
+        let points = on_screen(to_screen, line);
+        if length(&points) < LEAST {
             continue;
         }
         let shade = Stroke::new(2.6, colours.sky_shade.gamma_multiply(0.55));
         painter.add(Shape::line(points.clone(), shade));
-        painter.add(Shape::line(
-            points.clone(),
-            Stroke::new(1.1, colours.sky_text),
-        ));
-        if length < LEAST_FOR_TEXT {
-            continue;
-        }
+        painter.add(Shape::line(points, Stroke::new(1.1, colours.sky_text)));
+    }
+}
+
+/// The minutes of every line of some length, wherever they cover nothing of what is `taken`.
+pub fn figures(
+    painter: &Painter,
+    to_screen: ToScreen<'_>,
+    look: &Look,
+    lines: &[Line],
+    mut taken: Vec<Rect>,
+) {
+    let colours = &look.colours;
+    let visible = painter.clip_rect().shrink(4.0);
+    for line in lines {
         let font = look.font(look.sizes.least);
         let text = painter.layout_no_wrap(line.text.clone(), font, colours.sky_text);
-        let visible = painter.clip_rect().shrink(4.0);
-        // Halfway along where there is room, else nearer to an end.
-        let place = [0.5, 0.35, 0.65, 0.2, 0.8].into_iter().find_map(|share| {
-            let at = along(&points, share * length)?;
-            let rect = Align2::CENTER_CENTER.anchor_size(at, text.size());
-            let is_free =
-                visible.contains_rect(rect) && taken.iter().all(|other| !other.intersects(rect));
-            is_free.then_some(rect)
-        });
-        if let Some(rect) = place {
+        let points = on_screen(to_screen, line);
+        if let Some(rect) = figure_place(&points, text.size(), visible, &taken) {
             taken.push(rect.expand(10.0));
-            let ground = rect.expand2(vec2(3.0, 0.0));
-            painter.rect_filled(ground, 3.0, colours.sky_shade.gamma_multiply(0.8));
+            painter.rect_filled(ground_of(rect), 3.0, colours.sky_shade.gamma_multiply(0.8));
             painter.galley(rect.min, text, colours.sky_text);
         }
     }
+}
+
+/// Where a figure of some size goes on a line: halfway along where there is room, else nearer to
+/// an end; nowhere on a short line.
+fn figure_place(points: &[Pos2], size: Vec2, visible: Rect, taken: &[Rect]) -> Option<Rect> {
+    const LEAST_FOR_TEXT: f32 = 70.0;
+    let length = length(points);
+    if length < LEAST_FOR_TEXT {
+        return None;
+    }
+    [0.5, 0.35, 0.65, 0.2, 0.8].into_iter().find_map(|share| {
+        let rect = Align2::CENTER_CENTER.anchor_size(along(points, share * length)?, size);
+        let is_free = visible.contains_rect(rect)
+            && taken.iter().all(|other| !other.intersects(ground_of(rect)));
+        is_free.then_some(rect)
+    })
+}
+
+/// The ground under a figure.
+fn ground_of(figure: Rect) -> Rect {
+    figure.expand2(vec2(3.0, 0.0))
+}
+
+fn on_screen(to_screen: ToScreen<'_>, line: &Line) -> Vec<Pos2> {
+    line.points.iter().map(|at| to_screen(*at)).collect()
+}
+
+fn length(points: &[Pos2]) -> f32 {
+    points
+        .windows(2)
+        .map(|pair| pair[0].distance(pair[1]))
+        .sum()
 }
 
 /// The point so far along a line.
@@ -103,18 +129,33 @@ fn along(points: &[Pos2], mut far: f32) -> Option<Pos2> {
     points.last().copied()
 }
 
-/// The best places with their numbers.
-pub fn places(
-    painter: &Painter,
+/// Of a best place's number, points.
+const RADIUS: f32 = 9.0;
+
+/// Where the best places' numbers stand: each on its place, but above a spot that is there.
+pub fn marks(
     to_screen: ToScreen<'_>,
-    look: &Look,
     places: &[(PlanPoint, Stay)],
-) {
-    const RADIUS: f32 = 9.0;
+    spots: &[PlanPoint],
+) -> Vec<Rect> {
+    /// From a spot's middle, points: the number touches the spot's circle.
+    const APART: f32 = 17.0;
+    let spots: Vec<Pos2> = spots.iter().map(|spot| to_screen(*spot)).collect();
+    let mark = |(place, _): &(PlanPoint, Stay)| {
+        let at = to_screen(*place);
+        let spot = spots.iter().find(|spot| spot.distance(at) < APART);
+        let middle = spot.map_or(at, |spot| *spot - vec2(0.0, APART));
+        Rect::from_center_size(middle, Vec2::splat(2.0 * RADIUS))
+    };
+    places.iter().map(mark).collect()
+}
+
+/// The best places' numbers.
+pub fn numbers(painter: &Painter, look: &Look, marks: &[Rect]) {
     let colours = &look.colours;
     // The first on top.
-    for (index, (place, _)) in places.iter().enumerate().rev() {
-        let at = to_screen(*place);
+    for (index, mark) in marks.iter().enumerate().rev() {
+        let at = mark.center();
         painter.circle_filled(at, RADIUS, colours.sky_shade);
         painter.circle_stroke(at, RADIUS, Stroke::new(2.0, colours.seen));
         painter.text(
@@ -155,11 +196,51 @@ pub fn legend(painter: &Painter, rect: Rect, look: &Look, words: &Words, range: 
         );
         painter.galley(place.min, text, look.colours.lesser);
     };
-    mark(range.0, Align2::LEFT_TOP);
-    if range.1 > range.0 {
+    // Where everything is alike there is one figure, at the end of its colour.
+    if range.1 > range.0 || range.1 <= 0.0 {
+        mark(range.0, Align2::LEFT_TOP);
+    }
+    if range.1 > 0.0 {
         mark(range.1, Align2::RIGHT_TOP);
     }
     for level in heat::levels(range) {
         mark(level, Align2::CENTER_TOP);
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    /// A line from left to right, as long as it takes for a figure.
+    const LINE: [Pos2; 2] = [pos2(100.0, 100.0), pos2(400.0, 100.0)];
+    const VISIBLE: Rect = Rect::from_min_max(Pos2::ZERO, pos2(800.0, 600.0));
+
+    #[test]
+    fn a_figure_gives_way_to_names_and_numbers() {
+        let size = vec2(40.0, 12.0);
+        let free = figure_place(&LINE, size, VISIBLE, &[]).expect("room");
+        assert_eq!(free.center(), pos2(250.0, 100.0));
+        let name = Rect::from_center_size(free.center(), vec2(60.0, 14.0));
+        let beside = figure_place(&LINE, size, VISIBLE, &[name]).expect("room beside the name");
+        assert!(!beside.intersects(name), "{beside} over {name}");
+        let all = Rect::from_center_size(free.center(), vec2(400.0, 14.0));
+        assert_eq!(figure_place(&LINE, size, VISIBLE, &[all]), None);
+    }
+
+    #[test]
+    fn a_number_stands_above_the_spot_at_its_place_and_else_on_it() {
+        let to_screen = |at: PlanPoint| pos2(at.east_m as f32, -at.north_m as f32);
+        let stay = Stay::default();
+        let places = [
+            (PlanPoint::new(0.0, 0.0), stay),
+            (PlanPoint::new(60.0, 0.0), stay),
+        ];
+        let spot = PlanPoint::new(1.0, 1.0);
+        let marks = marks(&to_screen, &places, &[spot]);
+        let circle = Rect::from_center_size(to_screen(spot), Vec2::splat(15.0));
+        assert!(!marks[0].intersects(circle), "{} over {circle}", marks[0]);
+        assert!(marks[0].center().y < circle.center().y);
+        assert_eq!(marks[1].center(), pos2(60.0, 0.0));
     }
 }

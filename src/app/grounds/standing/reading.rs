@@ -154,12 +154,18 @@ pub fn costs(desk: &Desk<'_>, found: &Found) -> Vec<String> {
     let Some(here) = found.spots.get(desk.state.spot_index()) else {
         return Vec::new();
     };
+    let fewer = decimal(found.map.cost_of(&here.stay), 0);
+    let id = if fewer == "0" {
+        "standing-no-cost"
+    } else {
+        "standing-cost"
+    };
     let mut lines = vec![words.text_with(
-        "standing-cost",
+        id,
         &[
             ("spot", spot.name.clone()),
             ("minutes", decimal(here.stay.minutes, 0)),
-            ("fewer", decimal(found.map.cost_of(&here.stay), 0)),
+            ("fewer", fewer),
         ],
     )];
     let gain = found.map.gain(spot.plan_point(), &here.stay, GAIN_MIN);
