@@ -6,7 +6,7 @@ use super::arguments::StatureName;
 use super::civil_text::{self, CivilText};
 use super::fault::Fault;
 use crate::measure::{Progress, TimeScales, check_date};
-use crate::place::{Site, Stature, demo_site, demo_sites, slug};
+use crate::place::{MeasuredUse, Site, Spot, Stature, demo_site, demo_sites, slug};
 use crate::sky::Body;
 use crate::words::{Words, decimal};
 use chrono::{DateTime, FixedOffset, NaiveDate};
@@ -184,6 +184,25 @@ pub(super) fn site_with_terrain(text: &str, around: &mut Surroundings<'_>) -> Re
         site.far = Some(Arc::new(far));
     }
     Ok(site)
+}
+
+/// Says among the messages what of the measured skylines does not count at a spot.
+pub(super) fn tell_what_is_left_out(
+    site: &Site,
+    spot: &Spot,
+    around: &mut Surroundings<'_>,
+) -> Result<(), Fault> {
+    let id = match site.measured_use(spot) {
+        MeasuredUse::FarPartsOnly {
+            is_any_left_out: true,
+        } => "cli-measured-far-only",
+        MeasuredUse::LeftOut => "cli-measured-left-out",
+        _ => return Ok(()),
+    };
+    let said = around
+        .words
+        .text_with(id, &[("spot", spot.name.as_str()), ("site", &site.name)]);
+    Ok(writeln!(around.messages, "{said}")?)
 }
 
 fn bad_text(words: &Words, id: &str, place: &str, text: &str) -> Fault {

@@ -147,15 +147,9 @@ impl Skyline {
         }
     }
 
-    /// What blocks a point of the sky; `None` where nothing does. Behind the floor it is what
-    /// makes the floor.
-    pub fn blocker_at(&self, azimuth: Angle, altitude: Angle) -> Option<Blocker> {
-        self.source_at(azimuth, altitude)
-            .map(|source| self.blocker_of(source))
-    }
-
     /// What blocks a point of the sky, by its label: `None` where nothing does; the inner `None`
-    /// where it is the measured skyline, terrain or the level horizon.
+    /// where it is the measured skyline, terrain or the level horizon. Behind the floor it is what
+    /// makes the floor.
     pub fn blocked_by(&self, azimuth: Angle, altitude: Angle) -> Option<Option<&str>> {
         self.source_at(azimuth, altitude)
             .map(|source| self.name_of(source))

@@ -8,7 +8,7 @@
 use super::{Lamps, NightError, Sight, target};
 use crate::light::Eye;
 use crate::measure::{Angle, DateOutOfRange, Moment, TimeScales, check_date, civil};
-use crate::place::{Obstacle, Site, Skyline, Spot};
+use crate::place::{Grounds, Obstacle, Site, Skyline, Spot, Stature};
 use crate::sky::{Body, Ephemeris, Horizontal, Observer, Span, View};
 use chrono::NaiveDate;
 
@@ -165,11 +165,13 @@ impl Daylight {
                     date: date.to_string(),
                 })
             })?;
+        let grounds = Grounds::new(request.site, Some(date));
+        let skyline = grounds.skyline(request.spot, Stature::Adult);
         let search = Search {
             request,
             span: &span,
             observer: &request.site.observer(),
-            skyline: &request.site.skyline(request.spot),
+            skyline: &skyline,
         };
         let minutes: Vec<Minute> = (0..=MINUTES_A_DAY + BEYOND_MIN)
             .map(|minute| search.minute(start.plus_seconds(minute as f64 * STEP_S)))
@@ -318,13 +320,21 @@ fn separation(a: Horizontal, b: Horizontal) -> Angle {
 /// The outline of each building by itself, by its label; never of anything else.
 fn buildings(site: &Site, spot: &Spot) -> Vec<(String, Skyline)> {
     let is_building = |obstacle: &&Obstacle| matches!(obstacle, Obstacle::Building { .. });
+    let bare = Spot {
+        skyline: Vec::new(),
+        skyline_far: Vec::new(),
+        ..spot.clone()
+    };
     let outline = |building: &Obstacle| {
         let alone = Site {
             skyline: Vec::new(),
+            skyline_far: Vec::new(),
+            spots: vec![bare.clone()],
+            far: None,
             obstacles: vec![building.clone()],
             ..site.clone()
         };
-        (building.label().to_owned(), alone.skyline(spot))
+        (building.label().to_owned(), alone.skyline(&bare))
     };
     let buildings = site.obstacles.iter().filter(is_building);
     buildings.map(outline).collect()

@@ -224,3 +224,37 @@ fn the_years_at_the_ends_are_planned_and_say_what_civil_time_is() {
         assert_moment(&document["start"], date);
     }
 }
+
+#[test]
+fn what_was_measured_elsewhere_is_told_of_where_it_does_not_count() {
+    let folder = tempfile::tempdir().expect("a temporary folder");
+    let file = folder.path().join("lawn.site.ron");
+    let text = "(name: \"Lawn\", latitude_deg: 51.0, longitude_deg: 0.0, time_zone: \"UTC\", \
+                spots: [(name: \"mark\"), (name: \"pond lawn\", east_m: 20.0)], \
+                skyline: [(90.0, 4.0), (270.0, 6.0)], skyline_far: [(200.0, 300.0)])";
+    std::fs::write(&file, text).expect("written");
+    let site = file.to_str().expect("a plain path");
+    let at = |command: &str, spot: &str| {
+        run(&[
+            command,
+            "--site",
+            site,
+            "--date",
+            "2026-12-05",
+            "--spot",
+            spot,
+        ])
+    };
+    for command in ["night", "daylight"] {
+        let mark = at(command, "mark");
+        assert_eq!((mark.code, mark.err.as_str()), (0, ""));
+        let lawn = at(command, "pond lawn");
+        assert_eq!(lawn.code, 0);
+        assert!(
+            lawn.err.starts_with("pond lawn: ") && lawn.err.contains("left out"),
+            "{command}: {}",
+            lawn.err
+        );
+        assert_eq!(lawn.err.lines().count(), 1);
+    }
+}

@@ -240,7 +240,7 @@ fn a_footprint_in_two_parts_that_meet_at_a_corner_is_seen_from_its_near_sides() 
         base_m: None,
         height_m: 6.0,
     };
-    let seen = skyline(&[block.clone()], &spot(0.0, 0.0));
+    let seen = skyline(std::slice::from_ref(&block), &spot(0.0, 0.0));
     for azimuth_deg in [-2.0, -1.0, 1.0, 5.0, 10.0] {
         let side = |a, b| {
             ray(azimuth_deg, &spot(0.0, 0.0), a, b)

@@ -121,7 +121,7 @@ proptest! {
                 || seen.breaks().iter().any(|edge| (edge.degrees() - azimuth).abs() < 1e-7);
             prop_assert!(near_edge || is_hidden == (clearance < 0.0),
                 "{azimuth} {altitude}: {is_hidden}, {clearance}");
-            let blocked = seen.blocker_at(degrees(azimuth), degrees(altitude));
+            let blocked = seen.blocked_by(degrees(azimuth), degrees(altitude));
             prop_assert!(near_edge || blocked.is_some() == is_hidden);
         }
     }

@@ -2,7 +2,9 @@
 
 use chrono::NaiveDate;
 use dimmet::measure::{Angle, Moment, TimeScales};
-use dimmet::place::{Haze, Obstacle, PlanPoint, Site, SkylinePoint};
+use dimmet::place::{
+    Haze, Leafless, Obstacle, PlanPoint, Sector, Site, SkylinePoint, Spot, YearDay,
+};
 use dimmet::plan::{Daylight, DaylightRequest, Drift, Sight};
 use dimmet::sky::{Body, Ephemeris, Horizontal};
 
@@ -163,6 +165,75 @@ fn nothing_but_a_building_gives_shade() {
         assert!(!found.plain.is_empty(), "behind {what} Venus is plain");
         assert_eq!(found.slots, [], "{what} gives no shade");
     }
+}
+
+#[test]
+fn what_was_measured_is_no_part_of_a_buildings_shade() {
+    // Too low to give shade; what was measured stands high over it.
+    let mut shed = hall(1.0);
+    if let Obstacle::Building { eaves_m, .. } = &mut shed {
+        *eaves_m = 2.5;
+    }
+    let point = |azimuth_deg: f64, altitude_deg: f64| SkylinePoint {
+        azimuth_deg,
+        altitude_deg,
+    };
+    let high = vec![
+        point(90.0, 0.0),
+        point(91.0, 60.0),
+        point(169.0, 60.0),
+        point(170.0, 0.0),
+    ];
+    let mut from_here = yard(vec![shed.clone()]);
+    from_here.spots[0].skyline = high.clone();
+    let mut far = yard(vec![shed]);
+    far.spots.push(Spot {
+        skyline: high,
+        skyline_far: vec![Sector {
+            from_deg: 80.0,
+            to_deg: 180.0,
+        }],
+        ..Spot::at("lawn", PlanPoint::new(-30.0, 0.0))
+    });
+    for (what, site) in [("from the spot", from_here), ("far away", far)] {
+        let found = find(&site, VENUS_WEST, Body::Venus);
+        assert!(!found.plain.is_empty(), "Venus is plain");
+        assert_eq!(found.slots, [], "measured {what} it gives no shade");
+    }
+}
+
+#[test]
+fn bare_trees_let_a_planet_through_by_day() {
+    let limes = |leafless| {
+        let lime = |index: i32| Obstacle::Tree {
+            label: "limes".into(),
+            east_m: 6.0 * f64::from(index),
+            north_m: -8.0,
+            base_m: None,
+            height_m: 12.0,
+            width_m: 8.0,
+            gap_m: None,
+            trunk_m: None,
+            leafless,
+        };
+        (-5..6).map(lime).collect()
+    };
+    let winter = Leafless {
+        from: YearDay { month: 11, day: 15 },
+        to: YearDay { month: 4, day: 20 },
+        see_through: 0.9,
+    };
+    let plain = |site: Site| find(&site, VENUS_WEST, Body::Venus).plain;
+    let minutes = |site: Site| -> f64 {
+        let plain = plain(site);
+        let seconds = plain.iter().map(|s| s.end.seconds_since(s.start));
+        seconds.sum::<f64>() / 60.0
+    };
+    let (in_leaf, bare) = (
+        minutes(yard(limes(None))),
+        minutes(yard(limes(Some(winter)))),
+    );
+    assert!(bare > in_leaf + 60.0, "{in_leaf} and {bare} minutes");
 }
 
 #[test]

@@ -35,6 +35,7 @@ pub(super) fn run(
     if body == Body::Sun {
         return Err(Fault::Input(words.text("cli-daylight-sun")));
     }
+    resolve::tell_what_is_left_out(&site, spot, around)?;
     let sight = Sight::of_site(&site).map_err(NightError::from)?;
     let request = DaylightRequest {
         site: &site,

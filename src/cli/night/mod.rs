@@ -50,6 +50,7 @@ pub(super) fn run(
     let spot = site.resolve_spot(arguments.spot.as_deref())?;
     let date = resolve::date(words, "--date", &arguments.date)?;
     let stature = resolve::stature(arguments.stature);
+    resolve::tell_what_is_left_out(&site, spot, around)?;
     let planned = Planned::new(&site, (spot, stature), date, scales)?;
     let output = match arguments.format.unwrap_or(Format::Text) {
         Format::Text => text::page(words, &planned, &[Half::Dusk, Half::Dawn]).into_bytes(),
