@@ -392,13 +392,15 @@ fn keys_set_points_a_metre_apart_however_small_the_plan_is_shown() {
     window.get_by_label(PLAN).focus();
     window.run();
     press(&mut window, Key::Num4);
+    // Away from the mark, in which no wall may stand.
+    press_with(&mut window, Modifiers::SHIFT, Key::ArrowRight);
     press(&mut window, Key::Space);
     press(&mut window, Key::ArrowRight);
     press(&mut window, Key::Space);
     press(&mut window, Key::ArrowUp);
     press(&mut window, Key::Space);
     press(&mut window, Key::Enter);
-    assert_eq!(points(&window, 1), [(0.0, 0.0), (1.0, 0.0), (1.0, 1.0)]);
+    assert_eq!(points(&window, 1), [(10.0, 0.0), (11.0, 0.0), (11.0, 1.0)]);
 }
 
 #[test]

@@ -114,6 +114,9 @@ fn an_outline_traced_over_a_panorama_becomes_the_skyline() {
         .get_by_role_and_label(eframe::egui::Role::TextInput, "Picture")
         .type_text(file.to_str().expect("a plain path"));
     harness.run();
+    harness.key_press(eframe::egui::Key::Enter);
+    harness.run();
+    harness.get_by_label("Known directions");
     click(&mut harness, "Load");
     click(&mut harness, "Panorama, even upwards");
     // The picture fills the canvas across or up, whichever is less, and stands in its middle.

@@ -159,9 +159,13 @@ caution-rules = Local rules and licensed practice come first.
 # Help
 keys = Keys
 turn-view-keys = Ctrl ← →, ↑ ↓
-turn-view = Turn and tilt the horizon view (Tab to it first)
+turn-view = Turn and tilt the horizon view or the skyline (Tab to it first)
 widen-view-keys = + −
 widen-view = Narrow and widen it
+move-point-keys = Ctrl ← → ↑ ↓
+move-point = Move the chosen point of the measured skyline by 0.1°
+delete-point-keys = Delete
+delete-point = Take that point away
 zoom-keys = Ctrl + / Ctrl − / Ctrl 0
 zoom = Larger, smaller, usual size
 status-keys = ← → one minute · ⇧ ten · Page a day · Home best moment · Space let it run · T this minute · F1 help

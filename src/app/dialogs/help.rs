@@ -64,6 +64,8 @@ pub fn show(ui: &mut Ui, look: &Look, words: &Words) {
             for (keys, what) in [
                 ("turn-view-keys", "turn-view"),
                 ("widen-view-keys", "widen-view"),
+                ("move-point-keys", "move-point"),
+                ("delete-point-keys", "delete-point"),
             ] {
                 figure(ui, look.bold(size), colours.text, &words.text(keys));
                 figure(ui, look.font(size), colours.text, &words.text(what));

@@ -159,8 +159,8 @@ impl Handles {
         }
     }
 
-    /// Draws the handles: all of them while the pointer is near the measured line or one is
-    /// chosen.
+    /// Draws the handles: all of them always, or only while the pointer is near the measured line
+    /// or the drawing has the focus.
     pub fn paint(
         &self,
         painter: &Painter,
@@ -168,10 +168,11 @@ impl Handles {
         response: &Response,
         owned: &Owned<'_>,
         place: &impl Place,
+        always: bool,
     ) {
         let pointer = response.hover_pos();
         let is_near = pointer.is_some_and(|at| nearest(owned, place, at, NEAR).is_some());
-        if !is_near && !self.is_dragging && !response.has_focus() {
+        if !always && !is_near && !self.is_dragging && !response.has_focus() {
             return;
         }
         let under = pointer.and_then(|at| nearest(owned, place, at, REACH));

@@ -8,7 +8,7 @@ use crate::app::grounds::Selection;
 use crate::app::palette::Look;
 use crate::place::PlanPoint;
 use eframe::egui::Galley;
-use eframe::egui::{Align2, Color32, Painter, Pos2, Rect, vec2};
+use eframe::egui::{Align2, Color32, Painter, Pos2, Rect, Vec2, vec2};
 use std::sync::Arc;
 
 /// A name that found a place.
@@ -90,7 +90,15 @@ pub fn labels(
         let places = if is_inside && shows_trunk {
             vec![Align2::CENTER_TOP.anchor_size(middle + vec2(0.0, 4.0), size)]
         } else if is_inside {
-            vec![Align2::CENTER_CENTER.anchor_size(middle, size)]
+            // Where a spot's name lies over the middle, above or below it if that is inside too.
+            let aside = vec2(0.0, size.y + 4.0);
+            let has_room = 3.0 * size.y + 12.0 < 2.0 * half.y;
+            let offsets = [Vec2::ZERO, -aside, aside];
+            offsets
+                .into_iter()
+                .take(if has_room { 3 } else { 1 })
+                .map(|offset| Align2::CENTER_CENTER.anchor_size(middle + offset, size))
+                .collect()
         } else {
             vec![
                 Align2::CENTER_TOP.anchor_size(middle + below, size),
@@ -121,7 +129,7 @@ pub fn labels(
 }
 
 /// A thing's middle on the screen, and how far it reaches to either side of it.
-fn room(thing: &Thing, camera: Camera) -> Option<(Pos2, eframe::egui::Vec2)> {
+fn room(thing: &Thing, camera: Camera) -> Option<(Pos2, Vec2)> {
     let round = |at: &PlanPoint, radius_m: f64, least: f32| {
         let half = camera.points(radius_m).max(least);
         Some((camera.to_screen(*at), vec2(half, half)))

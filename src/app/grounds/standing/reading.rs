@@ -1,14 +1,13 @@
 //! What is said of single points of the map.
 
 use super::job::{Asked, Found, Summing};
-use crate::app::command::Command;
 use crate::app::grounds::Desk;
 use crate::app::lookout::says::Says;
 use crate::app::scene::Scene;
 use crate::measure::Angle;
 use crate::place::{Grounds, PlanPoint, Skyline};
-use crate::plan::standing::{Cell, Stay, WhyLeftOut};
-use crate::plan::{BodyNight, Edge, NightSky, Patch, PatchStay, Window};
+use crate::plan::standing::{Cell, Stay};
+use crate::plan::{BodyNight, Edge, NightSky, Window};
 use crate::words::{decimal, spoken_cause};
 
 /// Somebody at a point, in the shown half-night.
@@ -134,12 +133,8 @@ pub fn pointed(
             let said = place(desk, scene, asked_of, (at, &stay));
             desk.words.text_with("standing-pointed", &[("said", said)])
         }
-        Cell::LeftOut(why) => desk.words.text(match why {
-            WhyLeftOut::Outside => "standing-outside",
-            WhyLeftOut::Excluded => "standing-excluded",
-            WhyLeftOut::InObstacle => "standing-in-obstacle",
-        }),
-        Cell::Waiting => desk.words.text("standing-point-at"),
+        Cell::LeftOut(why) => desk.words.left_out(desk.state.site(), at, why),
+        Cell::Waiting => desk.words.text("square-waiting"),
     }
 }
 
@@ -180,32 +175,9 @@ pub fn costs(desk: &Desk<'_>, found: &Found) -> Vec<String> {
         None => words.text("standing-no-gain"),
     });
     if let Some(patch) = &here.patch {
-        lines.push(crowd(desk, patch));
+        lines.push(words.patch(spot, Some(patch)));
     }
     lines
-}
-
-/// What a crowd has: the worst off and the one in the middle.
-fn crowd(desk: &Desk<'_>, patch: &Patch) -> String {
-    let words = desk.words;
-    let one = |one: &PatchStay| {
-        let height_m = desk.state.site().people.eye_height_m(one.stature);
-        let id = Command::ChooseStature(one.stature).wording();
-        let height = decimal(height_m, 2);
-        let who = words.text_with(id.unwrap_or_default(), &[("height", height)]);
-        words.text_with(
-            "standing-one",
-            &[
-                ("minutes", decimal(one.stay.minutes, 0)),
-                ("who", who),
-                ("where", whereabouts(desk, one.at)),
-            ],
-        )
-    };
-    words.text_with(
-        "standing-crowd",
-        &[("worst", one(&patch.worst)), ("median", one(&patch.median))],
-    )
 }
 
 /// The label of what a window's end has to do with, where it is an obstacle.

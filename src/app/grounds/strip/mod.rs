@@ -150,7 +150,7 @@ impl Strip {
         if let Some(owned) = owned {
             let inside = painter.with_clip_rect(sky.intersect(painter.clip_rect()));
             self.handles
-                .paint(&inside, desk.look, &response, &owned, &frame);
+                .paint(&inside, desk.look, &response, &owned, &frame, false);
         }
         if response.has_focus() {
             let stroke = Stroke::new(2.0, desk.look.colours.chosen);

@@ -52,8 +52,8 @@ pub fn paint(
         chosen_way(&inside, desk, frame, &stretch);
     }
     let marks = bodies(&inside, desk, scene, frame, ways);
-    names(&inside, desk, scene, frame, &marks);
-    altitudes(&inside, desk, frame);
+    let figures = altitudes(&inside, desk, frame);
+    names(&inside, desk, scene, frame, (&marks, &figures));
     painter.rect_stroke(
         frame.rect,
         0.0,
@@ -160,13 +160,14 @@ fn bodies(
     marks
 }
 
-/// Names of the bodies over the sky, and of what stands there inside the shapes.
+/// Names of the bodies over the sky, and of what stands there inside the shapes; none over the
+/// figures of the altitudes where there is room beside them.
 fn names(
     painter: &Painter,
     desk: &Desk<'_>,
     scene: &Scene<'_>,
     frame: &Frame,
-    marks: &[(Body, Pos2)],
+    (marks, figures): (&[(Body, Pos2)], &[Rect]),
 ) {
     let look = desk.look;
     let font = || look.font(look.sizes.least);
@@ -220,7 +221,10 @@ fn names(
         texts.push((text, !is_inside));
     }
     let bounds = frame.rect.shrink(2.0);
-    for (place, (text, is_on_sky)) in labels::arrange(&wanted, bounds, &[]).into_iter().zip(texts) {
+    for (place, (text, is_on_sky)) in labels::arrange(&wanted, bounds, figures)
+        .into_iter()
+        .zip(texts)
+    {
         match place {
             Some(rect) if is_on_sky => shaded(painter, look, rect.min, &text),
             Some(rect) => {
@@ -231,9 +235,10 @@ fn names(
     }
 }
 
-/// Every ten degrees of altitude.
-fn altitudes(painter: &Painter, desk: &Desk<'_>, frame: &Frame) {
+/// Every ten degrees of altitude; gives the figures' places.
+fn altitudes(painter: &Painter, desk: &Desk<'_>, frame: &Frame) -> Vec<Rect> {
     let look = desk.look;
+    let mut places = Vec::new();
     let step = if frame.top_deg > 50.0 { 20 } else { 10 };
     for degrees in (step..90).step_by(step) {
         let at = frame.pos_beside(-frame.half_deg(), degrees as f64);
@@ -249,7 +254,9 @@ fn altitudes(painter: &Painter, desk: &Desk<'_>, frame: &Frame) {
         let text = painter.layout_no_wrap(text, look.font(look.sizes.least), Color32::WHITE);
         let corner = pos2(at.x + 9.0, at.y - 0.5 * text.size().y);
         shaded(painter, look, corner, &text);
+        places.push(Rect::from_min_size(corner, text.size()));
     }
+    places
 }
 
 /// The ruler of azimuths below the strip: compass points, and degrees where there is room.

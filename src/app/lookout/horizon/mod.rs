@@ -131,8 +131,9 @@ impl Horizon {
         choose_body(ui, &response, &model, &layout, commands);
         if let Some(owned) = moved {
             let inside = ui.painter().with_clip_rect(camera.rect);
+            // Switched on, it shows at once what can be taken hold of.
             self.handles
-                .paint(&inside, &scene.look, &response, &owned, &camera);
+                .paint(&inside, &scene.look, &response, &owned, &camera, true);
         }
         if let Some(room) = note {
             corner::show(ui, scene, room, owned.is_some(), &mut self.moves_measured);

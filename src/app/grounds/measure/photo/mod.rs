@@ -16,7 +16,7 @@ use crate::place::survey::photo::{
     Level, PhotoFit, PhotoMark, PictureKind, PictureSize, Pixel, Projection, fit,
 };
 use crate::words::decimal;
-use eframe::egui::{TextureHandle, Ui};
+use eframe::egui::{Key, TextureHandle, Ui};
 use std::path::PathBuf;
 
 /// What a click on the picture does.
@@ -157,9 +157,11 @@ impl Photo {
         ui.horizontal(|ui| {
             let label = ui.label(label);
             let room = (ui.available_width() - 100.0).max(120.0);
-            ui.add(line(&mut self.path).desired_width(room))
+            let field = ui
+                .add(line(&mut self.path).desired_width(room))
                 .labelled_by(label.id);
-            if ui.button(desk.words.text("photo-load")).clicked() {
+            let is_entered = field.lost_focus() && ui.input(|input| input.key_pressed(Key::Enter));
+            if ui.button(desk.words.text("photo-load")).clicked() || is_entered {
                 let path = PathBuf::from(self.path.trim());
                 match read(&path, MOST_SIDE) {
                     Ok(picture) => self.take(picture),
