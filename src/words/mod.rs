@@ -4,6 +4,7 @@
 //! [`number`] and [`time`] and handed to messages as text, so that they look alike everywhere.
 
 mod daylight;
+mod grounds;
 mod night;
 mod number;
 mod terrain;
@@ -19,13 +20,14 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 9] = [
+const ENGLISH: [&str; 10] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
     include_str!("../../assets/words/en/cli.ftl"),
     include_str!("../../assets/words/en/window.ftl"),
     include_str!("../../assets/words/en/lookout.ftl"),
     include_str!("../../assets/words/en/daylight.ftl"),
+    include_str!("../../assets/words/en/grounds.ftl"),
     include_str!("../../assets/words/en/measure.ftl"),
     include_str!("../../assets/words/en/plan.ftl"),
     include_str!("../../assets/words/en/spots.ftl"),
