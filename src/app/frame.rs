@@ -12,14 +12,14 @@ use super::command::{Command, Commands};
 use super::palette::{Look, Theme};
 use super::pickers::picker_row;
 use super::transport::transport_ui;
-use super::widgets::{bold, choice, command_button, figure};
+use super::widgets::{bold, card_frame, choice, command_button, figure};
 use super::window::DesktopWindow;
 use crate::measure::CivilScale;
 use crate::place::Stature;
 use crate::words::decimal;
 use eframe::egui::{
-    Align, Button, Label, Layout, Rect, RichText, Role, ScrollArea, Sense, Stroke, Ui, UiBuilder,
-    WidgetInfo, pos2, vec2,
+    Align, Align2, Area as Overlay, Button, Id, Label, Layout, Order, Rect, RichText, Role,
+    ScrollArea, Sense, Stroke, Ui, UiBuilder, WidgetInfo, pos2, vec2,
 };
 
 /// From this width on, points, the right column stands beside the view.
@@ -83,12 +83,6 @@ impl DesktopWindow {
         ui.scope_builder(UiBuilder::new().max_rect(rest), |ui| {
             ui.spacing_mut().item_spacing = vec2(8.0, look.room.inside);
             self.top_bar(ui, &look, commands);
-            if let Some(notice) = self.notices.first() {
-                notice_line(ui, &look, notice, |ui| {
-                    command_button(ui, &self.words, Command::DismissNotice, commands);
-                });
-            }
-            self.terrain.show(ui, &look, &self.words, commands);
             if self.state.area == Area::Grounds {
                 self.grounds_ui(ui, commands);
             } else if is_wide {
@@ -97,9 +91,38 @@ impl DesktopWindow {
                 self.narrow(ui, &look, commands);
             }
         });
+        self.said(ui, &look, rest, commands);
         ui.scope_builder(UiBuilder::new().max_rect(status), |ui| {
             self.status_line(ui, &look)
         });
+    }
+
+    /// Work that goes on and the oldest notice, over the foot of the window: nothing moves because
+    /// there is something to say.
+    fn said(&self, ui: &Ui, look: &Look, foot: Rect, commands: &mut Commands) {
+        const WIDEST: f32 = 1000.0;
+        let notice = self.notices.first();
+        if notice.is_none() && !self.terrain.has_something_to_say() {
+            return;
+        }
+        let width = foot.width().min(WIDEST);
+        Overlay::new(Id::unique("notice"))
+            .order(Order::Foreground)
+            .pivot(Align2::CENTER_BOTTOM)
+            .fixed_pos(foot.center_bottom())
+            .show(ui.ctx(), |ui| {
+                ui.set_width(width);
+                if self.terrain.has_something_to_say() {
+                    card_frame(look).show(ui, |ui| {
+                        self.terrain.show(ui, look, &self.words, commands);
+                    });
+                }
+                if let Some(notice) = notice {
+                    notice_line(ui, look, notice, |ui| {
+                        command_button(ui, &self.words, Command::DismissNotice, commands);
+                    });
+                }
+            });
     }
 
     fn top_bar(&self, ui: &mut Ui, look: &Look, commands: &mut Commands) {

@@ -106,6 +106,11 @@ impl Terrain {
         self.asked = None;
     }
 
+    /// Whether there is.
+    pub fn has_something_to_say(&self) -> bool {
+        self.is_stopped || self.worker.share().is_some()
+    }
+
     /// How far the work is, with a button that stops it or begins it anew; nothing while there is
     /// nothing to say.
     pub fn show(&self, ui: &mut Ui, look: &Look, words: &Words, commands: &mut Commands) {
