@@ -6,6 +6,7 @@
 mod behind;
 mod daylight;
 mod edges;
+mod phenomena;
 mod reference;
 mod rise_set;
 mod standing;

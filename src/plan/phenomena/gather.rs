@@ -1,0 +1,154 @@
+//! All events of a span, stretch by stretch, in threads.
+
+use super::alignments::alignments;
+use super::course::Course;
+use super::search::{Lost, Stretch};
+use super::{Circle, Event, PhenomenaError};
+use super::{crescents, distances, elongations, rings, stations};
+use crate::measure::{Moment, Progress, TimeScales};
+use crate::sky::{Body, Ephemeris};
+use std::collections::BTreeMap;
+use std::num::NonZeroUsize;
+use std::sync::atomic::{AtomicUsize, Ordering};
+use std::sync::mpsc;
+
+/// What one thread works on before it hands on what it found, days: short enough that the first
+/// events come at once, long enough that the looks around the ends cost little.
+const STRETCH_DAYS: f64 = 730.5;
+
+/// Which events.
+#[derive(Clone, Copy, Debug)]
+pub struct PhenomenaRequest<'a> {
+    /// The span's first instant.
+    pub from: Moment,
+    /// The first instant past it.
+    pub to: Moment,
+    /// How TT leads to UT1.
+    pub scales: TimeScales,
+    /// Whose; the Sun and the Moon have none of their own here.
+    pub bodies: &'a [Body],
+    /// How many threads work at it.
+    pub threads: NonZeroUsize,
+}
+
+/// Hands each event of the span on, in order of time, as soon as it and all before it are known.
+/// Stops early, without an error, when the progress is cancelled.
+///
+/// # Errors
+/// The span is empty or leaves the ephemeris, or a search fails; the events handed on before are
+/// right.
+pub fn phenomena(
+    ephemeris: &Ephemeris,
+    request: &PhenomenaRequest<'_>,
+    progress: &Progress,
+    mut hand_on: impl FnMut(Event),
+) -> Result<(), PhenomenaError> {
+    let stretches = stretches(request)?;
+    progress.set_total(stretches.len() as u64);
+    let next = AtomicUsize::new(0);
+    let (sender, receiver) = mpsc::channel();
+    let work = |sender: mpsc::Sender<_>| {
+        while !progress.is_cancelled() {
+            let number = next.fetch_add(1, Ordering::Relaxed);
+            let Some(stretch) = stretches.get(number) else {
+                return;
+            };
+            let found = events(ephemeris, request, *stretch);
+            if sender.send((number, found)).is_err() {
+                return; // an earlier stretch failed
+            }
+        }
+    };
+    std::thread::scope(|scope| {
+        for _ in 0..request.threads.get() {
+            let sender = sender.clone();
+            scope.spawn(|| work(sender));
+        }
+        drop(sender);
+        let mut waiting = BTreeMap::new();
+        let mut due = 0;
+        for (number, found) in receiver {
+            waiting.insert(number, found);
+            while let Some(found) = waiting.remove(&due) {
+                due += 1;
+                let events: Vec<Event> = found?;
+                events.into_iter().for_each(&mut hand_on);
+                progress.advance(1);
+            }
+        }
+        Ok(())
+    })
+}
+
+/// The span cut up.
+fn stretches(request: &PhenomenaRequest<'_>) -> Result<Vec<Stretch>, PhenomenaError> {
+    let from = request.from.tt().days_since_j2000();
+    let to = request.to.tt().days_since_j2000();
+    if !(from.is_finite() && to.is_finite() && from < to) {
+        return Err(PhenomenaError::Empty);
+    }
+    // Refused as a whole, not after the part that is covered; this fits nothing beyond the ends.
+    for end in [request.from, request.to] {
+        Ephemeris::new().cover(end.tt(), end.tt(), &[])?;
+    }
+    let count = ((to - from) / STRETCH_DAYS).ceil() as usize;
+    let start = |k: usize| (from + k as f64 * STRETCH_DAYS).min(to);
+    Ok((0..count)
+        .map(|k| Stretch {
+            from_days: start(k),
+            to_days: start(k + 1),
+        })
+        .collect())
+}
+
+/// All events of one stretch, in order of time.
+fn events(
+    ephemeris: &Ephemeris,
+    request: &PhenomenaRequest<'_>,
+    stretch: Stretch,
+) -> Result<Vec<Event>, PhenomenaError> {
+    let mut found = Vec::new();
+    for body in request.bodies {
+        if !matches!(body, Body::Sun | Body::Moon) {
+            let course = Course::new(ephemeris, request.scales, *body, stretch)?;
+            found.extend(of_body(&course)?);
+        }
+    }
+    found.sort_by(|a: &Event, b: &Event| a.moment.seconds_since(b.moment).total_cmp(&0.0));
+    Ok(found)
+}
+
+/// One kind of search along a course.
+type Search = fn(&Course) -> Result<Vec<Event>, Lost>;
+
+/// A planet's events of every kind.
+fn of_body(course: &Course) -> Result<Vec<Event>, PhenomenaError> {
+    const ALL: [Search; 3] = [
+        |course| alignments(course, Circle::Longitude),
+        |course| alignments(course, Circle::RightAscension),
+        stations::stations,
+    ];
+    const MERCURY: [Search; 2] = [elongations::greatest_elongations, crescents::dichotomies];
+    const VENUS: [Search; 5] = [
+        elongations::greatest_elongations,
+        crescents::dichotomies,
+        crescents::greatest_illuminated_extents,
+        crescents::magnitude_minima,
+        distances::distances,
+    ];
+    const MARS: [Search; 1] = [distances::distances];
+    const SATURN: [Search; 1] = [rings::rings];
+    let own: &[Search] = match course.body {
+        Body::Mercury => &MERCURY,
+        Body::Venus => &VENUS,
+        Body::Mars => &MARS,
+        Body::Saturn => &SATURN,
+        _ => &[],
+    };
+    let mut found = Vec::new();
+    for search in ALL.iter().chain(own) {
+        let events = search(course).map_err(|lost| PhenomenaError::lost(course.body, lost))?;
+        found.extend(events);
+    }
+    Ok(found)
+}
