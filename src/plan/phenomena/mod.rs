@@ -13,6 +13,7 @@ mod elongations;
 mod error;
 mod event;
 mod gather;
+mod local;
 mod rings;
 mod search;
 mod stations;
@@ -20,6 +21,7 @@ mod stations;
 pub use error::PhenomenaError;
 pub use event::{Circle, Event, Kind, Side, Value};
 pub use gather::{PhenomenaRequest, phenomena};
+pub use local::{Circumstances, Lookout};
 
 pub(super) use alignments::alignments;
 pub(super) use course::Course;
