@@ -170,6 +170,7 @@ mod tests {
             "cli-more-",
             "phenomena-kind-",
             "phenomena-value-",
+            "contact-",
         ];
         for file in ENGLISH {
             for line in file.lines() {

@@ -16,6 +16,7 @@ impl Words {
         let places = match value {
             Value::Elongation(_) | Value::RingOpening(_) | Value::Magnitude(_) => 2,
             Value::LitAreaArcsec2(_) => 0,
+            Value::SeparationArcsec(_) => 1,
             Value::DistanceAu(_) => 4,
         };
         let id = format!("phenomena-value-{}", value.unit());

@@ -144,3 +144,57 @@ fn spans_and_bodies_that_are_none() {
     body("pluto").refused(&["--body", "pluto"]);
     run(&["phenomena", "--from", "2026-01-01"]).refused(&["--to"]);
 }
+
+/// The transit of Mercury in 2032. Source: the published catalogues (from memory): 6:41, 6:43,
+/// 8:54, 11:05 and 11:07 UT, 572 arcsec; the whole of it above the horizon of England.
+#[test]
+fn a_transit_comes_with_its_contacts_and_cautions() {
+    let site = ["--site", "fennick-common", "--body", "mercury"];
+    let json = [&site[..], &["--format", "json"]].concat();
+    let document = run(&asked("2032-11-13", "2032-11-13", &json)).json();
+    assert!(
+        document["cautions"][0]
+            .as_str()
+            .expect("a text")
+            .contains("never look at the Sun")
+    );
+    let events = document["events"].as_array().expect("a list");
+    let transit = events
+        .iter()
+        .find(|event| event["kind"] == "transit")
+        .expect("the transit");
+    assert_eq!(transit["other"], "sun");
+    assert_eq!(transit["radii"]["sun_arcsec_at_1_au"], 959.63);
+    assert!(
+        (transit["value"].as_f64().expect("a number") - 572.0).abs() < 1.0,
+        "{transit}"
+    );
+    let names = ["I", "II", "greatest", "III", "IV"];
+    let minutes = ["06:4", "06:4", "08:5", "11:0", "11:0"];
+    for contacts in [&transit["contacts"], &transit["local"]["contacts"]] {
+        let contacts = contacts.as_array().expect("a list");
+        assert_eq!(contacts.len(), 5);
+        for (contact, (name, minute)) in contacts.iter().zip(names.iter().zip(minutes)) {
+            assert_eq!(contact["name"], *name);
+            let utc = contact["utc"].as_str().expect("a time");
+            assert!(
+                utc.starts_with(&format!("2032-11-13T{minute}")),
+                "{name}: {utc}"
+            );
+        }
+    }
+    assert!(transit["contacts"][0].get("alt_deg").is_none());
+    let local = &transit["local"]["contacts"][2];
+    assert!(
+        local["sun_alt_deg"].as_f64().expect("a number") > 5.0,
+        "{local}"
+    );
+
+    let page = run(&asked("2032-11-13", "2032-11-13", &site)).succeeds();
+    assert!(page.starts_with("Caution: never look at the Sun"), "{page}");
+    assert!(
+        page.contains("959.63″ at 1 au") && page.contains("IV, off the disc"),
+        "{page}"
+    );
+    assert!(!page.contains('«') && !page.contains("{ $"), "{page}");
+}

@@ -10,4 +10,5 @@ mod phenomena;
 mod reference;
 mod rise_set;
 mod standing;
+mod transits;
 mod windows;

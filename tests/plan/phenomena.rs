@@ -42,6 +42,7 @@ pub fn list(
         to: moment(to),
         scales: TimeScales::new(),
         bodies,
+        lookout: None,
         threads: NonZeroUsize::new(threads).expect("threads"),
     };
     let mut events = Vec::new();
@@ -160,7 +161,7 @@ fn no_event_is_missing_and_none_is_extra() {
     let mut found: BTreeMap<(String, String, String), usize> = BTreeMap::new();
     for event in events() {
         let name = table_name(event.kind);
-        let is_in_table = !name.starts_with("ring") && !name.ends_with("gee");
+        let is_in_table = !name.starts_with("ring") && !name.ends_with("gee") && name != "transit";
         for year in (2021..=2039).step_by(2) {
             let (start, end) = (
                 days(&format!("{year}-01-01T00:00:00")),
@@ -298,6 +299,7 @@ fn a_cancelled_list_ends_early() {
         to: moment("2100-01-01T00:00:00"),
         scales: TimeScales::new(),
         bodies: &[Body::Neptune],
+        lookout: None,
         threads: NonZeroUsize::MIN,
     };
     let mut count = 0;

@@ -8,7 +8,17 @@ phenomena-altitude-note = Altitudes are without refraction.
 phenomena-reversed = --to is { $to }, but must not be before --from, which is { $from }
 phenomena-no-planet = --body is { $body }, but must be one of { $known }
 phenomena-hidden = { $altitude }, hidden
+phenomena-transit-title = Transit of { $body }, { $date } (Sun { $sun }″ at 1 au, planet { $radius } km)
 
+contact-i = I, first touch
+contact-ii = II, wholly on the disc
+contact-greatest = deepest
+contact-iii = III, reaches the limb
+contact-iv = IV, off the disc
+
+column-contact = contact
+column-separation = from centre
+column-position-angle = position angle
 column-date = date
 column-time = time
 column-event = event
@@ -38,9 +48,11 @@ phenomena-kind-perigee = { $body } is nearest to the Earth
 phenomena-kind-apogee = { $body } is farthest from the Earth
 phenomena-kind-ring-opening-greatest = { $body }’s rings are open widest for the time being
 phenomena-kind-ring-opening-least = { $body }’s rings are narrowest for the time being
+phenomena-kind-transit = { $body } crosses the face of the Sun (solar filters only)
 phenomena-kind-ring-plane-crossing = { $body }’s rings are seen edge-on
 
 # Values with their units.
+phenomena-value-arcsec = { $number }″
 phenomena-value-deg = { $number }°
 phenomena-value-arcsec2 = { $number } square arcsec
 phenomena-value-mag = magnitude { $number }

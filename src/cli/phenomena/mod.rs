@@ -8,7 +8,7 @@ use super::arguments::{Format, PhenomenaArguments};
 use super::{Fault, Surroundings, resolve};
 use crate::measure::{Moment, Progress, TimeScales, civil};
 use crate::place::Site;
-use crate::plan::phenomena::{Circumstances, Event, Lookout, phenomena};
+use crate::plan::phenomena::{Event, Lookout, phenomena};
 use crate::plan::phenomena::{PhenomenaError, PhenomenaRequest};
 use crate::sky::{Body, Ephemeris};
 use crate::words::CivilClock;
@@ -27,13 +27,33 @@ const PLANETS: [Body; 7] = [
     Body::Neptune,
 ];
 
-/// The events of a span of days, each with a site's circumstances if one was named.
+/// The events of a span of days.
 struct Listed {
     from: NaiveDate,
     to: NaiveDate,
     clock: CivilClock,
     site_name: Option<String>,
-    events: Vec<(Event, Option<Circumstances>)>,
+    events: Vec<Event>,
+}
+
+/// What stands before a list in which the Sun itself is looked at.
+const CAUTIONS: [&str; 5] = [
+    "daylight-caution-sun",
+    "caution-filters",
+    "caution-viewers",
+    "caution-finders",
+    "caution-rules",
+];
+
+impl Listed {
+    /// The messages to warn with.
+    fn cautions(&self) -> &'static [&'static str] {
+        if self.events.iter().any(Event::is_transit) {
+            &CAUTIONS
+        } else {
+            &[]
+        }
+    }
 }
 
 pub(super) fn run(
@@ -49,7 +69,7 @@ pub(super) fn run(
     let listed = list(arguments, scales, site.as_ref(), around)?;
     let output = match arguments.format.unwrap_or(Format::Text) {
         Format::Text => text::page(words, &listed).into_bytes(),
-        Format::Json => record::json(&listed)?,
+        Format::Json => record::json(words, &listed)?,
         Format::Csv => rows::csv(&listed)?,
     };
     around.output.write_all(&output)?;
@@ -70,23 +90,28 @@ fn list(
     let refused = |error: PhenomenaError| Fault::Input(error.to_string());
     let span = moments((from, to), clock).ok_or_else(|| refused(PhenomenaError::Empty))?;
     let bodies = bodies(arguments, around)?;
+    let place = match site {
+        None => None,
+        Some(site) => {
+            let spot = site.resolve_spot(arguments.spot.as_deref())?;
+            Some((site.observer(), site.skyline(spot)))
+        }
+    };
     let request = PhenomenaRequest {
         from: span.0,
         to: span.1,
         scales,
         bodies: &bodies,
+        lookout: place
+            .as_ref()
+            .map(|(observer, skyline)| Lookout { observer, skyline }),
         threads: std::thread::available_parallelism().unwrap_or(NonZeroUsize::MIN),
     };
-    let ephemeris = Ephemeris::new();
-    let mut found = Vec::new();
-    phenomena(&ephemeris, &request, &Progress::new(), |event| {
-        found.push(event);
+    let mut events = Vec::new();
+    phenomena(&Ephemeris::new(), &request, &Progress::new(), |event| {
+        events.push(event);
     })
     .map_err(refused)?;
-    let events = match site {
-        None => found.into_iter().map(|event| (event, None)).collect(),
-        Some(site) => at_site(&ephemeris, arguments, site, found)?,
-    };
     Ok(Listed {
         from,
         to,
@@ -149,29 +174,4 @@ fn bodies(arguments: &PhenomenaArguments, around: &Surroundings<'_>) -> Result<V
         bodies.extend(PLANETS);
     }
     Ok(bodies)
-}
-
-/// The events with where their bodies stand from a spot of the site.
-fn at_site(
-    ephemeris: &Ephemeris,
-    arguments: &PhenomenaArguments,
-    site: &Site,
-    found: Vec<Event>,
-) -> Result<Vec<(Event, Option<Circumstances>)>, Fault> {
-    let spot = site.resolve_spot(arguments.spot.as_deref())?;
-    let observer = site.observer();
-    let skyline = site.skyline(spot);
-    let lookout = Lookout {
-        observer: &observer,
-        skyline: &skyline,
-    };
-    found
-        .into_iter()
-        .map(|event| {
-            lookout
-                .circumstances(ephemeris, event.body, event.moment)
-                .map(|local| (event, Some(local)))
-                .map_err(|error| Fault::Input(error.to_string()))
-        })
-        .collect()
 }

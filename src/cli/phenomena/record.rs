@@ -4,7 +4,9 @@ use super::Listed;
 use crate::cli::moment::{MomentRecord, MomentWriter};
 use crate::cli::{Fault, JSON_VERSION, rounded};
 use crate::measure::{Angle, Tt};
-use crate::plan::phenomena::{Circumstances, Event};
+use crate::plan::phenomena::{Circumstances, Contact, Event, SUN_SEMIDIAMETER_ARCSEC};
+use crate::sky::Body;
+use crate::words::Words;
 use chrono::{DateTime, TimeDelta};
 use serde::Serialize;
 
@@ -16,6 +18,9 @@ struct Document<'a> {
     time_zone: &'static str,
     #[serde(skip_serializing_if = "Option::is_none")]
     site: Option<&'a str>,
+    /// Where the Sun itself is looked at.
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    cautions: Vec<String>,
     events: Vec<EventRecord>,
 }
 
@@ -23,6 +28,7 @@ struct Document<'a> {
 struct EventRecord {
     kind: &'static str,
     body: &'static str,
+    other: Option<&'static str>,
     tt: String,
     #[serde(flatten)]
     moment: MomentRecord,
@@ -30,11 +36,42 @@ struct EventRecord {
     value: f64,
     unit: &'static str,
     #[serde(skip_serializing_if = "Option::is_none")]
+    radii: Option<RadiiRecord>,
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    contacts: Vec<ContactRecord>,
+    #[serde(skip_serializing_if = "Option::is_none")]
     local: Option<LocalRecord>,
+}
+
+/// What the contacts hang on.
+#[derive(Serialize)]
+struct RadiiRecord {
+    sun_arcsec_at_1_au: f64,
+    planet_km: f64,
+}
+
+#[derive(Serialize)]
+struct ContactRecord {
+    name: &'static str,
+    tt: String,
+    #[serde(flatten)]
+    moment: MomentRecord,
+    separation_arcsec: f64,
+    position_angle_deg: f64,
+    #[serde(flatten)]
+    place: Option<PlaceRecord>,
 }
 
 #[derive(Serialize)]
 struct LocalRecord {
+    #[serde(flatten)]
+    place: PlaceRecord,
+    #[serde(skip_serializing_if = "Vec::is_empty")]
+    contacts: Vec<ContactRecord>,
+}
+
+#[derive(Serialize)]
+struct PlaceRecord {
     alt_deg: f64,
     az_deg: f64,
     sun_alt_deg: f64,
@@ -43,7 +80,7 @@ struct LocalRecord {
 }
 
 /// The document, with its last line break.
-pub(super) fn json(listed: &Listed) -> Result<Vec<u8>, Fault> {
+pub(super) fn json(words: &Words, listed: &Listed) -> Result<Vec<u8>, Fault> {
     let moments = MomentWriter {
         scales: listed.clock.scales,
         zone: listed.clock.zone,
@@ -54,10 +91,11 @@ pub(super) fn json(listed: &Listed) -> Result<Vec<u8>, Fault> {
         to: listed.to.to_string(),
         time_zone: listed.clock.zone.name(),
         site: listed.site_name.as_deref(),
+        cautions: listed.cautions().iter().map(|id| words.text(id)).collect(),
         events: listed
             .events
             .iter()
-            .map(|(event, local)| record(moments, event, local.as_ref()))
+            .map(|event| record(moments, event))
             .collect(),
     };
     let mut text = serde_json::to_vec_pretty(&document).map_err(std::io::Error::from)?;
@@ -65,21 +103,53 @@ pub(super) fn json(listed: &Listed) -> Result<Vec<u8>, Fault> {
     Ok(text)
 }
 
-fn record(moments: MomentWriter, event: &Event, local: Option<&Circumstances>) -> EventRecord {
+fn record(moments: MomentWriter, event: &Event) -> EventRecord {
+    let contacts = |contacts: &[Contact]| {
+        let records = contacts
+            .iter()
+            .map(|contact| contact_record(moments, contact));
+        records.collect()
+    };
     EventRecord {
         kind: event.kind.name(),
         body: event.body.name(),
+        other: event.other.map(Body::name),
         tt: tt_text(event.moment.tt()),
         moment: moments.record(event.moment),
         delta_t_s: rounded(event.moment.delta_t_s(), 3),
         value: rounded(event.value.number(), 7),
         unit: event.value.unit(),
-        local: local.map(|local| LocalRecord {
+        radii: event.is_transit().then(|| RadiiRecord {
+            sun_arcsec_at_1_au: SUN_SEMIDIAMETER_ARCSEC,
+            planet_km: event.body.equatorial_radius_km(),
+        }),
+        contacts: contacts(&event.contacts),
+        local: event.local.map(|local| LocalRecord {
+            place: local.into(),
+            contacts: contacts(&event.local_contacts),
+        }),
+    }
+}
+
+fn contact_record(moments: MomentWriter, contact: &Contact) -> ContactRecord {
+    ContactRecord {
+        name: contact.name.name(),
+        tt: tt_text(contact.moment.tt()),
+        moment: moments.record(contact.moment),
+        separation_arcsec: rounded(contact.separation.arcsec(), 3),
+        position_angle_deg: degrees(contact.position_angle),
+        place: contact.local.map(PlaceRecord::from),
+    }
+}
+
+impl From<Circumstances> for PlaceRecord {
+    fn from(local: Circumstances) -> Self {
+        Self {
             alt_deg: degrees(local.place.altitude),
             az_deg: degrees(local.place.azimuth.wrapped()),
             sun_alt_deg: degrees(local.sun_altitude),
             is_clear: local.is_clear,
-        }),
+        }
     }
 }
 

@@ -1,16 +1,18 @@
-//! Events as CSV: one line an event.
+//! Events as CSV: one line an event; the contacts of transits are left to JSON and the page.
 
 use super::Listed;
 use super::record::tt_text;
 use crate::cli::Fault;
 use crate::cli::moment::MomentWriter;
 use crate::measure::Angle;
+use crate::sky::Body;
 use csv::Writer;
 use std::io;
 
-const COLUMNS: [&str; 12] = [
+const COLUMNS: [&str; 13] = [
     "kind",
     "body",
+    "other",
     "tt",
     "utc",
     "local_time",
@@ -32,7 +34,8 @@ pub(super) fn csv(listed: &Listed) -> Result<Vec<u8>, Fault> {
     let mut writer = Writer::from_writer(Vec::new());
     let failed = |error: csv::Error| Fault::Output(io::Error::from(error));
     writer.write_record(COLUMNS).map_err(failed)?;
-    for (event, local) in &listed.events {
+    for event in &listed.events {
+        let local = event.local;
         let moment = moments.record(event.moment);
         let degrees = |angle: Option<Angle>| {
             angle.map_or_else(String::new, |angle| format!("{:.7}", angle.degrees()))
@@ -40,6 +43,7 @@ pub(super) fn csv(listed: &Listed) -> Result<Vec<u8>, Fault> {
         let record = [
             event.kind.name().to_owned(),
             event.body.name().to_owned(),
+            event.other.map_or("", Body::name).to_owned(),
             tt_text(event.moment.tt()),
             moment.utc,
             moment.local_time,

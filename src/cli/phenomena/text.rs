@@ -2,12 +2,16 @@
 
 use super::Listed;
 use crate::cli::page::{Page, Side};
-use crate::measure::CivilScale;
-use crate::plan::phenomena::{Circumstances, Event};
-use crate::words::Words;
+use crate::measure::{Angle, CivilScale};
+use crate::plan::phenomena::{Contact, Event, SUN_SEMIDIAMETER_ARCSEC};
+use crate::words::{Words, decimal};
 
 pub(super) fn page(words: &Words, listed: &Listed) -> String {
     let mut page = Page::default();
+    for caution in listed.cautions() {
+        page.line(&words.text(caution));
+    }
+    page.gap();
     let dates = [
         ("from", words.weekday_date(listed.from)),
         ("to", words.weekday_date(listed.to)),
@@ -22,7 +26,7 @@ pub(super) fn page(words: &Words, listed: &Listed) -> String {
     let clock = listed.clock;
     page.line(&words.text_with("phenomena-clock", &[("zone", clock.zone.name())]));
     let is_ut1 = |event: &Event| clock.scales.civil(event.moment).1 == CivilScale::Ut1;
-    if listed.events.iter().any(|(event, _)| is_ut1(event)) {
+    if listed.events.iter().any(is_ut1) {
         page.line(&words.text("clock-is-ut1"));
     }
     if listed.site_name.is_some() {
@@ -34,7 +38,73 @@ pub(super) fn page(words: &Words, listed: &Listed) -> String {
     } else {
         table(&mut page, words, listed);
     }
+    let transits = listed.events.iter().filter(|event| event.is_transit());
+    transits.for_each(|event| transit(&mut page, words, listed, event));
     page.text()
+}
+
+/// A transit's contacts beneath the table: the site's, or
+/// else those for the Earth's centre.
+fn transit(page: &mut Page, words: &Words, listed: &Listed, event: &Event) {
+    page.gap();
+    let title = [
+        ("body", words.body(event.body)),
+        ("date", words.weekday_date(listed.clock.date(event.moment))),
+        ("sun", decimal(SUN_SEMIDIAMETER_ARCSEC, 2)),
+        ("radius", decimal(event.body.equatorial_radius_km(), 1)),
+    ];
+    page.line(&words.text_with("phenomena-transit-title", &title));
+    let contacts = match event.local {
+        None => &event.contacts,
+        Some(_) => &event.local_contacts,
+    };
+    let mut head = vec![
+        words.text("column-contact"),
+        words.text("column-time"),
+        words.text("column-separation"),
+        words.text("column-position-angle"),
+    ];
+    if event.local.is_some() {
+        head.push(words.text("column-sun-altitude"));
+    }
+    let rows: Vec<Vec<String>> = contacts
+        .iter()
+        .map(|contact| contact_row(words, listed, contact))
+        .collect();
+    page.table(
+        &head,
+        &rows,
+        &[Side::Left, Side::Right, Side::Right, Side::Right],
+    );
+}
+
+fn contact_row(words: &Words, listed: &Listed, contact: &Contact) -> Vec<String> {
+    let local = listed.clock.local(contact.moment);
+    let mut row = vec![
+        words.text(&format!("contact-{}", contact.name.name().to_lowercase())),
+        local.format("%-H:%M:%S").to_string(),
+        words.text_with(
+            "arcseconds",
+            &[("arcseconds", decimal(contact.separation.arcsec(), 1))],
+        ),
+        words.degrees(contact.position_angle, 1),
+    ];
+    row.extend(
+        contact
+            .local
+            .map(|local| altitude(words, local.sun_altitude, local.is_clear)),
+    );
+    row
+}
+
+/// An altitude, and whether it is hidden.
+fn altitude(words: &Words, altitude: Angle, is_clear: bool) -> String {
+    let altitude = words.degrees(altitude, 0);
+    if is_clear {
+        altitude
+    } else {
+        words.text_with("phenomena-hidden", &[("altitude", altitude)])
+    }
 }
 
 fn table(page: &mut Page, words: &Words, listed: &Listed) {
@@ -55,17 +125,12 @@ fn table(page: &mut Page, words: &Words, listed: &Listed) {
     let rows: Vec<Vec<String>> = listed
         .events
         .iter()
-        .map(|(event, local)| row(words, listed, event, local.as_ref()))
+        .map(|event| row(words, listed, event))
         .collect();
     page.table(&head, &rows, &sides);
 }
 
-fn row(
-    words: &Words,
-    listed: &Listed,
-    event: &Event,
-    local: Option<&Circumstances>,
-) -> Vec<String> {
+fn row(words: &Words, listed: &Listed, event: &Event) -> Vec<String> {
     let minute = listed.clock.minute(event.moment);
     let mut row = vec![
         words.weekday_date(minute.date()),
@@ -73,13 +138,8 @@ fn row(
         words.event(event),
         words.event_value(event.value),
     ];
-    if let Some(local) = local {
-        let altitude = words.degrees(local.place.altitude, 0);
-        row.push(if local.is_clear {
-            altitude
-        } else {
-            words.text_with("phenomena-hidden", &[("altitude", altitude)])
-        });
+    if let Some(local) = &event.local {
+        row.push(altitude(words, local.place.altitude, local.is_clear));
         row.push(words.degrees(local.sun_altitude, 0));
     }
     row

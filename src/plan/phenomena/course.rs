@@ -1,6 +1,7 @@
 //! A body's way in the Earth's sky, looked at in even steps.
 
 use super::search::{self, Lost, Stretch, Turn};
+use super::sight::Sight;
 use super::{Event, Kind, Side, Value};
 use crate::measure::search::Crossing;
 use crate::measure::{Angle, Moment, TimeScales, Tt};
@@ -105,10 +106,29 @@ impl Course {
 
     /// Zeros in the stretch of something that is read off each look.
     pub fn zeros(&self, read: impl Fn(&Look) -> f64) -> Result<Vec<Crossing>, Lost> {
-        let values: Vec<f64> = self.looks.iter().map(&read).collect();
-        let mut found = search::zeros(|at| read(&self.look(at)), &self.ticks, &values)?;
-        found.retain(|crossing| self.stretch.has(crossing.at));
+        let mut found = self.zeros_around(read)?;
+        found.retain(|crossing| self.holds(crossing.at));
         Ok(found)
+    }
+
+    /// Zeros in the stretch and up to two steps before and after it.
+    pub fn zeros_around(&self, read: impl Fn(&Look) -> f64) -> Result<Vec<Crossing>, Lost> {
+        let values: Vec<f64> = self.looks.iter().map(&read).collect();
+        search::zeros(|at| read(&self.look(at)), &self.ticks, &values)
+    }
+
+    /// Whether an instant lies in the stretch.
+    pub fn holds(&self, days: f64) -> bool {
+        self.stretch.has(days)
+    }
+
+    /// The sky from the Earth's centre along the way.
+    pub fn sight(&self) -> Sight<'_> {
+        Sight {
+            span: &self.span,
+            scales: self.scales,
+            lookout: None,
+        }
     }
 
     /// Turns in the stretch of something that is read off each look.
@@ -146,7 +166,7 @@ impl Course {
             .collect();
         let change = |a: f64, b: f64| growth(&self.look(a), &self.look(b));
         let mut found = search::turns(change, &self.ticks, &growths, is_sought)?;
-        found.retain(|turn| self.stretch.has(turn.at));
+        found.retain(|turn| self.holds(turn.at));
         Ok(found)
     }
 
@@ -155,8 +175,12 @@ impl Course {
         Event {
             kind,
             body: self.body,
+            other: None,
             moment: self.moment(days),
             value,
+            contacts: Vec::new(),
+            local: None,
+            local_contacts: Vec::new(),
         }
     }
 }

@@ -1,5 +1,6 @@
 //! What can happen, and what is told of it.
 
+use super::Circumstances;
 use crate::measure::{Angle, Moment};
 use crate::sky::Body;
 
@@ -54,6 +55,8 @@ pub enum Kind {
     RingOpeningLeast,
     /// The Earth passes through the plane of Saturn's rings.
     RingPlaneCrossing,
+    /// Mercury or Venus before the Sun's disc; the instant is that of the least separation.
+    Transit,
 }
 
 /// A quantity with its unit.
@@ -69,6 +72,39 @@ pub enum Value {
     DistanceAu(f64),
     /// Saturnicentric latitude of the Earth, north positive.
     RingOpening(Angle),
+    /// Apparent angle between the centres of two bodies, told in arcseconds.
+    SeparationArcsec(Angle),
+}
+
+/// One of the moments of a transit.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
+pub enum ContactName {
+    /// The planet's disc touches the Sun's from outside, coming on.
+    First,
+    /// It touches the limb from inside, having come on.
+    Second,
+    /// The centres are nearest to each other.
+    Greatest,
+    /// It touches the limb from inside, going off.
+    Third,
+    /// It touches the limb from outside, having gone off.
+    Fourth,
+}
+
+/// A moment of a transit as seen from one place.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Contact {
+    /// Which.
+    pub name: ContactName,
+    /// When.
+    pub moment: Moment,
+    /// Apparent angle between the centres.
+    pub separation: Angle,
+    /// Position angle of the planet's centre from the Sun's, from north of date through east,
+    /// [0°, 360°).
+    pub position_angle: Angle,
+    /// Where the planet and the Sun then stand; `None` for the Earth's centre.
+    pub local: Option<Circumstances>,
 }
 
 /// Something that happens at an instant.
@@ -78,10 +114,32 @@ pub struct Event {
     pub kind: Kind,
     /// To which body.
     pub body: Body,
+    /// The second body, if two take part.
+    pub other: Option<Body>,
     /// When.
     pub moment: Moment,
     /// The quantity that the kind is about.
     pub value: Value,
+    /// A transit's moments as seen from the Earth's centre, in order of time: those that occur.
+    pub contacts: Vec<Contact>,
+    /// Where the body stands at the moment as seen from the lookout that was given.
+    pub local: Option<Circumstances>,
+    /// A transit's moments as seen from there, in order of time. Where the planet misses the disc
+    /// only the least separation is among them.
+    pub local_contacts: Vec<Contact>,
+}
+
+impl ContactName {
+    /// The name used in files.
+    pub const fn name(self) -> &'static str {
+        match self {
+            Self::First => "I",
+            Self::Second => "II",
+            Self::Greatest => "greatest",
+            Self::Third => "III",
+            Self::Fourth => "IV",
+        }
+    }
 }
 
 impl Side {
@@ -130,7 +188,15 @@ impl Kind {
             Self::RingOpeningGreatest => "ring_opening_greatest",
             Self::RingOpeningLeast => "ring_opening_least",
             Self::RingPlaneCrossing => "ring_plane_crossing",
+            Self::Transit => "transit",
         }
+    }
+}
+
+impl Event {
+    /// Whether it is one before the Sun's disc, which nobody looks at without a solar filter.
+    pub fn is_transit(&self) -> bool {
+        self.kind == Kind::Transit
     }
 }
 
@@ -139,6 +205,7 @@ impl Value {
     pub const fn number(self) -> f64 {
         match self {
             Self::Elongation(angle) | Self::RingOpening(angle) => angle.degrees(),
+            Self::SeparationArcsec(angle) => angle.arcsec(),
             Self::LitAreaArcsec2(number) | Self::Magnitude(number) | Self::DistanceAu(number) => {
                 number
             }
@@ -149,6 +216,7 @@ impl Value {
     pub const fn unit(self) -> &'static str {
         match self {
             Self::Elongation(_) | Self::RingOpening(_) => "deg",
+            Self::SeparationArcsec(_) => "arcsec",
             Self::LitAreaArcsec2(_) => "arcsec2",
             Self::Magnitude(_) => "mag",
             Self::DistanceAu(_) => "au",

@@ -3,10 +3,11 @@
 use super::alignments::alignments;
 use super::course::Course;
 use super::search::{Lost, Stretch};
-use super::{Circle, Event, PhenomenaError};
+use super::transits::transits;
+use super::{Circle, Event, Lookout, PhenomenaError};
 use super::{crescents, distances, elongations, rings, stations};
 use crate::measure::{Moment, Progress, TimeScales};
-use crate::sky::{Body, Ephemeris};
+use crate::sky::{Body, Ephemeris, Epoch};
 use std::collections::BTreeMap;
 use std::num::NonZeroUsize;
 use std::sync::atomic::{AtomicUsize, Ordering};
@@ -27,6 +28,8 @@ pub struct PhenomenaRequest<'a> {
     pub scales: TimeScales,
     /// Whose; the Sun and the Moon have none of their own here.
     pub bodies: &'a [Body],
+    /// The place whose circumstances are wanted too.
+    pub lookout: Option<Lookout<'a>>,
     /// How many threads work at it.
     pub threads: NonZeroUsize,
 }
@@ -111,7 +114,19 @@ fn events(
     for body in request.bodies {
         if !matches!(body, Body::Sun | Body::Moon) {
             let course = Course::new(ephemeris, request.scales, *body, stretch)?;
-            found.extend(of_body(&course)?);
+            let lost = |lost| PhenomenaError::lost(*body, lost);
+            let mut events = of_body(&course).map_err(lost)?;
+            if matches!(body, Body::Mercury | Body::Venus) {
+                events.extend(transits(&course, request.lookout).map_err(lost)?);
+            }
+            if let Some(lookout) = request.lookout {
+                for event in &mut events {
+                    let local = |epoch: &Epoch<'_>| lookout.circumstances_at(epoch, *body);
+                    let days = event.moment.tt().days_since_j2000();
+                    event.local = Some(course.at(days, local));
+                }
+            }
+            found.extend(events);
         }
     }
     found.sort_by(|a: &Event, b: &Event| a.moment.seconds_since(b.moment).total_cmp(&0.0));
@@ -121,8 +136,8 @@ fn events(
 /// One kind of search along a course.
 type Search = fn(&Course) -> Result<Vec<Event>, Lost>;
 
-/// A planet's events of every kind.
-fn of_body(course: &Course) -> Result<Vec<Event>, PhenomenaError> {
+/// A planet's events of every kind but transits.
+fn of_body(course: &Course) -> Result<Vec<Event>, Lost> {
     const ALL: [Search; 3] = [
         |course| alignments(course, Circle::Longitude),
         |course| alignments(course, Circle::RightAscension),
@@ -147,8 +162,7 @@ fn of_body(course: &Course) -> Result<Vec<Event>, PhenomenaError> {
     };
     let mut found = Vec::new();
     for search in ALL.iter().chain(own) {
-        let events = search(course).map_err(|lost| PhenomenaError::lost(course.body, lost))?;
-        found.extend(events);
+        found.extend(search(course)?);
     }
     Ok(found)
 }

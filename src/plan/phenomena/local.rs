@@ -1,8 +1,8 @@
 //! An event as a site has it.
 
-use crate::measure::{Angle, Moment};
+use crate::measure::Angle;
 use crate::place::Skyline;
-use crate::sky::{Body, Ephemeris, Epoch, Horizontal, Observer, OutsideEphemeris};
+use crate::sky::{Body, Epoch, Horizontal, Observer};
 
 /// A place from which events are looked at.
 #[derive(Clone, Copy, Debug)]
@@ -26,20 +26,6 @@ pub struct Circumstances {
 
 impl Lookout<'_> {
     /// Where the body stands.
-    ///
-    /// # Errors
-    /// The instant lies outside the ephemeris.
-    pub fn circumstances(
-        &self,
-        ephemeris: &Ephemeris,
-        body: Body,
-        moment: Moment,
-    ) -> Result<Circumstances, OutsideEphemeris> {
-        let span = ephemeris.cover(moment.tt(), moment.tt(), &[body])?;
-        Ok(self.circumstances_at(&span.at(moment), body))
-    }
-
-    /// Where the body stands at an instant that is at hand.
     pub(super) fn circumstances_at(&self, epoch: &Epoch<'_>, body: Body) -> Circumstances {
         let view = epoch.seen_by(self.observer);
         let place = view.place(body);

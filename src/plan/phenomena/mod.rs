@@ -16,12 +16,15 @@ mod gather;
 mod local;
 mod rings;
 mod search;
+mod sight;
 mod stations;
+mod transits;
 
 pub use error::PhenomenaError;
-pub use event::{Circle, Event, Kind, Side, Value};
+pub use event::{Circle, Contact, ContactName, Event, Kind, Side, Value};
 pub use gather::{PhenomenaRequest, phenomena};
 pub use local::{Circumstances, Lookout};
+pub use transits::SUN_SEMIDIAMETER_ARCSEC;
 
 pub(super) use alignments::alignments;
 pub(super) use course::Course;

@@ -134,3 +134,36 @@ pub fn turn_between(
         _ => Err(Lost { bracket }),
     }
 }
+
+/// The one turn within a bracket of a function that can be told as finely as its values are:
+/// for two bodies that pass each other, from the Earth's centre or from a turning place on it.
+///
+/// # Errors
+/// The function is not lower (or higher, for a maximum) within the bracket than at its ends.
+pub fn turn_of_smooth(
+    function: impl Fn(f64) -> f64,
+    bracket: (f64, f64),
+    is_maximum: bool,
+) -> Result<Turn, Lost> {
+    // The central difference of the second order over a quarter of an hour each way.
+    const REACH_DAYS: f64 = 0.01;
+    let rate = |at: f64| function(at + REACH_DAYS) - function(at - REACH_DAYS);
+    match search::crossings(rate, &[bracket.0, bracket.1], TOLERANCE_DAYS)[..] {
+        [crossing] if crossing.rising != is_maximum => Ok(Turn {
+            at: crossing.at,
+            is_maximum,
+        }),
+        _ => Err(Lost { bracket }),
+    }
+}
+
+/// The one zero within a bracket.
+///
+/// # Errors
+/// The function has the same sign at both ends.
+pub fn zero_between(function: impl Fn(f64) -> f64, bracket: (f64, f64)) -> Result<f64, Lost> {
+    match search::crossings(function, &[bracket.0, bracket.1], TOLERANCE_DAYS)[..] {
+        [crossing] => Ok(crossing.at),
+        _ => Err(Lost { bracket }),
+    }
+}
