@@ -198,3 +198,83 @@ fn a_transit_comes_with_its_contacts_and_cautions() {
     );
     assert!(!page.contains('«') && !page.contains("{ $"), "{page}");
 }
+
+/// Venus and Jupiter on 2027-08-25 and the Moon's meetings are told with both names.
+#[test]
+fn appulses_and_the_moon_are_told_with_both_names() {
+    let listed = |rest: &[&str]| {
+        let rest = [rest, &["--format", "json"]].concat();
+        let document = run(&asked("2027-01-01", "2027-12-31", &rest)).json();
+        document["events"].as_array().expect("a list").clone()
+    };
+    let count = |events: &[serde_json::Value], kind: &str, body: &str, other: &str| {
+        let is_it = |event: &&serde_json::Value| {
+            event["kind"] == kind && event["body"] == body && event["other"] == other
+        };
+        events.iter().filter(is_it).count()
+    };
+    let venus = listed(&["--body", "venus"]);
+    assert_eq!(
+        count(&venus, "appulse", "venus", "jupiter"),
+        1,
+        "{venus:#?}"
+    );
+    // The second of the pair can be asked for too.
+    let jupiter = listed(&["--body", "jupiter"]);
+    assert_eq!(count(&jupiter, "appulse", "venus", "jupiter"), 1);
+    assert_eq!(
+        count(&jupiter, "appulse", "moon", "jupiter"),
+        0,
+        "the Moon's need a site"
+    );
+    let at_site = listed(&["--site", "fennick-common", "--body", "moon"]);
+    assert!(at_site.len() > 3, "{} events", at_site.len());
+    for event in &at_site {
+        let (body, other) = (&event["body"], &event["other"]);
+        assert!(body == "moon" || other == "moon", "{event}");
+        assert!(
+            event["position_angle_deg"].is_f64() && event["local"].is_object(),
+            "{event}"
+        );
+    }
+    run(&asked("2027-01-01", "2027-12-31", &["--body", "moon"])).refused(&["moon", "--site"]);
+}
+
+/// The Moon over Venus on 2025-09-19, seen from England by day. Source: the year's almanacs (from
+/// memory): covered about 12 UT, uncovered some 80 minutes later.
+#[test]
+fn an_occultation_comes_with_its_contacts() {
+    let rest = ["--site", "fennick-common", "--body", "venus"];
+    let json = [&rest[..], &["--format", "json"]].concat();
+    let document = run(&asked("2025-09-19", "2025-09-19", &json)).json();
+    let events = document["events"].as_array().expect("a list");
+    let hidden = events
+        .iter()
+        .find(|event| event["kind"] == "lunar_occultation")
+        .expect("the occultation");
+    assert_eq!(
+        (&hidden["body"], &hidden["other"]),
+        (&"venus".into(), &"moon".into())
+    );
+    assert_eq!(hidden["radii"]["moon_km"], 1738.091);
+    let contacts = hidden["local"]["contacts"].as_array().expect("a list");
+    let names: Vec<_> = contacts
+        .iter()
+        .map(|contact| contact["name"].clone())
+        .collect();
+    assert_eq!(
+        names,
+        ["first_touch", "disappearance", "reappearance", "last_touch"]
+    );
+    let covered = contacts[1]["utc"].as_str().expect("a time");
+    assert!(
+        "2025-09-19T11:45" < covered && covered < "2025-09-19T12:15",
+        "{covered}"
+    );
+    let page = run(&asked("2025-09-19", "2025-09-19", &rest)).succeeds();
+    assert!(page.contains("its centre is uncovered") && page.contains("hidden by the Moon"));
+    assert!(
+        page.starts_with("Caution: never look at the Sun"),
+        "by day: {page}"
+    );
+}

@@ -3,6 +3,7 @@
 // The figures measured are there for whoever runs with --nocapture.
 #![allow(clippy::print_stdout)]
 
+mod appulses;
 mod behind;
 mod daylight;
 mod edges;

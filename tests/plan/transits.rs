@@ -4,7 +4,7 @@ use crate::phenomena::days;
 use crate::reference::{number, rows, sites};
 use dimmet::measure::{Progress, TimeScales, Tt};
 use dimmet::place::Skyline;
-use dimmet::plan::phenomena::{Contact, Event, Kind, Lookout, PhenomenaRequest, phenomena};
+use dimmet::plan::phenomena::{Contact, Event, Kind, Lookout, PhenomenaRequest, Target, phenomena};
 use dimmet::sky::{Body, Ephemeris};
 use std::collections::HashMap;
 use std::num::NonZeroUsize;
@@ -60,7 +60,7 @@ fn contacts_match_de440_from_the_earths_centre_and_from_sites() {
         let [event] = &found[..] else {
             panic!("{} transits near {:?}", found.len(), rows[0]);
         };
-        assert_eq!(event.other, Some(Body::Sun));
+        assert_eq!(event.other, Some(Target::Body(Body::Sun)));
         assert_eq!(event.body.name(), rows[0]["planet"]);
         let contacts = match lookout {
             None => &event.contacts,

@@ -6,10 +6,15 @@ phenomena-none = No planet has an event in these days.
 phenomena-clock = Times are those of { $zone }.
 phenomena-altitude-note = Altitudes are without refraction.
 phenomena-reversed = --to is { $to }, but must not be before --from, which is { $from }
-phenomena-no-planet = --body is { $body }, but must be one of { $known }
+phenomena-no-planet = --body is { $body }, but must be one of { $known }, or with --site moon
 phenomena-hidden = { $altitude }, hidden
 phenomena-transit-title = Transit of { $body }, { $date } (Sun { $sun }″ at 1 au, planet { $radius } km)
 
+phenomena-occultation-title = { $body } behind the Moon, { $date } (Moon { $moon } km, planet { $radius } km, mean limb)
+contact-first-touch = the Moon touches the disc
+contact-disappearance = its centre is covered
+contact-reappearance = its centre is uncovered
+contact-last-touch = the disc is clear again
 contact-i = I, first touch
 contact-ii = II, wholly on the disc
 contact-greatest = deepest
@@ -48,11 +53,14 @@ phenomena-kind-perigee = { $body } is nearest to the Earth
 phenomena-kind-apogee = { $body } is farthest from the Earth
 phenomena-kind-ring-opening-greatest = { $body }’s rings are open widest for the time being
 phenomena-kind-ring-opening-least = { $body }’s rings are narrowest for the time being
+phenomena-kind-appulse = { $body } stands close to { $other }
+phenomena-kind-lunar-occultation = { $body } is hidden by { $other }
 phenomena-kind-transit = { $body } crosses the face of the Sun (solar filters only)
 phenomena-kind-ring-plane-crossing = { $body }’s rings are seen edge-on
 
 # Values with their units.
 phenomena-value-arcsec = { $number }″
+phenomena-value-arcmin = { $number }′
 phenomena-value-deg = { $number }°
 phenomena-value-arcsec2 = { $number } square arcsec
 phenomena-value-mag = magnitude { $number }

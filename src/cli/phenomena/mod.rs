@@ -16,7 +16,7 @@ use chrono::{DateTime, NaiveDate, TimeDelta, Utc};
 use chrono_tz::Tz;
 use std::num::NonZeroUsize;
 
-/// Those that have events.
+/// Those that have events; with a site the Moon has some with them.
 const PLANETS: [Body; 7] = [
     Body::Mercury,
     Body::Venus,
@@ -36,7 +36,8 @@ struct Listed {
     events: Vec<Event>,
 }
 
-/// What stands before a list in which the Sun itself is looked at.
+/// What stands before a list with moments for which people would look at the Sun itself, or turn
+/// instruments to the sky by day.
 const CAUTIONS: [&str; 5] = [
     "daylight-caution-sun",
     "caution-filters",
@@ -45,10 +46,20 @@ const CAUTIONS: [&str; 5] = [
     "caution-rules",
 ];
 
+/// Below this the Sun's upper limb is down, with refraction.
+const SUN_DOWN_DEG: f64 = -50.0 / 60.0;
+
 impl Listed {
     /// The messages to warn with.
     fn cautions(&self) -> &'static [&'static str] {
-        if self.events.iter().any(Event::is_transit) {
+        let is_by_day = |event: &Event| {
+            let contacts = event.local_contacts.iter();
+            contacts
+                .filter_map(|contact| contact.local)
+                .any(|local| local.sun_altitude.degrees() > SUN_DOWN_DEG)
+        };
+        let is_risky = |event: &Event| event.is_transit() || is_by_day(event);
+        if self.events.iter().any(is_risky) {
             &CAUTIONS
         } else {
             &[]
@@ -89,7 +100,7 @@ fn list(
     let (from, to) = dates(arguments, around)?;
     let refused = |error: PhenomenaError| Fault::Input(error.to_string());
     let span = moments((from, to), clock).ok_or_else(|| refused(PhenomenaError::Empty))?;
-    let bodies = bodies(arguments, around)?;
+    let bodies = bodies(arguments, site.is_some(), around)?;
     let place = match site {
         None => None,
         Some(site) => {
@@ -155,12 +166,17 @@ fn moment(scales: TimeScales, utc: DateTime<Utc>) -> Option<Moment> {
     })
 }
 
-fn bodies(arguments: &PhenomenaArguments, around: &Surroundings<'_>) -> Result<Vec<Body>, Fault> {
+fn bodies(
+    arguments: &PhenomenaArguments,
+    has_site: bool,
+    around: &Surroundings<'_>,
+) -> Result<Vec<Body>, Fault> {
     let words = around.words;
     let mut bodies = Vec::new();
     for name in &arguments.body {
         let body = resolve::body(words, "--body", name)?;
-        if !PLANETS.contains(&body) {
+        let has_events = PLANETS.contains(&body) || (body == Body::Moon && has_site);
+        if !has_events {
             let known = PLANETS.map(Body::name).join(", ");
             let arguments = [("body", body.name().to_owned()), ("known", known)];
             let sentence = words.text_with("phenomena-no-planet", &arguments);

@@ -4,8 +4,8 @@ use super::Listed;
 use crate::cli::moment::{MomentRecord, MomentWriter};
 use crate::cli::{Fault, JSON_VERSION, rounded};
 use crate::measure::{Angle, Tt};
-use crate::plan::phenomena::{Circumstances, Contact, Event, SUN_SEMIDIAMETER_ARCSEC};
-use crate::sky::Body;
+use crate::plan::phenomena::{Circumstances, Contact, Event, Kind, Target};
+use crate::plan::phenomena::{MOON_RADIUS_KM, SUN_SEMIDIAMETER_ARCSEC};
 use crate::words::Words;
 use chrono::{DateTime, TimeDelta};
 use serde::Serialize;
@@ -18,7 +18,7 @@ struct Document<'a> {
     time_zone: &'static str,
     #[serde(skip_serializing_if = "Option::is_none")]
     site: Option<&'a str>,
-    /// Where the Sun itself is looked at.
+    /// Where the Sun is looked at, or is up.
     #[serde(skip_serializing_if = "Vec::is_empty")]
     cautions: Vec<String>,
     events: Vec<EventRecord>,
@@ -28,13 +28,17 @@ struct Document<'a> {
 struct EventRecord {
     kind: &'static str,
     body: &'static str,
-    other: Option<&'static str>,
+    other: Option<String>,
     tt: String,
     #[serde(flatten)]
     moment: MomentRecord,
     delta_t_s: f64,
     value: f64,
     unit: &'static str,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    position_angle_deg: Option<f64>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    elongation_deg: Option<f64>,
     #[serde(skip_serializing_if = "Option::is_none")]
     radii: Option<RadiiRecord>,
     #[serde(skip_serializing_if = "Vec::is_empty")]
@@ -46,7 +50,10 @@ struct EventRecord {
 /// What the contacts hang on.
 #[derive(Serialize)]
 struct RadiiRecord {
-    sun_arcsec_at_1_au: f64,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    sun_arcsec_at_1_au: Option<f64>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    moon_km: Option<f64>,
     planet_km: f64,
 }
 
@@ -113,22 +120,31 @@ fn record(moments: MomentWriter, event: &Event) -> EventRecord {
     EventRecord {
         kind: event.kind.name(),
         body: event.body.name(),
-        other: event.other.map(Body::name),
+        other: event.other.map(Target::name),
         tt: tt_text(event.moment.tt()),
         moment: moments.record(event.moment),
         delta_t_s: rounded(event.moment.delta_t_s(), 3),
         value: rounded(event.value.number(), 7),
         unit: event.value.unit(),
-        radii: event.is_transit().then(|| RadiiRecord {
-            sun_arcsec_at_1_au: SUN_SEMIDIAMETER_ARCSEC,
-            planet_km: event.body.equatorial_radius_km(),
-        }),
+        position_angle_deg: event.position_angle.map(degrees),
+        elongation_deg: event.elongation.map(degrees),
+        radii: radii(event),
         contacts: contacts(&event.contacts),
         local: event.local.map(|local| LocalRecord {
             place: local.into(),
             contacts: contacts(&event.local_contacts),
         }),
     }
+}
+
+/// The radii that an event's contacts were found with, if it has some.
+fn radii(event: &Event) -> Option<RadiiRecord> {
+    let is_occultation = event.kind == Kind::LunarOccultation;
+    (event.is_transit() || is_occultation).then(|| RadiiRecord {
+        sun_arcsec_at_1_au: event.is_transit().then_some(SUN_SEMIDIAMETER_ARCSEC),
+        moon_km: is_occultation.then_some(rounded(MOON_RADIUS_KM, 3)),
+        planet_km: event.body.equatorial_radius_km(),
+    })
 }
 
 fn contact_record(moments: MomentWriter, contact: &Contact) -> ContactRecord {

@@ -1,11 +1,11 @@
-//! Events as CSV: one line an event; the contacts of transits are left to JSON and the page.
+//! Events as CSV: one line an event; the contacts of transits and occultations are left to JSON and the page.
 
 use super::Listed;
 use super::record::tt_text;
 use crate::cli::Fault;
 use crate::cli::moment::MomentWriter;
 use crate::measure::Angle;
-use crate::sky::Body;
+use crate::plan::phenomena::Target;
 use csv::Writer;
 use std::io;
 
@@ -43,7 +43,7 @@ pub(super) fn csv(listed: &Listed) -> Result<Vec<u8>, Fault> {
         let record = [
             event.kind.name().to_owned(),
             event.body.name().to_owned(),
-            event.other.map_or("", Body::name).to_owned(),
+            event.other.map(Target::name).unwrap_or_default(),
             tt_text(event.moment.tt()),
             moment.utc,
             moment.local_time,

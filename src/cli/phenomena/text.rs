@@ -3,7 +3,7 @@
 use super::Listed;
 use crate::cli::page::{Page, Side};
 use crate::measure::{Angle, CivilScale};
-use crate::plan::phenomena::{Contact, Event, SUN_SEMIDIAMETER_ARCSEC};
+use crate::plan::phenomena::{Contact, Event, MOON_RADIUS_KM, SUN_SEMIDIAMETER_ARCSEC};
 use crate::words::{Words, decimal};
 
 pub(super) fn page(words: &Words, listed: &Listed) -> String {
@@ -38,22 +38,30 @@ pub(super) fn page(words: &Words, listed: &Listed) -> String {
     } else {
         table(&mut page, words, listed);
     }
-    let transits = listed.events.iter().filter(|event| event.is_transit());
-    transits.for_each(|event| transit(&mut page, words, listed, event));
+    for event in &listed.events {
+        if !event.contacts.is_empty() || !event.local_contacts.is_empty() {
+            contacts(&mut page, words, listed, event);
+        }
+    }
     page.text()
 }
 
 /// A transit's contacts beneath the table: the site's, or
 /// else those for the Earth's centre.
-fn transit(page: &mut Page, words: &Words, listed: &Listed, event: &Event) {
+fn contacts(page: &mut Page, words: &Words, listed: &Listed, event: &Event) {
     page.gap();
     let title = [
         ("body", words.body(event.body)),
         ("date", words.weekday_date(listed.clock.date(event.moment))),
         ("sun", decimal(SUN_SEMIDIAMETER_ARCSEC, 2)),
+        ("moon", decimal(MOON_RADIUS_KM, 1)),
         ("radius", decimal(event.body.equatorial_radius_km(), 1)),
     ];
-    page.line(&words.text_with("phenomena-transit-title", &title));
+    page.line(&if event.is_transit() {
+        words.text_with("phenomena-transit-title", &title)
+    } else {
+        words.text_with("phenomena-occultation-title", &title)
+    });
     let contacts = match event.local {
         None => &event.contacts,
         Some(_) => &event.local_contacts,
@@ -65,7 +73,10 @@ fn transit(page: &mut Page, words: &Words, listed: &Listed, event: &Event) {
         words.text("column-position-angle"),
     ];
     if event.local.is_some() {
-        head.push(words.text("column-sun-altitude"));
+        head.extend([
+            words.text("column-altitude"),
+            words.text("column-sun-altitude"),
+        ]);
     }
     let rows: Vec<Vec<String>> = contacts
         .iter()
@@ -81,7 +92,10 @@ fn transit(page: &mut Page, words: &Words, listed: &Listed, event: &Event) {
 fn contact_row(words: &Words, listed: &Listed, contact: &Contact) -> Vec<String> {
     let local = listed.clock.local(contact.moment);
     let mut row = vec![
-        words.text(&format!("contact-{}", contact.name.name().to_lowercase())),
+        words.text(&format!(
+            "contact-{}",
+            contact.name.name().to_lowercase().replace('_', "-")
+        )),
         local.format("%-H:%M:%S").to_string(),
         words.text_with(
             "arcseconds",

@@ -172,16 +172,7 @@ impl Course {
 
     /// An event on this way.
     pub fn event(&self, kind: Kind, days: f64, value: Value) -> Event {
-        Event {
-            kind,
-            body: self.body,
-            other: None,
-            moment: self.moment(days),
-            value,
-            contacts: Vec::new(),
-            local: None,
-            local_contacts: Vec::new(),
-        }
+        Event::new(kind, self.body, self.moment(days), value)
     }
 }
 

@@ -3,6 +3,7 @@
 use super::Circumstances;
 use crate::measure::{Angle, Moment};
 use crate::sky::Body;
+use crate::sky::stars::Star;
 
 /// The circle along which two bodies are compared.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
@@ -57,6 +58,21 @@ pub enum Kind {
     RingPlaneCrossing,
     /// Mercury or Venus before the Sun's disc; the instant is that of the least separation.
     Transit,
+    /// Two bodies, or a planet and a star, at their least separation; with the Moon as the lookout
+    /// sees it.
+    Appulse,
+    /// The Moon passes over a planet as the lookout sees it; the instant is that of the least
+    /// separation.
+    LunarOccultation,
+}
+
+/// What a body is seen with.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Target {
+    /// A body.
+    Body(Body),
+    /// A star of the catalogue.
+    Star(&'static Star),
 }
 
 /// A quantity with its unit.
@@ -74,9 +90,11 @@ pub enum Value {
     RingOpening(Angle),
     /// Apparent angle between the centres of two bodies, told in arcseconds.
     SeparationArcsec(Angle),
+    /// The same, told in arcminutes.
+    SeparationArcmin(Angle),
 }
 
-/// One of the moments of a transit.
+/// One of the moments of a transit or a lunar occultation.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
 pub enum ContactName {
     /// The planet's disc touches the Sun's from outside, coming on.
@@ -89,9 +107,17 @@ pub enum ContactName {
     Third,
     /// It touches the limb from outside, having gone off.
     Fourth,
+    /// The planet's disc and the Moon's touch, before the occultation.
+    FirstTouch,
+    /// The planet's centre passes behind the Moon's mean limb.
+    Disappearance,
+    /// It comes out again.
+    Reappearance,
+    /// The discs touch, after the occultation.
+    LastTouch,
 }
 
-/// A moment of a transit as seen from one place.
+/// A moment of a transit or a lunar occultation as seen from one place.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Contact {
     /// Which.
@@ -100,7 +126,7 @@ pub struct Contact {
     pub moment: Moment,
     /// Apparent angle between the centres.
     pub separation: Angle,
-    /// Position angle of the planet's centre from the Sun's, from north of date through east,
+    /// Position angle of the planet's centre from the Sun's or the Moon's, from north of date through east,
     /// [0°, 360°).
     pub position_angle: Angle,
     /// Where the planet and the Sun then stand; `None` for the Earth's centre.
@@ -115,17 +141,23 @@ pub struct Event {
     /// To which body.
     pub body: Body,
     /// The second body, if two take part.
-    pub other: Option<Body>,
+    pub other: Option<Target>,
     /// When.
     pub moment: Moment,
     /// The quantity that the kind is about.
     pub value: Value,
+    /// Where two take part: the position angle from north of date through east, [0°, 360°), of the
+    /// body seen from the other.
+    pub position_angle: Option<Angle>,
+    /// The body's apparent angle from the Sun's centre, where the value does not tell it.
+    pub elongation: Option<Angle>,
     /// A transit's moments as seen from the Earth's centre, in order of time: those that occur.
     pub contacts: Vec<Contact>,
     /// Where the body stands at the moment as seen from the lookout that was given.
     pub local: Option<Circumstances>,
-    /// A transit's moments as seen from there, in order of time. Where the planet misses the disc
-    /// only the least separation is among them.
+    /// A transit's or an occultation's moments as seen from there, in order of time. Where the
+    /// planet misses the Sun's disc only the least separation is among them; where its own disc
+    /// is not wholly hidden by the Moon its centre may only touch the limb, or stay outside.
     pub local_contacts: Vec<Contact>,
 }
 
@@ -138,6 +170,10 @@ impl ContactName {
             Self::Greatest => "greatest",
             Self::Third => "III",
             Self::Fourth => "IV",
+            Self::FirstTouch => "first_touch",
+            Self::Disappearance => "disappearance",
+            Self::Reappearance => "reappearance",
+            Self::LastTouch => "last_touch",
         }
     }
 }
@@ -189,11 +225,39 @@ impl Kind {
             Self::RingOpeningLeast => "ring_opening_least",
             Self::RingPlaneCrossing => "ring_plane_crossing",
             Self::Transit => "transit",
+            Self::Appulse => "appulse",
+            Self::LunarOccultation => "lunar_occultation",
+        }
+    }
+}
+
+impl Target {
+    /// The lower-case name used in files and on the command line.
+    pub fn name(self) -> String {
+        match self {
+            Self::Body(body) => body.name().to_owned(),
+            Self::Star(star) => star.to_string().to_lowercase(),
         }
     }
 }
 
 impl Event {
+    /// An event of one body, with nothing else told yet.
+    pub(super) fn new(kind: Kind, body: Body, moment: Moment, value: Value) -> Self {
+        Self {
+            kind,
+            body,
+            other: None,
+            moment,
+            value,
+            position_angle: None,
+            elongation: None,
+            contacts: Vec::new(),
+            local: None,
+            local_contacts: Vec::new(),
+        }
+    }
+
     /// Whether it is one before the Sun's disc, which nobody looks at without a solar filter.
     pub fn is_transit(&self) -> bool {
         self.kind == Kind::Transit
@@ -206,6 +270,7 @@ impl Value {
         match self {
             Self::Elongation(angle) | Self::RingOpening(angle) => angle.degrees(),
             Self::SeparationArcsec(angle) => angle.arcsec(),
+            Self::SeparationArcmin(angle) => angle.arcsec() / 60.0,
             Self::LitAreaArcsec2(number) | Self::Magnitude(number) | Self::DistanceAu(number) => {
                 number
             }
@@ -217,6 +282,7 @@ impl Value {
         match self {
             Self::Elongation(_) | Self::RingOpening(_) => "deg",
             Self::SeparationArcsec(_) => "arcsec",
+            Self::SeparationArcmin(_) => "arcmin",
             Self::LitAreaArcsec2(_) => "arcsec2",
             Self::Magnitude(_) => "mag",
             Self::DistanceAu(_) => "au",

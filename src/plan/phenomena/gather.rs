@@ -1,11 +1,12 @@
 //! All events of a span, stretch by stretch, in threads.
 
 use super::alignments::alignments;
+use super::appulses::appulses;
 use super::course::Course;
 use super::search::{Lost, Stretch};
 use super::transits::transits;
 use super::{Circle, Event, Lookout, PhenomenaError};
-use super::{crescents, distances, elongations, rings, stations};
+use super::{crescents, distances, elongations, moon, rings, stations};
 use crate::measure::{Moment, Progress, TimeScales};
 use crate::sky::{Body, Ephemeris, Epoch};
 use std::collections::BTreeMap;
@@ -26,7 +27,8 @@ pub struct PhenomenaRequest<'a> {
     pub to: Moment,
     /// How TT leads to UT1.
     pub scales: TimeScales,
-    /// Whose; the Sun and the Moon have none of their own here.
+    /// Whose, alone or with another; the Moon has events with planets from a lookout, and the Sun
+    /// none of its own.
     pub bodies: &'a [Body],
     /// The place whose circumstances are wanted too.
     pub lookout: Option<Lookout<'a>>,
@@ -128,6 +130,13 @@ fn events(
             }
             found.extend(events);
         }
+    }
+    let (bodies, scales) = (request.bodies, request.scales);
+    let lookout = request.lookout;
+    found.extend(appulses(ephemeris, scales, stretch, bodies, lookout)?);
+    if let Some(lookout) = lookout {
+        let events = moon::with_planets(ephemeris, scales, stretch, bodies, lookout)?;
+        found.extend(events);
     }
     found.sort_by(|a: &Event, b: &Event| a.moment.seconds_since(b.moment).total_cmp(&0.0));
     Ok(found)

@@ -6,6 +6,7 @@
 //! are there.
 
 mod alignments;
+mod appulses;
 mod course;
 mod crescents;
 mod distances;
@@ -14,6 +15,7 @@ mod error;
 mod event;
 mod gather;
 mod local;
+mod moon;
 mod rings;
 mod search;
 mod sight;
@@ -21,9 +23,10 @@ mod stations;
 mod transits;
 
 pub use error::PhenomenaError;
-pub use event::{Circle, Contact, ContactName, Event, Kind, Side, Value};
+pub use event::{Circle, Contact, ContactName, Event, Kind, Side, Target, Value};
 pub use gather::{PhenomenaRequest, phenomena};
 pub use local::{Circumstances, Lookout};
+pub use moon::MOON_RADIUS_KM;
 pub use transits::SUN_SEMIDIAMETER_ARCSEC;
 
 pub(super) use alignments::alignments;

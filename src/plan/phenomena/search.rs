@@ -120,12 +120,7 @@ pub fn turn_between(
     bracket: (f64, f64),
     is_maximum: bool,
 ) -> Result<Turn, Lost> {
-    // The central difference of the fourth order, but for its constant divisor.
-    let rate = |at: f64| {
-        let near = change(at - RATE_REACH_DAYS, at + RATE_REACH_DAYS);
-        let far = change(at - 2.0 * RATE_REACH_DAYS, at + 2.0 * RATE_REACH_DAYS);
-        8.0 * near - far
-    };
+    let rate = |at: f64| rate(&change, at);
     match search::crossings(rate, &[bracket.0, bracket.1], TOLERANCE_DAYS)[..] {
         [crossing] if crossing.rising != is_maximum => Ok(Turn {
             at: crossing.at,
@@ -133,6 +128,35 @@ pub fn turn_between(
         }),
         _ => Err(Lost { bracket }),
     }
+}
+
+/// All minima of a smooth function within a bracket in whose middle it is lower than at both
+/// ends; it may turn once in an eighth of the bracket.
+///
+/// # Errors
+/// No minimum is found, though there must be one.
+pub fn minima_between(
+    change: impl Fn(f64, f64) -> f64,
+    bracket: (f64, f64),
+) -> Result<Vec<f64>, Lost> {
+    let samples = search::grid(bracket.0, bracket.1, (bracket.1 - bracket.0) / 8.0);
+    let found: Vec<f64> = search::crossings(|at| rate(&change, at), &samples, TOLERANCE_DAYS)
+        .iter()
+        .filter(|crossing| crossing.rising)
+        .map(|crossing| crossing.at)
+        .collect();
+    if found.is_empty() {
+        return Err(Lost { bracket });
+    }
+    Ok(found)
+}
+
+/// The rate of a smooth function by its central difference of the fourth order, but for a constant
+/// divisor.
+fn rate(change: &impl Fn(f64, f64) -> f64, at: f64) -> f64 {
+    let near = change(at - RATE_REACH_DAYS, at + RATE_REACH_DAYS);
+    let far = change(at - 2.0 * RATE_REACH_DAYS, at + 2.0 * RATE_REACH_DAYS);
+    8.0 * near - far
 }
 
 /// The one turn within a bracket of a function that can be told as finely as its values are:

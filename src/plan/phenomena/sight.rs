@@ -1,8 +1,8 @@
 //! Two bodies as they are seen together, from the Earth's centre or from a place.
 
-use super::Lookout;
+use super::{Circumstances, Lookout, Target};
 use crate::measure::{Angle, Moment, TimeScales, Tt, Vector};
-use crate::sky::{Apparent, Body, Epoch, Span, position_angle};
+use crate::sky::{Apparent, Body, Epoch, Span, View, position_angle};
 
 /// One astronomical unit, km (IAU 2012 Resolution B2).
 const AU_KM: f64 = 149_597_870.7;
@@ -18,7 +18,7 @@ pub struct Sight<'a> {
     pub lookout: Option<Lookout<'a>>,
 }
 
-/// Two bodies at an instant.
+/// Two bodies (or a body and a star) at an instant.
 #[derive(Clone, Copy, Debug)]
 pub struct Pair {
     /// The first one's apparent place.
@@ -39,20 +39,49 @@ impl Sight<'_> {
     }
 
     /// Two bodies at an instant.
-    pub fn pair(&self, days: f64, first: Body, second: Body) -> Pair {
+    pub fn pair(&self, days: f64, first: Target, second: Target) -> Pair {
         self.at(days, |epoch| match self.lookout {
             None => Pair {
-                first: epoch.geocentric(first),
-                second: epoch.geocentric(second),
+                first: first.geocentric(epoch),
+                second: second.geocentric(epoch),
             },
             Some(lookout) => {
                 let view = epoch.seen_by(lookout.observer);
                 Pair {
-                    first: view.topocentric(first),
-                    second: view.topocentric(second),
+                    first: first.topocentric(&view),
+                    second: second.topocentric(&view),
                 }
             }
         })
+    }
+
+    /// A body's apparent angle from the Sun's centre.
+    pub fn elongation(&self, days: f64, body: Body) -> Angle {
+        self.pair(days, Target::Body(body), Target::Body(Body::Sun))
+            .separation()
+    }
+
+    /// Where a body stands, if a place looks at it.
+    pub fn circumstances(&self, days: f64, body: Body) -> Option<Circumstances> {
+        let lookout = self.lookout?;
+        Some(self.at(days, |epoch| lookout.circumstances_at(epoch, body)))
+    }
+}
+
+impl Target {
+    /// Its apparent place from the Earth's centre.
+    pub(super) fn geocentric(self, epoch: &Epoch<'_>) -> Apparent {
+        match self {
+            Self::Body(body) => epoch.geocentric(body),
+            Self::Star(star) => epoch.star(star),
+        }
+    }
+
+    fn topocentric(self, view: &View<'_>) -> Apparent {
+        match self {
+            Self::Body(body) => view.topocentric(body),
+            Self::Star(star) => view.star(star),
+        }
     }
 }
 

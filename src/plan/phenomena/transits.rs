@@ -3,7 +3,7 @@
 use super::course::Course;
 use super::search::{self, Lost, Turn};
 use super::sight::{Pair, Sight, semidiameter};
-use super::{Contact, ContactName, Event, Kind, Lookout, Value};
+use super::{Contact, ContactName, Event, Kind, Lookout, Target, Value};
 use crate::measure::Angle;
 use crate::sky::{Apparent, Body};
 
@@ -51,7 +51,8 @@ pub fn transits(course: &Course, lookout: Option<Lookout<'_>>) -> Result<Vec<Eve
 
 impl<'a> Passage<'a> {
     fn pair(&self, days: f64) -> Pair {
-        self.sight.pair(days, self.planet, Body::Sun)
+        let sun = Target::Body(Body::Sun);
+        self.sight.pair(days, Target::Body(self.planet), sun)
     }
 
     /// The least separation near a conjunction.
@@ -87,7 +88,8 @@ impl<'a> Passage<'a> {
         }
         let value = Value::SeparationArcsec(self.pair(greatest.at).separation());
         let mut event = course.event(Kind::Transit, greatest.at, value);
-        event.other = Some(Body::Sun);
+        event.other = Some(Target::Body(Body::Sun));
+        event.position_angle = Some(self.pair(greatest.at).position_angle());
         event.contacts = contacts;
         event.local_contacts = local.unwrap_or_default();
         Ok(Some(event))
@@ -131,10 +133,7 @@ impl<'a> Passage<'a> {
             moment: self.sight.moment(days),
             separation: pair.separation(),
             position_angle: pair.position_angle(),
-            local: self.sight.lookout.map(|lookout| {
-                self.sight
-                    .at(days, |epoch| lookout.circumstances_at(epoch, self.planet))
-            }),
+            local: self.sight.circumstances(days, self.planet),
         }
     }
 }
