@@ -128,20 +128,17 @@ pub fn appulses(
     let looks = sweep.looks(&targets);
     let mut found = Vec::new();
     for (first, body) in PLANETS.iter().enumerate() {
-        for second in first + 1..targets.len() {
-            let is_asked =
-                |target: Target| matches!(target, Target::Body(body) if bodies.contains(&body));
-            let is_star = matches!(targets[second], Target::Star(_));
-            if is_star && !Body::BRIGHT.contains(body) {
-                continue;
-            }
-            if !bodies.contains(body) && !is_asked(targets[second]) {
+        for (second, other) in targets.iter().enumerate().skip(first + 1) {
+            let (is_listed, is_asked) = match other {
+                Target::Star(_) => (Body::BRIGHT.contains(body), false),
+                Target::Body(other) => (true, bodies.contains(other)),
+            };
+            if !is_listed || !(is_asked || bodies.contains(body)) {
                 continue;
             }
             let ticks = sweep.nearest(&looks, (first, second), LARGEST + APPROACH);
             for tick in ticks {
-                let other = targets[second];
-                let events = meetings(&sweep, tick, (*body, other), lookout);
+                let events = meetings(&sweep, tick, (*body, *other), lookout);
                 found.extend(events.map_err(|lost| PhenomenaError::lost(*body, lost))?);
             }
         }

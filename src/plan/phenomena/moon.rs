@@ -129,11 +129,11 @@ impl Meeting<'_> {
             ((FirstTouch, LastTouch), 1.0),
             ((Disappearance, Reappearance), 0.0),
         ] {
-            let from_limb = |at: f64| self.from_limb(at, side);
-            if from_limb(at) < 0.0 {
+            let beyond_limb = |at: f64| self.beyond_limb(at, side);
+            if beyond_limb(at) < 0.0 {
                 for (name, end) in [(names.0, -LONGEST_HALF_DAYS), (names.1, LONGEST_HALF_DAYS)] {
                     let bracket = (at.min(at + end), at.max(at + end));
-                    contacts.push(self.contact(name, search::zero_between(from_limb, bracket)?));
+                    contacts.push(self.contact(name, search::zero_between(beyond_limb, bracket)?));
                 }
             }
         }
@@ -160,7 +160,7 @@ impl Meeting<'_> {
 
     /// Separation of the centres less the Moon's semidiameter and `side` times the planet's,
     /// radians: side 1 as the discs touch, 0 as the planet's centre passes the limb.
-    fn from_limb(&self, days: f64, side: f64) -> f64 {
+    fn beyond_limb(&self, days: f64, side: f64) -> f64 {
         let pair = self.pair(days);
         let planet = semidiameter(self.planet.equatorial_radius_km(), &pair.first);
         let moon = semidiameter(MOON_RADIUS_KM, &pair.second);

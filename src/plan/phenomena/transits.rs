@@ -99,8 +99,8 @@ impl<'a> Passage<'a> {
     fn contacts(&self, greatest: f64) -> Result<Vec<Contact>, Lost> {
         use ContactName::{First, Fourth, Greatest, Second, Third};
         let (before, after) = (greatest - AROUND_DAYS, greatest + AROUND_DAYS);
-        let outer = |at: f64| self.from_limb(at, 1.0);
-        let inner = |at: f64| self.from_limb(at, -1.0);
+        let outer = |at: f64| self.beyond_limb(at, 1.0);
+        let inner = |at: f64| self.beyond_limb(at, -1.0);
         let mut found = vec![(Greatest, greatest)];
         if inner(greatest) < 0.0 {
             found.push((Second, search::zero_between(inner, (before, greatest))?));
@@ -119,7 +119,7 @@ impl<'a> Passage<'a> {
 
     /// Separation of the centres less the Sun's semidiameter and `side` times the planet's,
     /// radians: zero at the outer contacts (side 1) and at the inner ones (side -1).
-    fn from_limb(&self, days: f64, side: f64) -> f64 {
+    fn beyond_limb(&self, days: f64, side: f64) -> f64 {
         let pair = self.pair(days);
         let planet = semidiameter(self.planet.equatorial_radius_km(), &pair.first);
         let limb = sun_semidiameter(&pair.second).radians() + side * planet.radians();
