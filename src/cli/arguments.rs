@@ -72,6 +72,7 @@ pub enum Subcommands {
     Positions(PositionsArguments),
     Night(NightArguments),
     Daylight(DaylightArguments),
+    Phenomena(PhenomenaArguments),
     Skyline(SkylineArguments),
     Completions { shell: Shell },
 }
@@ -155,6 +156,23 @@ pub struct SkylineArguments {
     pub date: Option<String>,
     #[arg(long, value_name = "DEGREES")]
     pub step: Option<String>,
+    #[arg(long, value_name = "FORMAT")]
+    pub format: Option<Format>,
+}
+
+/// `dimmet phenomena`.
+#[derive(Args, Clone, Debug)]
+pub struct PhenomenaArguments {
+    #[arg(long, value_name = "YYYY-MM-DD")]
+    pub from: String,
+    #[arg(long, value_name = "YYYY-MM-DD")]
+    pub to: String,
+    #[arg(id = "planet", long = "body", value_name = "NAME")]
+    pub body: Vec<String>,
+    #[arg(id = "local-site", long = "site", value_name = "FILE|NAME")]
+    pub site: Option<String>,
+    #[arg(long, value_name = "NAME", requires = "local-site")]
+    pub spot: Option<String>,
     #[arg(long, value_name = "FORMAT")]
     pub format: Option<Format>,
 }

@@ -10,6 +10,7 @@ mod fault;
 mod moment;
 mod night;
 mod page;
+mod phenomena;
 mod positions;
 mod resolve;
 mod skyline;
@@ -91,6 +92,7 @@ where
         Some(Subcommands::Positions(asked)) => positions::run(asked, scales, around)?,
         Some(Subcommands::Night(asked)) => night::run(asked, scales, around)?,
         Some(Subcommands::Daylight(asked)) => daylight::run(asked, scales, around)?,
+        Some(Subcommands::Phenomena(asked)) => phenomena::run(asked, scales, around)?,
         Some(Subcommands::Skyline(asked)) => skyline::run(asked, around)?,
         Some(Subcommands::Completions { shell }) => {
             let mut script = Vec::new();

@@ -15,6 +15,7 @@ mod optics;
 mod passage;
 mod patch;
 mod path;
+pub mod phenomena;
 mod sight;
 pub mod standing;
 mod survey;

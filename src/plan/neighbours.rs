@@ -1,24 +1,22 @@
 //! The events around a moment: the last and the next conjunction, greatest elongation or
 //! opposition of a body.
 
-use crate::measure::{Angle, Moment, TimeScales, Tt, search};
-use crate::sky::{Body, Ephemeris, Epoch, Span};
+use super::phenomena::{self, Circle, Course, Event, Kind, Stretch, Value};
+use super::phenomena::{alignments, greatest_elongations};
+use crate::measure::{Angle, Moment, TimeScales};
+use crate::sky::{Body, Ephemeris};
 
-/// How far an event can lie from a moment, days, and the step to look for it with: the synodic
-/// period and a quarter more (Mars' spacing runs from 764 to 811 days), and a step in which
-/// neither the longitude from the Sun nor the elongation turns twice.
-fn reach_and_step_days(body: Body) -> (f64, f64) {
+/// How far an event can lie from a moment, days: the synodic period and a quarter more (Mars'
+/// spacing runs from 764 to 811 days).
+fn reach_days(body: Body) -> f64 {
     match body {
-        Body::Moon => (32.0, 1.0),
-        Body::Mercury => (145.0, 2.0),
-        Body::Venus => (730.0, 6.0),
-        Body::Mars => (975.0, 6.0),
-        _ => (430.0, 6.0),
+        Body::Moon => 32.0,
+        Body::Mercury => 145.0,
+        Body::Venus => 730.0,
+        Body::Mars => 975.0,
+        _ => 430.0,
     }
 }
-
-/// A minute, in days: what an event's time is found to.
-const TOLERANCE_DAYS: f64 = 1.0 / 1440.0;
 
 /// What happens between a body, the Sun and the Earth.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -43,7 +41,7 @@ pub enum Aspect {
 pub struct Neighbour {
     /// What.
     pub aspect: Aspect,
-    /// When, to a minute.
+    /// When.
     pub moment: Moment,
     /// Elongation from the Sun then.
     pub elongation: Angle,
@@ -131,7 +129,7 @@ enum Side {
 }
 
 /// All events within a share of the reach on one side of a moment, in time order; none where the
-/// theories end.
+/// theories end, or where the search fails.
 fn events(
     ephemeris: &Ephemeris,
     scales: TimeScales,
@@ -139,103 +137,47 @@ fn events(
     moment: Moment,
     (side, share): (Side, f64),
 ) -> Vec<Neighbour> {
-    let (reach, step) = reach_and_step_days(body);
-    let reach = share * reach;
+    let reach = share * reach_days(body);
     let now = moment.tt().days_since_j2000();
-    // A turning point needs a sample on either side of it, also where it falls on the moment.
-    let (from, to) = match side {
-        Side::Before => (now - reach, now + step),
-        Side::After => (now - step, now + reach),
+    // A minute past the moment, so that an event at the very moment is among the last ones.
+    let (from_days, to_days) = match side {
+        Side::Before => (now - reach, now + 1.0 / 1440.0),
+        Side::After => (now, now + reach),
     };
-    let tt = Tt::from_days_since_j2000;
-    let Ok(span) = ephemeris.cover(tt(from), tt(to), &[Body::Sun, body]) else {
+    let stretch = Stretch { from_days, to_days };
+    let Ok(course) = Course::new(ephemeris, scales, body, stretch) else {
         return Vec::new();
     };
-    let course = Course { span, scales, body };
-    let samples = search::grid(from, to, step);
-    let mut found = course.alignments(&samples);
+    let mut found = alignments(&course, Circle::Longitude).unwrap_or_default();
     if matches!(body, Body::Mercury | Body::Venus) {
-        found.extend(course.greatest_elongations(&samples));
+        found.extend(greatest_elongations(&course).unwrap_or_default());
     }
+    let mut found: Vec<Neighbour> = found.iter().filter_map(Neighbour::of).collect();
     found.retain(|event| (event.moment > moment) == (side == Side::After));
     found.sort_by(|a, b| a.moment.seconds_since(b.moment).total_cmp(&0.0));
     found
 }
 
-/// A body's way around the Sun in the Earth's sky.
-struct Course {
-    span: Span,
-    scales: TimeScales,
-    body: Body,
-}
-
-impl Course {
-    fn at<T>(&self, days: f64, read: impl FnOnce(&Epoch<'_>) -> T) -> T {
-        let moment = self.scales.moment_from_tt(Tt::from_days_since_j2000(days));
-        read(&self.span.at(moment))
-    }
-
-    /// Ecliptic longitude east of the Sun's.
-    fn longitude_from_sun(&self, days: f64) -> Angle {
-        self.at(days, |epoch| {
-            let longitude = |body| epoch.ecliptic(epoch.geocentric(body).direction).0;
-            longitude(self.body) - longitude(Body::Sun)
-        })
-    }
-
-    fn elongation(&self, days: f64) -> Angle {
-        self.at(days, |epoch| {
-            let direction = |body| epoch.geocentric(body).direction;
-            direction(self.body).angle_to(direction(Body::Sun))
-        })
-    }
-
-    /// Conjunctions and oppositions: where the sine of the longitude from the Sun vanishes.
-    fn alignments(&self, samples: &[f64]) -> Vec<Neighbour> {
-        let sine = |days: f64| self.longitude_from_sun(days).sin();
-        search::crossings(sine, samples, TOLERANCE_DAYS)
-            .iter()
-            .map(|crossing| {
-                let is_opposite = self.longitude_from_sun(crossing.at).cos() < 0.0;
-                let is_nearer_than_sun = self.at(crossing.at, |epoch| {
-                    let distance_au = |body| epoch.geocentric(body).distance_au;
-                    distance_au(self.body) < distance_au(Body::Sun)
-                });
-                let aspect = match self.body {
-                    Body::Mercury | Body::Venus if is_nearer_than_sun => {
-                        Aspect::InferiorConjunction
-                    }
-                    Body::Mercury | Body::Venus => Aspect::SuperiorConjunction,
-                    _ if is_opposite => Aspect::Opposition,
-                    _ => Aspect::Conjunction,
-                };
-                self.neighbour(crossing.at, aspect)
-            })
-            .collect()
-    }
-
-    fn greatest_elongations(&self, samples: &[f64]) -> Vec<Neighbour> {
-        let elongation = |days: f64| self.elongation(days).radians();
-        search::extrema(elongation, samples, TOLERANCE_DAYS)
-            .iter()
-            .filter(|turn| turn.is_maximum)
-            .map(|turn| {
-                let aspect = if self.longitude_from_sun(turn.at).signed() > Angle::ZERO {
-                    Aspect::GreatestElongationEast
-                } else {
-                    Aspect::GreatestElongationWest
-                };
-                self.neighbour(turn.at, aspect)
-            })
-            .collect()
-    }
-
-    fn neighbour(&self, days: f64, aspect: Aspect) -> Neighbour {
-        Neighbour {
+impl Neighbour {
+    /// The same event told in short; `None` for kinds that are not told here.
+    fn of(event: &Event) -> Option<Self> {
+        let aspect = match event.kind {
+            Kind::InferiorConjunction(_) => Aspect::InferiorConjunction,
+            Kind::SuperiorConjunction(_) => Aspect::SuperiorConjunction,
+            Kind::Conjunction(_) => Aspect::Conjunction,
+            Kind::Opposition(_) => Aspect::Opposition,
+            Kind::GreatestElongation(phenomena::Side::East) => Aspect::GreatestElongationEast,
+            Kind::GreatestElongation(phenomena::Side::West) => Aspect::GreatestElongationWest,
+            _ => return None,
+        };
+        let Value::Elongation(elongation) = event.value else {
+            return None;
+        };
+        Some(Self {
             aspect,
-            moment: self.scales.moment_from_tt(Tt::from_days_since_j2000(days)),
-            elongation: self.elongation(days),
-        }
+            moment: event.moment,
+            elongation,
+        })
     }
 }
 

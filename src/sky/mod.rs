@@ -23,7 +23,7 @@ pub use body::{Body, UnknownBody};
 pub use ephemeris::{Ephemeris, OutsideEphemeris, Span};
 pub use epoch::{Apparent, Epoch};
 pub use observer::{Air, Observer};
-pub use phase::Appearance;
+pub use phase::{Appearance, position_angle};
 pub use view::{Horizontal, Refracted, View};
 
 /// One astronomical unit, km (IAU 2012 Resolution B2).

@@ -78,8 +78,9 @@ impl Appearance {
 }
 
 /// The direction along the sky from one place to another: from that of the pole through east,
-/// (-180°, 180°]. 0 where there is none: from the pole, or to the same or the opposite place.
-pub(super) fn position_angle(from: Vector, to: Vector) -> Angle {
+/// (-180°, 180°]. 0 where there is none: from the pole, or to the same or the opposite place. Both
+/// are given on the true equator of date.
+pub fn position_angle(from: Vector, to: Vector) -> Angle {
     let east = from.x * to.y - from.y * to.x;
     let from_axis_squared = from.x * from.x + from.y * from.y;
     let north = to.z * from_axis_squared - from.z * (from.x * to.x + from.y * to.y);

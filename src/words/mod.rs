@@ -7,6 +7,7 @@ mod daylight;
 mod grounds;
 mod night;
 mod number;
+mod phenomena;
 mod terrain;
 mod time;
 
@@ -20,13 +21,14 @@ use fluent_bundle::{FluentArgs, FluentResource};
 use unic_langid::LanguageIdentifier;
 
 /// The files of the English wording.
-const ENGLISH: [&str; 10] = [
+const ENGLISH: [&str; 11] = [
     include_str!("../../assets/words/en/core.ftl"),
     include_str!("../../assets/words/en/night.ftl"),
     include_str!("../../assets/words/en/cli.ftl"),
     include_str!("../../assets/words/en/window.ftl"),
     include_str!("../../assets/words/en/lookout.ftl"),
     include_str!("../../assets/words/en/daylight.ftl"),
+    include_str!("../../assets/words/en/phenomena.ftl"),
     include_str!("../../assets/words/en/grounds.ftl"),
     include_str!("../../assets/words/en/measure.ftl"),
     include_str!("../../assets/words/en/plan.ftl"),
@@ -166,6 +168,9 @@ mod tests {
             "cli-about-",
             "cli-arg-",
             "cli-more-",
+            "phenomena-kind-",
+            "phenomena-value-",
+            "contact-",
         ];
         for file in ENGLISH {
             for line in file.lines() {

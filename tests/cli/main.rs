@@ -6,6 +6,7 @@ mod common;
 mod daylight;
 mod night;
 mod no_display;
+mod phenomena;
 mod places;
 mod positions;
 mod program;
