@@ -62,7 +62,7 @@ new-spot-name = spot { $number }
 
 # The spots side by side
 compare-title = The spots side by side
-compare-about = { $body } at { $half } for { $eye }; the longest time in amber figures. Press a spot to choose it.
+compare-about = { $body } at { $half }, whose eye: { $eye }. The longest time stands in amber. Press a spot to choose it.
 compare-times = { $start }–{ $end }  { $minutes } min
 compare-best = best { $time }
 compare-not-seen = not seen
