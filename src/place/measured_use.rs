@@ -34,7 +34,7 @@ impl Site {
         if !spot.skyline.is_empty() {
             return MeasuredUse::Own;
         }
-        if is_mark(spot) && !self.skyline.is_empty() {
+        if spot.is_mark() && !self.skyline.is_empty() {
             return MeasuredUse::Mark;
         }
         let mut is_any_far = false;
@@ -82,8 +82,11 @@ impl Site {
     }
 }
 
-fn is_mark(spot: &Spot) -> bool {
-    spot.plan_point().distance_m(PlanPoint::new(0.0, 0.0)) <= MARK_REACH_M
+impl Spot {
+    /// Whether it is the site's mark, or so near that what was measured from the mark holds.
+    pub fn is_mark(&self) -> bool {
+        self.plan_point().distance_m(PlanPoint::new(0.0, 0.0)) <= MARK_REACH_M
+    }
 }
 
 /// All measured skylines of a site, each with its far sectors.

@@ -19,14 +19,13 @@ impl<'a> Owned<'a> {
     /// parts of another's.
     pub fn at(site: &'a Site, spot: usize) -> Option<Self> {
         let of_spot = site.spots.get(spot)?;
-        let is_mark = of_spot.east_m == 0.0 && of_spot.north_m == 0.0;
         match site.measured_use(of_spot) {
             MeasuredUse::Own => Some(Self {
                 site,
                 spot: Some(spot),
             }),
             MeasuredUse::Mark => Some(Self { site, spot: None }),
-            MeasuredUse::Nothing if is_mark => Some(Self { site, spot: None }),
+            MeasuredUse::Nothing if of_spot.is_mark() => Some(Self { site, spot: None }),
             _ => None,
         }
     }

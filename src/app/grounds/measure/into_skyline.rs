@@ -3,7 +3,7 @@
 use super::{Desk, Outcome, done};
 use crate::app::command::Commands;
 use crate::place::survey::compass::{Sweep, merged};
-use crate::place::{MeasuredUse, Sector, Site, SkylinePoint};
+use crate::place::{MeasuredUse, Sector, Site, SkylinePoint, Spot};
 
 /// New points for the chosen spot's measured skyline.
 pub struct NewPoints {
@@ -63,14 +63,8 @@ fn sector(sweep: Sweep) -> Option<Sector> {
 /// The measured skyline that belongs to a spot, and where it is far: the site's own at the mark,
 /// the spot's elsewhere.
 pub fn measured_of(site: &mut Site, spot: usize) -> (&mut Vec<SkylinePoint>, &mut Vec<Sector>) {
-    let is_at_mark = site.spots.get(spot).is_none_or(|spot| {
-        spot.skyline.is_empty()
-            && spot
-                .plan_point()
-                .distance_m(crate::place::PlanPoint::new(0.0, 0.0))
-                <= 0.5
-    });
-    match site.spots.get_mut(spot).filter(|_| !is_at_mark) {
+    let has_own = |spot: &&mut Spot| !spot.skyline.is_empty() || !spot.is_mark();
+    match site.spots.get_mut(spot).filter(has_own) {
         Some(spot) => (&mut spot.skyline, &mut spot.skyline_far),
         None => (&mut site.skyline, &mut site.skyline_far),
     }
