@@ -118,6 +118,13 @@ fn an_outline_traced_over_a_panorama_becomes_the_skyline() {
     harness.run();
     harness.get_by_label("Known directions");
     click(&mut harness, "Load");
+    for _ in 0..500 {
+        if harness.query_by_label("The photograph").is_some() {
+            break;
+        }
+        std::thread::sleep(std::time::Duration::from_millis(10));
+        harness.step();
+    }
     click(&mut harness, "Panorama, even upwards");
     // The picture fills the canvas across or up, whichever is less, and stands in its middle.
     let touch = |harness: &mut Harness<'_, DesktopWindow>, x: f32, y: f32| {

@@ -100,6 +100,7 @@ declination-used = The compass readings are counted from it now.
 # Photograph
 photo-file = Picture
 photo-load = Load
+photo-reading = Reading the picture…
 photo-single = Single photo
 photo-panorama = Panorama
 photo-panorama-even = Panorama, even upwards

@@ -8,8 +8,9 @@ use super::into_skyline::{NewPoints, put};
 use super::{Compass, Desk, Outcome, fields};
 use crate::app::command::Commands;
 use crate::app::palette::Theme;
-use crate::app::picture::{MOST_SIDE, Picture, read};
+use crate::app::picture::{MOST_SIDE, Picture, PictureFlaw, read};
 use crate::app::widgets::{choice, error_line, line, text};
+use crate::app::worker::Worker;
 use crate::measure::Angle;
 use crate::place::survey::SurveyError;
 use crate::place::survey::photo::{
@@ -71,6 +72,9 @@ pub struct Photo {
     path: String,
     error: Option<String>,
     picture: Option<Picture>,
+    /// The file that is being read.
+    reading: Option<PathBuf>,
+    worker: Worker<Result<Picture, PictureFlaw>>,
     /// It as the theme shows it.
     texture: Option<(Theme, TextureHandle)>,
     kind: PictureKind,
@@ -88,6 +92,8 @@ impl Default for Photo {
             path: String::new(),
             error: None,
             picture: None,
+            reading: None,
+            worker: Worker::default(),
             texture: None,
             kind: PictureKind::Single,
             marks: Vec::new(),
@@ -163,13 +169,46 @@ impl Photo {
             let is_entered = field.lost_focus() && ui.input(|input| input.key_pressed(Key::Enter));
             if ui.button(desk.words.text("photo-load")).clicked() || is_entered {
                 let path = PathBuf::from(self.path.trim());
-                match read(&path, MOST_SIDE) {
-                    Ok(picture) => self.take(picture),
-                    Err(flaw) => self.error = Some(flaw.sentence(desk.words, &path)),
-                }
+                self.start_reading(ui, path);
             }
         });
+        self.look_for_picture(desk);
+        if self.reading.is_some() {
+            let said = desk.words.text("photo-reading");
+            text(
+                ui,
+                desk.look,
+                desk.look.sizes.label,
+                desk.look.colours.lesser,
+                &said,
+            );
+        }
         error_line(ui, desk.look, self.error.as_deref());
+    }
+
+    /// Decodes the picture beside the window: a large one takes seconds.
+    fn start_reading(&mut self, ui: &Ui, path: PathBuf) {
+        let file = path.clone();
+        let started = self.worker.start(ui.ctx(), "photograph", move |telling| {
+            telling.tell(read(&file, MOST_SIDE));
+        });
+        self.error = started.err().map(|error| error.to_string());
+        self.reading = self.error.is_none().then_some(path);
+    }
+
+    fn look_for_picture(&mut self, desk: &Desk<'_>) {
+        let Some(path) = self.reading.clone() else {
+            return;
+        };
+        let flaw = match self.worker.news() {
+            Some(Ok(picture)) => return self.take(picture),
+            Some(Err(flaw)) => flaw,
+            None if self.worker.share().is_some() => return,
+            // The decoder gave up on a damaged file without a word.
+            None => PictureFlaw::NoPicture,
+        };
+        self.reading = None;
+        self.error = Some(flaw.sentence(desk.words, &path));
     }
 
     /// Begins anew with a picture: what was marked on another one means nothing here.
